@@ -1,0 +1,2 @@
+/** Findings of the assembly stage. */
+export const ASSEMBLY_FINDINGS = {} as const;

@@ -1,0 +1,2 @@
+/** Findings of the inputs stage. */
+export const INPUTS_FINDINGS = {} as const;

@@ -1,0 +1,2 @@
+/** Findings of the reciprocal stage. */
+export const RECIPROCAL_FINDINGS = {} as const;

@@ -1,0 +1,2 @@
+/** Findings of the statics stage. */
+export const STATICS_FINDINGS = {} as const;

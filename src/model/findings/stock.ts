@@ -1,0 +1,2 @@
+/** Findings of the stock stage. */
+export const STOCK_FINDINGS = {} as const;

@@ -1,0 +1,2 @@
+/** Findings of the strength stage. */
+export const STRENGTH_FINDINGS = {} as const;

@@ -1,0 +1,101 @@
+import { z } from 'zod';
+
+/** Node connectors: system, process and shape. */
+export const nodesSchema = z
+  .strictObject({
+    system: z
+      .enum(['socket', 'spigot', 'drilled-ball'])
+      .default('socket')
+      .describe('The node system of every node that names none.'),
+    systems: z
+      .record(z.string(), z.enum(['socket', 'spigot', 'drilled-ball', 'foot', 'clamp']))
+      .default({})
+      .describe('Node system by node mark.'),
+    process: z.enum(['filament', 'powder', 'resin']).default('filament').describe('How hubs are printed.'),
+    material: z.string().default('PETG-print').describe('What hubs are printed from.'),
+    clearance_mm: z
+      .number()
+      .nonnegative()
+      .optional()
+      .describe('Diametral clearance over the largest measured rod; absent: by process and diameter.'),
+    clearanceMeasured: z
+      .boolean()
+      .default(false)
+      .describe('true once the fit gauge has been printed and its value entered.'),
+    wall_mm: z
+      .number()
+      .positive()
+      .optional()
+      .describe('Wall of a sleeve; absent: the good wall of the process, at least a quarter of the rod.'),
+    gap_mm: z.number().nonnegative().optional().describe('Least web between two bars at their ends; absent: the wall.'),
+    depthFactor: z.number().positive().default(1.75).describe('Socket depth over rod diameter.'),
+    depth_mm: z.number().positive().optional().describe('Socket depth; overrides the factor.'),
+    setbacks: z
+      .enum(['least', 'equal-at-node', 'equal'])
+      .default('least')
+      .describe('Whether setbacks are the least, equal at a node, or equal everywhere.'),
+    joint: z
+      .enum(['glued', 'pinned', 'seated', 'loose'])
+      .default('glued')
+      .describe('How a strut end passes force into its socket.'),
+    pin_mm: z.number().nonnegative().default(2).describe('Diameter of the cross pin of a pinned joint.'),
+    vent_mm: z
+      .number()
+      .nonnegative()
+      .default(1.2)
+      .describe('Diameter of the vent at the socket floor, for glue and air; 0: none.'),
+    chamfer_mm: z.number().nonnegative().default(0.5),
+    mergeBelow_deg: z
+      .number()
+      .nonnegative()
+      .default(20)
+      .describe('Sleeves nearer than this are merged, their bores kept apart.'),
+    leastAngle_deg: z.number().positive().default(12).describe('Bars nearer than this cannot be made.'),
+    marks: z.boolean().default(true).describe('Whether marks are engraved.'),
+    markDepth_mm: z.number().positive().optional(),
+    markHeight_mm: z.number().positive().optional(),
+    bondStrength_MPa: z.number().positive().optional().describe('Shear strength of the glue line from your own test.'),
+    foot: z
+      .strictObject({
+        plate_mm: z.number().positive().default(60).describe('Diameter of the base plate.'),
+        thickness_mm: z.number().positive().default(6),
+        anchors: z.int().nonnegative().default(3),
+        anchor_mm: z.number().positive().default(5),
+        levelling_mm: z.number().nonnegative().default(0).describe('Diameter of a levelling screw; 0: none.'),
+      })
+      .prefault({}),
+    ball: z
+      .strictObject({
+        diameter_mm: z.number().positive().optional().describe('Absent: the least that holds every bore.'),
+        material: z.string().default('beech'),
+      })
+      .prefault({}),
+    orientation: z
+      .strictObject({
+        overhang: z.number().nonnegative().default(1),
+        height: z.number().nonnegative().default(0.3),
+        tension: z.number().nonnegative().default(1).describe('Weight of tension across layers.'),
+      })
+      .prefault({})
+      .describe('Weights of the print orientation.'),
+  })
+  .prefault({});
+
+export const printersSchema = z
+  .array(
+    z.strictObject({
+      name: z.string().default('printer'),
+      bed: z.enum(['rectangle', 'circle']).default('rectangle'),
+      width_mm: z.number().positive().default(210).describe('Usable width, or diameter of a round bed.'),
+      depth_mm: z.number().positive().default(210),
+      height_mm: z.number().positive().default(240),
+      margin_mm: z.number().nonnegative().default(2),
+      spacing_mm: z.number().nonnegative().default(4),
+      layer_mm: z.number().positive().default(0.2),
+      flow_mm3_per_s: z.number().positive().default(8).describe('Plastic laid per second, averaged.'),
+      layerChange_s: z.number().nonnegative().default(4),
+    }),
+  )
+  .min(1)
+  .prefault([{}])
+  .describe('Printers that beds are filled for.');

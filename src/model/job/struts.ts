@@ -1,0 +1,83 @@
+import { z } from 'zod';
+
+/** Sections of the struts, the saw and the stock. */
+export const strutsSchema = z
+  .strictObject({
+    section: z.string().default('beech-8').describe('Section of every strut that has none of its own.'),
+    groups: z.record(z.string(), z.string()).default({}).describe('Section by group.'),
+    rollFrom: z
+      .enum(['faces', 'up'])
+      .default('faces')
+      .describe('How a rectangular section is turned: from the faces beside the strut, or its height upright.'),
+    ends: z
+      .record(z.string(), z.enum(['plain', 'drop-in', 'slide']))
+      .default({})
+      .describe('Closing detail of a strut end, by "strut@node".'),
+    pinDrill: z.boolean().default(false).describe('Whether strut ends are drilled for the cross pins before assembly.'),
+    shareStops: z
+      .boolean()
+      .default(false)
+      .describe('Whether nearly equal cut lengths share one stop setting within the end float.'),
+    sizes: z
+      .array(z.string())
+      .default([])
+      .describe('Sections that `strutwright size` may choose from, lightest first decided by mass.'),
+  })
+  .prefault({});
+
+export const sawSchema = z
+  .strictObject({
+    step_mm: z.number().positive().default(0.5).describe('Lengths are cut to whole steps, rounded down.'),
+    endFloat_mm: z.number().nonnegative().default(0.75).describe('Least play of a strut in each socket.'),
+    kerf_mm: z.number().nonnegative().default(3).describe('Width of the cut.'),
+    endTrim_mm: z
+      .number()
+      .nonnegative()
+      .default(5)
+      .describe('Trimmed off a factory end before the first piece, blade included.'),
+    trimEnds: z
+      .union([z.literal(0), z.literal(1), z.literal(2)])
+      .default(1)
+      .describe('How many ends of a new bar are trimmed.'),
+    leastClamped_mm: z
+      .number()
+      .nonnegative()
+      .default(150)
+      .describe('Pieces shorter than this are clamped, never hand-held.'),
+  })
+  .prefault({});
+
+export const stockSchema = z
+  .strictObject({
+    bars: z
+      .array(
+        z.strictObject({
+          section: z.string(),
+          length_mm: z.number().positive(),
+          price: z.number().positive().default(1),
+          available: z.int().nonnegative().optional().describe('Absent: as many as needed.'),
+          name: z.string().optional(),
+        }),
+      )
+      .default([])
+      .describe('What can be bought. Absent for a section: bars of 1000 mm for dowels up to 12 mm, else 2000 mm.'),
+    rack: z
+      .array(
+        z.strictObject({
+          section: z.string(),
+          length_mm: z.number().positive(),
+          mark: z.string().optional(),
+        }),
+      )
+      .default([])
+      .describe('Offcuts in the rack, used first. The offcut list of an earlier pack can be pasted here.'),
+    leastOffcut_mm: z.number().nonnegative().default(200).describe('Shorter remainders are waste.'),
+    offcutValue: z
+      .number()
+      .min(0)
+      .max(1)
+      .default(0)
+      .describe('Value of a kept offcut as a share of the price per length.'),
+    currency: z.string().max(8).default('').describe('Printed beside prices.'),
+  })
+  .prefault({});
