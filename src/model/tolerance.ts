@@ -26,6 +26,12 @@ export const ROUND_OFF = {
     reason: 'two struts nearer than this share of the truss size cross',
     source: 'rounding of exported coordinates',
   },
+  forceScale: {
+    value: 1e-9,
+    unit: '1',
+    reason: 'a member force below this share of the largest in the truss is nought: nothing is held against it',
+    source: 'sums of doubles; forces exported with 9 digits',
+  },
   lengthSum: {
     value: 1e-9,
     unit: '1',

@@ -3,6 +3,12 @@ import { entry, num } from './entry.js';
 /** Findings on the form, its equilibrium and its faces. */
 export const TRUSS_FINDINGS = {
   'node-free': entry('warn', 'node', '', () => 'no strut ends here; remove the node or connect it'),
+  'node-on-strut': entry(
+    'warn',
+    'node',
+    'mm',
+    (f) => `lies on ${f.about?.['strut']} without being its end; split the strut here or move the node`,
+  ),
   'struts-cross': entry(
     'warn',
     'strut',
@@ -20,7 +26,7 @@ export const TRUSS_FINDINGS = {
     'warn',
     'truss',
     '',
-    (f) => `the loads and reactions miss balance by ${num(f.value, 5)} of the largest load, limit ${num(f.limit, 5)}`,
+    (f) => `the loads and reactions miss balance by ${num(f.value, 5)} of all loads together, limit ${num(f.limit, 5)}`,
   ),
   'forces-missing': entry('note', 'truss', '', () => 'no member forces are given, so equilibrium was not checked'),
   'force-missing': entry('warn', 'strut', '', () => 'has no force while others have; equilibrium was not checked'),
@@ -36,6 +42,12 @@ export const TRUSS_FINDINGS = {
     'mm',
     (f) =>
       `out of flat by ${num(f.value)} mm, limit ${num(f.limit)} mm; mend the form, split the face or bend the sheet`,
+  ),
+  'face-has-no-normal': entry(
+    'stop',
+    'face',
+    '',
+    () => 'its corners lie on one line, so it has no plane; give it corners that span an area or leave it out',
   ),
   'face-crosses-itself': entry('stop', 'face', '', () => 'its outline crosses itself; give its nodes in order'),
   'face-not-convex': entry('note', 'face', '', () => 'its outline has an inward corner'),
