@@ -1,0 +1,10 @@
+/** The largest input that is read. Past these, memory and time on an ordinary machine are not promised. */
+export const LIMITS = {
+  /** Characters of one input file: ten times a truss of 50,000 nodes. */
+  fileCharacters: 64_000_000,
+  nodes: 50_000,
+  members: 200_000,
+  faces: 100_000,
+  /** Nesting of brackets in a JSON file: the deepest key of a job stands at 6. */
+  depth: 32,
+} as const;
