@@ -1,0 +1,50 @@
+import type { FaceForm } from '../detailing/faces.js';
+import type { Mat4 } from '../maths/mat4.js';
+import type { Finding } from '../model/finding.js';
+import type { Job } from '../model/job/index.js';
+import type { Parts } from '../model/parts.js';
+import type { NestingPlan, StockPlan } from '../model/plan.js';
+import type { Solution, Utilisation } from '../model/solution.js';
+import type { Topology } from '../model/topology.js';
+import type { Equilibrium } from '../statics/equilibrium.js';
+
+/** Everything that is known before anything is shaped or planned: what `check` reports. */
+export interface Assessment {
+  readonly job: Job;
+  readonly topology: Topology;
+  /** By face index. */
+  readonly forms: readonly FaceForm[];
+  readonly parts: Parts;
+  /** The member forces that the papers show, N by member index, tension positive, and where they come from. */
+  readonly forces: { readonly source: 'given' | 'reciprocal' | 'analysis'; readonly values: Float64Array } | null;
+  readonly equilibrium: Equilibrium | null;
+  readonly solution: Solution | null;
+  readonly utilisations: readonly Utilisation[];
+  /** All findings, worst first; waived stops are in `waived` instead of stopping. */
+  readonly findings: readonly Finding[];
+  readonly waived: readonly Finding[];
+  readonly checked: readonly string[];
+  readonly notChecked: readonly string[];
+  readonly status: 'clear' | 'flagged';
+  /** Reasons of a hold, in words, one a stop that no waiver covers; empty: the pack is not on hold. */
+  readonly hold: readonly string[];
+}
+
+/** What stays of a shaped hub once its mesh is written and dropped. Lengths mm, volume mm³. */
+export interface ShapedHub {
+  readonly mark: string;
+  readonly volume: number;
+  /** Extents in print orientation. */
+  readonly size: readonly [number, number, number];
+  /** From the STL's mm to the truss's axes. */
+  readonly placement: Mat4;
+  readonly triangles: number;
+  readonly path: string | null;
+}
+
+/** Everything that the papers of a pack draw on. */
+export interface PackRecords extends Assessment {
+  readonly shaped: ReadonlyMap<string, ShapedHub>;
+  readonly stock: StockPlan | null;
+  readonly nesting: NestingPlan | null;
+}
