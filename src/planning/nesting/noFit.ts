@@ -1,0 +1,62 @@
+import { unionOf } from '../../maths/polygon/boolean.js';
+import { type Region, regionOf } from '../../maths/polygon/depth.js';
+import { convexNoFit } from '../../maths/polygon/minkowski.js';
+import type { Pose } from './pose.js';
+
+/** No-fit regions made so far, up to a cap on their edges: 300 panels in four turns would make 215,000. */
+export interface NoFitStore {
+  /** Where the origin of `b` may not be, relative to that of `a`; made on first asking. */
+  region(a: Pose, b: Pose): Region;
+}
+
+/** Numbers held at most: 16 million doubles are 128 MB. */
+const MOST_NUMBERS = 16e6;
+
+export function noFitStore(): NoFitStore {
+  let table: ((Region | undefined)[] | undefined)[] = [];
+  let numbers = 0;
+  return {
+    region(a, b) {
+      let row = table[a.id];
+      const found = row?.[b.id];
+      if (found) return found;
+      const made = noFitRegion(a, b);
+      numbers += made.edges.length + 16;
+      if (numbers > MOST_NUMBERS) {
+        table = [];
+        numbers = made.edges.length;
+        row = undefined;
+      }
+      if (!row) {
+        row = [];
+        table[a.id] = row;
+      }
+      row[b.id] = made;
+      return made;
+    },
+  };
+}
+
+/** Union over the convex parts of a + (-b) (Minkowski; the way of Agarwal, Flato and Halperin 2002). */
+function noFitRegion(a: Pose, b: Pose): Region {
+  if (a.parts.length === 1 && b.parts.length === 1) return regionOf([convexNoFit(a.parts[0]!, b.parts[0]!)], true);
+  const sums = a.parts.flatMap((p) => b.parts.map((q) => convexNoFit(p, q)));
+  return regionOf(unionOf(sums), false);
+}
+
+/** How far `b` at (xb, yb) must move to keep `clear` from `a` at (xa, ya); 0: it does. Symmetric in the two. */
+export function pairDepth(
+  store: NoFitStore,
+  a: Pose,
+  xa: number,
+  ya: number,
+  b: Pose,
+  xb: number,
+  yb: number,
+  clear: number,
+  depth: (region: Region, x: number, y: number, clear: number) => number,
+): number {
+  return a.id <= b.id
+    ? depth(store.region(a, b), xb - xa, yb - ya, clear)
+    : depth(store.region(b, a), xa - xb, ya - yb, clear);
+}

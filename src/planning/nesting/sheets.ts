@@ -1,0 +1,252 @@
+import type { Random } from '../../maths/random.js';
+import { type Budget, isSpent } from './budget.js';
+import { construct } from './construct.js';
+import { type Field, fitsField, type Layout, newLayout, put, restore, snapshot } from './layout.js';
+import type { NoFitStore } from './noFit.js';
+import type { Pose, Shape } from './pose.js';
+import { separate } from './separate.js';
+import { shorten } from './strip.js';
+
+/** A size of sheet: its usable field, its whole area in mm², how many there are. */
+export interface SheetKind {
+  readonly field: Field;
+  readonly area: number;
+  readonly available: number;
+}
+
+export interface SheetPlan {
+  readonly sheets: readonly {
+    readonly kind: number;
+    readonly placed: readonly { readonly piece: number; readonly pose: Pose; readonly x: number; readonly y: number }[];
+  }[];
+  readonly left: readonly { readonly piece: number; readonly reason: 'too-large' | 'no-sheet-left' }[];
+  readonly lowerBound: number;
+}
+
+/** Overlap in mm that a finished plan may have: half of what spacing and margin promise. */
+const TOLERANCE = 5e-4;
+
+/**
+ * The way: fill sheets by first fit in several orders; then try to do without one sheet after another, its pieces
+ * pressed onto the others and the overlaps worked out; then shorten the last sheet's used length.
+ */
+export function planSheets(
+  shapes: readonly Shape[],
+  kinds: readonly SheetKind[],
+  spacing: number,
+  store: NoFitStore,
+  budget: Budget,
+  random: Random,
+  boundOf: (shapes: readonly Shape[]) => number,
+): SheetPlan {
+  const tooLarge = (s: Shape): boolean =>
+    !kinds.some((k) => k.available > 0 && s.poses.some((p) => fitsField(k.field, p, TOLERANCE)));
+  const left: { piece: number; reason: 'too-large' | 'no-sheet-left' }[] = [];
+  const fit: number[] = [];
+  shapes.forEach((s, i) => {
+    if (tooLarge(s)) left.push({ piece: i, reason: 'too-large' });
+    else fit.push(i);
+  });
+  const chosen = fit.map((i) => shapes[i]!);
+  const lowerBound = boundOf(chosen);
+  if (fit.length === 0) return { sheets: [], left, lowerBound };
+
+  let best: Layout | null = null;
+  for (const sizes of sizeOrders(kinds))
+    for (const order of orders(chosen)) {
+      if (best && isSpent(budget, budget.limit / 4)) break;
+      const layout = fill(chosen, order, sizes, kinds, spacing, store, budget);
+      if (!best || better(layout, best, kinds)) best = layout;
+      if (best.fields.length <= lowerBound && best.field.every((f) => f >= 0)) break;
+    }
+  const layout = reduceSheets(best!, kinds, lowerBound, random, budget);
+  const last = emptiest(layout, kinds);
+  if (last >= 0) shortenOne(layout, last, random, budget);
+
+  const sheets = layout.fields.map((f, k) => ({
+    kind: f.kind,
+    placed: [...layout.on[k]!]
+      .sort((a, b) => a - b)
+      .map((i) => ({ piece: fit[i]!, pose: layout.pose[i]!, x: layout.x[i]!, y: layout.y[i]! })),
+  }));
+  layout.field.forEach((f, i) => {
+    if (f < 0) left.push({ piece: fit[i]!, reason: 'no-sheet-left' });
+  });
+  return { sheets, left, lowerBound };
+}
+
+/** Sizes of sheets in the order in which new ones are opened: as given, largest first, smallest first. */
+function sizeOrders(kinds: readonly SheetKind[]): number[][] {
+  const given = kinds.map((_, k) => k);
+  if (kinds.length === 1) return [given];
+  const large = [...given].sort((a, b) => kinds[b]!.area - kinds[a]!.area || a - b);
+  return [large, given, [...large].reverse()];
+}
+
+/** Orders of pieces, most demanding first by different measures. */
+function orders(shapes: readonly Shape[]): number[][] {
+  const size = (s: Shape): [number, number] => {
+    const b = s.poses[0]!.box;
+    return [b[2] - b[0], b[3] - b[1]];
+  };
+  const by = (measure: (s: Shape) => number): number[] =>
+    shapes.map((_, i) => i).sort((a, b) => measure(shapes[b]!) - measure(shapes[a]!) || a - b);
+  return [
+    by((s) => s.area),
+    by((s) => Math.max(...size(s))),
+    by((s) => size(s)[0] * size(s)[1]),
+    by((s) => size(s)[1]),
+    by((s) => size(s)[0]),
+  ];
+}
+
+function fill(
+  shapes: readonly Shape[],
+  order: readonly number[],
+  sizes: readonly number[],
+  kinds: readonly SheetKind[],
+  spacing: number,
+  store: NoFitStore,
+  budget: Budget,
+): Layout {
+  const layout = newLayout(store, shapes, [], spacing, TOLERANCE, budget);
+  const used = kinds.map(() => 0);
+  let left = [...order];
+  while (left.length > 0) {
+    // A new sheet of the first size that takes the most demanding piece that is left.
+    const next = left.find((i) =>
+      sizes.some(
+        (k) => used[k]! < kinds[k]!.available && shapes[i]!.poses.some((p) => fitsField(kinds[k]!.field, p, TOLERANCE)),
+      ),
+    );
+    if (next === undefined) break;
+    let opened = false;
+    for (const k of sizes) {
+      if (used[k]! >= kinds[k]!.available) continue;
+      if (!shapes[next]!.poses.some((p) => fitsField(kinds[k]!.field, p, TOLERANCE))) continue;
+      layout.fields.push({ ...kinds[k]!.field });
+      layout.on.push([]);
+      const rest = construct(layout, left, layout.fields.length - 1);
+      if (rest.length === left.length) {
+        layout.fields.pop();
+        layout.on.pop();
+        continue;
+      }
+      used[k] = used[k]! + 1;
+      left = rest;
+      opened = true;
+      break;
+    }
+    if (!opened) break;
+  }
+  return layout;
+}
+
+function better(a: Layout, b: Layout, kinds: readonly SheetKind[]): boolean {
+  const placed = (l: Layout): number => l.field.reduce((s, f) => s + (f >= 0 ? 1 : 0), 0);
+  const area = (l: Layout): number => l.fields.reduce((s, f) => s + kinds[f.kind]!.area, 0);
+  const tail = (l: Layout): number => Math.min(...l.on.map((on) => on.reduce((s, i) => s + l.shapes[i]!.area, 0)));
+  return (placed(b) - placed(a) || a.fields.length - b.fields.length || area(a) - area(b) || tail(a) - tail(b)) < 0;
+}
+
+const load = (layout: Layout, f: number): number => layout.on[f]!.reduce((s, i) => s + layout.shapes[i]!.area, 0);
+
+function emptiest(layout: Layout, kinds: readonly SheetKind[]): number {
+  let best = -1;
+  for (let f = 0; f < layout.fields.length; f++)
+    if (
+      best < 0 ||
+      load(layout, f) / kinds[layout.fields[f]!.kind]!.area <
+        load(layout, best) / kinds[layout.fields[best]!.kind]!.area
+    )
+      best = f;
+  return best;
+}
+
+/** Takes away the emptiest sheet while the rest can take its pieces without overlap. */
+function reduceSheets(
+  start: Layout,
+  kinds: readonly SheetKind[],
+  lowerBound: number,
+  random: Random,
+  budget: Budget,
+): Layout {
+  let layout = start;
+  const limit = budget.spent + 0.7 * (budget.limit - budget.spent);
+  while (
+    layout.fields.length > Math.max(1, lowerBound) &&
+    layout.field.every((f) => f >= 0) &&
+    !isSpent(budget, limit)
+  ) {
+    const drop = emptiest(layout, kinds);
+    const fields = layout.fields.filter((_, f) => f !== drop);
+    const trial = newLayout(layout.store, layout.shapes, fields, layout.spacing, layout.tolerance, budget);
+    const homeless: number[] = [];
+    layout.shapes.forEach((_, i) => {
+      const f = layout.field[i]!;
+      if (f === drop) homeless.push(i);
+      else put(trial, i, layout.pose[i]!, layout.x[i]!, layout.y[i]!, f > drop ? f - 1 : f);
+    });
+    const fieldsOf = fieldsByPiece(trial);
+    if (homeless.some((i) => fieldsOf(i).length === 0)) break;
+    const room = fields.reduce((s, f) => s + (f.x1 - f.x0 + trial.spacing) * (f.y1 - f.y0 + trial.spacing), 0);
+    const need = trial.shapes.reduce((s, p) => s + p.area, 0);
+    if (need > room) break;
+    for (const i of homeless) spread(trial, i, fieldsOf(i), random);
+    if (!separate(trial, fieldsOf, random, { rounds: 100, strikes: 4, limit })) break;
+    layout = trial;
+  }
+  return layout;
+}
+
+/** The fields that a piece fits, worked out once. */
+function fieldsByPiece(layout: Layout): (i: number) => readonly number[] {
+  const known = new Map<Shape, number[]>();
+  return (i) => {
+    const shape = layout.shapes[i]!;
+    let list = known.get(shape);
+    if (!list) {
+      list = layout.fields
+        .map((_, f) => f)
+        .filter((f) => shape.poses.some((p) => fitsField(layout.fields[f]!, p, layout.tolerance)));
+      known.set(shape, list);
+    }
+    return list;
+  };
+}
+
+/** Puts a piece somewhere on a field that it fits; the overlaps are worked out afterwards. */
+function spread(layout: Layout, i: number, fields: readonly number[], random: Random): void {
+  const f = fields[Math.floor(random() * fields.length)]!;
+  const field = layout.fields[f]!;
+  const pose = layout.shapes[i]!.poses.find((p) => fitsField(field, p, layout.tolerance))!;
+  const x = field.x0 - pose.box[0] + random() * Math.max(0, field.x1 - field.x0 - pose.box[2] + pose.box[0]);
+  const y = field.y0 - pose.box[1] + random() * Math.max(0, field.y1 - field.y0 - pose.box[3] + pose.box[1]);
+  put(layout, i, pose, x, y, f);
+}
+
+/** Shortens one field of a layout with the others left as they are. */
+function shortenOne(layout: Layout, f: number, random: Random, budget: Budget): void {
+  const pieces = [...layout.on[f]!];
+  if (pieces.length === 0) return;
+  const alone = newLayout(
+    layout.store,
+    pieces.map((i) => layout.shapes[i]!),
+    [{ ...layout.fields[f]! }],
+    layout.spacing,
+    layout.tolerance,
+    budget,
+  );
+  pieces.forEach((i, k) => {
+    put(alone, k, layout.pose[i]!, layout.x[i]!, layout.y[i]!, 0);
+  });
+  restore(alone, snapshot(alone));
+  const limit = Math.min(budget.limit, budget.spent + SHORTEN_SHARE * budget.limit);
+  shorten(alone, 0, random, limit);
+  pieces.forEach((i, k) => {
+    put(layout, i, alone.pose[k]!, alone.x[k]!, alone.y[k]!, f);
+  });
+}
+
+/** Share of the whole budget that shortening the last sheet may take. */
+const SHORTEN_SHARE = 0.25;

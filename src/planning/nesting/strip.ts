@@ -1,0 +1,144 @@
+import type { Random } from '../../maths/random.js';
+import { isSpent } from './budget.js';
+import { type Field, type Layout, put, refreshDepths, restore, type Snapshot, snapshot } from './layout.js';
+import type { Pose } from './pose.js';
+import { separate } from './separate.js';
+
+/** Share of the budget for bold shortening with exchanges; the rest squeezes the best layout in small steps. */
+const BOLD_SHARE = 0.75;
+
+/**
+ * Shortens the used length of field f from the right, again and again, and leaves the shortest layout without
+ * overlaps standing. The layout must start without overlaps. Returns the used length, from x0 to the rightmost piece.
+ */
+export function shorten(layout: Layout, f: number, random: Random, limit: number): number {
+  const field = layout.fields[f]!;
+  const full = field.x1;
+  const start = layout.budget.spent;
+  const boldLimit = start + BOLD_SHARE * (limit - start);
+  const fieldsOf = (): readonly number[] => [f];
+  let best: Snapshot = snapshot(layout);
+  let length = usedLength(layout, f);
+  const area = layout.on[f]!.reduce((sum, i) => sum + layout.shapes[i]!.area, 0);
+  const least = area / (field.y1 - field.y0);
+  const widest = Math.max(0, ...layout.on[f]!.map((i) => width(narrowest(layout, i, field))));
+  let share = 0.02;
+  let pool: { shot: Snapshot; total: number }[] = [];
+  while (!isSpent(layout.budget, boldLimit) && length > least * (1 + 1e-9) && share > 1e-4) {
+    const target = Math.max(length * (1 - share), widest, least);
+    if (target >= length) break;
+    field.x1 = field.x0 + target;
+    pullIn(layout, f);
+    let done = separate(layout, fieldsOf, random, { rounds: 60, strikes: 2, limit: boldLimit });
+    pool = [];
+    for (let attempt = 0; !done && attempt < 6 && !isSpent(layout.budget, boldLimit); attempt++) {
+      pool.push({ shot: snapshot(layout), total: sumDepth(layout) });
+      pool.sort((a, b) => a.total - b.total);
+      // Mostly the best of the near misses, now and then another.
+      const pick = Math.min(pool.length - 1, Math.floor(Math.abs(random() + random() - 1) * pool.length));
+      restore(layout, pool[pick]!.shot);
+      exchange(layout, f, random);
+      done = separate(layout, fieldsOf, random, { rounds: 60, strikes: 2, limit: boldLimit });
+    }
+    if (done) {
+      best = snapshot(layout);
+      length = usedLength(layout, f);
+    } else {
+      field.x1 = field.x0 + length;
+      restore(layout, best);
+      share /= 2;
+    }
+  }
+  let step = 0.002;
+  let misses = 0;
+  while (!isSpent(layout.budget, limit) && length > least * (1 + 1e-9) && step > 1e-5) {
+    const target = Math.max(length * (1 - step), widest, least);
+    if (target >= length) break;
+    field.x1 = field.x0 + target;
+    restore(layout, best);
+    squeeze(layout, f, length - target, random);
+    if (separate(layout, fieldsOf, random, { rounds: 40, strikes: 1, limit })) {
+      best = snapshot(layout);
+      length = usedLength(layout, f);
+      misses = 0;
+    } else if (++misses >= 4) {
+      step /= 2;
+      misses = 0;
+    }
+  }
+  field.x1 = full;
+  restore(layout, best);
+  return length;
+}
+
+const sumDepth = (layout: Layout): number => layout.depth.reduce((a, b) => a + b, 0) / 2;
+
+/** From the field's left to the rightmost piece on it. */
+export function usedLength(layout: Layout, f: number): number {
+  let right = layout.fields[f]!.x0;
+  for (const i of layout.on[f]!) right = Math.max(right, layout.x[i]! + layout.pose[i]!.box[2]);
+  return right - layout.fields[f]!.x0;
+}
+
+const width = (pose: Pose): number => pose.box[2] - pose.box[0];
+
+/** The narrowest pose that is not too tall for the field. */
+function narrowest(layout: Layout, i: number, field: Field): Pose {
+  const low = layout.shapes[i]!.poses.filter((p) => p.box[3] - p.box[1] <= field.y1 - field.y0 + layout.tolerance);
+  return low.reduce((a, b) => (width(b) < width(a) ? b : a), layout.pose[i]!);
+}
+
+function pullIn(layout: Layout, f: number): void {
+  const field = layout.fields[f]!;
+  for (const i of layout.on[f]!) {
+    const pose = layout.pose[i]!;
+    if (pose.box[2] - pose.box[0] > field.x1 - field.x0) {
+      const narrow = narrowest(layout, i, field);
+      put(layout, i, narrow, field.x0 - narrow.box[0], layout.y[i]!, f);
+    }
+    const p = layout.pose[i]!;
+    layout.x[i] = Math.max(field.x0 - p.box[0], Math.min(layout.x[i]!, field.x1 - p.box[2]));
+    layout.y[i] = Math.max(field.y0 - p.box[1], Math.min(layout.y[i]!, field.y1 - p.box[3]));
+  }
+}
+
+/** Everything right of a line drawn at random moves left by d. */
+function squeeze(layout: Layout, f: number, d: number, random: Random): void {
+  const field = layout.fields[f]!;
+  const line = field.x0 + random() * (field.x1 - field.x0);
+  for (const i of layout.on[f]!) {
+    const p = layout.pose[i]!;
+    if (layout.x[i]! + (p.box[0] + p.box[2]) / 2 > line) layout.x[i] = layout.x[i]! - d;
+  }
+  pullIn(layout, f);
+}
+
+/** Two of the larger pieces of different shape change places, those near them staying where they are. */
+function exchange(layout: Layout, f: number, random: Random): void {
+  const byArea = [...layout.on[f]!].sort((a, b) => layout.shapes[b]!.area - layout.shapes[a]!.area || a - b);
+  if (byArea.length < 2) return;
+  // The pieces that make up three quarters of the area.
+  const total = byArea.reduce((s, i) => s + layout.shapes[i]!.area, 0);
+  let sum = 0;
+  let large = 0;
+  while (large < byArea.length && sum < 0.75 * total) sum += layout.shapes[byArea[large++]!]!.area;
+  large = Math.max(2, large);
+  const a = byArea[Math.floor(random() * large)]!;
+  const others = byArea.slice(0, large).filter((j) => layout.shapes[j] !== layout.shapes[a]);
+  const b = others.length > 0 ? others[Math.floor(random() * others.length)]! : byArea[Math.floor(random() * large)]!;
+  if (a === b) return;
+  const middle = (i: number): [number, number] => {
+    const p = layout.pose[i]!;
+    return [layout.x[i]! + (p.box[0] + p.box[2]) / 2, layout.y[i]! + (p.box[1] + p.box[3]) / 2];
+  };
+  const [ma, mb] = [middle(a), middle(b)];
+  const moveTo = (i: number, m: [number, number]): void => {
+    const p = layout.pose[i]!;
+    put(layout, i, p, m[0] - (p.box[0] + p.box[2]) / 2, m[1] - (p.box[1] + p.box[3]) / 2, f);
+  };
+  moveTo(a, mb);
+  moveTo(b, ma);
+  pullIn(layout, f);
+  refreshDepths(layout, a);
+  refreshDepths(layout, b);
+}
