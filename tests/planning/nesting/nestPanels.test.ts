@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { nestPanels } from '../../../src/index.js';
 import { seededRandom } from '../../../src/maths/random.js';
-import { nestPanels } from '../../../src/planning/nesting/nestPanels.js';
 import type { NestingRequest } from '../../../src/planning/nesting/request.js';
 import { planErrors } from './verify.js';
 
