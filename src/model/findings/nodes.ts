@@ -28,4 +28,17 @@ export const NODE_FINDINGS = {
     (f) => `wall of ${num(f.value, 2)} mm at ${f.about?.['where']}, least ${num(f.limit, 2)} mm for this process`,
     { withholds: true },
   ),
+  'node-material-unknown': entry(
+    'stop',
+    'truss',
+    '',
+    (f) =>
+      `node material "${f.about?.['material']}" is not in the catalogue or the job; name a known one or add it under "materials"`,
+  ),
+  'node-system-unknown': entry(
+    'stop',
+    'node',
+    '',
+    (f) => `node system "${f.about?.['system']}" is not available; name another under "nodes"`,
+  ),
 } as const;

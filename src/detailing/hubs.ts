@@ -1,0 +1,123 @@
+import { length, mean, negate, normalise, subtract, type Vec3, Z_AXIS } from '../maths/vec3.js';
+import { materialNamed } from '../model/catalogue/resolve.js';
+import type { Finding } from '../model/finding.js';
+import { finding } from '../model/findings/index.js';
+import type { Job } from '../model/job/index.js';
+import type { Material } from '../model/material.js';
+import type { HubPart, Socket, StrutPart } from '../model/parts.js';
+import type { Section } from '../model/section.js';
+import type { Topology } from '../model/topology.js';
+import { nodeSystem } from './systems/index.js';
+import type { BarEnd, NodeSystem } from './systems/system.js';
+
+export interface DetailedHubs {
+  /** One a node with at least one strut, in the nodes' order. */
+  readonly hubs: readonly HubPart[];
+  readonly findings: readonly Finding[];
+}
+
+/**
+ * Hubs of a truss as numbers: the socket of each strut end, its setback, and the hub's mass.
+ *
+ * @param sections by the member's index; null where unknown: that end gets no socket and its hub cannot be made
+ * @param axes local axes of the struts, by the member's index
+ */
+export function detailHubs(
+  topology: Topology,
+  job: Job,
+  sections: readonly (Section | null)[],
+  axes: readonly StrutPart['axes'][],
+): DetailedHubs {
+  const findings: Finding[] = [];
+  const middle = mean(topology.truss.nodes.map((n) => n.at));
+  const material = materialNamed(job, job.nodes.material);
+  if (!material) findings.push(finding('node-material-unknown', 'truss', { about: { material: job.nodes.material } }));
+
+  const drafts: Draft[] = [];
+  topology.truss.nodes.forEach((node, i) => {
+    const bars = topology.barsAt[i]!;
+    if (bars.length === 0) return;
+    const name = job.nodes.systems[node.mark] ?? job.nodes.system;
+    const system = nodeSystem(name);
+    if (!system) findings.push(finding('node-system-unknown', node.mark, { about: { system: name } }));
+    const ends: BarEnd[] = bars.flatMap((bar) => {
+      const section = sections[bar.memberIndex];
+      if (!section) return [];
+      // At the "to" end the strut points back along its own x: y turns with it, z stays.
+      const { y, z } = axes[bar.memberIndex]!;
+      return {
+        strut: bar.member.mark,
+        farNode: bar.far.mark,
+        direction: bar.direction,
+        y: bar.end === 0 ? y : negate(y),
+        z,
+        section,
+        joint: job.nodes.joint,
+        detail: job.struts.ends[`${bar.member.mark}@${node.mark}`] ?? 'plain',
+      };
+    });
+    const sockets = system ? ends.map((end) => system.socket(end, job)) : [];
+    const found = system?.setbacks(sockets, job);
+    for (const pair of found?.tooClose ?? [])
+      findings.push(
+        finding('bars-too-close', node.mark, {
+          value: (pair.angle * 180) / Math.PI,
+          limit: job.nodes.leastAngle_deg,
+          about: { a: pair.a, b: pair.b },
+        }),
+      );
+    drafts.push({
+      system,
+      whole: sockets.length === bars.length,
+      setbacks: found?.setbacks ?? [],
+      hub: {
+        mark: node.mark,
+        at: node.at,
+        system: name,
+        outward: outwardAt(node.at, middle),
+        sockets,
+        mass: null,
+        material: material ?? NO_MATERIAL,
+        makeable: false,
+        revision: job.revision,
+      },
+    });
+  });
+
+  const everywhere = Math.max(0, ...drafts.flatMap((d) => d.setbacks.map((s) => s ?? 0)));
+  const hubs = drafts.map(({ hub, system, whole, setbacks }): HubPart => {
+    const atNode = Math.max(0, ...setbacks.map((s) => s ?? 0));
+    const rule = { least: null, 'equal-at-node': atNode, equal: everywhere }[job.nodes.setbacks];
+    const sockets = hub.sockets.map(
+      (s, i): Socket => ({ ...s, setback: setbacks[i] === null ? null : (rule ?? setbacks[i]!) }),
+    );
+    const makeable = whole && material !== null && system !== null && sockets.every((s) => s.setback !== null);
+    const placed = { ...hub, sockets, makeable };
+    return { ...placed, mass: system && material && whole ? system.mass(placed, job) : null };
+  });
+  return { hubs, findings };
+}
+
+interface Draft {
+  readonly hub: HubPart;
+  readonly system: NodeSystem | null;
+  /** Every strut at the node has a socket. */
+  readonly whole: boolean;
+  readonly setbacks: readonly (number | null)[];
+}
+
+function outwardAt(at: Vec3, middle: Vec3): Vec3 {
+  const away = subtract(at, middle);
+  return length(away) > 0 ? normalise(away) : Z_AXIS;
+}
+
+/** Stands where the job names a material that nobody knows; such a hub is never made. */
+const NO_MATERIAL: Material = {
+  name: 'unknown',
+  title: 'unknown',
+  family: 'plastic-print',
+  density: 0,
+  modulus: 0,
+  strength: {},
+  source: { text: 'unknown', mark: 'user', verified: false },
+};

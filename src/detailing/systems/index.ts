@@ -1,0 +1,10 @@
+import { SOCKET_SYSTEM } from './socket.js';
+import type { NodeSystem } from './system.js';
+
+/** Node systems by name. A new one is a file and a line here. */
+const SYSTEMS: readonly NodeSystem[] = [SOCKET_SYSTEM];
+
+const BY_NAME: ReadonlyMap<string, NodeSystem> = new Map(SYSTEMS.map((s) => [s.name, s]));
+
+/** The node system of a name; null where there is none. */
+export const nodeSystem = (name: string): NodeSystem | null => BY_NAME.get(name) ?? null;

@@ -1,0 +1,81 @@
+import type { HubPart } from '../../model/parts.js';
+import { areaOf, type Half, perimeterOf, type Sleeve, sleevesOf } from './sleeve.js';
+import type { SocketStiffness, SocketStrength } from './system.js';
+
+/**
+ * Stiffness of each socket, N/mm and N mm/rad, from the plastic's modulus E.
+ *
+ * Glue passes the strut's force F evenly over the depth d, so the sleeve carries F x/d at x from its mouth and stores
+ * F² d / (6 E A): a flexibility of d / (3 E A). The root behind the stop, of length s and the sleeve's full section, adds
+ * s / (E A0). Bending and torsion likewise, with second moments for areas and G = E / 2.7 for E (Poisson's ratio 0.35).
+ * Derived here from the strain energy (Castigliano); the glue line and the strut itself are taken as stiff.
+ */
+export function sleeveStiffness(hub: HubPart): SocketStiffness[] {
+  const E = hub.material.modulus;
+  const G = hub.material.shearModulus ?? E / (2 * (1 + (hub.material.poisson ?? POISSON)));
+  return sleevesOf(hub.sockets).map((s) => {
+    const { stop, socket } = s;
+    const [full, wall] = [momentsOf(s.outer), minus(momentsOf(s.outer), momentsOf(s.inner))];
+    const series = (modulus: number, key: keyof Moments): number =>
+      modulus / (stop / full[key] + socket.depth / (3 * wall[key]));
+    return {
+      strut: socket.strut,
+      axial: series(E, 'area'),
+      aboutY: series(E, 'iy'),
+      aboutZ: series(E, 'iz'),
+      torsion: series(G, 'torsion'),
+    };
+  });
+}
+
+/** Poisson's ratio of printed plastics; from memory, 0.33 to 0.40. */
+const POISSON = 0.35;
+/** Share of strength left across layers where the material gives no value: published tests of filament prints, 50 to 70 %. */
+const ACROSS_LAYERS = 0.5;
+
+interface Moments {
+  readonly area: number;
+  readonly iy: number;
+  readonly iz: number;
+  readonly torsion: number;
+}
+
+function momentsOf(half: Half): Moments {
+  if (typeof half === 'number') {
+    const second = (Math.PI * half ** 4) / 4;
+    return { area: areaOf(half), iy: second, iz: second, torsion: 2 * second };
+  }
+  // Width along y, height along z: bending about y bends the height.
+  const [a, b] = half;
+  const iy = (4 * a * b ** 3) / 3;
+  const iz = (4 * b * a ** 3) / 3;
+  // Saint-Venant's lower estimate for a compact section, A^4 / (40 Ip) (Timoshenko and Goodier, Theory of Elasticity, from memory).
+  return { area: areaOf(half), iy, iz, torsion: areaOf(half) ** 4 / (40 * (iy + iz)) };
+}
+
+const minus = (a: Moments, b: Moments): Moments => ({
+  area: a.area - b.area,
+  iy: a.iy - b.iy,
+  iz: a.iz - b.iz,
+  torsion: a.torsion - b.torsion,
+});
+
+/** Areas through which each socket passes force. */
+export function sleeveStrength(hub: HubPart, vent: number): SocketStrength[] {
+  const { ft, ftZ } = hub.material.strength;
+  const acrossLayers = ft !== undefined && ftZ !== undefined ? ftZ / ft : ACROSS_LAYERS;
+  return sleevesOf(hub.sockets).map((s: Sleeve) => {
+    const { pin, wall, depth, strut } = s.socket;
+    const hole = (Math.PI * pin * pin) / 4;
+    return {
+      strut,
+      wallArea: areaOf(s.outer) - areaOf(s.inner) - 2 * pin * wall,
+      wall,
+      bondArea: perimeterOf(s.inner) * depth - 2 * hole - vent * vent,
+      stopArea: areaOf(s.inner) - vent * vent,
+      rootArea: areaOf(s.outer),
+      pin: pin > 0 ? { diameter: pin, shearPlanes: 2, bearingArea: 2 * pin * wall } : null,
+      acrossLayers,
+    };
+  });
+}
