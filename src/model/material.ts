@@ -35,11 +35,18 @@ export interface Material {
   readonly softening?: number;
   /** Characteristic density, kg/m³ (EN 338). */
   readonly densityK?: number;
-  /** Strengths by the symbol of their standard without the comma: fmk ft0k fc0k fc90k fvk ft90k (timber), fy fu (steel), fo fu (aluminium), ft fc fv fm ftZ (others). */
+  /** Strengths by the symbol of their standard without the comma: fmk ft0k fc0k fc90k fvk ft90k (timber), fy fu (steel), fo fu (aluminium), Fb Ft Fc Fv FcPerp Emin (NDS), ft fc fv fm (ultimate), ftZ (across printed layers), sustained (may stand for years). */
   readonly strength: Readonly<Record<string, number>>;
   /** EN 1999-1-1 buckling class, EN 1993-1-1 curve, and the like. */
   readonly buckling?: string;
   /** Hazards that cannot be waived: on a laser, in a fire. */
   readonly hazards?: readonly ('laser-chlorine' | 'laser-fire')[];
   readonly source: Source;
+  /** Values whose source differs from `source`, by the name of the field or the symbol of the strength. */
+  readonly sources?: Readonly<Record<string, Source>>;
+  /** Thickest wall that the strengths hold for, mm. */
+  readonly thickest?: number;
 }
+
+/** Where one value of a material comes from. */
+export const sourceOf = (material: Material, value: string): Source => material.sources?.[value] ?? material.source;

@@ -1,8 +1,8 @@
 import type { Job } from '../job/index.js';
 import type { Material } from '../material.js';
 import type { Section } from '../section.js';
-import { MATERIALS } from './materials.js';
-import { SECTIONS } from './sections.js';
+import { MATERIALS } from './materials/index.js';
+import { SECTIONS } from './sections/index.js';
 
 /** The section of a name, from the job first, then the catalogue; null where neither has it. */
 export function sectionNamed(job: Job, name: string): Section | null {

@@ -1,2 +1,75 @@
-/** Findings of the strength stage. */
-export const STRENGTH_FINDINGS = {} as const;
+import { entry, num } from './entry.js';
+
+/** Findings on strength: members, sockets, panels, and what the use of the thing asks of its materials. */
+export const STRENGTH_FINDINGS = {
+  'member-over-stressed': entry(
+    'stop',
+    'strut',
+    '',
+    (f) =>
+      `utilisation ${num(f.value, 2)} under ${num(f.about?.['force_N'] as number, 0)} N (${f.about?.['combination']}), by ${f.about?.['rule']}; choose a stronger section than ${f.about?.['section']} or a shorter strut`,
+  ),
+  'socket-over-stressed': entry(
+    'stop',
+    'node',
+    '',
+    (f) =>
+      `the socket of ${f.about?.['strut']} has a utilisation of ${num(f.value, 2)} under ${num(f.about?.['force_N'] as number, 0)} N (${f.about?.['combination']}), by ${f.about?.['rule']}${f.about?.['depth_mm'] === undefined ? '; make the walls thicker or the force smaller' : `; it needs a depth of ${num(f.about['depth_mm'] as number, 1)} mm`}`,
+    { withholds: true },
+  ),
+  'socket-no-path': entry(
+    'stop',
+    'node',
+    'N',
+    (f) =>
+      `the socket of ${f.about?.['strut']} is ${f.about?.['joint']}, which holds no ${f.about?.['sign']}, and the strut carries ${num(f.value, 1)} N (${f.about?.['combination']}); glue or pin it`,
+    { withholds: true },
+  ),
+  'strength-out-of-scope': entry(
+    'warn',
+    'strut',
+    '',
+    (f) => `was not judged by ${f.about?.['standard']}: ${f.about?.['reason']}`,
+  ),
+  'material-value-missing': entry(
+    'warn',
+    'truss',
+    '',
+    (f) =>
+      `${f.about?.['struts']} struts of ${f.about?.['material']} were not judged by ${f.about?.['standard']}: it needs ${f.about?.['values']}; give them under "materials"`,
+  ),
+  'values-unverified': entry(
+    'note',
+    'truss',
+    '',
+    (f) =>
+      `its strength rests on unverified values of ${f.about?.['materials']}; test a joint and enter your own values`,
+  ),
+  'connectors-untested': entry(
+    'stop',
+    'truss',
+    '',
+    (f) =>
+      `${f.about?.['use']} use asks for a test value of your own for the printed connectors of ${f.about?.['material']}; test a joint and give strength_MPa with its source under "materials"`,
+  ),
+  'softening-low': entry(
+    'stop',
+    'truss',
+    '°C',
+    (f) =>
+      `${f.about?.['material']} softens at ${num(f.value, 0)} °C, less than the ${num(f.limit, 0)} °C that sun on a dark part asks for; choose another plastic`,
+  ),
+  'softening-unknown': entry(
+    'stop',
+    'truss',
+    '°C',
+    (f) => `the softening point of ${f.about?.['material']} is not known; give softening_C under "materials"`,
+  ),
+  'service-class-missing': entry(
+    'stop',
+    'truss',
+    '',
+    () =>
+      'stands outdoors and its timber has no service class; give strength.serviceClass (3 for weather, 2 under a roof)',
+  ),
+} as const;

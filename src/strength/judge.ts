@@ -1,0 +1,55 @@
+import type { Finding } from '../model/finding.js';
+import { finding } from '../model/findings/index.js';
+import type { Job } from '../model/job/index.js';
+import type { Parts } from '../model/parts.js';
+import type { Solution, Utilisation } from '../model/solution.js';
+import type { Truss } from '../model/truss.js';
+import { allActions } from './actions.js';
+import { judgeMembers } from './members.js';
+import { judgeSockets } from './sockets.js';
+import type { Rules } from './standard.js';
+import { unverified } from './unverified.js';
+import { useFindings } from './use.js';
+
+/** Verdicts on every part, and what is wrong with them. */
+export interface Judgement {
+  /** Struts in the truss's order, then sockets by hub. A part that could not be judged has no entry. */
+  readonly utilisations: readonly Utilisation[];
+  readonly findings: readonly Finding[];
+  /** "strength", in the one or the other. */
+  readonly checked: readonly string[];
+  readonly notChecked: readonly string[];
+}
+
+/** Service class where the job gives none: inside 1; outdoors the weather, until the job says better. */
+const assumedServiceClass = (job: Job): Rules['serviceClass'] => (job.use === 'outdoor' ? 3 : 1);
+
+/**
+ * Strength of the parts under every combination of the solution and under the given forces, whichever is worse.
+ * Without a solution the given forces are judged alone, as pure axial forces with buckling from node to node.
+ */
+export function judge(truss: Truss, parts: Parts, solution: Solution | null, job: Job): Judgement {
+  const rules: Rules = {
+    serviceClass: job.strength.serviceClass ?? assumedServiceClass(job),
+    factor: job.strength.allowableFactor,
+  };
+  const actions = allActions(truss, solution, job);
+  const loaded = actions.some((a) => a.some((one) => one.axial !== 0 || one.momentY !== 0 || one.momentZ !== 0));
+  const members = judgeMembers(parts.struts, actions, job, rules);
+  const sockets = judgeSockets(parts, actions, job, rules);
+  const utilisations = [...members.utilisations, ...sockets.utilisations];
+  const doubtful = utilisations.length > 0 ? unverified(parts, job) : [];
+  return {
+    utilisations,
+    findings: [
+      ...members.findings,
+      ...sockets.findings,
+      ...useFindings(parts, job, loaded),
+      ...(doubtful.length > 0
+        ? [finding('values-unverified', 'truss', { about: { materials: doubtful.join(', ') } })]
+        : []),
+    ],
+    checked: utilisations.length > 0 ? ['strength'] : [],
+    notChecked: utilisations.length > 0 ? [] : ['strength'],
+  };
+}

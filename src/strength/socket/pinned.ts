@@ -1,0 +1,80 @@
+import { PIN_STEEL } from '../../model/catalogue/pin.js';
+import { GAMMA_M_CONNECTION, kMod } from '../../model/catalogue/timber-factors.js';
+import { plasticLimit, woodLimit } from '../limits.js';
+import type { Verdict } from '../standard.js';
+import type { SocketCase, SocketPath } from './case.js';
+import { acrossPin, engaged, sleeve, strutArea } from './geometry.js';
+import { sleeveChecks } from './sleeve.js';
+
+/** gammaM2 of EN 1993-1-8 for pins; gammaM0 for their bending. */
+const GAMMA_M2 = 1.25;
+const GAMMA_M0 = 1;
+
+/**
+ * Pinned: a steel cross pin at half the socket's depth carries tension and compression.
+ * Pin in double shear 0.6 A fup / gammaM2 a plane and in bending F/8 (b + 4 c + 2 a) against 1.5 Wel fyp / gammaM0 (EN 1993-1-8 3.13, table 3.10, figure 3.11);
+ * bearing on wood fh,k = 0.082 (1 - 0.01 d) rho_k (EN 1995-1-1 8.5.1.1 (8.16)) and on the two walls; in tension the strut's net section, plug shear of the wood
+ * behind the pin (two planes as long as the end distance) and of the walls before it, and the sleeve's net section.
+ */
+export const pinned: SocketPath = (c) => {
+  const { actions, rules, strut, hub, socket } = c;
+  const d = socket.pin;
+  const force = Math.abs(actions.axial);
+  if (d <= 0) return force === 0 ? [] : null;
+  const { duration } = actions;
+  const [t, wall] = [acrossPin(c), socket.wall];
+  const checks: Verdict[] = [...pinChecks(c, force)];
+  const push = (utilisation: number, rule: string): void => void checks.push({ utilisation, rule });
+
+  const crush = hub.strength['fc'];
+  if (crush !== undefined)
+    push(force / (2 * d * wall * plasticLimit(crush, duration, rules)), 'bearing of the pin on the socket walls');
+  const wood = woodBearing(c);
+  if (wood !== null) push(force / (d * t * wood), 'EN 1995-1-1 8.5.1.1 (8.16), bearing of the pin on the strut');
+  if (actions.axial > 0) {
+    const net = woodLimit(strut, 'ft', duration, rules) ?? metalLimit(c);
+    if (net !== null)
+      push(force / ((strutArea(c) - d * t) * net), 'EN 1995-1-1 5.2, net section of the strut at the pin');
+    const end = engaged(c) - socket.depth / 2;
+    const plug = woodLimit(strut, 'fv', duration, rules);
+    if (plug !== null)
+      push(end > 0 ? force / (2 * end * t * plug) : NO_END_DISTANCE, 'plug shear of the strut behind the pin');
+    const plastic = hub.strength['fv'];
+    if (plastic !== undefined)
+      push(
+        force / (4 * (socket.depth / 2) * wall * plasticLimit(plastic, duration, rules)),
+        'plug shear of the socket walls',
+      );
+  }
+  return [...checks, ...sleeveChecks(c, sleeve(c).area - 2 * d * wall)];
+};
+
+/** Utilisation reported where the pin sits beyond the strut's end: it holds nothing, however small the force. */
+const NO_END_DISTANCE = 1000;
+
+function pinChecks(c: SocketCase, force: number): Verdict[] {
+  const d = c.socket.pin;
+  const area = (Math.PI * d * d) / 4;
+  const wel = (Math.PI * d ** 3) / 32;
+  const shear = force / 2 / ((0.6 * area * PIN_STEEL.fu) / GAMMA_M2);
+  const bore = typeof c.socket.bore === 'number' ? c.socket.bore : Math.min(...c.socket.bore);
+  const gap = Math.max(0, (bore - acrossPin(c)) / 2);
+  const moment = (force / 8) * (acrossPin(c) + 4 * gap + 2 * c.socket.wall);
+  const bent = moment / ((1.5 * wel * PIN_STEEL.fy) / GAMMA_M0);
+  return [
+    { utilisation: shear, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear' },
+    { utilisation: bent ** 2 + shear ** 2, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear and bending' },
+  ];
+}
+
+/** Embedding strength along the grain, MPa, design value; the density stands for rho_k where no class gives one, at nine tenths. */
+function woodBearing({ strut, socket, actions, rules }: SocketCase): number | null {
+  if (strut.family !== 'timber' && strut.family !== 'glulam') return null;
+  const density = strut.densityK ?? 0.9 * strut.density;
+  const fhk = 0.082 * (1 - 0.01 * socket.pin) * density;
+  return (kMod(rules.serviceClass, actions.duration) * fhk) / GAMMA_M_CONNECTION;
+}
+
+/** Metal tube at the pin's holes: 0.9 fu / gammaM2 (EN 1993-1-1 6.2.3 (6.7); EN 1999-1-1 6.2.3 has the same form). */
+const metalLimit = ({ strut }: SocketCase): number | null =>
+  strut.strength['fu'] === undefined ? null : (0.9 * strut.strength['fu']) / GAMMA_M2;

@@ -1,0 +1,92 @@
+import { GLUE_LINE } from '../model/catalogue/glue.js';
+import type { Finding } from '../model/finding.js';
+import { finding } from '../model/findings/index.js';
+import type { Job } from '../model/job/index.js';
+import type { HubPart, Parts, StrutPart } from '../model/parts.js';
+import type { MemberActions, Utilisation } from '../model/solution.js';
+import type { Judged } from './members.js';
+import type { SocketCase } from './socket/case.js';
+import { requiredDepth } from './socket/depth.js';
+import { judgeSocket } from './socket/index.js';
+import type { Rules, Verdict } from './standard.js';
+
+/** Forces below this share of the largest in the truss are round-off: a joint without a path may carry them. */
+const NO_FORCE = 1e-9;
+
+/** Utilisation of every socket, by the path that its joint names; findings above 1 and where there is no path. */
+export function judgeSockets(
+  parts: Parts,
+  actions: readonly (readonly MemberActions[])[],
+  job: Job,
+  rules: Rules,
+): Judged {
+  const utilisations: Utilisation[] = [];
+  const findings: Finding[] = [];
+  const strutIndex = new Map(parts.struts.map((s, i) => [s.mark, i]));
+  const largest = actions.flat().reduce((most, a) => Math.max(most, Math.abs(a.axial)), 0);
+  for (const hub of parts.hubs)
+    for (const socket of hub.sockets) {
+      const i = strutIndex.get(socket.strut);
+      if (i === undefined) continue;
+      const cases = socketCases(hub, socket, parts.struts[i]!, actions[i] ?? [], job, rules);
+      let worst: { case: SocketCase; verdict: Verdict } | null = null;
+      let stuck: SocketCase | null = null;
+      for (const c of cases) {
+        const verdict = judgeSocket(c);
+        if (verdict === null) {
+          const more = stuck === null || Math.abs(c.actions.axial) > Math.abs(stuck.actions.axial);
+          if (Math.abs(c.actions.axial) > NO_FORCE * largest && more) stuck = c;
+        } else if (worst === null || verdict.utilisation > worst.verdict.utilisation) worst = { case: c, verdict };
+      }
+      if (stuck !== null) findings.push(noPath(hub, stuck));
+      if (worst === null || stuck !== null) continue;
+      const { utilisation, rule } = worst.verdict;
+      const { combination, axial: force } = worst.case.actions;
+      utilisations.push({ mark: socket.strut, kind: 'socket', at: hub.mark, combination, force, utilisation, rule });
+      if (utilisation > 1) findings.push(overStressed(hub, worst.case, worst.verdict));
+    }
+  return { utilisations, findings };
+}
+
+function socketCases(
+  hub: HubPart,
+  socket: HubPart['sockets'][number],
+  strut: StrutPart,
+  actions: readonly MemberActions[],
+  job: Job,
+  rules: Rules,
+): readonly SocketCase[] {
+  const { material } = strut;
+  if (material === null) return [];
+  const end = strut.ends.find((e) => e.node === hub.mark);
+  const float = end?.float ?? job.saw.endFloat_mm;
+  const bond = job.nodes.bondStrength_MPa ?? GLUE_LINE.strength;
+  return actions.map((a) => ({ socket, strut: material, hub: hub.material, float, actions: a, rules, bond }));
+}
+
+const noPath = (hub: HubPart, c: SocketCase): Finding =>
+  finding('socket-no-path', hub.mark, {
+    value: c.actions.axial,
+    limit: 0,
+    about: {
+      strut: c.socket.strut,
+      joint: c.socket.joint,
+      sign: c.actions.axial > 0 ? 'tension' : 'compression',
+      combination: c.actions.combination,
+    },
+  });
+
+function overStressed(hub: HubPart, c: SocketCase, verdict: Verdict): Finding {
+  const depth = requiredDepth(c);
+  return finding('socket-over-stressed', hub.mark, {
+    value: verdict.utilisation,
+    limit: 1,
+    about: {
+      strut: c.socket.strut,
+      rule: verdict.rule,
+      combination: c.actions.combination,
+      force_N: c.actions.axial,
+      ...(depth === null ? {} : { depth_mm: depth }),
+    },
+  });
+}
