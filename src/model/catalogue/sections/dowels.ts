@@ -4,7 +4,9 @@ import type { Section } from '../../section.js';
 const METRIC = [3, 4, 5, 6, 8, 9, 10, 12, 15, 18, 20, 21, 25, 28, 30, 35, 40] as const;
 /** Diameters in sixteenths of an inch, sold in lengths of 36 and 48 in: seen in dealers' lists. */
 const SIXTEENTHS = [4, 5, 6, 7, 8, 10, 12, 14, 16] as const;
-const INCH = 25.4;
+
+/** 25.4 mm an inch, kept whole so that 3/8 in is 9.525 and not a binary neighbour. */
+const mm = (sixteenths: number): number => (sixteenths * 254) / 160;
 
 const dowel = (name: string, diameter: number, material: string): Section => ({
   name,
@@ -29,5 +31,5 @@ const WOODS = [
 /** Round dowels: beech-8, pine-12, birch-3/8in. */
 export const DOWEL_SECTIONS: readonly Section[] = [
   ...WOODS.flatMap(([wood, material]) => METRIC.map((d) => dowel(`${wood}-${d}`, d, material))),
-  ...SIXTEENTHS.map((s) => dowel(`birch-${inches(s)}`, (s / 16) * INCH, 'birch-dowel')),
+  ...SIXTEENTHS.map((s) => dowel(`birch-${inches(s)}`, mm(s), 'birch-dowel')),
 ];
