@@ -1,0 +1,99 @@
+/** A point on a sheet, mm from its top left corner, y down. */
+export type Point = readonly [number, number];
+
+/** An upright rectangle on a sheet, mm. */
+export interface Area {
+  readonly x: number;
+  readonly y: number;
+  readonly width: number;
+  readonly height: number;
+}
+
+/** A rectangle turned by `angle` (rad, clockwise on the sheet) about its middle (x, y). */
+export interface Box {
+  readonly x: number;
+  readonly y: number;
+  readonly width: number;
+  readonly height: number;
+  readonly angle: number;
+}
+
+/** The four corners of a box, in order. */
+export function corners(box: Box): Point[] {
+  const [c, s] = [Math.cos(box.angle), Math.sin(box.angle)];
+  const [a, b] = [box.width / 2, box.height / 2];
+  return (
+    [
+      [-a, -b],
+      [a, -b],
+      [a, b],
+      [-a, b],
+    ] as const
+  ).map(([u, v]) => [box.x + u * c - v * s, box.y + u * s + v * c]);
+}
+
+/** Whether two boxes overlap by more than `slack` mm: separating axes (Gottschalk, Lin, Manocha 1996) in the plane. */
+export function overlap(a: Box, b: Box, slack = 0): boolean {
+  const [ra, rb] = [Math.hypot(a.width, a.height) / 2, Math.hypot(b.width, b.height) / 2];
+  const [dx, dy] = [b.x - a.x, b.y - a.y];
+  if (dx * dx + dy * dy >= (ra + rb - slack) ** 2) return false;
+  if (a.angle === 0 && b.angle === 0)
+    return Math.abs(dx) < (a.width + b.width) / 2 - slack && Math.abs(dy) < (a.height + b.height) / 2 - slack;
+  return !parted(a, b, dx, dy, slack) && !parted(b, a, dx, dy, slack);
+}
+
+/** Whether one of the axes of `a` parts the two boxes. */
+function parted(a: Box, b: Box, dx: number, dy: number, slack: number): boolean {
+  const [c, s] = [Math.cos(a.angle), Math.sin(a.angle)];
+  return (
+    Math.abs(dx * c + dy * s) - a.width / 2 - reach(b, c, s) > -slack ||
+    Math.abs(dy * c - dx * s) - a.height / 2 - reach(b, -s, c) > -slack
+  );
+}
+
+/** Half the box's extent along the unit vector (ux, uy). */
+export function reach(box: Box, ux: number, uy: number): number {
+  const [c, s] = [Math.cos(box.angle), Math.sin(box.angle)];
+  return (Math.abs(ux * c + uy * s) * box.width + Math.abs(uy * c - ux * s) * box.height) / 2;
+}
+
+/** Length of the part of the segment p-q inside the box, mm. */
+export function lengthInside(box: Box, p: Point, q: Point): number {
+  // Most pairs are far apart: the segment's upright bounds against the box's circle.
+  const radius = (box.width + box.height) / 2;
+  if (Math.min(p[0], q[0]) > box.x + radius || Math.max(p[0], q[0]) < box.x - radius) return 0;
+  if (Math.min(p[1], q[1]) > box.y + radius || Math.max(p[1], q[1]) < box.y - radius) return 0;
+  const [c, s] = [Math.cos(box.angle), Math.sin(box.angle)];
+  const local = ([x, y]: Point): Point => [(x - box.x) * c + (y - box.y) * s, (y - box.y) * c - (x - box.x) * s];
+  const [a, b] = [local(p), local(q)];
+  let [low, high] = [0, 1];
+  const half = [box.width / 2, box.height / 2];
+  for (const axis of [0, 1] as const) {
+    const d = b[axis] - a[axis];
+    if (Math.abs(d) < 1e-12) {
+      if (Math.abs(a[axis]) >= half[axis]!) return 0;
+      continue;
+    }
+    const [t0, t1] = [(-half[axis]! - a[axis]) / d, (half[axis]! - a[axis]) / d];
+    low = Math.max(low, Math.min(t0, t1));
+    high = Math.min(high, Math.max(t0, t1));
+    if (low >= high) return 0;
+  }
+  return (high - low) * Math.hypot(b[0] - a[0], b[1] - a[1]);
+}
+
+/** Whether the whole box lies in the area. */
+export function inside(area: Area, box: Box): boolean {
+  const [w, h] = [reach(box, 1, 0), reach(box, 0, 1)];
+  return (
+    box.x - w >= area.x && box.x + w <= area.x + area.width && box.y - h >= area.y && box.y + h <= area.y + area.height
+  );
+}
+
+/** The area less `by` mm on every side. */
+export const shrink = (area: Area, by: number): Area => ({
+  x: area.x + by,
+  y: area.y + by,
+  width: area.width - 2 * by,
+  height: area.height - 2 * by,
+});

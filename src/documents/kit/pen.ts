@@ -1,0 +1,279 @@
+import PDFDocument from 'pdfkit';
+import type { Fonts } from './fonts.js';
+import { type Box, corners, type Point } from './geometry2.js';
+import { INK, LINE, SIZE } from './ink.js';
+
+/** Points of a PDF in one mm. */
+export const POINTS = 72 / 25.4;
+/** Capital height over type size of the face, from its OS/2 table (668/1000). */
+export const CAP = 0.668;
+/** Height from the lowest descender to the capitals' top over type size: what a line of text occupies. */
+const DESCENT = 0.2;
+
+export interface TextStyle {
+  /** Type size in pt; 9 where absent. */
+  readonly size?: number;
+  readonly bold?: boolean;
+  readonly colour?: string;
+  /** Which point of the text lies at x. */
+  readonly align?: 'left' | 'centre' | 'right';
+}
+
+export interface LineStyle {
+  /** mm */
+  readonly width?: number;
+  readonly colour?: string;
+  /** Lengths of strokes and gaps, mm. */
+  readonly dash?: readonly [number, number];
+  readonly cap?: 'butt' | 'round';
+}
+
+/** A text as placed: what tests hold against each other. */
+export interface PlacedText extends Box {
+  readonly sheet: number;
+  readonly text: string;
+}
+
+export interface PenOptions {
+  readonly fonts: Fonts;
+  readonly title: string;
+  readonly author: string;
+  readonly subject: string;
+  /** Year-month-day, or null: the file then carries no date. */
+  readonly date: string | null;
+}
+
+type Face = 'regular' | 'bold' | 'fallback' | 'fallbackBold';
+
+/** The parts of pdfkit that its types leave out. */
+interface Inner {
+  readonly _font: { readonly font: { hasGlyphForCodePoint(code: number): boolean } };
+  info: Record<string, unknown>;
+}
+
+/**
+ * Draws on sheets in mm from the top left corner, y down; text by its baseline. Keeps a list of every text placed.
+ * Characters that the face lacks come from the fallback face, and where that lacks them too the replacement mark stands.
+ */
+export class Pen {
+  readonly placed: PlacedText[] = [];
+  private readonly doc: PDFKit.PDFDocument;
+  private readonly chunks: Uint8Array[] = [];
+  private readonly covered = new Map<string, boolean>();
+  private readonly widths = new Map<string, number>();
+  private readonly ended: Promise<void>;
+  private count = 0;
+  private current = -1;
+
+  constructor(options: PenOptions) {
+    const created = new Date(`${options.date ?? '1980-01-01'}T00:00:00Z`);
+    this.doc = new PDFDocument({
+      autoFirstPage: false,
+      bufferPages: true,
+      font: options.fonts.regular as unknown as string,
+      lang: 'en',
+      displayTitle: true,
+      info: {
+        Title: options.title,
+        Author: options.author,
+        Subject: options.subject,
+        Producer: 'strutwright',
+        Creator: 'strutwright',
+        CreationDate: created,
+      },
+    });
+    // pdfkit reads the date in any case, but writes only what can be enumerated.
+    if (options.date === null)
+      Object.defineProperty((this.doc as unknown as Inner).info, 'CreationDate', { enumerable: false });
+    for (const face of ['regular', 'bold', 'fallback', 'fallbackBold'] as const)
+      this.doc.registerFont(face, options.fonts[face] as unknown as string);
+    this.doc.on('data', (chunk: Uint8Array) => this.chunks.push(chunk));
+    this.ended = new Promise((resolve) => {
+      this.doc.on('end', () => resolve());
+    });
+  }
+
+  get sheets(): number {
+    return this.count;
+  }
+
+  /** Adds a sheet of the size in mm and draws on it from now on. */
+  addSheet(width: number, height: number): void {
+    this.doc.addPage({ size: [width * POINTS, height * POINTS], margin: 0 });
+    this.current = this.count++;
+  }
+
+  /** Draws on an earlier sheet again. */
+  turnTo(sheet: number): void {
+    this.doc.switchToPage(sheet);
+    this.current = sheet;
+  }
+
+  async finish(): Promise<Uint8Array> {
+    this.doc.end();
+    await this.ended;
+    const bytes = new Uint8Array(this.chunks.reduce((n, chunk) => n + chunk.length, 0));
+    let offset = 0;
+    for (const chunk of this.chunks) {
+      bytes.set(chunk, offset);
+      offset += chunk.length;
+    }
+    return bytes;
+  }
+
+  /** Width of one line of text in mm. */
+  widthOf(text: string, style: TextStyle = {}): number {
+    let sum = 0;
+    for (const run of this.runs(text, style.bold ?? false)) {
+      const key = `${run.face} ${run.text}`;
+      let width = this.widths.get(key);
+      if (width === undefined) {
+        width = this.doc.font(run.face).fontSize(1000).widthOfString(run.text, FEATURES);
+        this.widths.set(key, width);
+      }
+      sum += width;
+    }
+    return (sum * (style.size ?? SIZE.body)) / 1000 / POINTS;
+  }
+
+  /** Writes one line with its baseline at y; `angle` (rad, clockwise) turns it about (x, y). Returns its width, mm. */
+  text(text: string, x: number, y: number, style: TextStyle = {}, angle = 0): number {
+    if (text === '') return 0;
+    const size = style.size ?? SIZE.body;
+    const width = this.widthOf(text, style);
+    const shift = style.align === 'right' ? -width : style.align === 'centre' ? -width / 2 : 0;
+    this.record(text, x, y, shift, width, size, angle);
+    this.doc.save();
+    if (angle !== 0) this.doc.rotate((angle * 180) / Math.PI, { origin: [x * POINTS, y * POINTS] });
+    this.doc.fillColor(style.colour ?? INK.black).fontSize(size);
+    let at = x + shift;
+    for (const run of this.runs(text, style.bold ?? false)) {
+      this.doc
+        .font(run.face)
+        .text(run.text, at * POINTS, y * POINTS, { ...FEATURES, lineBreak: false, baseline: 'alphabetic' });
+      at += this.widths.get(`${run.face} ${run.text}`)! * (size / 1000 / POINTS);
+    }
+    this.doc.restore();
+    return width;
+  }
+
+  line(from: Point, to: Point, style: LineStyle = {}): void {
+    this.polyline([from, to], style);
+  }
+
+  polyline(points: readonly Point[], style: LineStyle = {}, closed = false): void {
+    this.trace(points, closed);
+    this.stroke(style);
+  }
+
+  /** Fills a polygon, and strokes it where a line style is given. */
+  polygon(points: readonly Point[], fill: string, style?: LineStyle): void {
+    this.trace(points, true);
+    this.doc.fill(fill);
+    if (style) this.polyline(points, style, true);
+  }
+
+  rectangle(x: number, y: number, width: number, height: number, style: LineStyle & { readonly fill?: string }): void {
+    const box: Point[] = [
+      [x, y],
+      [x + width, y],
+      [x + width, y + height],
+      [x, y + height],
+    ];
+    if (style.fill) this.polygon(box, style.fill);
+    if (style.width !== undefined) this.polyline(box, style, true);
+  }
+
+  /** A rectangle with half-round ends; a circle where width = height. */
+  pill(box: Box, style: LineStyle & { readonly fill?: string }): void {
+    const [x, y] = [box.x - box.width / 2, box.y - box.height / 2];
+    const draw = (): PDFKit.PDFDocument =>
+      this.doc.roundedRect(x * POINTS, y * POINTS, box.width * POINTS, box.height * POINTS, (box.height * POINTS) / 2);
+    if (style.fill) {
+      draw();
+      this.doc.fill(style.fill);
+    }
+    if (style.width !== undefined) {
+      draw();
+      this.stroke(style);
+    }
+  }
+
+  circle(x: number, y: number, radius: number, style: LineStyle & { readonly fill?: string }): void {
+    this.pill({ x, y, width: 2 * radius, height: 2 * radius, angle: 0 }, style);
+  }
+
+  /** Fills a turned box: the white break under a mark. */
+  blot(box: Box, colour: string = INK.white): void {
+    this.polygon(corners(box), colour);
+  }
+
+  private trace(points: readonly Point[], closed: boolean): void {
+    points.forEach(([x, y], i) => {
+      if (i === 0) this.doc.moveTo(x * POINTS, y * POINTS);
+      else this.doc.lineTo(x * POINTS, y * POINTS);
+    });
+    if (closed) this.doc.closePath();
+  }
+
+  private stroke(style: LineStyle): void {
+    this.doc
+      .lineWidth((style.width ?? LINE.normal) * POINTS)
+      .lineCap(style.cap ?? 'butt')
+      .lineJoin('round')
+      .strokeColor(style.colour ?? INK.black);
+    if (style.dash) this.doc.dash(style.dash[0] * POINTS, { space: style.dash[1] * POINTS });
+    this.doc.stroke();
+    if (style.dash) this.doc.undash();
+  }
+
+  private record(text: string, x: number, y: number, shift: number, width: number, size: number, angle: number): void {
+    const height = (size * (CAP + DESCENT)) / POINTS;
+    // Middle of the text from the turning point, before turning.
+    const [u, v] = [shift + width / 2, (size * (DESCENT - CAP)) / 2 / POINTS];
+    const [c, s] = [Math.cos(angle), Math.sin(angle)];
+    this.placed.push({
+      sheet: this.current,
+      text,
+      x: x + u * c - v * s,
+      y: y + u * s + v * c,
+      width,
+      height,
+      angle,
+    });
+  }
+
+  private runs(text: string, bold: boolean): { readonly face: Face; readonly text: string }[] {
+    const runs: { face: Face; text: string }[] = [];
+    for (const char of text) {
+      const own: Face = bold ? 'bold' : 'regular';
+      const behind: Face = bold ? 'fallbackBold' : 'fallback';
+      const covered = this.has(own, char);
+      const face = covered ? own : behind;
+      const shown = covered || this.has(behind, char) ? char : '\uFFFD';
+      const last = runs.at(-1);
+      if (last?.face === face) last.text += shown;
+      else runs.push({ face, text: shown });
+    }
+    return runs;
+  }
+
+  private has(face: Face, char: string): boolean {
+    const key = face + char;
+    let known = this.covered.get(key);
+    if (known === undefined) {
+      this.doc.font(face);
+      known = (this.doc as unknown as Inner)._font.font.hasGlyphForCodePoint(char.codePointAt(0)!);
+      this.covered.set(key, known);
+    }
+    return known;
+  }
+}
+
+/** Tabular figures everywhere: columns stay straight, and a number has the same width wherever it stands. */
+const FEATURES = { features: ['tnum'] as unknown as PDFKit.Mixins.OpenTypeFeatures[] };
+
+/** Height of capitals in mm. */
+export const capHeight = (size: number): number => (size * CAP) / POINTS;
+/** Distance of baselines in mm. */
+export const lineHeight = (size: number): number => (size * 1.3) / POINTS;

@@ -1,0 +1,191 @@
+import { fitText, wrapText } from './fit-text.js';
+import { INK, LINE, SIZE } from './ink.js';
+import type { Paper } from './paper.js';
+import { lineHeight, type Pen } from './pen.js';
+
+export interface Column<Row> {
+  /** One or two lines, parted by \n. */
+  readonly head: string;
+  readonly align?: 'left' | 'right' | 'centre';
+  readonly bold?: boolean;
+  /** What the hand must not use. */
+  readonly grey?: boolean;
+  /** Wraps to several lines and takes what room is left. */
+  readonly wraps?: boolean;
+  /** An empty square to tick, drawn; `value` is not asked. */
+  readonly tick?: boolean;
+  readonly value?: (row: Row) => string;
+}
+
+export interface TableOptions<Row> {
+  /** A heading above the first row of each run of rows that share it. */
+  readonly group?: (row: Row) => string;
+  readonly size?: number;
+}
+
+/** Draws rows from y down over as many sheets as they need, the head repeated, a hair rule under every fifth row. Returns where the next thing may start. */
+export function drawTable<Row>(
+  paper: Paper,
+  y: number,
+  columns: readonly Column<Row>[],
+  rows: readonly Row[],
+  options: TableOptions<Row> = {},
+): number {
+  const { pen } = paper;
+  const layout = layOut(pen, paper.room.width, columns, rows, options.size ?? SIZE.body);
+  const foot = (): number => paper.room.y + paper.room.height;
+  let at = y;
+  if (at + layout.headHeight + 3 * layout.rowHeight > foot()) at = paper.continueSheet().y;
+  at = drawHead(pen, paper.room.x, at, columns, layout);
+  let group: string | undefined;
+  let inGroup = 0;
+  for (const row of rows) {
+    const cells = columns.map((column, i) => cellLines(pen, column, row, layout, i));
+    const height = layout.rowHeight + (Math.max(1, ...cells.map((c) => c.length)) - 1) * lineHeight(layout.size);
+    const heading = options.group?.(row);
+    const starts = heading !== undefined && heading !== group;
+    if (at + height + (starts ? GROUP + layout.rowHeight : 0) > foot()) {
+      at = drawHead(pen, paper.room.x, paper.continueSheet().y, columns, layout);
+      if (heading !== undefined && !starts) at = drawGroup(pen, paper, at, `${heading}, continued`);
+      inGroup = 0;
+    }
+    if (starts) {
+      group = heading;
+      at = drawGroup(pen, paper, at, heading);
+      inGroup = 0;
+    }
+    drawRow(pen, paper.room.x, at, columns, cells, layout);
+    at += height;
+    if (++inGroup % 5 === 0)
+      pen.line([paper.room.x, at], [paper.room.x + layout.total, at], { width: LINE.hair, colour: INK.grey });
+  }
+  return at + 3;
+}
+
+interface Layout {
+  readonly widths: readonly number[];
+  readonly gap: number;
+  readonly total: number;
+  readonly size: number;
+  readonly rowHeight: number;
+  readonly headHeight: number;
+  readonly headLines: number;
+}
+
+const GROUP = 8;
+/** Between columns, mm: least and most. */
+const GAP = { least: 2.5, most: 9 } as const;
+const TICK = 3.2;
+/** Type no smaller than this, pt. */
+const LEAST_SIZE = 7;
+/** Least width of a wrapping column, mm. */
+const WRAP_LEAST = 30;
+
+function layOut<Row>(
+  pen: Pen,
+  room: number,
+  columns: readonly Column<Row>[],
+  rows: readonly Row[],
+  wanted: number,
+): Layout {
+  const headLines = Math.max(1, ...columns.map((c) => c.head.split('\n').length));
+  const measure = (size: number): number[] =>
+    columns.map((column) => {
+      const head = Math.max(...column.head.split('\n').map((line) => pen.widthOf(line, { size: SIZE.note })));
+      if (column.tick) return Math.max(TICK, head);
+      if (column.wraps) return Math.max(WRAP_LEAST, head);
+      const style = { size, bold: column.bold ?? false };
+      return rows.reduce((most, row) => Math.max(most, pen.widthOf(column.value!(row), style)), head);
+    });
+  const gaps = (gap: number): number => gap * (columns.length - 1);
+  const sum = (widths: readonly number[]): number => widths.reduce((a, b) => a + b, 0);
+  let size = wanted;
+  let widths = measure(size);
+  while (sum(widths) + gaps(GAP.least) > room && size > LEAST_SIZE) widths = measure((size -= 0.5));
+  const over = sum(widths) + gaps(GAP.least) - room;
+  // What is still too wide gives way at its widest column; cells are cut there.
+  if (over > 0) {
+    const widest = widths.indexOf(Math.max(...widths));
+    widths = widths.map((w, i) => (i === widest ? Math.max(12, w - over) : w));
+  }
+  const wraps = columns.findIndex((c) => c.wraps);
+  const left = room - sum(widths) - gaps(GAP.least);
+  const extra = columns.length > 1 ? Math.min(GAP.most - GAP.least, Math.max(0, left) / (columns.length - 1)) : 0;
+  const gap = wraps >= 0 ? Math.min(GAP.least + extra, 4.5) : GAP.least + extra;
+  if (wraps >= 0) widths = widths.map((w, i) => (i === wraps ? w + Math.max(0, room - sum(widths) - gaps(gap)) : w));
+  return {
+    widths,
+    gap,
+    total: sum(widths) + gaps(gap),
+    size,
+    rowHeight: lineHeight(size) + 1,
+    headHeight: headLines * lineHeight(SIZE.note) + 2.5,
+    headLines,
+  };
+}
+
+function drawHead<Row>(pen: Pen, x: number, y: number, columns: readonly Column<Row>[], layout: Layout): number {
+  let at = x;
+  columns.forEach((column, i) => {
+    const lines = column.head.split('\n');
+    const width = layout.widths[i]!;
+    const align = column.align ?? 'left';
+    lines.forEach((line, k) => {
+      const baseline = y + (k + 1 + layout.headLines - lines.length) * lineHeight(SIZE.note);
+      pen.text(line, anchor(at, width, align), baseline, {
+        size: SIZE.note,
+        align,
+        colour: column.grey ? INK.grey : INK.black,
+      });
+    });
+    at += width + layout.gap;
+  });
+  const rule = y + layout.headLines * lineHeight(SIZE.note) + 1.3;
+  pen.line([x, rule], [x + layout.total, rule], { width: LINE.normal });
+  return rule + 0.6;
+}
+
+function drawGroup(pen: Pen, paper: Paper, y: number, heading: string): number {
+  const fitted = fitText(pen, heading, paper.room.width, { size: SIZE.body + 1, bold: true }, SIZE.note);
+  pen.text(fitted.text, paper.room.x, y + 5.5, { size: fitted.size, bold: true });
+  return y + GROUP;
+}
+
+function cellLines<Row>(pen: Pen, column: Column<Row>, row: Row, layout: Layout, i: number): string[] {
+  if (column.tick) return [''];
+  const style = { size: layout.size, bold: column.bold ?? false };
+  const text = column.value!(row);
+  return column.wraps
+    ? wrapText(pen, text, layout.widths[i]!, style)
+    : [fitText(pen, text, layout.widths[i]! + 0.01, style, layout.size).text];
+}
+
+function drawRow<Row>(
+  pen: Pen,
+  x: number,
+  y: number,
+  columns: readonly Column<Row>[],
+  cells: readonly (readonly string[])[],
+  layout: Layout,
+): void {
+  let at = x;
+  const baseline = y + layout.rowHeight * 0.74;
+  columns.forEach((column, i) => {
+    const width = layout.widths[i]!;
+    const align = column.align ?? 'left';
+    if (column.tick) pen.rectangle(at, baseline - TICK + 0.4, TICK, TICK, { width: LINE.thin });
+    else
+      cells[i]!.forEach((line, k) => {
+        pen.text(line, anchor(at, width, align), baseline + k * lineHeight(layout.size), {
+          size: layout.size,
+          bold: column.bold ?? false,
+          colour: column.grey ? INK.grey : INK.black,
+          align,
+        });
+      });
+    at += width + layout.gap;
+  });
+}
+
+const anchor = (x: number, width: number, align: 'left' | 'right' | 'centre'): number =>
+  align === 'left' ? x : align === 'right' ? x + width : x + width / 2;

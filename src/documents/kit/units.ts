@@ -1,0 +1,90 @@
+import type { Job } from '../../model/job/index.js';
+
+/** Numbers for people, in the job's units of output. Unknown is blank. Everything inside stays mm, N, kg, MPa, rad. */
+export interface Units {
+  readonly lengthUnit: 'mm' | 'in';
+  readonly forceUnit: 'N' | 'kN' | 'lbf' | 'kip';
+  readonly massUnit: 'kg' | 'lb';
+  /** For the strip along the foot. */
+  readonly words: string;
+  length(mm: number | null, decimals?: number): string;
+  force(newton: number | null): string;
+  mass(kg: number | null): string;
+  area(mm2: number | null): string;
+  angle(rad: number | null): string;
+}
+
+/** The formatter of a job; `largest` is the largest force in N that it will print, and decides between N and kN. */
+export function unitsOf(job: Job, largest: number): Units {
+  return job.output.units === 'SI' ? si(largest) : us(largest, job.output.fractions);
+}
+
+function si(largest: number): Units {
+  const kilo = largest >= 10_000;
+  const decimals = kilo ? decimalsFor(largest / 1000) : decimalsFor(largest);
+  return {
+    lengthUnit: 'mm',
+    forceUnit: kilo ? 'kN' : 'N',
+    massUnit: 'kg',
+    words: `mm, ${kilo ? 'kN' : 'N'}, kg, °`,
+    length: (mm, digits = 1) => fixed(mm, digits),
+    force: (n) => signed(n === null ? null : kilo ? n / 1000 : n, decimals),
+    mass: (kg) => fixed(kg, kg !== null && kg < 1 ? 3 : 2),
+    area: (mm2) => fixed(mm2, 0),
+    angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
+  };
+}
+
+/** NIST SP 811 (2008), appendix B.8: 1 lbf = 4.448222 N, 1 lb = 0.45359237 kg; 1 in = 25.4 mm exactly. */
+const NEWTON_PER_LBF = 4.4482216152605;
+const KG_PER_LB = 0.45359237;
+const MM_PER_INCH = 25.4;
+
+function us(largest: number, fractions: boolean): Units {
+  const kip = largest / NEWTON_PER_LBF >= 10_000;
+  const per = NEWTON_PER_LBF * (kip ? 1000 : 1);
+  const decimals = decimalsFor(largest / per);
+  return {
+    lengthUnit: 'in',
+    forceUnit: kip ? 'kip' : 'lbf',
+    massUnit: 'lb',
+    words: `in, ${kip ? 'kip' : 'lbf'}, lb, °`,
+    length: (mm, digits = 1) =>
+      mm === null ? '' : fractions ? inchFraction(mm / MM_PER_INCH) : fixed(mm / MM_PER_INCH, digits + 2),
+    force: (n) => signed(n === null ? null : n / per, decimals),
+    mass: (kg) => fixed(kg === null ? null : kg / KG_PER_LB, 3),
+    area: (mm2) => fixed(mm2 === null ? null : mm2 / MM_PER_INCH ** 2, 2),
+    angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
+  };
+}
+
+/** Whole inches and the nearest thirty-second in lowest terms: 12 3/32. */
+export function inchFraction(inches: number): string {
+  const parts = Math.round(Math.abs(inches) * 32);
+  const [whole, rest] = [Math.floor(parts / 32), parts % 32];
+  const sign = inches < 0 && parts > 0 ? '−' : '';
+  if (rest === 0) return `${sign}${whole}`;
+  let [top, bottom] = [rest, 32];
+  while (top % 2 === 0) [top, bottom] = [top / 2, bottom / 2];
+  return whole === 0 ? `${sign}${top}/${bottom}` : `${sign}${whole} ${top}/${bottom}`;
+}
+
+/** Decimals that give the largest number about four figures. */
+const decimalsFor = (largest: number): number => (largest >= 1000 ? 0 : largest >= 100 ? 1 : 2);
+
+/** Fixed decimals with a true minus; blank for unknown; never minus nought. */
+export function fixed(value: number | null | undefined, decimals: number): string {
+  if (value === null || value === undefined || !Number.isFinite(value)) return '';
+  const text = Math.abs(value).toFixed(decimals);
+  return value < 0 && Number(text) !== 0 ? `−${text}` : text;
+}
+
+/** Fixed decimals with + or −: a force says whether it pulls. */
+export function signed(value: number | null | undefined, decimals: number): string {
+  const text = fixed(value, decimals);
+  return text === '' || text.startsWith('−') || Number(text) === 0 ? text : `+${text}`;
+}
+
+/** T, C or nothing beside a force: tension positive. `zero` in N is what counts as none. */
+export const tensionOrCompression = (force: number | null, zero: number): '' | 'T' | 'C' =>
+  force === null || Math.abs(force) <= zero ? '' : force > 0 ? 'T' : 'C';
