@@ -19,6 +19,8 @@ export interface Assessment {
   readonly forces: { readonly source: 'given' | 'reciprocal' | 'analysis'; readonly values: Float64Array } | null;
   readonly equilibrium: Equilibrium | null;
   readonly solution: Solution | null;
+  /** What the reciprocal figure says, for check.json and the sheets; null: there is none. */
+  readonly reciprocal: unknown;
   readonly utilisations: readonly Utilisation[];
   /** All findings, worst first; waived stops are in `waived` instead of stopping. */
   readonly findings: readonly Finding[];

@@ -1,0 +1,12 @@
+import { axesOfStruts } from '../detailing/axes.js';
+import { crossingFindings } from '../detailing/crossings.js';
+import { faceForms } from '../detailing/faces.js';
+import { sectionsOf } from '../detailing/sections.js';
+import { detailStruts } from '../detailing/struts.js';
+import type { Assessment } from '../documents/records.js';
+import type { Finding } from '../model/finding.js';
+import type { Job } from '../model/job/index.js';
+import { topologyOf } from '../model/topology.js';
+import type { Truss } from '../model/truss.js';
+import { equilibriumOf } from '../statics/equilibrium.js';
+import { givenForces } from '../statics/given-forces.js';
