@@ -1,12 +1,60 @@
 import { axesOfStruts } from '../detailing/axes.js';
 import { crossingFindings } from '../detailing/crossings.js';
 import { faceForms } from '../detailing/faces.js';
+import { detailHubs } from '../detailing/hubs.js';
 import { sectionsOf } from '../detailing/sections.js';
 import { detailStruts } from '../detailing/struts.js';
 import type { Assessment } from '../documents/records.js';
-import type { Finding } from '../model/finding.js';
 import type { Job } from '../model/job/index.js';
+import type { Parts } from '../model/parts.js';
+import { sectionProperties } from '../model/section.js';
 import { topologyOf } from '../model/topology.js';
 import type { Truss } from '../model/truss.js';
 import { equilibriumOf } from '../statics/equilibrium.js';
 import { givenForces } from '../statics/given-forces.js';
+import { settle } from './settle.js';
+
+/**
+ * All that can be known without solids and plans: numbers of parts, forces, verdicts, findings.
+ * `truss` is in mm and N with the job's scale already in it.
+ */
+export function assess(truss: Truss, job: Job): Assessment {
+  const topology = topologyOf(truss);
+
+  const { sections, findings: sectionFindings } = sectionsOf(truss, job);
+  const radii = Float64Array.from(sections, (s) => (s ? sectionProperties(s.shape).circumradius : 0));
+  const faces = faceForms(topology, {
+    flatnessWarn: job.fit.flatnessWarn_mm,
+    flatnessStop: job.fit.flatnessStop_mm ?? null,
+  });
+  const axes = axesOfStruts(topology, job, faces.forms);
+  const hubs = detailHubs(topology, job, sections, axes);
+  const struts = detailStruts(topology, job, sections, axes, hubs.hubs);
+  const parts: Parts = { struts: struts.struts, hubs: hubs.hubs, panels: [] };
+
+  const given = givenForces(truss);
+  const equilibrium = given.forces && equilibriumOf(topology, given.forces, job.fit);
+
+  return settle({
+    job,
+    topology,
+    forms: faces.forms,
+    parts,
+    forces: given.forces && { source: 'given', values: given.forces },
+    equilibrium,
+    solution: null,
+    reciprocal: null,
+    utilisations: [],
+    findings: [
+      ...given.findings,
+      ...(equilibrium?.findings ?? []),
+      ...faces.findings,
+      ...crossingFindings(topology, radii),
+      ...sectionFindings,
+      ...hubs.findings,
+      ...struts.findings,
+    ],
+    checked: [...(equilibrium ? ['equilibrium'] : []), 'flatness', 'lengths'],
+    notChecked: [...(equilibrium ? [] : ['equilibrium']), 'strength', 'stability'],
+  });
+}

@@ -9,6 +9,7 @@ import { STOCK_FINDINGS } from './stock.js';
 import { STRENGTH_FINDINGS } from './strength.js';
 import { STRUT_FINDINGS } from './struts.js';
 import { TRUSS_FINDINGS } from './truss.js';
+import { WAIVER_FINDINGS } from './waivers.js';
 
 /** The catalogue of findings: every problem the program can report, by code. */
 export const FINDINGS = {
@@ -22,6 +23,7 @@ export const FINDINGS = {
   ...STOCK_FINDINGS,
   ...ASSEMBLY_FINDINGS,
   ...INPUTS_FINDINGS,
+  ...WAIVER_FINDINGS,
 } as const;
 
 export type FindingCode = keyof typeof FINDINGS;
