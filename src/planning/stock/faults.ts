@@ -1,0 +1,38 @@
+import type { StockFault, StockRequest } from './request.js';
+
+/** What in a request cannot be used, all of it at once. An empty list: the request can be planned. */
+export function requestFaults(request: StockRequest): StockFault[] {
+  const faults: StockFault[] = [];
+  const say = (place: string, wrong: string, mend: string): void => {
+    faults.push({ place, wrong, mend });
+  };
+  const number = (v: unknown): v is number => typeof v === 'number' && Number.isFinite(v);
+  const count = (v: unknown): boolean => Number.isSafeInteger(v) && (v as number) >= 0;
+  if (!(number(request.kerf) && request.kerf >= 0)) say('kerf', `is ${request.kerf}`, 'give a width in mm, 0 or more');
+  if (request.endTrim !== undefined && !(number(request.endTrim) && request.endTrim >= 0))
+    say('endTrim', `is ${request.endTrim}`, 'give a length in mm, 0 or more, or leave it out');
+  if (request.stock.length === 0) say('stock', 'is empty', 'give at least one kind of bar');
+  const ends = (v: unknown): boolean => v === undefined || v === 0 || v === 1 || v === 2;
+  if (!ends(request.trimmedEnds)) say('trimmedEnds', `is ${request.trimmedEnds}`, 'give 0, 1 or 2, or leave it out');
+  if (request.seed !== undefined && !Number.isSafeInteger(request.seed))
+    say('seed', `is ${request.seed}`, 'give a whole number, or leave it out');
+  if (request.effort !== undefined && !(number(request.effort) && request.effort > 0))
+    say('effort', `is ${request.effort}`, 'give a number above 0, or leave it out');
+  if (request.timeLimitMs !== undefined && !(number(request.timeLimitMs) && request.timeLimitMs >= 0))
+    say('timeLimitMs', `is ${request.timeLimitMs}`, 'give milliseconds, 0 or more, or leave it out');
+  request.stock.forEach((s, i) => {
+    const place = `stock[${i}] ${s.name}`;
+    if (!(number(s.length) && s.length > 0)) say(place, `has length ${s.length}`, 'give a length in mm above 0');
+    if (s.price !== undefined && !(number(s.price) && s.price >= 0))
+      say(place, `has price ${s.price}`, 'give a price, 0 or more, or leave it out for 1');
+    if (s.available !== undefined && !count(s.available))
+      say(place, `has available ${s.available}`, 'give a whole number, 0 or more, or leave it out');
+    if (!ends(s.trimmedEnds)) say(place, `has trimmedEnds ${s.trimmedEnds}`, 'give 0, 1 or 2, or leave it out');
+  });
+  request.pieces.forEach((p, i) => {
+    const place = `pieces[${i}] ${p.mark}`;
+    if (!(number(p.length) && p.length > 0)) say(place, `has length ${p.length}`, 'give a length in mm above 0');
+    if (!count(p.quantity)) say(place, `has quantity ${p.quantity}`, 'give a whole number, 0 or more');
+  });
+  return faults;
+}

@@ -1,0 +1,124 @@
+import { Effort } from './effort.js';
+import { requestFaults } from './faults.js';
+import { layOut } from './layOut.js';
+import type { Bin, CuttingProblem } from './problem.js';
+import { recover } from './recover.js';
+import type { StockAnswer, StockKind, StockPiece, StockRequest, UncutPiece } from './request.js';
+import { solveCutting } from './solve.js';
+import { linearSolver } from './solver.js';
+import { STEPS_PER_MM, stepsDown, stepsUp, wholePrices } from './steps.js';
+
+/** Work of the usual search: half a minute on one core at the hardest, most jobs end in less than a second. */
+const USUAL_EFFORT = 20e6;
+
+const gcd = (a: number, b: number): number => (b === 0 ? a : gcd(b, a % b));
+
+/**
+ * Cuts pieces from bars at the least total price, with a proven lower bound of that price.
+ *
+ * In whole steps of 0.1 mm (pieces, kerf and trim up, bars down), n pieces fit a bar when their lengths and n - 1 kerfs do.
+ * The same request gives the same plan on every machine unless a time limit cuts it short, which it then says; `clock`
+ * gives ms from any start, and without it a time limit is not heeded. Pieces with a fault, too long for every bar, or left
+ * when the bars run out are named. With a fault outside the pieces no plan is made.
+ */
+export async function planStock(request: StockRequest, clock?: () => number): Promise<StockAnswer> {
+  const faults = requestFaults(request);
+  const nothing = { bars: [], cost: 0, lowerBound: 0, proven: false, uncut: [] };
+  if (faults.some((f) => !f.place.startsWith('pieces['))) return { ...nothing, faults };
+  const bad = new Set(faults.map((f) => f.place));
+  const end = request.timeLimitMs !== undefined && clock ? clock() + request.timeLimitMs : undefined;
+  const effort = new Effort(
+    USUAL_EFFORT * (request.effort ?? 1),
+    end !== undefined && clock ? () => clock() >= end : undefined,
+  );
+
+  const kerf = stepsUp(request.kerf);
+  const room = (s: StockKind): number =>
+    stepsDown(s.length) - stepsUp(request.endTrim ?? 0) * (s.trimmedEnds ?? request.trimmedEnds ?? 1);
+  const kinds = request.stock
+    .map((kind) => ({ kind, room: room(kind) }))
+    .filter(({ kind, room }) => room > 0 && (kind.available ?? 1) > 0);
+  const longestRoom = kinds.reduce((most, k) => Math.max(most, k.room), 0);
+  const longest = longestRoom / STEPS_PER_MM;
+
+  const uncut: UncutPiece[] = [];
+  const byWeight = new Map<number, StockPiece[]>();
+  request.pieces.forEach((piece, i) => {
+    if (bad.has(`pieces[${i}] ${piece.mark}`) || piece.quantity === 0) return;
+    const steps = stepsUp(piece.length);
+    if (steps > longestRoom) {
+      const { mark, length, quantity } = piece;
+      uncut.push({ mark, length, quantity, reason: 'too-long', longest });
+      return;
+    }
+    const group = byWeight.get(steps + kerf);
+    if (group) group.push(piece);
+    else byWeight.set(steps + kerf, [piece]);
+  });
+  const weights = [...byWeight.keys()].sort((a, b) => b - a);
+  if (weights.length === 0) return { ...nothing, uncut, faults, proven: uncut.length === 0 && faults.length === 0 };
+
+  const { whole, perUnit, exact } = wholePrices(kinds.map(({ kind }) => kind.price ?? 1));
+  const problem = shrink(
+    weights,
+    weights.map((w) => byWeight.get(w)!.reduce((sum, p) => sum + p.quantity, 0)),
+    kinds.map(({ kind, room }, k) => ({
+      capacity: room + kerf,
+      cost: whole[k]!,
+      available: kind.available ?? Infinity,
+    })),
+  );
+  const real = problem.bins.length;
+  const solved = solveCutting(await linearSolver(), withSubstitute(problem), request.seed ?? 1, effort);
+  const laid = layOut(
+    recover(problem, solved.runs),
+    weights.map((w) => ({ steps: w - kerf, pieces: byWeight.get(w)! })),
+    kinds.map((k) => k.room),
+    kerf,
+    real,
+  );
+  for (const { piece, quantity } of laid.left) {
+    uncut.push({ mark: piece.mark, length: piece.length, quantity, reason: 'no-stock-left', longest });
+  }
+  const bars = laid.bars.map(({ bin, cuts, offcut }) => ({ stock: kinds[bin]!.kind.name, cuts, offcut }));
+  const cost = exact
+    ? laid.bars.reduce((sum, b) => sum + whole[b.bin]!, 0) / perUnit
+    : laid.bars.reduce((sum, b) => sum + (kinds[b.bin]!.kind.price ?? 1), 0);
+  const claimed = laid.left.length === 0;
+  const proven = claimed && solved.cost <= solved.lowerBound;
+  return {
+    bars,
+    cost,
+    lowerBound: claimed ? (proven ? cost : solved.lowerBound / perUnit) : 0,
+    proven: proven && uncut.length === 0 && faults.length === 0,
+    uncut,
+    faults,
+    ...(effort.stopped ? { stopped: 'time' as const } : {}),
+  };
+}
+
+/** Divides all weights by their common divisor; bars lose what is less than one. */
+function shrink(weights: readonly number[], demand: readonly number[], bins: readonly Bin[]): CuttingProblem {
+  const divisor = weights.reduce(gcd, 0);
+  return {
+    weights: Int32Array.from(weights, (w) => w / divisor),
+    demand: Int32Array.from(demand),
+    bins: bins.map((b) => ({ ...b, capacity: Math.floor(b.capacity / divisor) })),
+  };
+}
+
+/**
+ * Where pieces could run out of bars: the longest bar once more, without limit, at a price above any saving that one such
+ * bar can bring, so that a plan leaves as little uncut as it can. Bars of it are what is missing.
+ */
+function withSubstitute(problem: CuttingProblem): CuttingProblem {
+  const endless = problem.bins.reduce((most, b) => (b.available === Infinity ? Math.max(most, b.capacity) : most), 0);
+  if (problem.weights[0]! <= endless) return problem;
+  const longest = problem.bins.reduce((a, b) => (b.capacity > a.capacity ? b : a));
+  const dearest = Math.max(1, ...problem.bins.map((b) => b.cost));
+  const pieces = Math.floor(longest.capacity / problem.weights[problem.weights.length - 1]!);
+  return {
+    ...problem,
+    bins: [...problem.bins, { capacity: longest.capacity, cost: dearest * (pieces + 1), available: Infinity }],
+  };
+}

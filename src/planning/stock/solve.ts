@@ -1,0 +1,166 @@
+import type { Highs } from 'highs';
+import { seededRandom } from '../../maths/random.js';
+import type { Effort } from './effort.js';
+import { generate } from './generate.js';
+import { firstFitDecreasing, ValueCorrection } from './greedy.js';
+import { Master } from './master.js';
+import { mixBound, type Requirement } from './mix.js';
+import { Packer } from './pack.js';
+import { Pricer } from './pricer.js';
+import { type CuttingProblem, type Pattern, type Run, runsCost } from './problem.js';
+import { materialRequirement, requirementFrom } from './requirement.js';
+
+export interface CuttingSolution {
+  readonly runs: readonly Run[];
+  readonly cost: number;
+  readonly lowerBound: number;
+}
+
+const gcd = (a: number, b: number): number => (b === 0 ? a : gcd(b, a % b));
+
+/** Value-correction rounds before column generation. */
+const QUICK_ROUNDS = 12;
+
+/**
+ * Least-cost plan and a proven lower bound of its cost.
+ *
+ * 1. bounds by material, plans by first-fit decreasing and sequential value correction: most jobs end here;
+ * 2. column generation over all kinds of bar;
+ * 3. its duals, as whole numbers, bound the mix of bars;
+ * 4. the cheapest mix that the bounds allow is packed exactly; a mix that even fractions cannot fill is a new bound.
+ */
+export function solveCutting(highs: Highs, problem: CuttingProblem, seed: number, effort: Effort): CuttingSolution {
+  const { bins } = problem;
+  const random = seededRandom(seed);
+  const pricer = new Pricer(problem.weights);
+  const unit = bins.reduce((g, b) => gcd(g, b.cost), 0) || 1;
+  const requirements: Requirement[] = [materialRequirement(problem, pricer, effort)];
+  let bound = mixBound(highs, problem, requirements, unit, effort);
+  let lowerBound = bound.cost;
+
+  let best: Run[] | undefined;
+  let cost = Infinity;
+  const offer = (plan: { runs: Run[]; complete: boolean }): void => {
+    if (!plan.complete) return;
+    const c = runsCost(problem, plan.runs);
+    if (c < cost) {
+      cost = c;
+      best = plan.runs;
+    }
+  };
+  const done = (): boolean => cost <= lowerBound || effort.exhausted;
+  const pool: Pattern[] = [];
+  const first = firstFitDecreasing(problem);
+  offer(first);
+  for (const r of first.runs) pool.push(r.pattern);
+  const correction = new ValueCorrection(problem, random);
+  for (let round = 0; round < QUICK_ROUNDS && !done(); round++) {
+    const plan = correction.round(effort);
+    offer(plan);
+    for (const r of plan.runs) pool.push(r.pattern);
+  }
+  const answer = (): CuttingSolution => ({ runs: best ?? [], cost, lowerBound: Math.min(lowerBound, cost) });
+  if (done()) return answer();
+
+  const costs = bins.map((b) => b.cost);
+  const largest = Math.max(1, ...costs);
+  const penalty = Float64Array.from(problem.weights, () => largest * 10);
+  const master = new Master(
+    highs,
+    problem,
+    'cost',
+    penalty,
+    bins.map((b) => b.available),
+  );
+  try {
+    master.add(pool);
+    const root = generate(
+      master,
+      pricer,
+      problem,
+      problem.demand,
+      bins.map((b) => b.available),
+      {
+        lagrangian: (worth, carry) => relaxedMix(problem, worth, carry),
+        reached: (objective, lower) => Math.ceil(lower / unit - 1e-7) >= Math.ceil(objective / unit - 1e-7),
+        refuted: () => false,
+        scale: largest,
+      },
+      costs,
+      effort,
+    );
+    requirements.push(requirementFrom(problem, root.boundDuals, pricer, effort));
+    requirements.push(requirementFrom(problem, root.solution.duals, pricer, effort));
+    bound = mixBound(highs, problem, requirements, unit, effort);
+    lowerBound = Math.max(lowerBound, bound.cost);
+    pool.length = 0;
+    pool.push(...master.patterns);
+  } finally {
+    master.dispose();
+  }
+
+  let spare = 0;
+  for (let turn = 0; !done() && bound.mix && turn < 200; turn++) {
+    const mix = bound.mix;
+    const mixCost = mix.reduce((s, n, b) => s + n * costs[b]!, 0);
+    if (mixCost >= cost) break;
+    const packer = new Packer(highs, problem, pricer, mix, pool);
+    try {
+      const g = packer.relax(effort);
+      if (g.state === 'refuted' || g.state === 'converged') {
+        const duals = g.state === 'refuted' ? g.boundDuals : g.solution.duals;
+        const r = requirementFrom(problem, duals, pricer, effort);
+        const held = r.carry.reduce((s, v, b) => s + (mix[b]! > 0 ? v * mix[b]! : 0), 0);
+        pool.length = 0;
+        pool.push(...packer.patterns);
+        if (held >= r.worth) {
+          // Rounding blurred the reason: ask for more room instead.
+          spare = Math.max(spare + 1, Math.ceil(slack(problem, mix) * 1.02));
+        } else {
+          requirements.push(r);
+        }
+      } else if (g.state === 'reached') {
+        let runs: Run[] | undefined;
+        for (let attempt = 0; attempt < (bins.length === 1 ? 1000 : 12) && !runs && !effort.exhausted; attempt++) {
+          runs = packer.dive(attempt === 0 ? undefined : random, 12, effort);
+        }
+        pool.length = 0;
+        pool.push(...packer.patterns);
+        if (runs) offer({ runs, complete: true });
+        else if (bins.length === 1) break;
+        else spare = Math.max(spare + 1, Math.ceil(slack(problem, mix) * 1.05) + 1);
+      } else break;
+    } finally {
+      packer.dispose();
+    }
+    const proven = mixBound(highs, problem, requirements, unit, effort);
+    lowerBound = Math.max(lowerBound, proven.cost);
+    if (done()) break;
+    bound = spare > 0 ? mixBound(highs, problem, requirements, unit, effort, { spare, ceiling: cost - unit }) : proven;
+  }
+  return answer();
+}
+
+/** Steps of capacity beyond the weight of all pieces. */
+function slack(problem: CuttingProblem, mix: readonly number[]): number {
+  let s = 0;
+  for (let b = 0; b < mix.length; b++) s += mix[b]! * problem.bins[b]!.capacity;
+  for (let i = 0; i < problem.weights.length; i++) s -= problem.weights[i]! * problem.demand[i]!;
+  return s;
+}
+
+/** min sum c n with sum carry n >= worth, 0 <= n <= available, n real: cheapest carriers first. */
+function relaxedMix(problem: CuttingProblem, worth: number, carry: readonly number[]): number {
+  const order = carry.map((_, b) => b).filter((b) => carry[b]! > 0);
+  order.sort((a, b) => problem.bins[a]!.cost / carry[a]! - problem.bins[b]!.cost / carry[b]! || a - b);
+  let left = worth;
+  let cost = 0;
+  for (const b of order) {
+    if (carry[b] === Infinity) return cost;
+    const n = Math.min(left / carry[b]!, problem.bins[b]!.available);
+    cost += n * problem.bins[b]!.cost;
+    left -= n * carry[b]!;
+    if (left <= 0) break;
+  }
+  return cost;
+}
