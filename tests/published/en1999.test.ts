@@ -1,0 +1,45 @@
+import { expect, it } from 'vitest';
+import { MATERIALS } from '../../src/model/catalogue/materials/index.js';
+import { axialOnly } from '../../src/strength/actions.js';
+import { chi } from '../../src/strength/en1999/chi.js';
+import { EN_1999 } from '../../src/strength/en1999/index.js';
+
+const rules = { serviceClass: 1, factor: 3 } as const;
+
+// Computed independently with numpy; alpha and lambda0 of class A seen in TALAT 2301, of class B from memory.
+const TABLE: readonly (readonly [number, number, number])[] = [
+  [0.2, 0.9796, 0.9377],
+  [0.6, 0.8727, 0.7886],
+  [1.0, 0.6563, 0.5721],
+  [1.4, 0.4158, 0.3738],
+  [1.8, 0.2699, 0.2495],
+  [2.2, 0.1867, 0.1756],
+  [2.6, 0.1363, 0.1296],
+  [3.0, 0.1037, 0.0993],
+];
+
+it('chi of buckling classes A and B, EN 1999-1-1 6.3.1.2', () => {
+  for (const [lambda, a, b] of TABLE) {
+    expect(chi(lambda, 'A')).toBeCloseTo(a, 4);
+    expect(chi(lambda, 'B')).toBeCloseTo(b, 4);
+  }
+});
+
+it('a tube of 25 x 2 mm, 1 m long: 5.25 kN of 6060-T6, 5.50 kN of 6082-T6', () => {
+  // Computed independently with numpy, gammaM1 1.1 (seen in TALAT 9.2).
+  const shape = { kind: 'tube', diameter: 25, wall: 2 } as const;
+  for (const [name, wanted, places] of [
+    ['6060-T6', 5252.380836349753, 9],
+    ['6082-T6', 5500, 2],
+  ] as const) {
+    const member = { shape, material: MATERIALS.get(name)!, bucklingLength: 1000 };
+    const { utilisation, rule } = EN_1999.judge(member, axialOnly('given', -wanted, 'short'), rules);
+    expect(utilisation).toBeCloseTo(1, places);
+    expect(rule).toBe('EN 1999-1-1 6.3.1 (6.49)');
+  }
+});
+
+it('a wall thicker than its strength holds for is out of scope', () => {
+  const shape = { kind: 'tube', diameter: 50, wall: 6 } as const;
+  expect(EN_1999.outOfScope({ shape, material: MATERIALS.get('6082-T6')!, bucklingLength: 1000 })).toContain('6 mm');
+});
