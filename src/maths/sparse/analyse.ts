@@ -1,8 +1,8 @@
-import { blockGraph } from './blockGraph.js';
+import { blockGraph } from './block-graph.js';
 import type { SparseMatrix } from './csc.js';
-import { OVERSHOOT } from './frontKernel.js';
-import { minimumDegree } from './minimumDegree.js';
-import { nestedDissection } from './nestedDissection.js';
+import { OVERSHOOT } from './front-kernel.js';
+import { minimumDegree } from './minimum-degree.js';
+import { nestedDissection } from './nested-dissection.js';
 import { type Supernodes, supernodes } from './supernodes.js';
 
 /** How a symmetric pattern is factorised: found once, used for every set of values on that pattern. */

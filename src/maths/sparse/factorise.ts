@@ -1,6 +1,6 @@
 import type { Analysis } from './analyse.js';
 import type { SparseMatrix } from './csc.js';
-import { eliminateFront, OVERSHOOT } from './frontKernel.js';
+import { eliminateFront, OVERSHOOT } from './front-kernel.js';
 
 /** L and D of P A Pᵀ = L D Lᵀ, with what the pivots say about A. */
 export interface Factor {

@@ -1,4 +1,4 @@
-import type { BlockGraph } from './blockGraph.js';
+import type { BlockGraph } from './block-graph.js';
 
 /**
  * The shape of the factor for one order of elimination. Supernodes are runs of columns that share their rows; they stand

@@ -1,12 +1,12 @@
 import { solve as denseSolve, EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import { describe, expect, it } from 'vitest';
 import { analyse } from '../../../src/maths/sparse/analyse.js';
-import { blockGraph } from '../../../src/maths/sparse/blockGraph.js';
+import { blockGraph } from '../../../src/maths/sparse/block-graph.js';
 import { fromTriplets, transpose } from '../../../src/maths/sparse/csc.js';
 import { factorise } from '../../../src/maths/sparse/factorise.js';
-import { minimumDegree } from '../../../src/maths/sparse/minimumDegree.js';
+import { minimumDegree } from '../../../src/maths/sparse/minimum-degree.js';
 import { largest, multiply, multiplySymmetric, multiplyTransposed } from '../../../src/maths/sparse/multiply.js';
-import { nestedDissection } from '../../../src/maths/sparse/nestedDissection.js';
+import { nestedDissection } from '../../../src/maths/sparse/nested-dissection.js';
 import { solve } from '../../../src/maths/sparse/solve.js';
 import { supernodes } from '../../../src/maths/sparse/supernodes.js';
 import { dense, denseSymmetric, randomSymmetric } from './random.js';

@@ -1,5 +1,5 @@
-import type { BlockGraph } from './blockGraph.js';
-import { minimumDegree } from './minimumDegree.js';
+import type { BlockGraph } from './block-graph.js';
+import { minimumDegree } from './minimum-degree.js';
 
 /** Below this many blocks a part is ordered by minimum degree; cutting further no longer lowers the fill (measured). */
 const LEAF_BLOCKS = 48;

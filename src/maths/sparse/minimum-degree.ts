@@ -1,4 +1,4 @@
-import type { BlockGraph } from './blockGraph.js';
+import type { BlockGraph } from './block-graph.js';
 
 /**
  * An elimination order of few fill: approximate minimum degree on the quotient graph, with absorption of elements,

@@ -1,10 +1,10 @@
 import { SingularValueDecomposition } from 'ml-matrix';
 import { describe, expect, it } from 'vitest';
 import { seededRandom } from '../../../src/maths/random.js';
-import { eliminateColumns, type SparseVector } from '../../../src/maths/sparse/columnElimination.js';
+import { eliminateColumns, type SparseVector } from '../../../src/maths/sparse/column-elimination.js';
 import { fromTriplets, type SparseMatrix, transpose } from '../../../src/maths/sparse/csc.js';
 import { largest, multiply } from '../../../src/maths/sparse/multiply.js';
-import { leftNullSpace, rightNullSpace } from '../../../src/maths/sparse/nullSpace.js';
+import { leftNullSpace, rightNullSpace } from '../../../src/maths/sparse/null-space.js';
 import { dense } from './random.js';
 
 /** A seeded sparse matrix of unit-sized columns whose last columns and rows depend on earlier ones. */

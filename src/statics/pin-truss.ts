@@ -1,0 +1,164 @@
+import { analyse } from '../maths/sparse/analyse.js';
+import { fromTriplets, type SparseMatrix } from '../maths/sparse/csc.js';
+import { type Factor, factorise } from '../maths/sparse/factorise.js';
+import { solve } from '../maths/sparse/solve.js';
+import { blockPoints, type Freedoms, gather, numberFreedoms, spread } from './freedoms.js';
+import { barDirections, type PinFigure } from './pin-figure.js';
+
+/** Pivots below this share of their own diagonal entry: the stiffness is singular to working precision, its solutions are not to be trusted. */
+const SINGULAR_PIVOT = 1e-11;
+
+export interface PinTruss extends PinFigure {
+  /** E A of each bar, N; positive. */
+  readonly axialStiffness: Float64Array;
+}
+
+/** Loads of one case. */
+export interface PinLoads {
+  /** N, three a node. */
+  readonly forces: Float64Array;
+  /** Elongation that each bar would take if it were free, mm: temperature (alpha ΔT L) or lack of fit (longer: positive). Absent: none. */
+  readonly freeElongation?: Float64Array;
+}
+
+export interface PinResult {
+  /** N, tension positive. */
+  readonly axial: Float64Array;
+  /** mm, three a node. */
+  readonly displacements: Float64Array;
+  /** N, three a node: what the support gives to the node in its held directions, 0 elsewhere. */
+  readonly reactions: Float64Array;
+  /** Normalised residual of the solve. */
+  readonly residual: number;
+}
+
+export type PinSolution =
+  | { readonly state: 'solved'; readonly cases: readonly PinResult[]; readonly pivotRatio: number }
+  /** The figure can move: `node` has a freedom that no bar resists. */
+  | { readonly state: 'mechanism'; readonly node: number };
+
+/**
+ * Forces, displacements and reactions of a pin-jointed truss by direct stiffness: K d = p + A (EA/L) e0 with
+ * K = A (EA/L) Aᵀ, then t = (EA/L)(Aᵀ d - e0) (McGuire, Gallagher and Ziemian, Matrix Structural Analysis, 2nd ed. 2000, ch. 3).
+ * The stiffness is factorised once for all cases. A figure that can move is a named state; state-counts says how it moves.
+ */
+export function solvePinTruss(truss: PinTruss, cases: readonly PinLoads[]): PinSolution {
+  const freedoms = numberFreedoms(truss.fixed, 3);
+  const { lengths, units } = barDirections(truss);
+  const k = Float64Array.from(lengths, (l, e) => truss.axialStiffness[e] / l);
+  const stiffness = pinStiffness(truss, freedoms, k, units);
+  const factor = factorPin(truss, freedoms, stiffness);
+  if (factor.state === 'zero pivot') return { state: 'mechanism', node: nodeOf(freedoms, factor.stoppedAt) };
+  if (factor.pivotRatio < SINGULAR_PIVOT) return { state: 'mechanism', node: nodeOf(freedoms, weakest(factor)) };
+  const right = cases.map((c) => {
+    const p = c.forces.slice();
+    if (c.freeElongation)
+      addBarForces(
+        p,
+        truss,
+        units,
+        c.freeElongation.map((e0, e) => k[e] * e0),
+        -1,
+      );
+    return gather(freedoms, p);
+  });
+  const { x, residual } = solve(factor, stiffness, right);
+  return {
+    state: 'solved',
+    pivotRatio: factor.pivotRatio,
+    cases: cases.map((c, i) => {
+      const displacements = spread(freedoms, x[i]);
+      const axial = Float64Array.from(
+        k,
+        (ke, e) => ke * (elongation(truss, units, displacements, e) - (c.freeElongation?.[e] ?? 0)),
+      );
+      return { axial, displacements, reactions: reactionsOf(truss, units, axial, c.forces), residual: residual[i] };
+    }),
+  };
+}
+
+/** Lower triangle of A diag(k) Aᵀ, with every entry of each pair of joined nodes present. */
+export function pinStiffness(
+  figure: PinFigure,
+  freedoms: Freedoms,
+  k: ArrayLike<number>,
+  units: Float64Array,
+): SparseMatrix {
+  const rows: number[] = [];
+  const columns: number[] = [];
+  const values: number[] = [];
+  const put = (f: number, g: number, v: number): void => {
+    if (f < 0 || g < 0 || f < g) return;
+    rows.push(f);
+    columns.push(g);
+    values.push(v);
+  };
+  for (let f = 0; f < freedoms.count; f++) put(f, f, 0);
+  for (let e = 0; e < figure.ends.length / 2; e++)
+    for (let s = 0; s < 2; s++)
+      for (let t = 0; t < 2; t++)
+        for (let i = 0; i < 3; i++)
+          for (let j = 0; j < 3; j++) {
+            const v = k[e] * units[3 * e + i] * units[3 * e + j];
+            put(
+              freedoms.of[3 * figure.ends[2 * e + s] + i],
+              freedoms.of[3 * figure.ends[2 * e + t] + j],
+              s === t ? v : -v,
+            );
+          }
+  return fromTriplets(freedoms.count, freedoms.count, rows, columns, values);
+}
+
+const factorPin = (figure: PinFigure, freedoms: Freedoms, k: SparseMatrix): Factor =>
+  factorise(analyse(k, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, figure.nodes) }), k);
+
+const nodeOf = (freedoms: Freedoms, freedom: number): number => Math.floor(freedoms.of.indexOf(freedom) / 3);
+
+/** The unknown of the least pivot. */
+function weakest(factor: Factor): number {
+  const { analysis, values } = factor;
+  let [least, at] = [Infinity, 0];
+  for (let s = 0; s < analysis.parent.length; s++) {
+    const width = analysis.starts[s + 1] - analysis.starts[s];
+    for (let k = 0; k < width; k++) {
+      const d = Math.abs(values[analysis.factorStarts[s] + k * width + k]);
+      if (d < least) [least, at] = [d, analysis.order[analysis.starts[s] + k]];
+    }
+  }
+  return at;
+}
+
+/** u · (d_to - d_from) of bar e, mm. */
+function elongation(figure: PinFigure, units: Float64Array, d: Float64Array, e: number): number {
+  const [a, b] = [3 * figure.ends[2 * e], 3 * figure.ends[2 * e + 1]];
+  let sum = 0;
+  for (let i = 0; i < 3; i++) sum += units[3 * e + i] * (d[b + i] - d[a + i]);
+  return sum;
+}
+
+/** Adds `sign` times the pull of the bars' forces on their nodes to p. */
+export function addBarForces(
+  p: Float64Array,
+  figure: PinFigure,
+  units: Float64Array,
+  axial: ArrayLike<number>,
+  sign: 1 | -1,
+): void {
+  for (let e = 0; e < figure.ends.length / 2; e++)
+    for (let i = 0; i < 3; i++) {
+      p[3 * figure.ends[2 * e] + i] += sign * axial[e] * units[3 * e + i];
+      p[3 * figure.ends[2 * e + 1] + i] -= sign * axial[e] * units[3 * e + i];
+    }
+}
+
+/** What the supports give: minus loads and pulls of the bars, in the held directions. */
+export function reactionsOf(
+  figure: PinFigure,
+  units: Float64Array,
+  axial: Float64Array,
+  loads: Float64Array,
+): Float64Array {
+  const p = loads.slice();
+  addBarForces(p, figure, units, axial, 1);
+  return p.map((v, i) => (figure.fixed[i] ? 0 - v : 0));
+}
