@@ -1,11 +1,11 @@
 import { availableParallelism } from 'node:os';
 import { Worker } from 'node:worker_threads';
-import type { Run } from '../model/run.js';
+import type { Each } from './each.js';
 import type { Answer, Order } from './worker.js';
 
-/** Worker threads that do named tasks. `each` is what stages are handed in a Run. */
+/** Worker threads that do named tasks. `each` is what stages are handed. */
 export interface Pool {
-  readonly each: Run['each'];
+  readonly each: Each;
   /** Ends the workers, also in the middle of their work. */
   close(): Promise<void>;
 }

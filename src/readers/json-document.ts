@@ -1,4 +1,4 @@
-import { createScanner, type Node, type ParseError, parseTree } from 'jsonc-parser';
+import { type Node, type ParseError, parseTree } from 'jsonc-parser';
 import { LIMITS } from '../model/limits.js';
 import { type Fault, quoted } from './fault.js';
 import { linePlaces } from './line-places.js';
@@ -60,13 +60,12 @@ export function parseJson(text: string, name: string): JsonDocument {
 
 /** Offset of the first bracket that is nested too deep, or null: the parser recurses, so this is checked first. */
 function tooDeep(text: string): number | null {
-  const scanner = createScanner(text, true);
   let depth = 0;
-  // Token kinds of jsonc-parser, whose enumeration exists in its types only: { } [ ] are 1 to 4, the end is 17.
-  for (let token: number = scanner.scan(); token !== 17; token = scanner.scan()) {
-    if (token === 1 || token === 3) depth++;
-    if (token === 2 || token === 4) depth--;
-    if (depth > LIMITS.depth) return scanner.getTokenOffset();
+  // A text (up to its quotation mark or the end of its line), a comment, or a bracket.
+  for (const match of text.matchAll(/"[^"\\\r\n]*(?:\\.[^"\\\r\n]*)*"?|\/\/.*|\/\*[\s\S]*?(?:\*\/|$)|[[\]{}]/g)) {
+    if (match[0] === '{' || match[0] === '[') depth++;
+    if (match[0] === '}' || match[0] === ']') depth--;
+    if (depth > LIMITS.depth) return match.index;
   }
   return null;
 }

@@ -143,6 +143,9 @@ describe('what is not JSON at all', () => {
     ['[]', /the file is a list, not an object/],
     ['null', /the file is null/],
     ['[['.repeat(100000), /nested more than 32 deep/],
+    [`${'["]",'.repeat(40)}`, /nested more than 32 deep/],
+    [`${'[/*]*/'.repeat(40)}`, /nested more than 32 deep/],
+    [`["${'['.repeat(40)}" // ${'['.repeat(40)}\n]`, /the file is a list/],
     ['{"a":"\u0000"}', /control character/],
     ['{} x', /after the end|not JSON/],
   ])('%.12j', (text, words) => {
