@@ -7,18 +7,21 @@ import { detailStruts } from '../detailing/struts.js';
 import type { Assessment } from '../documents/records.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
+import { scaleTruss } from '../model/scale-truss.js';
 import { sectionProperties } from '../model/section.js';
 import { topologyOf } from '../model/topology.js';
 import type { Truss } from '../model/truss.js';
 import { equilibriumOf } from '../statics/equilibrium.js';
 import { givenForces } from '../statics/given-forces.js';
+import { judge } from '../strength/judge.js';
 import { settle } from './settle.js';
 
 /**
  * All that can be known without solids and plans: numbers of parts, forces, verdicts, findings.
- * `truss` is in mm and N with the job's scale already in it.
+ * `file` is the truss as read, in mm and N; the job's scale is applied here, once.
  */
-export function assess(truss: Truss, job: Job): Assessment {
+export function assess(file: Truss, job: Job): Assessment {
+  const truss = scaleTruss(file, job);
   const topology = topologyOf(truss);
 
   const { sections, findings: sectionFindings } = sectionsOf(truss, job);
@@ -35,6 +38,9 @@ export function assess(truss: Truss, job: Job): Assessment {
   const given = givenForces(truss);
   const equilibrium = given.forces && equilibriumOf(topology, given.forces, job.fit);
 
+  const solution = null;
+  const judgement = judge(truss, parts, solution, job);
+
   return settle({
     job,
     topology,
@@ -42,9 +48,9 @@ export function assess(truss: Truss, job: Job): Assessment {
     parts,
     forces: given.forces && { source: 'given', values: given.forces },
     equilibrium,
-    solution: null,
+    solution,
     reciprocal: null,
-    utilisations: [],
+    utilisations: judgement.utilisations,
     findings: [
       ...given.findings,
       ...(equilibrium?.findings ?? []),
@@ -53,8 +59,9 @@ export function assess(truss: Truss, job: Job): Assessment {
       ...sectionFindings,
       ...hubs.findings,
       ...struts.findings,
+      ...judgement.findings,
     ],
-    checked: [...(equilibrium ? ['equilibrium'] : []), 'flatness', 'lengths'],
-    notChecked: [...(equilibrium ? [] : ['equilibrium']), 'strength', 'stability'],
+    checked: [...(equilibrium ? ['equilibrium'] : []), 'flatness', 'lengths', ...judgement.checked],
+    notChecked: [...(equilibrium ? [] : ['equilibrium']), ...judgement.notChecked, 'stability'],
   });
 }

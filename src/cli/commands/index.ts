@@ -1,4 +1,6 @@
+import { check } from './check.js';
 import type { CliCommand } from './command.js';
+import { newJob } from './new.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [];
+export const commands: readonly CliCommand[] = [newJob, check];

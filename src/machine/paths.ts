@@ -1,0 +1,1 @@
+export { basename, dirname, isAbsolute, join, relative, resolve } from 'node:path';

@@ -1,0 +1,39 @@
+import { sha256 } from '../machine/hash.js';
+
+export interface PackFile {
+  readonly path: string;
+  readonly bytes: number;
+  readonly sha256: string;
+}
+
+export type PartKind = 'strut' | 'node' | 'panel' | 'cap' | 'guide' | 'gauge';
+
+export interface PackPart {
+  readonly mark: string;
+  readonly kind: PartKind;
+  /** Over what is made, not over where it stands; null where its machine file is withheld. */
+  readonly digest: string | null;
+  readonly files: readonly string[];
+}
+
+export type WriteFile = (path: string, bytes: Uint8Array) => void | Promise<void>;
+
+/** Writes a pack's files one by one and keeps nothing but their paths, sizes and digests. */
+export interface PackWriter {
+  put(path: string, bytes: Uint8Array | string): Promise<void>;
+  /** In the order of their paths. */
+  files(): readonly PackFile[];
+}
+
+export function packWriter(write: WriteFile): PackWriter {
+  const files = new Map<string, PackFile>();
+  return {
+    async put(path, content) {
+      if (files.has(path)) throw new Error(`the pack already has ${path}`);
+      const bytes = typeof content === 'string' ? new TextEncoder().encode(content) : content;
+      files.set(path, { path, bytes: bytes.length, sha256: sha256(bytes) });
+      await write(path, bytes);
+    },
+    files: () => [...files.values()].sort((a, b) => (a.path < b.path ? -1 : a.path > b.path ? 1 : 0)),
+  };
+}
