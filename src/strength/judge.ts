@@ -6,8 +6,8 @@ import type { Solution, Utilisation } from '../model/solution.js';
 import type { Truss } from '../model/truss.js';
 import { allActions } from './actions.js';
 import { judgeMembers } from './members.js';
+import { rulesOf } from './rules.js';
 import { judgeSockets } from './sockets.js';
-import type { Rules } from './standard.js';
 import { unverified } from './unverified.js';
 import { useFindings } from './use.js';
 
@@ -21,18 +21,12 @@ export interface Judgement {
   readonly notChecked: readonly string[];
 }
 
-/** Service class where the job gives none: inside 1; outdoors the weather, until the job says better. */
-const assumedServiceClass = (job: Job): Rules['serviceClass'] => (job.use === 'outdoor' ? 3 : 1);
-
 /**
  * Strength of the parts under every combination of the solution and under the given forces, whichever is worse.
  * Without a solution the given forces are judged alone, as pure axial forces with buckling from node to node.
  */
 export function judge(truss: Truss, parts: Parts, solution: Solution | null, job: Job): Judgement {
-  const rules: Rules = {
-    serviceClass: job.strength.serviceClass ?? assumedServiceClass(job),
-    factor: job.strength.allowableFactor,
-  };
+  const rules = rulesOf(job);
   const actions = allActions(truss, solution, job);
   const loaded = actions.some((a) => a.some((one) => one.axial !== 0 || one.momentY !== 0 || one.momentZ !== 0));
   const members = judgeMembers(parts.struts, actions, job, rules);

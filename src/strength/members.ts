@@ -3,29 +3,16 @@ import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
 import type { StrutPart } from '../model/parts.js';
 import type { MemberActions, Utilisation } from '../model/solution.js';
-import { standardFor } from './choose.js';
-import type { Rules, Standard, Verdict } from './standard.js';
+import type { Rules, Standard } from './standard.js';
+import { judgeStrut } from './strut.js';
 
-/** What the rules say of struts. */
+/** Verdicts on parts of one kind, and what is wrong with them. */
 export interface Judged {
   readonly utilisations: readonly Utilisation[];
   readonly findings: readonly Finding[];
 }
 
-/** The worst of one strut's combinations; null without any. */
-export function worstOf(
-  actions: readonly MemberActions[],
-  judge: (a: MemberActions) => Verdict,
-): { readonly actions: MemberActions; readonly verdict: Verdict } | null {
-  let worst: { actions: MemberActions; verdict: Verdict } | null = null;
-  for (const a of actions) {
-    const verdict = judge(a);
-    if (worst === null || verdict.utilisation > worst.verdict.utilisation) worst = { actions: a, verdict };
-  }
-  return worst;
-}
-
-/** Utilisation of every strut by its standard. A strut without section, material or actions has none; each reason is a finding. */
+/** Utilisation of every strut by its standard. A strut without section, material or actions has none; each other reason is a finding. */
 export function judgeMembers(
   struts: readonly StrutPart[],
   actions: readonly (readonly MemberActions[])[],
@@ -38,41 +25,28 @@ export function judgeMembers(
   struts.forEach((strut, i) => {
     const { section, material } = strut;
     if (section === null || material === null || (actions[i]?.length ?? 0) === 0) return;
-    const standard = standardFor(job, material);
-    const values = standard.missing(material);
-    if (values.length > 0) {
-      const before = lacking.get(material.name);
-      lacking.set(material.name, { standard, values, count: (before?.count ?? 0) + 1 });
+    const said = judgeStrut(section.shape, material, strut.axisLength, actions[i]!, job, rules);
+    if (said.kind === 'lacking') {
+      const { standard, values } = said;
+      lacking.set(material.name, { standard, values, count: (lacking.get(material.name)?.count ?? 0) + 1 });
       return;
     }
-    const member = {
-      shape: section.shape,
-      material,
-      bucklingLength: strut.axisLength * job.strength.effectiveLength,
-    };
-    const reason = standard.outOfScope(member);
-    if (reason !== null) {
-      findings.push(finding('strength-out-of-scope', strut.mark, { about: { standard: standard.name, reason } }));
+    if (said.kind === 'out-of-scope') {
+      const about = { standard: said.standard.name, reason: said.reason };
+      findings.push(finding('strength-out-of-scope', strut.mark, { about }));
       return;
     }
-    const worst = worstOf(actions[i]!, (a) => standard.judge(member, a, rules))!;
-    const { utilisation, rule } = worst.verdict;
-    const { combination, axial: force } = worst.actions;
+    const { utilisation, rule } = said.verdict;
+    const { combination, axial: force } = said.actions;
     utilisations.push({ mark: strut.mark, kind: 'strut', at: null, combination, force, utilisation, rule });
-    if (utilisation > 1)
-      findings.push(
-        finding('member-over-stressed', strut.mark, {
-          value: utilisation,
-          limit: 1,
-          about: { rule, combination, force_N: force, section: section.name },
-        }),
-      );
+    if (utilisation > 1) {
+      const about = { rule, combination, force_N: force, section: section.name };
+      findings.push(finding('member-over-stressed', strut.mark, { value: utilisation, limit: 1, about }));
+    }
   });
-  for (const [material, { standard, values, count }] of lacking)
-    findings.push(
-      finding('material-value-missing', 'truss', {
-        about: { material, standard: standard.name, struts: count, values: values.join(', ') },
-      }),
-    );
+  for (const [material, { standard, values, count }] of lacking) {
+    const about = { material, standard: standard.name, struts: count, values: values.join(', ') };
+    findings.push(finding('material-value-missing', 'truss', { about }));
+  }
   return { utilisations, findings };
 }

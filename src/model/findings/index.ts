@@ -4,6 +4,7 @@ import { INPUTS_FINDINGS } from './inputs.js';
 import { NODE_FINDINGS } from './nodes.js';
 import { PANEL_FINDINGS } from './panels.js';
 import { RECIPROCAL_FINDINGS } from './reciprocal.js';
+import { SIZE_FINDINGS } from './sizes.js';
 import { STATICS_FINDINGS } from './statics.js';
 import { STOCK_FINDINGS } from './stock.js';
 import { STRENGTH_FINDINGS } from './strength.js';
@@ -19,6 +20,7 @@ export const FINDINGS = {
   ...PANEL_FINDINGS,
   ...STATICS_FINDINGS,
   ...STRENGTH_FINDINGS,
+  ...SIZE_FINDINGS,
   ...RECIPROCAL_FINDINGS,
   ...STOCK_FINDINGS,
   ...ASSEMBLY_FINDINGS,
