@@ -1,16 +1,36 @@
-/** Bars with their cuts, lengths in mm. */
+/** Bars with their cuts, lengths in mm, prices in the job's currency. */
 export interface StockPlan {
   readonly bars: readonly PlannedBar[];
   readonly cost: number;
   readonly lowerBound: number;
   readonly proven: boolean;
+  /** Cost, bound and proof by section. */
+  readonly sections: readonly SectionPlan[];
   readonly stopped?: 'time';
 }
 
+export interface SectionPlan {
+  readonly section: string;
+  readonly bars: number;
+  readonly cost: number;
+  readonly lowerBound: number;
+  readonly proven: boolean;
+}
+
 export interface PlannedBar {
+  /** B001, B002 ... in the order of sawing. */
+  readonly mark: string;
+  readonly section: string;
+  /** Name of the kind of bar, or the mark of the offcut in the rack. */
   readonly stock: string;
+  readonly length: number;
+  readonly price: number;
+  readonly fromRack: boolean;
+  /** In sawing order, longest first. */
   readonly cuts: readonly { readonly mark: string; readonly length: number }[];
+  /** What is left in one piece, mm; kept for the rack where it is long enough. */
   readonly offcut: number;
+  readonly kept: boolean;
 }
 
 /** Sheets with the panels on them; mm and degrees as in nesting.json. */
