@@ -33,7 +33,7 @@ export interface Assessment {
 }
 
 /** What stays of a shaped hub once its mesh is written and dropped. Lengths mm, volume mm³. */
-export interface ShapedHub {
+export interface MadeHub {
   readonly mark: string;
   readonly volume: number;
   /** Extents in print orientation. */
@@ -46,7 +46,7 @@ export interface ShapedHub {
 
 /** Everything that the papers of a pack draw on. */
 export interface PackRecords extends Assessment {
-  readonly shaped: ReadonlyMap<string, ShapedHub>;
+  readonly shaped: ReadonlyMap<string, MadeHub>;
   readonly stock: StockPlan | null;
   readonly nesting: NestingPlan | null;
 }

@@ -41,6 +41,13 @@ export interface NestingPlan {
 }
 
 export interface PlannedSheet {
+  /** sheet-01, sheet-02 ...: also the name of its files. */
+  readonly mark: string;
+  readonly width: number;
+  readonly height: number;
+  readonly material: string;
+  readonly thickness: number;
+  /** Name of the kind of sheet. */
   readonly sheet: string;
   readonly placements: readonly {
     readonly mark: string;

@@ -17,4 +17,11 @@ export const PANEL_FINDINGS = {
     () => 'nothing is left of it inside the struts and hubs; leave the face open or use thinner struts',
     { withholds: true },
   ),
+  'panel-larger-than-sheet': entry(
+    'stop',
+    'panel',
+    'mm',
+    () => 'fits on no sheet; add a larger sheet or split the panel',
+  ),
+  'sheets-run-out': entry('stop', 'panel', '', () => 'has no sheet left; raise "available" or add another sheet'),
 } as const;

@@ -1,0 +1,87 @@
+import type { Assessment, MadeHub } from '../documents/records.js';
+import { VERSION } from '../model/version.js';
+import type { Input } from './load.js';
+import type { PackFile, PackPart } from './pack-writer.js';
+
+/** The object of manifest.json, `strutwright-pack/1`. */
+export interface Manifest {
+  readonly format: 'strutwright-pack/1';
+  readonly title: string;
+  readonly revision: string;
+  readonly date: string | null;
+  readonly program: string;
+  readonly status: 'clear' | 'flagged';
+  /** Reasons of a hold, in words; empty: none. */
+  readonly hold: readonly string[];
+  /** Parts whose machine files are withheld, by mark. */
+  readonly withheld: readonly string[];
+  readonly inputs: readonly Input[];
+  readonly totals: Totals;
+  readonly parts: readonly PackPart[];
+  /** All files but manifest.json. */
+  readonly files: readonly PackFile[];
+}
+
+export interface Totals {
+  readonly struts: number;
+  readonly nodes: number;
+  readonly panels: number;
+  readonly strut_m: number;
+  readonly strut_mass_kg: number;
+  readonly node_mass_kg: number;
+  readonly panel_mass_kg: number;
+  readonly printed_volume_mm3: number;
+  readonly panel_area_m2: number;
+}
+
+export function manifestOf(
+  a: Assessment,
+  shaped: ReadonlyMap<string, MadeHub>,
+  made: {
+    readonly inputs: readonly Input[];
+    readonly parts: readonly PackPart[];
+    readonly files: readonly PackFile[];
+    readonly withheld: readonly string[];
+  },
+): Manifest {
+  return {
+    format: 'strutwright-pack/1',
+    title: a.job.title,
+    revision: a.job.revision,
+    date: a.job.date,
+    program: `strutwright ${VERSION}`,
+    status: a.status,
+    hold: a.hold,
+    withheld: made.withheld,
+    inputs: made.inputs,
+    totals: totalsOf(a, shaped),
+    parts: made.parts,
+    files: made.files,
+  };
+}
+
+const sum = <T>(items: Iterable<T>, of: (item: T) => number): number => {
+  let total = 0;
+  for (const item of items) total += of(item);
+  return total;
+};
+
+const KG_PER_MM3 = 1e-9;
+
+function totalsOf(a: Assessment, shaped: ReadonlyMap<string, MadeHub>): Totals {
+  const { struts, hubs, panels } = a.parts;
+  return {
+    struts: struts.length,
+    nodes: hubs.length,
+    panels: panels.length,
+    strut_m: sum(struts, (s) => s.cutLength ?? 0) / 1000,
+    strut_mass_kg: sum(struts, (s) => s.mass ?? 0),
+    node_mass_kg: sum(hubs, (h) => {
+      const solid = shaped.get(h.mark);
+      return solid ? solid.volume * h.material.density * KG_PER_MM3 : (h.mass ?? 0);
+    }),
+    panel_mass_kg: sum(panels, (p) => p.mass ?? 0),
+    printed_volume_mm3: sum(shaped.values(), (s) => s.volume),
+    panel_area_m2: sum(panels, (p) => p.area) / 1e6,
+  };
+}
