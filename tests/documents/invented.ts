@@ -69,7 +69,7 @@ function facesOf(
   for (const a of [-1, 1])
     for (const b of [-1, 1])
       for (const turn of [0, 1, 2]) {
-        const raw: Vec3 = [0, a, b * golden];
+        const raw: Vec3 = [0, a * golden, b];
         const normal = normalise([raw[turn % 3]!, raw[(turn + 1) % 3]!, raw[(turn + 2) % 3]!]);
         const reach = Math.max(...corners.map((c) => dot(c, normal)));
         const ring = corners.map((c, i) => ({ c, i })).filter(({ c }) => dot(c, normal) > reach - 1e-9);

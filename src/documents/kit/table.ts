@@ -62,6 +62,32 @@ export function drawTable<Row>(
   return at + 3;
 }
 
+/** Draws a table that stays on its sheet, no wider than `width`; returns where the next thing may start. */
+export function drawSmallTable<Row>(
+  pen: Pen,
+  x: number,
+  y: number,
+  width: number,
+  columns: readonly Column<Row>[],
+  rows: readonly Row[],
+  size: number = SIZE.body,
+): number {
+  const layout = layOut(pen, width, columns, rows, size, GAP.close);
+  let at = drawHead(pen, x, y, columns, layout);
+  rows.forEach((row, k) => {
+    const cells = columns.map((column, i) => cellLines(pen, column, row, layout, i));
+    drawRow(pen, x, at, columns, cells, layout);
+    at += layout.rowHeight + (Math.max(1, ...cells.map((c) => c.length)) - 1) * lineHeight(layout.size);
+    if ((k + 1) % 5 === 0 && k + 1 < rows.length)
+      pen.line([x, at], [x + layout.total, at], { width: LINE.hair, colour: INK.grey });
+  });
+  return at;
+}
+
+/** Height of a small table whose cells take one line each, mm. */
+export const smallTableHeight = (rows: number, headLines: number, size: number = SIZE.body): number =>
+  headLines * lineHeight(SIZE.note) + 1.9 + rows * (lineHeight(size) + 1);
+
 interface Layout {
   readonly widths: readonly number[];
   readonly gap: number;
@@ -74,7 +100,7 @@ interface Layout {
 
 const GROUP = 8;
 /** Between columns, mm: least and most. */
-const GAP = { least: 2.5, most: 9 } as const;
+const GAP = { least: 2.5, most: 9, close: 5 } as const;
 const TICK = 3.2;
 /** Type no smaller than this, pt. */
 const LEAST_SIZE = 7;
@@ -87,6 +113,7 @@ function layOut<Row>(
   columns: readonly Column<Row>[],
   rows: readonly Row[],
   wanted: number,
+  most: number = GAP.most,
 ): Layout {
   const headLines = Math.max(1, ...columns.map((c) => c.head.split('\n').length));
   const measure = (size: number): number[] =>
@@ -110,7 +137,7 @@ function layOut<Row>(
   }
   const wraps = columns.findIndex((c) => c.wraps);
   const left = room - sum(widths) - gaps(GAP.least);
-  const extra = columns.length > 1 ? Math.min(GAP.most - GAP.least, Math.max(0, left) / (columns.length - 1)) : 0;
+  const extra = columns.length > 1 ? Math.min(most - GAP.least, Math.max(0, left) / (columns.length - 1)) : 0;
   const gap = wraps >= 0 ? Math.min(GAP.least + extra, 4.5) : GAP.least + extra;
   if (wraps >= 0) widths = widths.map((w, i) => (i === wraps ? w + Math.max(0, room - sum(widths) - gaps(gap)) : w));
   return {

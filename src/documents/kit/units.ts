@@ -9,6 +9,8 @@ export interface Units {
   readonly words: string;
   length(mm: number | null, decimals?: number): string;
   force(newton: number | null): string;
+  /** T or C beside a force; nothing where it prints as nought or is unknown. */
+  sense(newton: number | null): '' | 'T' | 'C';
   mass(kg: number | null): string;
   area(mm2: number | null): string;
   angle(rad: number | null): string;
@@ -29,6 +31,7 @@ function si(largest: number): Units {
     words: `mm, ${kilo ? 'kN' : 'N'}, kg, °`,
     length: (mm, digits = 1) => fixed(mm, digits),
     force: (n) => signed(n === null ? null : kilo ? n / 1000 : n, decimals),
+    sense: (n) => senseOf(signed(n === null ? null : kilo ? n / 1000 : n, decimals)),
     mass: (kg) => fixed(kg, kg !== null && kg < 1 ? 3 : 2),
     area: (mm2) => fixed(mm2, 0),
     angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
@@ -52,6 +55,7 @@ function us(largest: number, fractions: boolean): Units {
     length: (mm, digits = 1) =>
       mm === null ? '' : fractions ? inchFraction(mm / MM_PER_INCH) : fixed(mm / MM_PER_INCH, digits + 2),
     force: (n) => signed(n === null ? null : n / per, decimals),
+    sense: (n) => senseOf(signed(n === null ? null : n / per, decimals)),
     mass: (kg) => fixed(kg === null ? null : kg / KG_PER_LB, 3),
     area: (mm2) => fixed(mm2 === null ? null : mm2 / MM_PER_INCH ** 2, 2),
     angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
@@ -85,6 +89,4 @@ export function signed(value: number | null | undefined, decimals: number): stri
   return text === '' || text.startsWith('−') || Number(text) === 0 ? text : `+${text}`;
 }
 
-/** T, C or nothing beside a force: tension positive. `zero` in N is what counts as none. */
-export const tensionOrCompression = (force: number | null, zero: number): '' | 'T' | 'C' =>
-  force === null || Math.abs(force) <= zero ? '' : force > 0 ? 'T' : 'C';
+const senseOf = (text: string): '' | 'T' | 'C' => (text.startsWith('+') ? 'T' : text.startsWith('−') ? 'C' : '');

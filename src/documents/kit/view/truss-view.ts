@@ -40,6 +40,8 @@ export interface TrussView {
   readonly arrows?: readonly ViewArrow[];
   /** iso: the largest scale of ISO 5455 that fits; fill: as large as the area allows, not to scale; a number: that scale. */
   readonly scale: 'iso' | 'fill' | { readonly factor: number; readonly name: string };
+  /** Room round the figure for marks that move outward, mm. */
+  readonly edge?: number;
 }
 
 export interface DrawnView {
@@ -49,7 +51,6 @@ export interface DrawnView {
   readonly unplaced: readonly string[];
 }
 
-/** Room round the figure for marks that move outward, mm. */
 const EDGE = 9;
 const PILL = 4.4;
 /** White on both sides of a nearer strut where it passes a farther one, mm. */
@@ -59,7 +60,7 @@ const HALO = 0.5;
 export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView {
   const flat = view.nodes.map((n) => project(view.camera, n.at));
   const [low, high] = bounds(flat);
-  const room = shrink(area, EDGE);
+  const room = shrink(area, view.edge ?? EDGE);
   const { factor, name } = scaleOf(view.scale, [high[0] - low[0], high[1] - low[1]], [room.width, room.height]);
   const middle: Point = [(low[0] + high[0]) / 2, (low[1] + high[1]) / 2];
   const centre: Point = [area.x + area.width / 2, area.y + area.height / 2];

@@ -1,0 +1,32 @@
+import { type CsvColumn, DECIMALS, writeCsv } from '../formats/csv.js';
+import { type MemberRow, memberRows } from '../member-rows.js';
+import type { PackRecords } from '../records.js';
+
+/** forces.csv: one row a strut; then one column a load case or combination. */
+export function forcesCsv(records: PackRecords): Uint8Array {
+  const { force } = DECIMALS;
+  const index = records.topology.memberIndex;
+  const cases = [...(records.solution?.cases ?? []), ...(records.solution?.combinations ?? [])].filter((c) => c.forces);
+  const columns: CsvColumn<MemberRow>[] = [
+    { name: 'mark', value: (r) => r.member.mark },
+    { name: 'from', value: (r) => r.member.ends[0] },
+    { name: 'to', value: (r) => r.member.ends[1] },
+    { name: 'section', value: (r) => r.part.section?.name ?? null },
+    { name: 'axis_length_mm', decimals: DECIMALS.length, value: (r) => r.part.axisLength },
+    { name: 'force_N', decimals: force, value: (r) => r.force },
+    { name: 'sense', value: (r) => (r.force === null || r.force === 0 ? null : r.force > 0 ? 'T' : 'C') },
+    { name: 'least_N', decimals: force, value: (r) => r.envelope?.least ?? null },
+    { name: 'most_N', decimals: force, value: (r) => r.envelope?.most ?? null },
+    { name: 'utilisation', decimals: DECIMALS.ratio, value: (r) => r.worst?.utilisation ?? null },
+    { name: 'combination', value: (r) => r.worst?.combination ?? null },
+    { name: 'rule', value: (r) => r.worst?.rule ?? null },
+    ...cases.map(
+      (c): CsvColumn<MemberRow> => ({
+        name: `${c.kind === 'combination' ? 'combination' : 'case'} ${c.name} N`,
+        decimals: force,
+        value: (r) => c.forces![index.get(r.member.mark)!]!,
+      }),
+    ),
+  ];
+  return writeCsv(columns, memberRows(records), records.job.output.csv);
+}

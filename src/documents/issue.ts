@@ -1,0 +1,13 @@
+import type { Fonts } from './kit/fonts.js';
+import type { Issue } from './kit/paper.js';
+import type { PackRecords } from './records.js';
+
+/** What every paper of a pack has in common: the job, the faces, what holds it up, and what was not checked though its use asks for it. */
+export function issueOf(records: PackRecords, fonts: Fonts): Issue {
+  return {
+    job: records.job,
+    fonts,
+    hold: records.hold,
+    notMade: records.findings.filter((f) => f.code === 'check-missing').map((f) => String(f.about?.['check'])),
+  };
+}

@@ -1,0 +1,37 @@
+import type { Flow } from '../kit/flow.js';
+import { fixed, type Units } from '../kit/units.js';
+import type { PackRecords } from '../records.js';
+
+/** What was checked and how it came out, in words; then what was not checked. */
+export function checksSection(flow: Flow, records: PackRecords, units: Units): void {
+  flow.heading('Checks');
+  const { equilibrium, solution, checked, notChecked, forms, job } = records;
+  if (equilibrium)
+    flow.paragraph(
+      `Equilibrium of the case “${equilibrium.case}”: the largest residual at a node is ${plain(equilibrium.maxResidual)} N, ${plain(equilibrium.maxRelative)} of the largest force there (a warning from ${job.fit.residualWarn}, a stop from ${job.fit.residualStop}).`,
+    );
+  if (forms.length > 0) {
+    const worst = forms.reduce((most, form) => (form.flatness > most.flatness ? form : most));
+    flow.paragraph(
+      `Flatness of ${forms.length} faces: the worst is ${worst.mark}, out of flat by ${units.length(worst.flatness, 3)} ${units.lengthUnit}.`,
+    );
+  }
+  const counts = solution?.counts;
+  if (counts) {
+    flow.paragraph(
+      `As a pin-jointed figure on its supports the truss has ${counts.selfStressStates} states of self-stress, ${counts.mechanisms} mechanisms and ${counts.rigidBody} rigid-body freedoms left.`,
+    );
+    for (const note of counts.mechanismNotes) flow.paragraph(`Mechanism: ${note.words}.`);
+  }
+  for (const buckling of solution?.buckling ?? [])
+    if (buckling.factors[0] !== undefined)
+      flow.paragraph(
+        `Buckling of the whole under ${buckling.combination}: lowest load factor ${fixed(buckling.factors[0], 2)}.`,
+      );
+  flow.paragraph(`Checked: ${checked.length > 0 ? checked.join(', ') : 'nothing'}.`);
+  if (notChecked.length > 0) flow.paragraph(`Not checked: ${notChecked.join(', ')}.`, { bold: true });
+}
+
+/** Three significant figures, without an exponent for what a person reads. */
+const plain = (value: number): string =>
+  value === 0 ? '0' : Math.abs(value) < 1e-6 ? 'below 0.000001' : String(Number(value.toPrecision(3)));
