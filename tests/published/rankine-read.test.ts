@@ -34,7 +34,6 @@ describe.each(CASES)('$name', (c) => {
     expect(result.findings).toEqual([]);
     near(result.forces!, c.forces);
     expect(result.residuals!.maxAngle).toBeLessThan(1e-11);
-    expect(result.residuals!.maxFaceAngle).toBeLessThan(1e-11);
     expect(result.residuals!.maxResidual).toBeLessThan(1e-10);
     expect(result.residuals!.maxClosure).toBeLessThan(1e-10);
   });

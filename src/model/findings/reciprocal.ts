@@ -140,13 +140,14 @@ export const RECIPROCAL_FINDINGS = {
     'warn',
     'strut',
     'N',
-    (f) => `carries ${num(f.value)} N, against the ${f.about?.['wanted']} wanted in group ${f.about?.['group']}`,
+    (f) => `carries ${num(f.value)} N, not the ${f.about?.['wanted']} wanted in group ${f.about?.['group']}`,
   ),
   'forces-differ': entry(
     'warn',
-    'strut',
-    'N',
-    (f) => `${f.about?.['first']} and ${f.about?.['second']} differ by ${num(f.value)} N, limit ${num(f.limit)} N`,
+    'truss',
+    '',
+    (f) =>
+      `${f.about?.['first']} and ${f.about?.['second']} forces differ by ${num(f.value, 5)} of the largest, limit ${num(f.limit, 5)} (most in ${f.about?.['strut']}, ${num(f.about?.['difference_N'] as number)} N; ${num(f.about?.['remainder_N'] as number)} N of it is no self-stress)`,
   ),
   'radials-not-concurrent': entry(
     'warn',

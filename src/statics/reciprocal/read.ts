@@ -1,5 +1,5 @@
 import { areaVector, fitPlane } from '../../maths/plane-fit.js';
-import { angleBetween, dot, length, normalise, scale, subtract, type Vec3 } from '../../maths/vec3.js';
+import { angleBetween, dot, length, normalise, subtract, type Vec3 } from '../../maths/vec3.js';
 import { ROUND_OFF } from '../../model/tolerance.js';
 import type { Topology } from '../../model/topology.js';
 import type { CellComplex } from './complex.js';
@@ -71,20 +71,6 @@ export function memberForces(
   return forces;
 }
 
-/** Angle between the jump a_plus - a_minus across each face and the face's normal, rad; 0 where there is no jump. */
-export function faceAngles(topology: Topology, complex: CellComplex, vertices: readonly Vec3[]): Float64Array {
-  const angles = new Float64Array(complex.faces.length);
-  const nought = ROUND_OFF.crossing.value * extentOf(vertices);
-  for (const f of complex.used) {
-    const jump = subtract(vertices[complex.plus[f]], vertices[complex.minus[f]]);
-    const fit = fitPlane(Array.from(complex.faces[f], (i) => topology.truss.nodes[i].at));
-    if (!fit || length(jump) <= nought) continue;
-    const angle = angleBetween(jump, fit.normal);
-    angles[f] = Math.min(angle, Math.PI - angle);
-  }
-  return angles;
-}
-
 /** Largest extent of a set of points along any axis. */
 export function extentOf(points: readonly Vec3[]): number {
   let extent = 0;
@@ -98,7 +84,3 @@ export function extentOf(points: readonly Vec3[]): number {
   }
   return extent;
 }
-
-/** Area vectors in N. */
-export const scaled = (areas: readonly Vec3[], newtonPerArea: number): Vec3[] =>
-  areas.map((a) => scale(a, newtonPerArea));
