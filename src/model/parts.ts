@@ -36,6 +36,23 @@ export interface StrutPart {
   readonly mass: number | null;
 }
 
+/** A slotted strut end bolted to a plate of the hub. Bolts stand in one row along the strut, in the middle of its depth; mm. */
+export interface BoltedEnd {
+  /** Thickness of the hub's plate and width of the slot that takes it. */
+  readonly plate: number;
+  readonly slot: number;
+  readonly bolts: number;
+  readonly diameter: number;
+  /** Between bolts; 0 for one. */
+  readonly spacing: number;
+  /** From the strut's end to the nearest bolt. */
+  readonly endDistance: number;
+  /** From the plate's end, inside the strut, to the nearest bolt. */
+  readonly plateEnd: number;
+  /** Which of the section's axes the bolts run along. */
+  readonly along: 'y' | 'z';
+}
+
 /** One socket (or spigot, or bore) of a hub, in the truss's axes. */
 export interface Socket {
   readonly strut: string;
@@ -58,6 +75,8 @@ export interface Socket {
   readonly detail: EndDetail;
   /** Cross pin, mm; 0: none. */
   readonly pin: number;
+  /** Where the strut's end is slotted and bolted instead of standing in a sleeve. */
+  readonly bolted?: BoltedEnd;
 }
 
 /** A node connector as numbers. Its solid is made from these alone. */

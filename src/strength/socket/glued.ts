@@ -1,7 +1,8 @@
 import { plasticLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
-import type { SocketPath } from './case.js';
+import type { SocketCase, SocketPath } from './case.js';
 import { engaged, perimeter } from './geometry.js';
+import { GLUE_FRACTURE, gluedRodCapacity } from './glued-rod.js';
 import { sleeveChecks } from './sleeve.js';
 
 /** Glued: the bond on the engaged perimeter carries tension and compression (the strut floats off the stop), then the sleeve. */
@@ -19,5 +20,18 @@ export const glued: SocketPath = (c) => {
     if (wood !== null)
       checks.push({ utilisation: force / surface / wood, rule: 'shear of the wood at the socket bond' });
   }
+  const rod = gluedRod(c);
+  if (rod !== null) checks.push({ utilisation: force / rod, rule: 'glued-in rod (Feligioni et al.), pull-out' });
   return surface > 0 || force === 0 ? [...checks, ...sleeveChecks(c)] : null;
 };
+
+/** What a round metal bar in a bored timber hub may carry, N: the mean pull-out of a glued-in rod with brittle glue over the factor; null for other pairs. */
+function gluedRod(c: SocketCase): number | null {
+  const { hub, strut, socket, rules } = c;
+  const { shape } = socket.section;
+  const metal = strut.family === 'steel' || strut.family === 'aluminium';
+  const wood = hub.family === 'timber' || hub.family === 'glulam';
+  if (!metal || !wood || shape.kind === 'rectangle' || typeof socket.bore !== 'number') return null;
+  const glue = Math.max(0, (socket.bore - shape.diameter) / 2);
+  return gluedRodCapacity(shape.diameter, glue, engaged(c), hub.density, GLUE_FRACTURE.brittle) / rules.factor;
+}

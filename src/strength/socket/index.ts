@@ -1,5 +1,6 @@
 import type { Joint } from '../../model/parts.js';
 import { governing, type Verdict } from '../standard.js';
+import { bolted } from './bolted.js';
 import type { SocketCase, SocketPath } from './case.js';
 import { glued } from './glued.js';
 import { loose } from './loose.js';
@@ -10,7 +11,8 @@ const PATHS: Readonly<Record<Joint, SocketPath>> = { glued, pinned, seated, loos
 
 /** The check that governs a strut's end in its socket; null: nothing in the joint carries a force of this sign. */
 export function judgeSocket(socket: SocketCase): Verdict | null {
-  const checks = PATHS[socket.socket.joint](socket);
+  const path = socket.socket.bolted ? bolted : PATHS[socket.socket.joint];
+  const checks = path(socket);
   if (checks === null) return null;
   return checks.length === 0 ? { utilisation: 0, rule: 'socket' } : governing(checks);
 }

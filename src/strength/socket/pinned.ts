@@ -1,14 +1,12 @@
 import { PIN_STEEL } from '../../model/catalogue/pin.js';
 import { GAMMA_M_CONNECTION, kMod } from '../../model/catalogue/timber-factors.js';
+import { PIN_FACTORS, pinBearing, pinUse } from '../en1993/pin.js';
+import { embeddingStrength } from '../en1995/joint/embedding.js';
 import { plasticLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
 import { acrossPin, engaged, sleeve, strutArea } from './geometry.js';
 import { sleeveChecks } from './sleeve.js';
-
-/** gammaM2 of EN 1993-1-8 for pins; gammaM0 for their bending. */
-const GAMMA_M2 = 1.25;
-const GAMMA_M0 = 1;
 
 /**
  * Pinned: a steel cross pin at half the socket's depth carries tension and compression.
@@ -31,6 +29,15 @@ export const pinned: SocketPath = (c) => {
     push(force / (2 * d * wall * plasticLimit(crush, duration, rules)), 'bearing of the pin on the socket walls');
   const wood = woodBearing(c);
   if (wood !== null) push(force / (d * t * wood), 'EN 1995-1-1 8.5.1.1 (8.16), bearing of the pin on the strut');
+  const { shape } = socket.section;
+  const yielding = strut.strength['fy'] ?? strut.strength['fo'];
+  if (yielding !== undefined) {
+    const metal = shape.kind === 'tube' ? 2 * shape.wall : t;
+    push(
+      force / pinBearing(metal, d, Math.min(yielding, PIN_STEEL.fy)),
+      'EN 1993-1-8 3.13.2, table 3.10, bearing of the pin on the strut',
+    );
+  }
   if (actions.axial > 0) {
     const net = woodLimit(strut, 'ft', duration, rules) ?? metalLimit(c);
     if (net !== null)
@@ -53,17 +60,12 @@ export const pinned: SocketPath = (c) => {
 const NO_END_DISTANCE = 1000;
 
 function pinChecks(c: SocketCase, force: number): Verdict[] {
-  const d = c.socket.pin;
-  const area = (Math.PI * d * d) / 4;
-  const wel = (Math.PI * d ** 3) / 32;
-  const shear = force / 2 / ((0.6 * area * PIN_STEEL.fu) / GAMMA_M2);
   const bore = typeof c.socket.bore === 'number' ? c.socket.bore : Math.min(...c.socket.bore);
-  const gap = Math.max(0, (bore - acrossPin(c)) / 2);
-  const moment = (force / 8) * (acrossPin(c) + 4 * gap + 2 * c.socket.wall);
-  const bent = moment / ((1.5 * wel * PIN_STEEL.fy) / GAMMA_M0);
+  const plates = { a: c.socket.wall, b: acrossPin(c), c: Math.max(0, (bore - acrossPin(c)) / 2) };
+  const { shear, combined } = pinUse(force, { d: c.socket.pin, ...PIN_STEEL }, plates);
   return [
     { utilisation: shear, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear' },
-    { utilisation: bent ** 2 + shear ** 2, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear and bending' },
+    { utilisation: combined, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear and bending' },
   ];
 }
 
@@ -71,10 +73,10 @@ function pinChecks(c: SocketCase, force: number): Verdict[] {
 function woodBearing({ strut, socket, actions, rules }: SocketCase): number | null {
   if (strut.family !== 'timber' && strut.family !== 'glulam') return null;
   const density = strut.densityK ?? 0.9 * strut.density;
-  const fhk = 0.082 * (1 - 0.01 * socket.pin) * density;
+  const fhk = embeddingStrength(socket.pin, density);
   return (kMod(rules.serviceClass, actions.duration) * fhk) / GAMMA_M_CONNECTION;
 }
 
 /** Metal tube at the pin's holes: 0.9 fu / gammaM2 (EN 1993-1-1 6.2.3 (6.7); EN 1999-1-1 6.2.3 has the same form). */
 const metalLimit = ({ strut }: SocketCase): number | null =>
-  strut.strength['fu'] === undefined ? null : (0.9 * strut.strength['fu']) / GAMMA_M2;
+  strut.strength['fu'] === undefined ? null : (0.9 * strut.strength['fu']) / PIN_FACTORS.m2;

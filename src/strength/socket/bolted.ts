@@ -1,0 +1,82 @@
+import { PIN_STEEL } from '../../model/catalogue/pin.js';
+import { GAMMA_M_CONNECTION, kMod } from '../../model/catalogue/timber-factors.js';
+import type { BoltedEnd } from '../../model/parts.js';
+import { plateInTheMiddle, yieldMoment } from '../en1995/joint/double-shear.js';
+import { embeddingStrength } from '../en1995/joint/embedding.js';
+import { effectiveNumber, leastDistances } from '../en1995/joint/row.js';
+import { splittingCapacity } from '../en1995/joint/splitting.js';
+import { plasticLimit, woodLimit } from '../limits.js';
+import type { Verdict } from '../standard.js';
+import type { SocketCase, SocketPath } from './case.js';
+import { strutArea } from './geometry.js';
+
+/** A bolt's hole is 1 mm wider at most, EN 1995-1-1 10.4.3 (1). */
+const HOLE_OVER = 1;
+
+/**
+ * A slotted timber end bolted to a plate of the hub, in tension or compression: bolts in double shear EN 1995-1-1 8.2.3 (8.11) with
+ * nef of 8.5.1.1 (8.34), the spacings of table 8.4, in tension the net section of 5.2 and the plate's own net section and tear-out;
+ * shear across the grain by 8.1.4. The plate's moment is not passed on: the end turns about its bolts.
+ */
+export const bolted: SocketPath = (c) => {
+  const end = c.socket.bolted!;
+  const { shape } = c.socket.section;
+  if (shape.kind !== 'rectangle') return null;
+  const { actions, hub, strut, rules } = c;
+  const [through, depth] = end.along === 'y' ? [shape.width, shape.height] : [shape.height, shape.width];
+  const timber = (through - end.slot) / 2;
+  const force = Math.abs(actions.axial);
+  if (end.bolts < 1 || end.diameter <= 0 || timber <= 0) return force === 0 ? [] : null;
+  const across = Math.abs(end.along === 'y' ? actions.shearZ : actions.shearY);
+  const factor = kMod(rules.serviceClass, actions.duration) / GAMMA_M_CONNECTION;
+  const checks: Verdict[] = [];
+  const push = (utilisation: number, rule: string): void => void checks.push({ utilisation, rule });
+
+  push(force / (boltCapacity(c, end, timber) * factor), 'EN 1995-1-1 8.2.3 (8.11), bolts of the slotted end');
+  if (across > 0)
+    push(
+      across / (factor * splittingCapacity(2 * timber, depth, depth / 2)),
+      'EN 1995-1-1 8.1.4 (8.4), splitting at the bolts',
+    );
+  const crush = hub.strength['fc'];
+  if (crush !== undefined)
+    push(
+      force / (end.bolts * end.diameter * end.plate * plasticLimit(crush, actions.duration, rules)),
+      'bearing of the bolts in the plate',
+    );
+  const hole = end.diameter + HOLE_OVER;
+  const least = leastDistances(end.diameter);
+  if (end.bolts > 1 && force > 0) push(least.along / end.spacing, 'EN 1995-1-1 table 8.4, distance between bolts');
+  if (force > 0) push(least.edge / (depth / 2), 'EN 1995-1-1 table 8.4, edge distance');
+  if (actions.axial > 0) {
+    push(least.end / end.endDistance, 'EN 1995-1-1 table 8.4, loaded end');
+    const net = woodLimit(strut, 'ft', actions.duration, rules);
+    const left = strutArea(c) - end.slot * depth - 2 * timber * hole;
+    if (net !== null) push(force / (left * net), 'EN 1995-1-1 5.2, net section of the slotted end');
+    const pull = hub.strength['ftZ'] ?? hub.strength['ft'];
+    if (pull !== undefined)
+      push(
+        force / ((depth - hole) * end.plate * plasticLimit(pull, actions.duration, rules)),
+        'net section of the plate, across layers',
+      );
+    const shear = hub.strength['fv'];
+    if (shear !== undefined)
+      push(
+        force / (2 * end.bolts * end.plateEnd * end.plate * plasticLimit(shear, actions.duration, rules)),
+        'tear-out of the plate behind its bolts',
+      );
+  }
+  return checks;
+};
+
+/** Characteristic capacity of the row, N: two planes a bolt, nef bolts. */
+function boltCapacity(c: SocketCase, end: BoltedEnd, timber: number): number {
+  const density = c.strut.densityK ?? 0.9 * c.strut.density;
+  const joint = plateInTheMiddle(
+    embeddingStrength(end.diameter, density),
+    end.diameter,
+    timber,
+    yieldMoment(end.diameter, PIN_STEEL.fu),
+  );
+  return 2 * joint.perPlane * effectiveNumber(end.bolts, end.spacing, end.diameter);
+}

@@ -1,0 +1,53 @@
+import { describe, expect, it } from 'vitest';
+import { plateInTheMiddle, yieldMoment } from '../../src/strength/en1995/joint/double-shear.js';
+import { embeddingAtAngle, embeddingStrength } from '../../src/strength/en1995/joint/embedding.js';
+import { effectiveNumber, leastDistances } from '../../src/strength/en1995/joint/row.js';
+import { splittingCapacity } from '../../src/strength/en1995/joint/splitting.js';
+
+describe('a steel dowel of 8 mm, fu 360, in C24, 30 mm of timber each side of a plate', () => {
+  // Formulas from memory, names of the modes seen in Porteous & Kermani; numbers computed independently with numpy.
+  const fh = embeddingStrength(8, 350);
+  const my = yieldMoment(8, 360);
+  it('embedding 26.40 MPa, yield moment 24.07 N m', () => {
+    expect(fh).toBeCloseTo(26.404, 9);
+    expect(my).toBeCloseTo(24068.981974, 5);
+  });
+  it('modes 6337, 3696, 5186 N; two planes carry 4.55 kN in design', () => {
+    const joint = plateInTheMiddle(fh, 8, 30, my);
+    expect(joint.f).toBeCloseTo(6336.96, 6);
+    expect(joint.g).toBeCloseTo(3695.5212925, 5);
+    expect(joint.h).toBeCloseTo(5186.0482421, 5);
+    expect((2 * joint.perPlane * 0.8) / 1.3).toBeCloseTo(4548.3338984, 5);
+  });
+});
+
+it('a bolt M12 of grade 4.6 has a tensile capacity of 33.7 kN and a yield moment of 76.7 N m', () => {
+  // Tensile capacity seen in Porteous & Kermani (3.37e4 N, stress area 84.3 mm²); yield moment computed independently.
+  expect(400 * 84.3).toBeCloseTo(3.37e4, -2);
+  expect(yieldMoment(12, 400)).toBeCloseTo(76745.423287, 5);
+});
+
+it('embedding across the grain of softwood with a bolt of 12 mm is lower by 1.35 + 0.015 d', () => {
+  // EN 1995-1-1 (8.33), from memory.
+  const fh = embeddingStrength(12, 350);
+  expect(fh / embeddingAtAngle(fh, 12, Math.PI / 2, false)).toBeCloseTo(1.53, 12);
+  expect(embeddingAtAngle(fh, 12, 0, false)).toBe(fh);
+});
+
+it('rows: three bolts at 5 d count as 2.12; one counts as one', () => {
+  // 3^0.9 (5/13)^0.25 = 2.6879 x 0.7875 = 2.1167, by hand from (8.34), from memory.
+  expect(effectiveNumber(3, 60, 12)).toBeCloseTo(2.1167, 3);
+  expect(effectiveNumber(1, 0, 12)).toBe(1);
+  expect(effectiveNumber(2, 1000, 12)).toBe(2);
+});
+
+it('least distances of an M8 and an M16 bolt: the loaded end 80 and 112 mm', () => {
+  // EN 1995-1-1 table 8.4 (from memory).
+  expect(leastDistances(8)).toEqual({ along: 40, end: 80, edge: 24 });
+  expect(leastDistances(16)).toEqual({ along: 80, end: 112, edge: 48 });
+});
+
+it('splitting of a member of 50 x 200 mm loaded at half its depth: 9.9 kN', () => {
+  // 14 x 50 x sqrt(100 / 0.5) = 9899 N, by hand from (8.4), from memory.
+  expect(splittingCapacity(50, 200, 100)).toBeCloseTo(9899.5, 0);
+});
