@@ -1,5 +1,6 @@
 import type { Finding } from '../model/finding.js';
 import { sayFinding } from '../model/findings/index.js';
+import { type ReciprocalReport, reciprocalReport } from '../statics/reciprocal/report.js';
 import type { Assessment } from './records.js';
 
 /** The object of check.json, `strutwright-check/1`. What was not computed is null and listed under `notChecked`. */
@@ -21,7 +22,7 @@ export interface CheckReport {
   readonly displacements: readonly { readonly node: string; readonly case: string; readonly u_mm: readonly number[] }[];
   readonly members: readonly MemberReport[];
   readonly faces: readonly { readonly mark: string; readonly flatness_mm: number | null }[];
-  readonly reciprocal: unknown;
+  readonly reciprocal: ReciprocalReport | null;
   readonly checked: readonly string[];
   readonly notChecked: readonly string[];
   readonly findings: readonly FindingReport[];
@@ -74,7 +75,7 @@ export function checkReport(a: Assessment): CheckReport {
     displacements: displacementsOf(a),
     members: truss.members.map((m, i) => memberReport(a, m.mark, i)),
     faces: a.forms.map((f) => ({ mark: f.mark, flatness_mm: Number.isFinite(f.flatness) ? f.flatness : null })),
-    reciprocal: a.reciprocal ?? null,
+    reciprocal: reciprocalReport(a.topology, a.reciprocal),
     checked: a.checked,
     notChecked: a.notChecked,
     findings: a.findings.map(findingReport),

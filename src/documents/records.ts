@@ -7,6 +7,7 @@ import type { NestingPlan, StockPlan } from '../model/plan.js';
 import type { Solution, Utilisation } from '../model/solution.js';
 import type { Topology } from '../model/topology.js';
 import type { Equilibrium } from '../statics/equilibrium.js';
+import type { ReciprocalResult } from '../statics/reciprocal/result.js';
 
 /** Everything that is known before anything is shaped or planned: what `check` reports. */
 export interface Assessment {
@@ -20,7 +21,7 @@ export interface Assessment {
   readonly equilibrium: Equilibrium | null;
   readonly solution: Solution | null;
   /** What the reciprocal figure says, for check.json and the sheets; null: there is none. */
-  readonly reciprocal: unknown;
+  readonly reciprocal: ReciprocalResult | null;
   readonly utilisations: readonly Utilisation[];
   /** All findings, worst first; waived stops are in `waived` instead of stopping. */
   readonly findings: readonly Finding[];

@@ -13,6 +13,7 @@ import { topologyOf } from '../model/topology.js';
 import type { Truss } from '../model/truss.js';
 import { equilibriumOf } from '../statics/equilibrium.js';
 import { givenForces } from '../statics/given-forces.js';
+import { forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
 import { judge } from '../strength/judge.js';
 import { settle } from './settle.js';
 
@@ -36,7 +37,9 @@ export function assess(file: Truss, job: Job): Assessment {
   const parts: Parts = { struts: struts.struts, hubs: hubs.hubs, panels: [] };
 
   const given = givenForces(truss);
-  const equilibrium = given.forces && equilibriumOf(topology, given.forces, job.fit);
+  const reciprocal = reciprocalOf(topology, job);
+  const forces = forcesFrom(forceSource(topology, job), given.forces, reciprocal.forces);
+  const equilibrium = forces && equilibriumOf(topology, forces.values, job.fit);
 
   const solution = null;
   const judgement = judge(truss, parts, solution, job);
@@ -46,13 +49,14 @@ export function assess(file: Truss, job: Job): Assessment {
     topology,
     forms: faces.forms,
     parts,
-    forces: given.forces && { source: 'given', values: given.forces },
+    forces,
     equilibrium,
     solution,
-    reciprocal: null,
+    reciprocal: reciprocal.counts ? reciprocal : null,
     utilisations: judgement.utilisations,
     findings: [
-      ...given.findings,
+      ...(forces ? [] : given.findings),
+      ...reciprocal.findings,
       ...(equilibrium?.findings ?? []),
       ...faces.findings,
       ...crossingFindings(topology, radii),
@@ -61,7 +65,24 @@ export function assess(file: Truss, job: Job): Assessment {
       ...struts.findings,
       ...judgement.findings,
     ],
-    checked: [...(equilibrium ? ['equilibrium'] : []), 'flatness', 'lengths', ...judgement.checked],
+    checked: [
+      ...(equilibrium ? ['equilibrium'] : []),
+      ...(reciprocal.diagram ? ['reciprocal'] : []),
+      'flatness',
+      'lengths',
+      ...judgement.checked,
+    ],
     notChecked: [...(equilibrium ? [] : ['equilibrium']), ...judgement.notChecked, 'stability'],
   });
+}
+
+/** The member forces of the source that the job names. */
+function forcesFrom(
+  source: ReturnType<typeof forceSource>,
+  given: Float64Array | null,
+  reciprocal: Float64Array | null,
+): Assessment['forces'] {
+  if (source === 'given' && given) return { source, values: given };
+  if (source === 'reciprocal' && reciprocal) return { source, values: reciprocal };
+  return null;
 }
