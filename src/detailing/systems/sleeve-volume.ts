@@ -1,6 +1,7 @@
-import { addScaled, scale, type Vec3 } from '../../maths/vec3.js';
+import { addScaled, scale } from '../../maths/vec3.js';
 import { areaOf, type Half, type Sleeve } from './sleeve.js';
 import { bodyHull } from './sleeve-cover.js';
+import { between, insidePlanes, insideSleeve } from './sleeve-inside.js';
 
 /**
  * Volume of a hub's plastic, mm³: the body's hull, plus each sleeve where it stands out of the hull, shared evenly where sleeves
@@ -22,7 +23,7 @@ export function sleeveVolume(sleeves: readonly Sleeve[]): number {
         const centre = scale(s.socket.direction, from + t * (to - from));
         for (const [a, b] of gridOf(half)) {
           const p = addScaled(addScaled(centre, s.socket.y, a), s.socket.z, b);
-          if (insideHull(planes, p)) continue;
+          if (insidePlanes(planes, p)) continue;
           let share = 1;
           for (const other of sleeves) if (other !== s && insideSleeve(other, p)) share++;
           volume += slice / share;
@@ -48,11 +49,6 @@ const stretches = (s: Sleeve): readonly (readonly [number, number, Half, Half])[
   [s.coneTop, s.mouth, s.outer, s.outer],
 ];
 
-function between(a: Half, b: Half, t: number): Half {
-  if (typeof a === 'number' || typeof b === 'number') return (a as number) + t * ((b as number) - (a as number));
-  return [a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1])];
-}
-
 /** Centres of cells of equal area. */
 function* gridOf(half: Half): Generator<readonly [number, number]> {
   for (let k = 0; k < ACROSS; k++)
@@ -63,21 +59,4 @@ function* gridOf(half: Half): Generator<readonly [number, number]> {
         yield [r * Math.cos(angle), r * Math.sin(angle)];
       } else yield [half[0] * (((k + 0.5) / ACROSS) * 2 - 1), half[1] * (((m + 0.5) / ROUND) * 2 - 1)];
     }
-}
-
-function insideHull(planes: Float64Array, p: Vec3): boolean {
-  for (let i = 0; i < planes.length; i += 4)
-    if (planes[i]! * p[0] + planes[i + 1]! * p[1] + planes[i + 2]! * p[2] > planes[i + 3]!) return false;
-  return planes.length > 0;
-}
-
-function insideSleeve(s: Sleeve, p: Vec3): boolean {
-  const { direction: d, y, z } = s.socket;
-  const along = p[0] * d[0] + p[1] * d[1] + p[2] * d[2];
-  if (along < s.root || along > s.mouth) return false;
-  const a = p[0] * y[0] + p[1] * y[1] + p[2] * y[2];
-  const b = p[0] * z[0] + p[1] * z[1] + p[2] * z[2];
-  return typeof s.outer === 'number'
-    ? a * a + b * b < s.outer * s.outer
-    : Math.abs(a) < s.outer[0] && Math.abs(b) < s.outer[1];
 }

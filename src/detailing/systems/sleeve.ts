@@ -35,7 +35,7 @@ const ROOT_CLEAR = 0.4;
 /** The body's back ring is this much of the sleeve: its sides taper towards the node. */
 const BACK_SHARE = 0.85;
 /** Slope of the cone at the root: run over rise. */
-const CONE_RUN = 1.5;
+const CONE_RUN = 1;
 
 /** Half-sizes grown by an amount on every side. */
 export const grow = (half: Half, by: number): Half =>

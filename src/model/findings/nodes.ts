@@ -41,4 +41,30 @@ export const NODE_FINDINGS = {
     '',
     (f) => `node system "${f.about?.['system']}" is not available; name another under "nodes"`,
   ),
+  'solid-failed': entry(
+    'stop',
+    'node',
+    '',
+    (f) => `its solid could not be made (${f.about?.['what']}); change its setbacks or wall a little`,
+    { waivable: false, withholds: true },
+  ),
+  'pin-meets-bore': entry(
+    'warn',
+    'node',
+    'mm',
+    (f) =>
+      `no place for a ${num(f.value, 1)} mm pin across the socket of ${f.about?.['strut']} that misses every other bore; it has no pin hole`,
+  ),
+  'vent-left-out': entry(
+    'note',
+    'node',
+    '',
+    (f) => `the socket of ${f.about?.['strut']} has no vent: every way out meets another bore; use little glue there`,
+  ),
+  'mark-left-out': entry(
+    'note',
+    'node',
+    '',
+    (f) => `no room to engrave ${f.about?.['marks']}; write by hand what is missing`,
+  ),
 } as const;

@@ -1,0 +1,123 @@
+import { largest, type Sleeve } from '../detailing/systems/sleeve.js';
+import { add, addScaled, scale, type Vec3 } from '../maths/vec3.js';
+import type { HubSpace } from './hub-space.js';
+
+/** A round hole through a hub: a vent or a pin. Relative to the node, mm. */
+export interface Channel {
+  readonly from: Vec3;
+  /** Unit vector. */
+  readonly direction: Vec3;
+  readonly length: number;
+  readonly radius: number;
+  /** The sleeve it starts from. */
+  readonly sleeve: number;
+  /** Pieces that it must be cut from. */
+  readonly meets: readonly number[];
+}
+
+const AZIMUTHS = 24;
+/** A vent may rise towards the mouth to get past a neighbour, rad. */
+const RISES = [0, Math.PI / 6, Math.PI / 4] as const;
+const STEP = 0.5;
+/** How far a channel is carried past the last plastic, mm. */
+const PAST = 0.8;
+
+/**
+ * The vent of a socket: from the bore at the floor, sideways to the open by the shortest way that keeps `web` from every other
+ * strut's path; never through the node's middle, since it starts at the stop and runs outwards. null where there is no way.
+ */
+export function ventOf(space: HubSpace, index: number, diameter: number, web: number): Channel | null {
+  const s = space.sleeves[index]!;
+  const radius = diameter / 2;
+  const from = scale(s.socket.direction, s.stop + radius + FLOOR_CLEAR);
+  return shortest(
+    RISES.flatMap((rise) =>
+      azimuths(s).map((side) =>
+        march(
+          space,
+          index,
+          from,
+          add(scale(side, Math.cos(rise)), scale(s.socket.direction, Math.sin(rise))),
+          radius,
+          web,
+        ),
+      ),
+    ),
+  );
+}
+
+/** Floor and vent must not share a tangent plane, mm. */
+const FLOOR_CLEAR = 0.05;
+
+/** The pin hole across a socket: both ways to the open, clear of every other strut's path; at mid-depth or nearer the mouth. */
+export function pinOf(space: HubSpace, index: number, web: number): Channel | null {
+  const s = space.sleeves[index]!;
+  const radius = s.socket.pin / 2;
+  for (const share of PIN_AT) {
+    const centre = scale(s.socket.direction, s.stop + share * s.socket.depth);
+    const found = shortest(
+      azimuths(s)
+        .slice(0, AZIMUTHS / 2)
+        .map((side) => {
+          const out = march(space, index, centre, side, radius, web);
+          const back = march(space, index, centre, scale(side, -1), radius, web);
+          if (!out || !back) return null;
+          return {
+            from: addScaled(centre, side, -back.length),
+            direction: side,
+            length: back.length + out.length,
+            radius,
+            sleeve: index,
+            meets: [...new Set([...out.meets, ...back.meets])].sort((a, b) => a - b),
+          };
+        }),
+    );
+    if (found) return found;
+  }
+  return null;
+}
+
+/** Shares of the depth, from the stop: the middle first, then outwards where neighbours part. */
+const PIN_AT = [0.5, 0.6, 0.7] as const;
+
+/** Directions square to the sleeve; for a rectangle those square to its faces only. */
+function azimuths(s: Sleeve): Vec3[] {
+  const { y, z } = s.socket;
+  const count = typeof s.inner === 'number' ? AZIMUTHS : 4;
+  return Array.from({ length: count }, (_, k) => {
+    const angle = (2 * Math.PI * k) / count;
+    return add(scale(y, Math.cos(angle)), scale(z, Math.sin(angle)));
+  });
+}
+
+/** Follows a hole from inside a bore to the open; null where it comes too near another strut's path. */
+function march(
+  space: HubSpace,
+  index: number,
+  from: Vec3,
+  direction: Vec3,
+  radius: number,
+  web: number,
+): Channel | null {
+  const meets = new Set<number>();
+  let last = largest(space.sleeves[index]!.outer);
+  for (let t = 0; t <= 2 * space.reach; t += STEP) {
+    const p = addScaled(from, direction, t);
+    if (!space.clearOfPaths(p, radius + web, index)) return null;
+    const pieces = space.piecesAt(p, radius + WIDE);
+    for (const piece of pieces) meets.add(piece);
+    if (pieces.length > 0) last = t;
+    else if (t > last + PAST + STEP) break;
+  }
+  return { from, direction, length: last + PAST, radius, sleeve: index, meets: [...meets].sort((a, b) => a - b) };
+}
+
+/** Margin of the search over the hole itself, mm: polygons of the search contain their circles only nearly. */
+const WIDE = 0.3;
+
+/** The shortest of some channels; the first of equals, to a tenth of a millimetre. */
+function shortest(list: readonly (Channel | null)[]): Channel | null {
+  let best: Channel | null = null;
+  for (const c of list) if (c && (!best || c.length < best.length - 0.1)) best = c;
+  return best;
+}

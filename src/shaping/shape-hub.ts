@@ -1,0 +1,103 @@
+import { LEAST_WALL } from '../detailing/systems/printing.js';
+import type { Finding } from '../model/finding.js';
+import { finding } from '../model/findings/index.js';
+import type { Job } from '../model/job/index.js';
+import type { HubPart } from '../model/parts.js';
+import type { ShapedHub } from '../model/shaped.js';
+import { type Channel, pinOf, ventOf } from './channels.js';
+import { HubSpace } from './hub-space.js';
+import { Bench, loadKernel, SolidFailed } from './kernel.js';
+import { layDown } from './lay-down.js';
+import { letteringsFor, type MarkPlace, placeMark, sideTowards } from './mark-places.js';
+import { openEdges } from './open-edges.js';
+import { chooseLie } from './orientation.js';
+import { socketSolid } from './socket-solid.js';
+
+/**
+ * Makes the solid of a hub as it is printed. A hub that detailing found not makeable has no pieces and no findings of its own.
+ *
+ * @param tension largest tension of each socket's strut in N, in the sockets' order; absent: all alike
+ */
+export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number[]): Promise<ShapedHub> {
+  if (!hub.makeable) return { mark: hub.mark, pieces: [], findings: [] };
+  const bench = new Bench(await loadKernel());
+  const findings: Finding[] = [];
+  try {
+    const space = new HubSpace(hub.sockets);
+    const channels = channelsOf(hub, job, space, findings);
+    const marks = job.nodes.marks ? marksOf(hub, job, space, findings) : [];
+    const solid = socketSolid(bench, space, { marks, channels, chamfer: job.nodes.chamfer_mm });
+    const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
+    const lie = chooseLie(solid, pulls, job.nodes.orientation);
+    const piece = layDown(bench, solid, lie, hub.at, '');
+    const faults = piece ? openEdges(piece.positions, piece.triangles) : 1;
+    if (!piece || faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
+    return { mark: hub.mark, pieces: piece && faults === 0 ? [piece] : [], findings };
+  } catch (error) {
+    if (!(error instanceof SolidFailed)) throw error;
+    findings.push(finding('solid-failed', hub.mark, { about: { what: error.message } }));
+    return { mark: hub.mark, pieces: [], findings };
+  } finally {
+    bench.clear();
+  }
+}
+
+function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Channel[] {
+  const web = LEAST_WALL[job.nodes['process']];
+  const channels: Channel[] = [];
+  hub.sockets.forEach((s, i) => {
+    if (s.pin > 0) {
+      const pin = pinOf(space, i, web);
+      if (pin) channels.push(pin);
+      else findings.push(finding('pin-meets-bore', hub.mark, { value: s.pin, about: { strut: s.strut } }));
+    }
+    if (job.nodes.vent_mm > 0) {
+      const vent = ventOf(space, i, job.nodes.vent_mm, web);
+      if (vent) channels.push(vent);
+      else findings.push(finding('vent-left-out', hub.mark, { about: { strut: s.strut } }));
+    }
+  });
+  return channels;
+}
+
+function marksOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): MarkPlace[] {
+  const places: MarkPlace[] = [];
+  const taken = hub.sockets.map((): MarkPlace[] => []);
+  const leastWall = LEAST_WALL[job.nodes['process']];
+  const place = (i: number, along: string, round: string, sense: 1 | -1): boolean => {
+    const s = hub.sockets[i]!;
+    const towards = sideTowards(s.direction, hub.outward);
+    const found = placeMark(
+      space,
+      i,
+      { along, round },
+      letteringsFor(job, s.wall, leastWall),
+      job.nodes.chamfer_mm,
+      [sense * towards[0], sense * towards[1], sense * towards[2]],
+      taken[i]!,
+    );
+    if (!found) return false;
+    places.push(found);
+    taken[i]!.push(found);
+    return true;
+  };
+  const missing: string[] = [];
+  hub.sockets.forEach((s, i) => {
+    if (!place(i, s.strut, s.strut, 1)) missing.push(s.strut);
+  });
+  // The node's own mark with its revision: on the first sleeve that has room for it, the widest first.
+  const own = `${hub.mark}/${hub.revision}`;
+  const order = hub.sockets.map((_, i) => i).sort((a, b) => size(space, b) - size(space, a) || a - b);
+  if (!order.some((i) => place(i, own, own, -1))) missing.push(own);
+  hub.sockets.forEach((s, i) => {
+    if (!place(i, `>${s.farNode}`, `^${s.farNode}`, -1)) missing.push(`>${s.farNode}`);
+  });
+  if (missing.length > 0)
+    findings.push(finding('mark-left-out', hub.mark, { value: missing.length, about: { marks: missing.join(', ') } }));
+  return places;
+}
+
+function size(space: HubSpace, i: number): number {
+  const { outer, mouth, coneTop } = space.sleeves[i]!;
+  return (typeof outer === 'number' ? 2 * outer : outer[0] + outer[1]) * (mouth - coneTop);
+}

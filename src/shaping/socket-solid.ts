@@ -1,0 +1,137 @@
+import { grow, type Half, largest, outlineOf, ringPoints, type Sleeve } from '../detailing/systems/sleeve.js';
+import type { Vec3 } from '../maths/vec3.js';
+import type { Channel } from './channels.js';
+import { addLettering } from './engraving.js';
+import type { HubSpace } from './hub-space.js';
+import type { Bench, Manifold } from './kernel.js';
+import type { MarkPlace } from './mark-places.js';
+import { MeshBuilder } from './mesh-builder.js';
+
+/** What is cut from a socket hub besides its bores. */
+export interface HubCuts {
+  readonly marks: readonly MarkPlace[];
+  readonly channels: readonly Channel[];
+  readonly chamfer: number;
+}
+
+/**
+ * The solid of a socket hub, relative to its node, in the truss's axes: the outsides of the sleeves and the body, united, less the
+ * struts' paths, the channels and the marks. Each strut's path is cut from all of the hub, so that no neighbour's cone or body can
+ * stand in it; no cutter shares a face with a piece.
+ */
+export function socketSolid(bench: Bench, space: HubSpace, cuts: HubCuts): Manifold {
+  const { kernel } = bench;
+  const pieces = space.sleeves.map((s) => sleeveSolid(bench, s, cuts.chamfer));
+  const body = bodySolid(bench, space);
+  if (body) pieces.push(body);
+  const outside = bench.hold(kernel.Manifold.union(pieces), 'outside');
+  const cutters = [
+    ...space.sleeves.map((s) => pathSolid(bench, s, cuts.chamfer, space.reach + 1)),
+    ...cuts.channels.map((c) => channelSolid(bench, c)),
+    ...space.sleeves.flatMap((s, i) => letteringSolid(bench, s, i, cuts.marks) ?? []),
+  ];
+  const hub = bench.hold(kernel.Manifold.difference([outside, ...cutters]), 'hub');
+  for (const solid of [...pieces, outside, ...cutters]) bench.free(solid);
+  return hub;
+}
+
+function bodySolid(bench: Bench, space: HubSpace): Manifold | null {
+  const points = space.sleeves.flatMap((s) =>
+    s.rings.flatMap(([at, half]) => ringPoints(s.socket, at, half, sidesFor(largest(half)))),
+  );
+  if (points.length === 0) return null;
+  return bench.hold(bench.kernel.Manifold.hull(points.map((p) => [p[0], p[1], p[2]])), 'body');
+}
+
+/** The path of a strut: the bore from its stop, widened at the mouth, and on beyond whatever else the hub has there. */
+function pathSolid(bench: Bench, s: Sleeve, chamfer: number, to: number): Manifold {
+  const n = sidesFor(largest(s.outer));
+  const ring = (z: number, half: Half) => ({ z, outline: outlineOf(half, n) });
+  const c = chamferOf(s, chamfer);
+  const mesh = new MeshBuilder();
+  mesh.loft([
+    ring(s.stop, s.inner),
+    ring(s.mouth - c, s.inner),
+    // The slope runs on past the mouth, so that its rim is cut and not shared.
+    ...(c > 0 ? [ring(s.mouth + PAST_MOUTH, grow(s.inner, c + PAST_MOUTH))] : []),
+    ring(Math.max(to, s.mouth + 1), c > 0 ? grow(s.inner, c + PAST_MOUTH) : s.inner),
+  ]);
+  return placed(bench, mesh, s, 'path');
+}
+
+const PAST_MOUTH = 0.1;
+
+const chamferOf = (s: Sleeve, chamfer: number): number =>
+  Math.max(0, Math.min(chamfer, s.socket.wall / 2 - 0.05, s.socket.depth / 4));
+
+/** The outside of a sleeve, from its root to its mouth. */
+function sleeveSolid(bench: Bench, s: Sleeve, chamfer: number): Manifold {
+  const n = sidesFor(largest(s.outer));
+  const ring = (z: number, half: Half) => ({ z, outline: outlineOf(half, n) });
+  const c = chamferOf(s, chamfer);
+  const mesh = new MeshBuilder();
+  mesh.loft([
+    ring(s.root, grow(s.outer, ROOT_INSIDE)),
+    ...(s.coneFoot > s.root ? [ring(s.coneFoot, s.cone)] : []),
+    ...(s.coneTop > s.coneFoot ? [ring(s.coneTop, s.outer)] : []),
+    ...(c > 0 ? [ring(s.mouth - c, s.outer), ring(s.mouth, grow(s.outer, -c))] : [ring(s.mouth, s.outer)]),
+  ]);
+  return placed(bench, mesh, s, `sleeve ${s.socket.strut}`);
+}
+
+/** The root is drawn in a little, mm, so that its edge lies in no face of the body. */
+const ROOT_INSIDE = -0.07;
+
+function channelSolid(bench: Bench, c: Channel): Manifold {
+  const [u, v] = frameOf(c.direction);
+  const mesh = new MeshBuilder();
+  const outline = outlineOf(c.radius, CHANNEL_SIDES);
+  mesh.loft([
+    { z: 0, outline },
+    { z: c.length, outline },
+  ]);
+  return transformed(bench, mesh, u, v, c.direction, c.from, 'channel');
+}
+
+const CHANNEL_SIDES = 12;
+
+function frameOf(d: Vec3): [Vec3, Vec3] {
+  const least: Vec3 = Math.abs(d[0]) < 0.6 ? [1, 0, 0] : [0, 1, 0];
+  const u: Vec3 = [
+    d[1] * least[2] - d[2] * least[1],
+    d[2] * least[0] - d[0] * least[2],
+    d[0] * least[1] - d[1] * least[0],
+  ];
+  const l = Math.hypot(u[0], u[1], u[2]);
+  const unit: Vec3 = [u[0] / l, u[1] / l, u[2] / l];
+  return [unit, [d[1] * unit[2] - d[2] * unit[1], d[2] * unit[0] - d[0] * unit[2], d[0] * unit[1] - d[1] * unit[0]]];
+}
+
+function letteringSolid(bench: Bench, s: Sleeve, i: number, marks: readonly MarkPlace[]): Manifold | null {
+  const mesh = new MeshBuilder();
+  for (const m of marks) if (m.sleeve === i) addLettering(mesh, bench.kernel, m.text, m.lettering, m.surface);
+  return mesh.empty ? null : placed(bench, mesh, s, 'marks');
+}
+
+const placed = (bench: Bench, mesh: MeshBuilder, s: Sleeve, what: string): Manifold =>
+  transformed(bench, mesh, s.socket.y, s.socket.z, s.socket.direction, [0, 0, 0], what);
+
+function transformed(bench: Bench, mesh: MeshBuilder, x: Vec3, y: Vec3, z: Vec3, at: Vec3, what: string): Manifold {
+  const { Manifold, Mesh } = bench.kernel;
+  const local = bench.hold(new Manifold(new Mesh(mesh.mesh())), what);
+  const solid = bench.hold(
+    local.transform([x[0], x[1], x[2], 0, y[0], y[1], y[2], 0, z[0], z[1], z[2], 0, at[0], at[1], at[2], 1]),
+    what,
+  );
+  bench.free(local);
+  return solid;
+}
+
+/** Sides of a circle of a radius: enough for a chord error of 0.03 mm, in fours, 20 to 64. */
+export function sidesFor(radius: number): number {
+  const sides = Math.PI / Math.acos(1 - CHORD / Math.max(radius, 1));
+  return Math.min(64, Math.max(20, 4 * Math.ceil(sides / 4)));
+}
+
+/** mm; a sixth of a layer. */
+const CHORD = 0.03;

@@ -1,0 +1,69 @@
+import { execFileSync } from 'node:child_process';
+import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { expect, it } from 'vitest';
+import { checkHub, randomHub } from './random-hub.mjs';
+
+it('is closed, in one piece and free of crossings in the eyes of admesh and of the edge count', async () => {
+  const folder = mkdtempSync(join(tmpdir(), 'hub-'));
+  try {
+    for (const [seed, count] of [
+      [1, 3],
+      [2, 6],
+      [3, 12],
+    ] as const) {
+      const result = await checkHub(randomHub(seed, { count, least: 25 }), { cross: true });
+      expect(result.faults).toEqual([]);
+      const path = join(folder, `${seed}.stl`);
+      writeFileSync(path, result.bytes!);
+      const said = execFileSync('timeout', ['60', 'admesh', path], { encoding: 'utf8' });
+      expect(said).toMatch(/Total disconnected facets\s*:\s*0\s+0/);
+      expect(said).toMatch(/Number of parts\s*:\s*1\s/);
+      expect(said).toMatch(/Degenerate facets\s*:\s*0/);
+    }
+  } finally {
+    rmSync(folder, { recursive: true });
+  }
+});
+
+it('makes a hub of one strut, of two in line, and of two square to each other', async () => {
+  const { job, hub } = randomHub(5, { count: 3 });
+  const base = hub.sockets[0]!;
+  const along = (direction: readonly number[], y: readonly number[], z: readonly number[]) => ({
+    ...base,
+    strut: `S${direction.join('')}`.replaceAll('-', 'm'),
+    direction,
+    y,
+    z,
+    section: { name: 'r8', shape: { kind: 'round' as const, diameter: 8 }, material: 'beech-dowel', measured: null },
+    bore: 8.4,
+    wall: 2,
+    depth: 14,
+  });
+  const { nodeSystem } = await import('../../dist/detailing/systems/index.js');
+  const system = nodeSystem('socket')!;
+  const cases = [
+    [along([1, 0, 0], [0, 1, 0], [0, 0, 1])],
+    [along([1, 0, 0], [0, 1, 0], [0, 0, 1]), along([-1, 0, 0], [0, -1, 0], [0, 0, 1])],
+    [along([1, 0, 0], [0, 1, 0], [0, 0, 1]), along([0, 1, 0], [-1, 0, 0], [0, 0, 1])],
+  ];
+  for (const sockets of cases) {
+    const { setbacks } = system.setbacks(sockets as never, job);
+    const placed = {
+      ...hub,
+      sockets: sockets.map((s, i) => ({ ...s, setback: setbacks[i]! })),
+    } as unknown as typeof hub;
+    const result = await checkHub({ job, hub: { ...placed, mass: system.mass(placed, job) } }, { cross: true });
+    expect(result.faults).toEqual([]);
+  }
+});
+
+it('gives the same bytes each time, and makes nothing of a hub that cannot be made', async () => {
+  const made = randomHub(8, { count: 5 });
+  const [first, second] = [await checkHub(made), await checkHub(made)];
+  expect(Buffer.from(first.bytes!).equals(Buffer.from(second.bytes!))).toBe(true);
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  const none = await shapeHub({ ...made.hub, makeable: false }, made.job);
+  expect(none.pieces).toEqual([]);
+});
