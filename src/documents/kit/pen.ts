@@ -47,7 +47,10 @@ type Face = 'regular' | 'bold' | 'fallback' | 'fallbackBold';
 
 /** The parts of pdfkit that its types leave out. */
 interface Inner {
-  readonly _font: { readonly font: { hasGlyphForCodePoint(code: number): boolean } };
+  readonly _font: {
+    readonly font: { hasGlyphForCodePoint(code: number): boolean };
+    layoutRun(text: string, features?: unknown): unknown;
+  };
   info: Record<string, unknown>;
 }
 
@@ -61,6 +64,7 @@ export class Pen {
   private readonly chunks: Uint8Array[] = [];
   private readonly covered = new Map<string, boolean>();
   private readonly widths = new Map<string, number>();
+  private readonly taken = new Set<Face>();
   private readonly ended: Promise<void>;
   private count = 0;
   private current = -1;
@@ -70,7 +74,8 @@ export class Pen {
     this.doc = new PDFDocument({
       autoFirstPage: false,
       bufferPages: true,
-      font: options.fonts.regular as unknown as string,
+      // No default face: pdfkit would parse it anew each time its registered twin is asked for.
+      font: null as unknown as string,
       lang: 'en',
       displayTitle: true,
       info: {
@@ -128,7 +133,8 @@ export class Pen {
       const key = `${run.face} ${run.text}`;
       let width = this.widths.get(key);
       if (width === undefined) {
-        width = this.doc.font(run.face).fontSize(1000).widthOfString(run.text, FEATURES);
+        this.take(run.face);
+        width = this.doc.fontSize(1000).widthOfString(run.text, FEATURES);
         this.widths.set(key, width);
       }
       sum += width;
@@ -148,9 +154,8 @@ export class Pen {
     this.doc.fillColor(style.colour ?? INK.black).fontSize(size);
     let at = x + shift;
     for (const run of this.runs(text, style.bold ?? false)) {
-      this.doc
-        .font(run.face)
-        .text(run.text, at * POINTS, y * POINTS, { ...FEATURES, lineBreak: false, baseline: 'alphabetic' });
+      this.take(run.face);
+      this.doc.text(run.text, at * POINTS, y * POINTS, { ...FEATURES, lineBreak: false, baseline: 'alphabetic' });
       at += this.widths.get(`${run.face} ${run.text}`)! * (size / 1000 / POINTS);
     }
     this.doc.restore();
@@ -258,11 +263,30 @@ export class Pen {
     return runs;
   }
 
+  /** Makes a face the present one. pdfkit lays a text with features out anew each time it measures or writes it: once is enough. */
+  private take(face: Face): void {
+    this.doc.font(face);
+    if (this.taken.has(face)) return;
+    this.taken.add(face);
+    const font = (this.doc as unknown as Inner)._font;
+    const layOut = font.layoutRun.bind(font);
+    const known = new Map<string, unknown>();
+    font.layoutRun = (text, features) => {
+      const key = features === undefined ? ` ${text}` : text;
+      let run = known.get(key);
+      if (run === undefined) {
+        run = layOut(text, features);
+        known.set(key, run);
+      }
+      return run;
+    };
+  }
+
   private has(face: Face, char: string): boolean {
     const key = face + char;
     let known = this.covered.get(key);
     if (known === undefined) {
-      this.doc.font(face);
+      this.take(face);
       known = (this.doc as unknown as Inner)._font.font.hasGlyphForCodePoint(char.codePointAt(0)!);
       this.covered.set(key, known);
     }

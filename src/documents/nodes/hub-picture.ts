@@ -10,26 +10,58 @@ import { type Label, type Place, placeLabels } from '../kit/view/place-labels.js
 /** Points of a round end. */
 const ROUND = 28;
 /** Room for the marks round the picture, mm. */
-const EDGE = 9;
+const EDGE = 6.5;
+
+/** A hub in one view, measured before it is drawn: mm at full size, from the node. */
+export interface HubPicture {
+  readonly sleeves: readonly Sleeve[];
+  readonly body: number;
+  readonly low: Point;
+  readonly high: Point;
+}
+
+/** The picture of a hub as its sleeves in an orthographic view. */
+export function hubPicture(hub: HubPart, camera: Camera): HubPicture {
+  const sleeves = hub.sockets.map((socket) => sleeveOf(socket, camera));
+  const body = Math.max(1, ...sleeves.map((s) => s.radius)) * 1.15;
+  const low: [number, number] = [-body, -body];
+  const high: [number, number] = [body, body];
+  for (const { tip, radius } of sleeves)
+    for (const axis of [0, 1] as const) {
+      low[axis] = Math.min(low[axis], tip[axis] - radius);
+      high[axis] = Math.max(high[axis], tip[axis] + radius);
+    }
+  return { sleeves, body, low, high };
+}
+
+/** The scale of ISO 5455, 1:1 at most, at which the picture and its marks fit into a box. */
+export function hubPictureScale(
+  picture: HubPicture,
+  width: number,
+  height: number,
+): { readonly factor: number; readonly name: string } {
+  const [w, h] = [picture.high[0] - picture.low[0], picture.high[1] - picture.low[1]];
+  return drawingScale([w, h], [width - 2 * EDGE, height - 2 * EDGE], 1);
+}
+
+/** Height that the picture and its marks take at a scale, mm. */
+export const hubPictureHeight = (picture: HubPicture, factor: number): number =>
+  (picture.high[1] - picture.low[1]) * factor + 2 * EDGE;
 
 /**
- * Draws a hub as its sleeves: farthest first, each a band with its round mouth, the body a ball between those that
- * point away and those that point to the viewer; each sleeve's strut beside its mouth. Returns the scale's name.
+ * Draws a hub into the area: farthest sleeve first, each a band with its round mouth, the body a ball between those that
+ * point away and those that point to the viewer; each strut's mark beside its mouth.
  */
-export function drawHubPicture(pen: Pen, area: Area, hub: HubPart, camera: Camera): string {
-  const sleeves = hub.sockets.map((socket) => sleeveOf(socket, camera));
-  const half = Math.max(1, ...sleeves.map((s) => Math.hypot(s.tip[0], s.tip[1]) + s.radius));
-  const room = Math.min(area.width, area.height) - 2 * EDGE;
-  const scale = drawingScale([2 * half, 2 * half], [room, room], 2);
+export function drawHubPicture(pen: Pen, area: Area, picture: HubPicture, factor: number): void {
+  const { sleeves, body, low, high } = picture;
+  const middle: Point = [(low[0] + high[0]) / 2, (low[1] + high[1]) / 2];
   const centre: Point = [area.x + area.width / 2, area.y + area.height / 2];
-  const at = ([x, y]: Point): Point => [centre[0] + scale.factor * x, centre[1] - scale.factor * y];
-
+  const at = ([x, y]: Point): Point => [centre[0] + factor * (x - middle[0]), centre[1] - factor * (y - middle[1])];
   const order = sleeves
     .map((sleeve, i) => ({ sleeve, i }))
     .sort((a, b) => a.sleeve.depth - b.sleeve.depth || a.i - b.i);
-  const body = Math.max(...sleeves.map((s) => s.radius)) * 1.15;
-  const drawBody = (): void =>
-    pen.circle(centre[0], centre[1], body * scale.factor, { fill: INK.white, width: LINE.normal });
+  const [nx, ny] = at([0, 0]);
+  const drawBody = (): void => pen.circle(nx, ny, body * factor, { fill: INK.white, width: LINE.normal });
   let bodyDrawn = false;
   for (const { sleeve } of order) {
     if (sleeve.depth > 0 && !bodyDrawn) {
@@ -39,11 +71,16 @@ export function drawHubPicture(pen: Pen, area: Area, hub: HubPart, camera: Camer
     drawSleeve(pen, sleeve, at);
   }
   if (!bodyDrawn) drawBody();
-  drawMarks(pen, area, sleeves, at, scale.factor);
-  return scale.name;
+  drawMarks(pen, area, sleeves, at, factor, {
+    x: nx,
+    y: ny,
+    width: 2 * body * factor,
+    height: 2 * body * factor,
+    angle: 0,
+  });
 }
 
-interface Sleeve {
+export interface Sleeve {
   readonly strut: string;
   /** Middle of the mouth, mm from the node on the view's axes. */
   readonly tip: Point;
@@ -93,7 +130,14 @@ function drawSleeve(pen: Pen, sleeve: Sleeve, at: (p: Point) => Point): void {
   }
 }
 
-function drawMarks(pen: Pen, area: Area, sleeves: readonly Sleeve[], at: (p: Point) => Point, factor: number): void {
+function drawMarks(
+  pen: Pen,
+  area: Area,
+  sleeves: readonly Sleeve[],
+  at: (p: Point) => Point,
+  factor: number,
+  body: Box,
+): void {
   const style = { size: SIZE.note, bold: true };
   const bodies: Box[] = sleeves.map((s) => {
     const [x, y] = at([s.tip[0] / 2, s.tip[1] / 2]);
@@ -126,7 +170,7 @@ function drawMarks(pen: Pen, area: Area, sleeves: readonly Sleeve[], at: (p: Poi
       to: [b.x + c * half, b.y + s * half] as Point,
     };
   });
-  const placed = placeLabels(labels, area, outlines);
+  const placed = placeLabels(labels, area, outlines, [body, ...bodies]);
   for (const [strut, place] of placed) {
     if (place.leader) pen.line([place.box.x, place.box.y], place.leader, { width: LINE.hair });
     pen.blot(place.box);

@@ -13,13 +13,27 @@ import { fixed, type Units, unitsOf } from '../kit/units.js';
 import { PLAN } from '../kit/view/camera.js';
 import { byMark } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
-import { drawHubPicture, outsideCamera } from './hub-picture.js';
+import {
+  drawHubPicture,
+  type HubPicture,
+  hubPicture,
+  hubPictureHeight,
+  hubPictureScale,
+  outsideCamera,
+} from './hub-picture.js';
 
-/** Width of one picture, mm. */
-const PICTURE = 46;
+/** Width of one picture and its greatest height, mm. */
+const PICTURE = 52;
+/** Width of the tables beside the pictures, mm. */
+const TABLES = 84;
 /** Head of a block: the node's mark, read across a bench. */
-const HEAD = 11;
+const HEAD = 12;
 const TEXT = 8;
+const ANGLE_ROW = lineHeight(TEXT) * 1.12;
+/** Between blocks, down and across, mm. */
+const GAP = { down: 3, across: 10 } as const;
+/** Sheets wider than this carry two columns of blocks, mm. */
+const TWO_COLUMNS = 380;
 
 /** node-sheets.pdf: a block a node with its mark, two pictures, its sockets and the angles between them. */
 export async function nodeSheets(records: PackRecords, fonts: Fonts): Promise<Written> {
@@ -29,69 +43,82 @@ export async function nodeSheets(records: PackRecords, fonts: Fonts): Promise<Wr
   let area = paper.addSheet({
     title: 'Nodes',
     instruction:
-      'Hold the printed node as in its picture and check each socket’s mark before gluing. Azimuth is anticlockwise from x in plan, elevation is up from level; setback is from the node to the stop, depth from the stop to the mouth.',
+      'Hold the printed node as in its picture and check each socket’s mark before gluing. Azimuth: anticlockwise from x in plan; elevation: up from level; setback: from the node to the stop; depth: from the stop to the mouth.',
   });
+  const columns = area.width > TWO_COLUMNS ? 2 : 1;
+  const width = (area.width - (columns - 1) * GAP.across) / columns;
+  const hubs = [...records.parts.hubs].sort((a, b) => byMark(a.mark, b.mark));
   let y = area.y;
-  const columns = area.width > 250 ? 2 : 1;
-  const width = (area.width - (columns - 1) * 10) / columns;
-  let column = 0;
-  let bottom = y;
-  for (const hub of [...records.parts.hubs].sort((a, b) => byMark(a.mark, b.mark))) {
-    const height = blockHeight(hub);
-    if (column === columns || (column === 0 && y + height > area.y + area.height && y > area.y)) {
-      y = bottom;
-      column = 0;
-    }
-    if (y + height > area.y + area.height && (y > area.y || column > 0)) {
+  for (let i = 0; i < hubs.length; i += columns) {
+    const row = hubs.slice(i, i + columns).map((hub) => blockOf(hub, width));
+    const height = Math.max(...row.map((block) => block.height));
+    if (y + height > area.y + area.height && y > area.y) {
       area = paper.continueSheet();
       y = area.y;
-      bottom = y;
-      column = 0;
     }
-    drawBlock(paper.pen, { x: area.x + column * (width + 10), y, width, height }, hub, cuts, units);
-    bottom = Math.max(bottom, y + height + 3);
-    column++;
-    if (column === columns) {
-      y = bottom;
-      column = 0;
-    }
+    row.forEach((block, k) => {
+      drawBlock(paper.pen, { x: area.x + k * (width + GAP.across), y, width, height }, block, cuts, units);
+    });
+    y += height + GAP.down;
   }
   return paper.finish();
 }
 
-function blockHeight(hub: HubPart): number {
-  const n = hub.sockets.length;
-  const tables = smallTableHeight(n, 2, TEXT) + (n > 1 ? 5 + n * lineHeight(TEXT) * 1.15 : 0);
-  return HEAD + Math.max(PICTURE + 7, tables) + 3;
+/** One node's block, measured. */
+interface Block {
+  readonly hub: HubPart;
+  readonly pictures: readonly { readonly name: string; readonly picture: HubPicture }[];
+  readonly pictureWidth: number;
+  readonly pictureHeight: number;
+  /** One scale for both pictures, so that they can be compared. */
+  readonly scale: { readonly factor: number; readonly name: string };
+  readonly height: number;
 }
 
-function drawBlock(pen: Pen, area: Area, hub: HubPart, cuts: ReadonlyMap<string, number | null>, units: Units): void {
+function blockOf(hub: HubPart, width: number): Block {
+  const pictureWidth = Math.min(PICTURE, (width - TABLES) / 2);
+  const pictures = [outsideCamera(hub.outward), { ...PLAN, name: 'From above' }].map((camera) => ({
+    name: camera.name,
+    picture: hubPicture(hub, camera),
+  }));
+  const scale = pictures
+    .map(({ picture }) => hubPictureScale(picture, pictureWidth, PICTURE))
+    .reduce((a, b) => (b.factor < a.factor ? b : a));
+  const pictureHeight = Math.max(...pictures.map(({ picture }) => hubPictureHeight(picture, scale.factor)));
+  const n = hub.sockets.length;
+  const tables = smallTableHeight(n, 2, TEXT) + (n > 1 ? 4 + n * ANGLE_ROW : 0);
+  return { hub, pictures, pictureWidth, pictureHeight, scale, height: HEAD + Math.max(pictureHeight + 5, tables) + 1 };
+}
+
+function drawBlock(pen: Pen, area: Area, block: Block, cuts: ReadonlyMap<string, number | null>, units: Units): void {
   const { x, y, width } = area;
+  const { hub, pictureWidth, pictureHeight } = block;
   pen.line([x, y], [x + width, y], { width: LINE.hair });
   const wide = pen.text(hub.mark, x, y + 9, { size: 24, bold: true });
   const said = [
+    ...(hub.makeable ? [] : ['cannot be made: see the report']),
     `at ${hub.at.map((c) => units.length(c)).join(', ')} ${units.lengthUnit}`,
     `${hub.sockets.length} struts`,
-    ...(hub.mass === null ? [] : [`${fixed(hub.mass * 1000, 0)} g`]),
+    ...(hub.mass === null
+      ? []
+      : [units.massUnit === 'kg' ? `${fixed(hub.mass * 1000, 0)} g` : `${units.mass(hub.mass)} lb`]),
     hub.material.title,
     `revision ${hub.revision}`,
-    ...(hub.makeable ? [] : ['cannot be made: see the report']),
   ];
   writeFitted(pen, said.join(' · '), x + wide + 5, y + 8, width - wide - 5, { size: SIZE.body }, 6.5);
   const top = y + HEAD;
-  const cameras = [outsideCamera(hub.outward), { ...PLAN, name: 'From above' }];
-  const pictures = Math.min(PICTURE, (width - 86) / 2);
-  cameras.forEach((camera, k) => {
-    const box: Area = { x: x + k * (pictures + 1), y: top, width: pictures, height: PICTURE };
-    const scale = hub.sockets.length > 0 ? drawHubPicture(pen, box, hub, camera) : '';
-    pen.text(`${camera.name}${scale ? `, ${scale}` : ''}`, box.x + pictures / 2, top + PICTURE + 4, {
+  block.pictures.forEach(({ name, picture }, k) => {
+    const box: Area = { x: x + k * (pictureWidth + 1), y: top, width: pictureWidth, height: pictureHeight };
+    if (hub.sockets.length > 0) drawHubPicture(pen, box, picture, block.scale.factor);
+    const caption = hub.sockets.length > 0 ? `${name}, ${block.scale.name}` : name;
+    pen.text(caption, box.x + pictureWidth / 2, top + pictureHeight + 3, {
       size: SIZE.note,
       align: 'centre',
       colour: INK.grey,
     });
   });
-  const left = x + 2 * pictures + 5;
-  const end = drawSmallTable(pen, left, top, x + width - left, socketColumns(cuts, units), hub.sockets, TEXT);
+  const left = x + 2 * pictureWidth + 3;
+  const end = drawSmallTable(pen, left, top - 2, x + width - left, socketColumns(cuts, units), hub.sockets, TEXT);
   if (hub.sockets.length > 1) drawAngles(pen, left, end + 2, x + width - left, hub.sockets);
 }
 
@@ -117,27 +144,28 @@ function socketColumns(cuts: ReadonlyMap<string, number | null>, units: Units): 
   ];
 }
 
-/** The angles of all pairs in degrees, a triangle under the struts' marks. */
+/** The angles of all pairs in degrees: each row against the struts that stand at the heads of the columns. */
 function drawAngles(pen: Pen, x: number, y: number, width: number, sockets: readonly Socket[]): void {
-  const style = { size: TEXT };
-  const mark = Math.max(...sockets.map((s) => pen.widthOf(s.strut, { ...style, bold: true })));
-  const step = Math.min(
-    (width - mark) / Math.max(1, sockets.length - 1),
-    Math.max(mark, pen.widthOf('180.0', style)) + 3.5,
+  const mark = Math.max(
+    pen.widthOf('Angles, °', { size: SIZE.note }),
+    ...sockets.map((s) => pen.widthOf(s.strut, { size: TEXT, bold: true })),
   );
-  const size = Math.min(TEXT, (TEXT * (step - 1)) / Math.max(mark, pen.widthOf('180.0', style)));
-  const row = lineHeight(TEXT) * 1.15;
+  const widest = Math.max(
+    pen.widthOf('180.0', { size: TEXT }),
+    ...sockets.map((s) => pen.widthOf(s.strut, { size: TEXT, bold: true })),
+  );
+  const step = Math.min((width - mark) / Math.max(1, sockets.length - 1), widest + 4);
+  const size = Math.min(TEXT, (TEXT * (step - 1)) / widest);
   const column = (k: number): number => x + mark + step * (k + 1);
+  pen.text('Angles, °', x, y + 3, { size: SIZE.note, colour: INK.grey });
   sockets.forEach((socket, i) => {
-    const baseline = y + 3 + i * row;
+    const baseline = y + 3 + i * ANGLE_ROW;
     if (i > 0) pen.text(socket.strut, x, baseline, { size: TEXT, bold: true });
     for (let k = 0; k < i; k++)
       pen.text(fixed((angleBetween(socket.direction, sockets[k]!.direction) * 180) / Math.PI, 1), column(k), baseline, {
         size,
         align: 'right',
       });
-    if (i === 0) pen.text('Angles, °', x, baseline, { size: SIZE.note, colour: INK.grey });
-    if (i < sockets.length - 1)
-      pen.text(socket.strut, column(i), y + 3 + i * row, { size, bold: true, align: 'right' });
+    if (i < sockets.length - 1) pen.text(socket.strut, column(i), baseline, { size, bold: true, align: 'right' });
   });
 }

@@ -14,15 +14,15 @@ export function findingsSection(flow: Flow, records: PackRecords): void {
       ? 'Clear: nothing was found that must be put right.'
       : hold.length > 0
         ? `On hold: ${plural(count('stop'), 'stop')}, ${plural(count('warn'), 'warning')}. Make nothing from this pack until the stops are put right or somebody answers for them.`
-        : `Flagged: ${plural(count('warn'), 'warning')}. Read them before anything is made.`;
+        : `Flagged: ${plural(count('warn'), 'warning')}. Read before anything is made.`;
   flow.paragraph(verdict, { bold: true, size: 12 });
   if (findings.length > 0)
     flow.table(
       [
-        { head: '', bold: true, value: (f: Finding) => WORDS[f.level] },
-        { head: 'What was found, and how to mend it', wraps: true, value: sayFinding },
+        { head: '', bold: true, value: (r: Run) => WORDS[r.first.level] },
+        { head: 'What was found, and how to mend it', wraps: true, value: sayRun },
       ],
-      findings,
+      runsOf(findings),
     );
   if (waived.length > 0) {
     flow.heading('Waived stops');
@@ -38,6 +38,39 @@ export function findingsSection(flow: Flow, records: PackRecords): void {
       waived,
     );
   }
+}
+
+/** Findings of one code and level: the worst in words, the others by mark and value. */
+interface Run {
+  readonly first: Finding;
+  readonly others: readonly Finding[];
+}
+
+/** Fewer alike findings than this are each said in full. */
+const ALIKE = 4;
+
+function runsOf(findings: readonly Finding[]): Run[] {
+  const byCode = new Map<string, Finding[]>();
+  for (const f of findings) {
+    const key = `${f.level} ${f.code}`;
+    byCode.set(key, [...(byCode.get(key) ?? []), f]);
+  }
+  return [...byCode.values()].flatMap((alike): Run[] => {
+    if (alike.length < ALIKE) return alike.map((first) => ({ first, others: [] }));
+    // A value counts by how far it is on the wrong side of its limit, whichever side that is.
+    const excess = (f: Finding): number => (f.value === null || f.limit === null ? 0 : Math.abs(f.value - f.limit));
+    const [first, ...others] = [...alike].sort((a, b) => excess(b) - excess(a));
+    return [{ first: first!, others }];
+  });
+}
+
+function sayRun({ first, others }: Run): string {
+  if (others.length === 0) return sayFinding(first);
+  const unit = first.unit === '' ? '' : ` ${first.unit}`;
+  const said = others.map((f) =>
+    f.value === null ? f.subject : `${f.subject} (${Number(f.value.toPrecision(3))}${unit})`,
+  );
+  return `${sayFinding(first)}\nThe same of ${others.length} more: ${said.join(', ')}`;
 }
 
 const plural = (n: number, word: string): string => `${n === 0 ? 'no' : n} ${word}${n === 1 ? '' : 's'}`;

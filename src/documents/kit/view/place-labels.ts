@@ -18,6 +18,8 @@ export interface Label {
   /** Where it points to when every place is taken. */
   readonly anchor: Point;
   readonly places: readonly Place[];
+  /** Where every place is taken it is left out instead of going elsewhere. */
+  readonly stays?: boolean;
 }
 
 export interface DrawnLine {
@@ -27,7 +29,7 @@ export interface DrawnLine {
 }
 
 /** Clear space between two labels, mm. */
-const CLEAR = 0.4;
+const CLEAR = 0.3;
 /** mm of displacement that one mm of covered line is worth: under a label on its own line, and under one beside. */
 const COVER = { on: 1.5, beside: 2.5 } as const;
 /** mm of displacement that a leader crossing another leader is worth. */
@@ -56,9 +58,8 @@ export function placeLabels(
   const costOf = (place: Place, owner: string, bound: number): number => {
     const { box, leader } = place;
     if (place.cost >= bound || !inside(area, box)) return Number.POSITIVE_INFINITY;
-    const grown = { ...box, width: box.width + CLEAR, height: box.height + CLEAR };
-    for (const other of boxes) if (overlap(grown, other)) return Number.POSITIVE_INFINITY;
-    for (const [p, q] of leaders) if (lengthInside(grown, p, q) > 0) return Number.POSITIVE_INFINITY;
+    for (const other of boxes) if (overlap(box, other, -CLEAR)) return Number.POSITIVE_INFINITY;
+    for (const [p, q] of leaders) if (lengthInside(box, p, q) > 0) return Number.POSITIVE_INFINITY;
     let cost = place.cost;
     if (leader) {
       const from: Point = [box.x, box.y];
@@ -83,7 +84,7 @@ export function placeLabels(
     };
     for (const place of label.places) consider(place);
     const farthest = Math.hypot(area.width, area.height);
-    if (!best)
+    if (!best && !label.stays)
       for (let radius = RING; radius < Math.min(farthest, least); radius += RING)
         for (const place of ring(label, radius)) consider(place);
     if (!best) continue;

@@ -37,7 +37,14 @@ export function drawProjectedViews(pen: Pen, area: Area, views: ProjectedViews):
     const drawn = drawTrussView(
       pen,
       { ...box, height: box.height - CAPTION },
-      { camera, scale: own, nodes: views.nodes, struts: views.struts, edge: ROUND },
+      {
+        camera,
+        scale: own,
+        nodes: views.nodes,
+        struts: views.struts,
+        edge: ROUND,
+        marks: own === 'fill' ? 'all' : 'own',
+      },
     );
     pen.text(`${camera.name}, ${drawn.scale}`, box.x + box.width / 2, box.y + box.height - 2, {
       size: SIZE.note,

@@ -42,6 +42,8 @@ export interface TrussView {
   readonly scale: 'iso' | 'fill' | { readonly factor: number; readonly name: string };
   /** Room round the figure for marks that move outward, mm. */
   readonly edge?: number;
+  /** own: a node's mark stands on its node or, where a nearer node's mark is in the way, not at all; all (usual): it moves aside. */
+  readonly marks?: 'all' | 'own';
 }
 
 export interface DrawnView {
@@ -84,7 +86,10 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
     .filter((s) => s.stroke.kind !== 'faint')
     .map((s) => ({ owner: s.mark, from: at[s.from]!, to: at[s.to]! }))
     .concat(arrows.map(({ arrow, from, to }) => ({ owner: `arrow ${arrow.node}`, from, to })));
-  const nodeLabels = view.nodes.flatMap((node, i) => (node.labelled === false ? [] : [nodeLabel(pen, node, at[i]!)]));
+  const nodeLabels = view.nodes.flatMap((node, i) =>
+    node.labelled === false ? [] : [{ ...nodeLabel(pen, node, at[i]!, view.marks === 'own'), depth: flat[i]![2] }],
+  );
+  nodeLabels.sort((a, b) => b.depth - a.depth);
   // A node's own place covers the ends of its struts, and should: lines cost a node's mark nothing.
   const nodePlaces = placeLabels(nodeLabels, area, []);
   const strutLabels = view.struts.flatMap((strut) =>
@@ -99,8 +104,8 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
   view.nodes.forEach((node, i) => {
     const place = nodePlaces.get(node.mark);
     if (!place || place.leader) pen.circle(at[i]![0], at[i]![1], 0.6, { fill: INK.black });
-    if (place) drawNodeMark(pen, place.box, node.mark);
   });
+  for (const [mark, place] of nodePlaces) drawNodeMark(pen, place.box, mark);
   for (const strut of view.struts) {
     const place = strutPlaces.get(strutKey(strut));
     if (place && strut.label) drawStrutMark(pen, place.box, strut.label);
@@ -171,11 +176,11 @@ function drawSupport(pen: Pen, [x, y]: Point): void {
   pen.line([x - 3.4, y + 4.2], [x + 3.4, y + 4.2], { width: LINE.normal });
 }
 
-function nodeLabel(pen: Pen, node: ViewNode, at: Point): Label {
+function nodeLabel(pen: Pen, node: ViewNode, at: Point, stays: boolean): Label {
   const width = Math.max(PILL, pen.widthOf(node.mark, { size: SIZE.note, bold: true }) + 2);
   const box = (x: number, y: number): Box => ({ x, y, width, height: PILL, angle: 0 });
   const places: Place[] = [{ box: box(...at), leader: null, cost: 0 }];
-  for (const radius of [5, 7.5, 11, 16])
+  for (const radius of stays ? [] : [5, 7.5, 11, 16])
     for (let k = 0; k < 16; k++) {
       const angle = (k * Math.PI) / 8;
       const reachOut = radius + (width / 2 - PILL / 2) * Math.abs(Math.cos(angle));
@@ -185,7 +190,7 @@ function nodeLabel(pen: Pen, node: ViewNode, at: Point): Label {
         cost: radius,
       });
     }
-  return { key: node.mark, owner: node.mark, width, height: PILL, anchor: at, places };
+  return { key: node.mark, owner: node.mark, width, height: PILL, anchor: at, places, stays };
 }
 
 function strutLabel(pen: Pen, strut: ViewStrut, from: Point, to: Point): Label {
