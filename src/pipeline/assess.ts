@@ -1,5 +1,6 @@
 import { axesOfStruts } from '../detailing/axes.js';
 import { crossingFindings } from '../detailing/crossings.js';
+import { deepenSockets } from '../detailing/deepen.js';
 import { faceForms } from '../detailing/faces.js';
 import { detailHubs } from '../detailing/hubs.js';
 import { sectionsOf } from '../detailing/sections.js';
@@ -14,6 +15,7 @@ import type { Truss } from '../model/truss.js';
 import { equilibriumOf } from '../statics/equilibrium.js';
 import { givenForces } from '../statics/given-forces.js';
 import { forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
+import { depthFindings, requiredDepths } from '../strength/depths.js';
 import { judge } from '../strength/judge.js';
 import { settle } from './settle.js';
 
@@ -32,17 +34,20 @@ export function assess(file: Truss, job: Job): Assessment {
     flatnessStop: job.fit.flatnessStop_mm ?? null,
   });
   const axes = axesOfStruts(topology, job, faces.forms);
-  const hubs = detailHubs(topology, job, sections, axes);
-  const struts = detailStruts(topology, job, sections, axes, hubs.hubs);
-  const parts: Parts = { struts: struts.struts, hubs: hubs.hubs, panels: [] };
-
   const given = givenForces(truss);
   const reciprocal = reciprocalOf(topology, job);
   const forces = forcesFrom(forceSource(topology, job), given.forces, reciprocal.forces);
   const equilibrium = forces && equilibriumOf(topology, forces.values, job.fit);
 
+  const shallow = detailHubs(topology, job, sections, axes);
+  const rough = detailStruts(topology, job, sections, axes, shallow.hubs);
   const solution = null;
-  const judgement = judge(truss, parts, solution, job);
+  const loading = { forces: forces?.values ?? null, solution };
+  const depths = requiredDepths(truss, { struts: rough.struts, hubs: shallow.hubs, panels: [] }, loading, job);
+  const hubs = deepenSockets(shallow.hubs, depths, job);
+  const struts = depths.size > 0 ? detailStruts(topology, job, sections, axes, hubs) : rough;
+  const parts: Parts = { struts: struts.struts, hubs, panels: [] };
+  const judgement = judge(truss, parts, loading, job);
 
   return settle({
     job,
@@ -61,8 +66,9 @@ export function assess(file: Truss, job: Job): Assessment {
       ...faces.findings,
       ...crossingFindings(topology, radii),
       ...sectionFindings,
-      ...hubs.findings,
+      ...shallow.findings,
       ...struts.findings,
+      ...depthFindings(depths, job),
       ...judgement.findings,
     ],
     checked: [

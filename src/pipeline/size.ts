@@ -7,16 +7,16 @@ import type { Job } from '../model/job/index.js';
 import type { Material } from '../model/material.js';
 import type { Parts } from '../model/parts.js';
 import { type Section, sectionProperties } from '../model/section.js';
-import type { Solution, Utilisation } from '../model/solution.js';
+import type { Utilisation } from '../model/solution.js';
 import type { Truss } from '../model/truss.js';
-import { allActions } from '../strength/actions.js';
+import { allActions, type Loading } from '../strength/actions.js';
 import { rulesOf } from '../strength/rules.js';
 import { judgeStrut } from '../strength/strut.js';
 
 /** What one round of detailing and solving yields for a truss whose members all name their section. */
 export interface SizedRound {
   readonly parts: Parts;
-  readonly solution: Solution | null;
+  readonly loading: Loading;
   readonly utilisations: readonly Utilisation[];
 }
 
@@ -79,7 +79,7 @@ export async function sizeSections(
     const sized = withSections(truss, units, rungs, candidates);
     rounds++;
     const found = await solve(sized);
-    return { sized, found, actions: allActions(sized, found.solution, job), worst: worstByStrut(found.utilisations) };
+    return { sized, found, actions: allActions(sized, found.loading, job), worst: worstByStrut(found.utilisations) };
   };
 
   let state = await round();

@@ -14,15 +14,22 @@ export const axialOnly = (combination: string, axial: number, duration: MemberAc
   duration,
 });
 
+/** What the parts are judged under. */
+export interface Loading {
+  /** Member forces of the job's source by member index, N, tension positive; null: those of the truss file, where it has any. */
+  readonly forces: Float64Array | null;
+  readonly solution: Solution | null;
+}
+
 /**
  * Every combination's actions by member index: the solution's, and the given forces beside them where it has not taken them up.
  * A given force acts alone, axially, for the job's load duration.
  */
-export function allActions(truss: Truss, solution: Solution | null, job: Job): readonly (readonly MemberActions[])[] {
-  const given = solution?.cases.find((c) => c.kind === 'given')?.forces ?? null;
+export function allActions(truss: Truss, loading: Loading, job: Job): readonly (readonly MemberActions[])[] {
+  const { forces, solution } = loading;
   return truss.members.map((member, i) => {
     const solved = solution?.actions[i] ?? [];
-    const force = given ? given[i]! : member.force;
+    const force = forces ? forces[i]! : member.force;
     if (force === null || solved.some((a) => a.combination === GIVEN_CASE)) return solved;
     return [axialOnly(GIVEN_CASE, force, job.strength.duration), ...solved];
   });

@@ -2,9 +2,9 @@ import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
-import type { Solution, Utilisation } from '../model/solution.js';
+import type { Utilisation } from '../model/solution.js';
 import type { Truss } from '../model/truss.js';
-import { allActions } from './actions.js';
+import { allActions, type Loading } from './actions.js';
 import { judgeMembers } from './members.js';
 import { rulesOf } from './rules.js';
 import { judgeSockets } from './sockets.js';
@@ -25,9 +25,9 @@ export interface Judgement {
  * Strength of the parts under every combination of the solution and under the given forces, whichever is worse.
  * Without a solution the given forces are judged alone, as pure axial forces with buckling from node to node.
  */
-export function judge(truss: Truss, parts: Parts, solution: Solution | null, job: Job): Judgement {
+export function judge(truss: Truss, parts: Parts, loading: Loading, job: Job): Judgement {
   const rules = rulesOf(job);
-  const actions = allActions(truss, solution, job);
+  const actions = allActions(truss, loading, job);
   const loaded = actions.some((a) => a.some((one) => one.axial !== 0 || one.momentY !== 0 || one.momentZ !== 0));
   const members = judgeMembers(parts.struts, actions, job, rules);
   const sockets = judgeSockets(parts, actions, job, rules);

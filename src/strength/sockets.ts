@@ -2,7 +2,7 @@ import { GLUE_LINE } from '../model/catalogue/glue.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
-import type { HubPart, Parts, StrutPart } from '../model/parts.js';
+import type { HubPart, Parts, Socket } from '../model/parts.js';
 import type { MemberActions, Utilisation } from '../model/solution.js';
 import type { Judged } from './members.js';
 import type { SocketCase } from './socket/case.js';
@@ -13,6 +13,35 @@ import type { Rules, Verdict } from './standard.js';
 /** Forces below this share of the largest in the truss are round-off: a joint without a path may carry them. */
 const NO_FORCE = 1e-9;
 
+/** Every socket whose strut is known and has actions, with its cases. */
+export function* socketsWithCases(
+  parts: Parts,
+  actions: readonly (readonly MemberActions[])[],
+  job: Job,
+  rules: Rules,
+): Generator<{ readonly hub: HubPart; readonly socket: Socket; readonly cases: readonly SocketCase[] }> {
+  const strutIndex = new Map(parts.struts.map((s, i) => [s.mark, i]));
+  const bond = job.nodes.bondStrength_MPa ?? GLUE_LINE.strength;
+  for (const hub of parts.hubs)
+    for (const socket of hub.sockets) {
+      const i = strutIndex.get(socket.strut);
+      const part = i === undefined ? undefined : parts.struts[i];
+      const strut = part?.material;
+      if (!part || !strut) continue;
+      const float = part.ends.find((e) => e.node === hub.mark)?.float ?? job.saw.endFloat_mm;
+      const cases = (actions[i!] ?? []).map((a) => ({
+        socket,
+        strut,
+        hub: hub.material,
+        float,
+        actions: a,
+        rules,
+        bond,
+      }));
+      if (cases.length > 0) yield { hub, socket, cases };
+    }
+}
+
 /** Utilisation of every socket, by the path that its joint names; findings above 1 and where there is no path. */
 export function judgeSockets(
   parts: Parts,
@@ -22,46 +51,25 @@ export function judgeSockets(
 ): Judged {
   const utilisations: Utilisation[] = [];
   const findings: Finding[] = [];
-  const strutIndex = new Map(parts.struts.map((s, i) => [s.mark, i]));
   const largest = actions.flat().reduce((most, a) => Math.max(most, Math.abs(a.axial)), 0);
-  for (const hub of parts.hubs)
-    for (const socket of hub.sockets) {
-      const i = strutIndex.get(socket.strut);
-      if (i === undefined) continue;
-      const cases = socketCases(hub, socket, parts.struts[i]!, actions[i] ?? [], job, rules);
-      let worst: { case: SocketCase; verdict: Verdict } | null = null;
-      let stuck: SocketCase | null = null;
-      for (const c of cases) {
-        const verdict = judgeSocket(c);
-        if (verdict === null) {
-          const more = stuck === null || Math.abs(c.actions.axial) > Math.abs(stuck.actions.axial);
-          if (Math.abs(c.actions.axial) > NO_FORCE * largest && more) stuck = c;
-        } else if (worst === null || verdict.utilisation > worst.verdict.utilisation) worst = { case: c, verdict };
-      }
-      if (stuck !== null) findings.push(noPath(hub, stuck));
-      if (worst === null || stuck !== null) continue;
-      const { utilisation, rule } = worst.verdict;
-      const { combination, axial: force } = worst.case.actions;
-      utilisations.push({ mark: socket.strut, kind: 'socket', at: hub.mark, combination, force, utilisation, rule });
-      if (utilisation > 1) findings.push(overStressed(hub, worst.case, worst.verdict));
+  for (const { hub, socket, cases } of socketsWithCases(parts, actions, job, rules)) {
+    let worst: { case: SocketCase; verdict: Verdict } | null = null;
+    let stuck: SocketCase | null = null;
+    for (const c of cases) {
+      const verdict = judgeSocket(c);
+      if (verdict === null) {
+        const more = stuck === null || Math.abs(c.actions.axial) > Math.abs(stuck.actions.axial);
+        if (Math.abs(c.actions.axial) > NO_FORCE * largest && more) stuck = c;
+      } else if (worst === null || verdict.utilisation > worst.verdict.utilisation) worst = { case: c, verdict };
     }
+    if (stuck !== null) findings.push(noPath(hub, stuck));
+    if (worst === null || stuck !== null) continue;
+    const { utilisation, rule } = worst.verdict;
+    const { combination, axial: force } = worst.case.actions;
+    utilisations.push({ mark: socket.strut, kind: 'socket', at: hub.mark, combination, force, utilisation, rule });
+    if (utilisation > 1) findings.push(overStressed(hub, worst.case, worst.verdict));
+  }
   return { utilisations, findings };
-}
-
-function socketCases(
-  hub: HubPart,
-  socket: HubPart['sockets'][number],
-  strut: StrutPart,
-  actions: readonly MemberActions[],
-  job: Job,
-  rules: Rules,
-): readonly SocketCase[] {
-  const { material } = strut;
-  if (material === null) return [];
-  const end = strut.ends.find((e) => e.node === hub.mark);
-  const float = end?.float ?? job.saw.endFloat_mm;
-  const bond = job.nodes.bondStrength_MPa ?? GLUE_LINE.strength;
-  return actions.map((a) => ({ socket, strut: material, hub: hub.material, float, actions: a, rules, bond }));
 }
 
 const noPath = (hub: HubPart, c: SocketCase): Finding =>

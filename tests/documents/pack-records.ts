@@ -54,7 +54,7 @@ export function packRecords(change: Partial<Job> = {}, truss: Truss = inventedTr
     checked: [],
     notChecked: ['stability'],
   };
-  const judged = judge(truss, parts, solution, job);
+  const judged = judge(truss, parts, { forces: null, solution }, job);
   const found = [
     ...faces.findings,
     ...sections.findings,

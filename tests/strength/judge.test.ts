@@ -5,6 +5,8 @@ import type { HubPart, Joint, Parts, Socket, StrutPart } from '../../src/model/p
 import type { Truss } from '../../src/model/truss.js';
 import { judge } from '../../src/strength/judge.js';
 
+const FORCES_OF_FILE = { forces: null, solution: null };
+
 /** Two invented nodes L mm apart with one strut, and its sockets. */
 function oneStrut(
   job: Job,
@@ -81,7 +83,7 @@ describe('a strut under its given force', () => {
   it('a beech dowel of 8 x 300 mm: Rankine’s sum of crushing and Euler, over a factor of 3', () => {
     const job = defaultJob();
     const { truss, parts } = oneStrut(job, -100);
-    const { utilisations } = judge(truss, parts, null, job);
+    const { utilisations } = judge(truss, parts, FORCES_OF_FILE, job);
     // By hand: A = 50.265, fc = 27.5, E = 14000, I = 201.06: NE = pi² E I / L² = 308.7 N, A fc = 1382.3 N; 3 x 100 x (1/308.7 + 1/1382.3).
     const strut = utilisations.find((u) => u.kind === 'strut')!;
     expect(strut.utilisation).toBeCloseTo(300 * (1 / 308.69 + 1 / 1382.3), 3);
@@ -92,7 +94,7 @@ describe('a strut under its given force', () => {
   it('over-stressed: a stop that names the strut, its section and the force', () => {
     const job = defaultJob();
     const { truss, parts } = oneStrut(job, -400);
-    const stop = judge(truss, parts, null, job).findings.find((f) => f.code === 'member-over-stressed')!;
+    const stop = judge(truss, parts, FORCES_OF_FILE, job).findings.find((f) => f.code === 'member-over-stressed')!;
     expect(stop).toMatchObject({ level: 'stop', subject: 'S1', kind: 'strut', limit: 1 });
     expect(stop.value).toBeGreaterThan(1);
     expect(stop.about).toMatchObject({ section: 'beech-8', force_N: -400, combination: 'given' });
@@ -102,7 +104,7 @@ describe('a strut under its given force', () => {
     const job = defaultJob();
     const near = oneStrut(job, 5000, { section: 'C24-45x45', length: 500 });
     const far = oneStrut(job, 5000, { section: 'C24-45x45', length: 3000 });
-    const [a, b] = [near, far].map(({ truss, parts }) => judge(truss, parts, null, job).utilisations[0]!);
+    const [a, b] = [near, far].map(({ truss, parts }) => judge(truss, parts, FORCES_OF_FILE, job).utilisations[0]!);
     expect(a!.rule).toBe('EN 1995-1-1 6.1.2 (6.1)');
     // 5000 / 2025 over 0.6 x 14.5 / 1.3 x kh, kh = (150/45)^0.2 = 1.272.
     expect(a!.utilisation).toBeCloseTo(5000 / 2025 / ((0.6 * 14.5 * (150 / 45) ** 0.2) / 1.3), 9);
@@ -112,7 +114,7 @@ describe('a strut under its given force', () => {
   it('a material without the values of the standard asked for is named, not judged', () => {
     const job = jobWith({ strength: { standard: 'EN 1995-1-1' } });
     const { truss, parts } = oneStrut(job, -100);
-    const { utilisations, findings } = judge(truss, parts, null, job);
+    const { utilisations, findings } = judge(truss, parts, FORCES_OF_FILE, job);
     expect(utilisations.some((u) => u.kind === 'strut')).toBe(false);
     const missing = findings.find((f) => f.code === 'material-value-missing')!;
     expect(missing.about).toMatchObject({ material: 'beech-dowel', struts: 1, values: 'fmk, ft0k, fc0k, fvk, E0.05' });
@@ -122,7 +124,7 @@ describe('a strut under its given force', () => {
     const job = defaultJob();
     const { truss, parts } = oneStrut(job, 0);
     const unforced = { ...truss, members: truss.members.map((m) => ({ ...m, force: null })) };
-    expect(judge(unforced, parts, null, job)).toMatchObject({
+    expect(judge(unforced, parts, FORCES_OF_FILE, job)).toMatchObject({
       utilisations: [],
       checked: [],
       notChecked: ['strength'],
@@ -135,7 +137,7 @@ describe('sockets', () => {
     const job = jobWith({ nodes: { bondStrength_MPa: 3 } });
     for (const force of [200, -200]) {
       const { truss, parts } = oneStrut(job, force);
-      const socket = judge(truss, parts, null, job).utilisations.find((u) => u.kind === 'socket')!;
+      const socket = judge(truss, parts, FORCES_OF_FILE, job).utilisations.find((u) => u.kind === 'socket')!;
       // By hand: pi 8 (14 - 0.75) = 333.0 mm²; a quarter of 3 MPa for good.
       expect(socket.rule).toBe('socket bond in shear');
       expect(socket.utilisation).toBeCloseTo(200 / 333.01 / 0.75, 4);
@@ -145,13 +147,13 @@ describe('sockets', () => {
   it('an over-stressed one says how deep it would have to be, and is strong enough at that depth', () => {
     const job = jobWith({ nodes: { bondStrength_MPa: 3 } });
     const { truss, parts } = oneStrut(job, 350);
-    const stop = judge(truss, parts, null, job).findings.find((f) => f.code === 'socket-over-stressed')!;
+    const stop = judge(truss, parts, FORCES_OF_FILE, job).findings.find((f) => f.code === 'socket-over-stressed')!;
     // By hand: 350 / (pi 8 x 0.75) = 18.57 engaged, 0.75 float: 19.32, up to 19.5.
     expect(stop.about).toMatchObject({ depth_mm: 19.5, strut: 'S1' });
     const hubs = parts.hubs.map((h) => ({ ...h, sockets: h.sockets.map((s) => ({ ...s, depth: 19.5 })) }));
-    expect(judge(truss, { ...parts, hubs }, null, job).findings.some((f) => f.code === 'socket-over-stressed')).toBe(
-      false,
-    );
+    expect(
+      judge(truss, { ...parts, hubs }, FORCES_OF_FILE, job).findings.some((f) => f.code === 'socket-over-stressed'),
+    ).toBe(false);
   });
 
   it('a seated one holds no tension, a loose one nothing: a stop that says which', () => {
@@ -164,7 +166,7 @@ describe('sockets', () => {
       ['pinned', 100, false],
     ] as const) {
       const { truss, parts } = oneStrut(job, force, { joint });
-      const found = judge(truss, parts, null, job).findings.filter((f) => f.code === 'socket-no-path');
+      const found = judge(truss, parts, FORCES_OF_FILE, job).findings.filter((f) => f.code === 'socket-no-path');
       expect(found.length, `${joint} ${force}`).toBe(stops ? 2 : 0);
     }
   });
@@ -172,7 +174,7 @@ describe('sockets', () => {
   it('a pinned one governs by its weakest part in tension', () => {
     const job = defaultJob();
     const { truss, parts } = oneStrut(job, 60, { joint: 'pinned' });
-    const socket = judge(truss, parts, null, job).utilisations.find((u) => u.kind === 'socket')!;
+    const socket = judge(truss, parts, FORCES_OF_FILE, job).utilisations.find((u) => u.kind === 'socket')!;
     // By hand: plug of the wood behind the pin: 2 x (13.25 - 7) x 8 mm² x fv 6 / 3 = 200 N.
     expect(socket.utilisation).toBeGreaterThanOrEqual(60 / 200 - 1e-9);
   });
@@ -181,7 +183,7 @@ describe('sockets', () => {
 describe('what the use asks for', () => {
   const codes = (job: Job): readonly string[] => {
     const { truss, parts } = oneStrut(job, -50);
-    return judge(truss, parts, null, job).findings.map((f) => f.code);
+    return judge(truss, parts, FORCES_OF_FILE, job).findings.map((f) => f.code);
   };
 
   it('a table model: a note on unverified values only', () => {

@@ -25,6 +25,13 @@ export const STRENGTH_FINDINGS = {
       `the socket of ${f.about?.['strut']} is ${f.about?.['joint']}, which holds no ${f.about?.['sign']}, and the strut carries ${num(f.value, 1)} N (${f.about?.['combination']}); glue or pin it`,
     { withholds: true },
   ),
+  'sockets-deepened': entry(
+    'note',
+    'truss',
+    '',
+    (f) =>
+      `${num(f.value, 0)} sockets are deeper than ${num(f.about?.['factor'] as number, 2)} strut sizes because their bond has to carry more; the deepest, of ${f.about?.['end']}, is ${num(f.about?.['depth_mm'] as number, 1)} mm`,
+  ),
   'strength-out-of-scope': entry(
     'warn',
     'strut',
