@@ -143,8 +143,25 @@ export interface PanelPart {
   readonly area: number;
   /** kg */
   readonly mass: number | null;
+  /** What holds it, in words. */
   readonly holding: string;
   readonly makeable: boolean;
+  readonly hold?: PanelHold;
+  /** Score line in the frame and the angle it is folded by, rad, positive towards the inside; only of a folded panel. */
+  readonly fold?: { readonly from: Point2; readonly to: Point2; readonly angle: number };
+  /** Largest bending stress of a sheet bent cold onto a face out of flat, MPa. */
+  readonly bendStress?: number;
+}
+
+/** What holds a panel in its place. N; null: not stated. Infinity: carried by the struts themselves. */
+export interface PanelHold {
+  readonly by: 'channel' | 'clips' | 'ties' | 'stand-offs' | 'none';
+  readonly fixings: number;
+  /** How far a channel or clip still reaches over the panel once it has moved, mm. */
+  readonly bite: number | null;
+  /** Towards the struts' inside. */
+  readonly pressure: number | null;
+  readonly suction: number | null;
 }
 
 /** Everything that is made, as numbers, in the truss's order. */

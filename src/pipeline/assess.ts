@@ -3,8 +3,10 @@ import { crossingFindings } from '../detailing/crossings.js';
 import { deepenSockets } from '../detailing/deepen.js';
 import { faceForms } from '../detailing/faces.js';
 import { detailHubs } from '../detailing/hubs.js';
+import { detailPanels } from '../detailing/panels/detail-panels.js';
 import { sectionsOf } from '../detailing/sections.js';
 import { detailStruts } from '../detailing/struts.js';
+import { nodeSystem } from '../detailing/systems/index.js';
 import type { Assessment } from '../documents/records.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
@@ -46,7 +48,16 @@ export function assess(file: Truss, job: Job): Assessment {
   const depths = requiredDepths(truss, { struts: rough.struts, hubs: shallow.hubs, panels: [] }, loading, job);
   const hubs = deepenSockets(shallow.hubs, depths, job);
   const struts = depths.size > 0 ? detailStruts(topology, job, sections, axes, hubs) : rough;
-  const parts: Parts = { struts: struts.struts, hubs, panels: [] };
+  const panels = detailPanels({
+    topology,
+    job,
+    forms: faces.forms,
+    sections,
+    axes,
+    hubs,
+    hubOutline: (hub, slab) => nodeSystem(hub.system)?.outline(hub, slab, job) ?? [],
+  });
+  const parts: Parts = { struts: struts.struts, hubs, panels: panels.panels };
   const judgement = judge(truss, parts, loading, job);
 
   return settle({
@@ -68,6 +79,7 @@ export function assess(file: Truss, job: Job): Assessment {
       ...sectionFindings,
       ...shallow.findings,
       ...struts.findings,
+      ...panels.findings,
       ...depthFindings(depths, job),
       ...judgement.findings,
     ],

@@ -24,4 +24,58 @@ export const PANEL_FINDINGS = {
     () => 'fits on no sheet; add a larger sheet or split the panel',
   ),
   'sheets-run-out': entry('stop', 'panel', '', () => 'has no sheet left; raise "available" or add another sheet'),
+  'panel-in-pieces': entry(
+    'stop',
+    'panel',
+    '',
+    (f) =>
+      `struts and hubs cut it into ${num(f.value)} pieces; only the largest would be held, so no outline is written: leave the face open or use smaller hubs`,
+    { withholds: true },
+  ),
+  'panel-neck': entry(
+    'warn',
+    'panel',
+    'mm',
+    (f) =>
+      `has a neck thinner than its thickness of ${num(f.limit)} mm; it will break there: use another corner or smaller hubs`,
+  ),
+  'panel-not-held': entry(
+    'warn',
+    'panel',
+    '',
+    (f) => `is held by nothing${f.about?.['why'] ? `: ${f.about['why']}` : ''}; choose what holds it (panels.holdBy)`,
+  ),
+  'panel-material-unknown': entry(
+    'stop',
+    'panel',
+    '',
+    (f) => `its material ${f.about?.['material']} is in neither the catalogue nor the job; name one that is`,
+    { withholds: true },
+  ),
+  'panel-hole-near-edge': entry(
+    'warn',
+    'panel',
+    'mm',
+    (f) =>
+      `has a hole whose middle is ${num(f.value)} mm from its edge, less than ${num(f.limit)} mm; it may tear out: move the holes in`,
+  ),
+  'panel-heavy': entry(
+    'warn',
+    'panel',
+    'kg',
+    (f) => `weighs ${num(f.value, 1)} kg, more than the ${num(f.limit)} kg that one person lifts; two people`,
+  ),
+  'panel-hazard': entry(
+    'stop',
+    'panel',
+    '',
+    (f) => `${f.about?.['hazard']}; cut it by saw or router, or choose another material`,
+    { waivable: false, withholds: true },
+  ),
+  'panel-without-mark': entry(
+    'warn',
+    'panel',
+    'mm',
+    () => 'has no room for its mark; stick a label on its outer side before it leaves the machine',
+  ),
 } as const;

@@ -11,8 +11,10 @@ import { angleThatFits, poseMaker, type Shape } from './pose.js';
 import type { NestingAnswer, NestingRequest } from './request.js';
 import { planSheets } from './sheets.js';
 
-/** Evaluations that the usual search may spend: some seconds on one core. */
-const USUAL_EVALUATIONS = 20e6;
+/** Evaluations that the usual search may spend: about a second on one core for a dozen panels, ten for two hundred. */
+const LEAST_EVALUATIONS = 1e6;
+const EVALUATIONS_A_PANEL = 2.5e5;
+const MOST_EVALUATIONS = 40e6;
 
 /**
  * Lays panels on sheets: as few sheets as it finds, then the last one filled from its left, so that one offcut
@@ -69,12 +71,13 @@ export async function nestPanels(request: NestingRequest, clock?: () => number):
 
   const end = request.timeLimitMs !== undefined && clock ? clock() + request.timeLimitMs : null;
   const outOfTime = end !== null && clock ? (): boolean => clock() >= end : null;
-  const budget = budgetOf(USUAL_EVALUATIONS * (request.effort ?? 1), outOfTime);
+  const usual = Math.min(MOST_EVALUATIONS, LEAST_EVALUATIONS + EVALUATIONS_A_PANEL * pieces.length);
+  const budget = budgetOf(usual * (request.effort ?? 1), outOfTime);
   const plan = planSheets(
     pieces.map((p) => p.shape),
     kinds,
     spacing,
-    noFitStore(),
+    noFitStore(budget),
     budget,
     seededRandom(request.seed ?? 1),
     (shapes) =>

@@ -1,4 +1,5 @@
 import { convexParts } from '../../maths/polygon/convexParts.js';
+import { coverRing } from '../../maths/polygon/cover.js';
 import { boundsOf, movedRing, type Ring, signedArea } from '../../maths/polygon/ring.js';
 
 /** A panel's outline turned about its own 0,0: what the search moves about, never mirrored. */
@@ -14,6 +15,7 @@ export interface Pose {
 
 /** One outline, however many panels have it. */
 export interface Shape {
+  /** What is kept clear: the outline, or a cover of it with fewer corners. */
   readonly ring: Ring;
   readonly parts: readonly Ring[];
   readonly area: number;
@@ -55,8 +57,10 @@ export function poseMaker(): PoseMaker {
     return made;
   };
   const shape = (ring: Ring, rotations: readonly number[] | null): Shape => {
-    const made: Shape = { ring, parts: convexParts(ring), area: signedArea(ring), rotations, poses: [] };
-    for (const degrees of rotations ?? alignedAngles(ring)) {
+    const cover = coverOf(ring);
+    const parts = convexParts(cover);
+    const made: Shape = { ring: cover, parts, area: signedArea(ring), rotations, poses: [] };
+    for (const degrees of rotations ?? alignedAngles(cover, parts.length > 1 ? FEW_ALIGNED : MOST_ALIGNED)) {
       const p = pose(made, degrees);
       if (!made.poses.includes(p)) made.poses.push(p);
     }
@@ -83,11 +87,26 @@ function turnedRing(ring: Ring, degrees: number): Ring {
   return out;
 }
 
-/** Most angles that a freely turning outline is tried at before the search turns it further by itself. */
+/** Outlines of more corners than this are nested by a cover, and a cover that stays concave has at most so many. */
+const PLAIN_CORNERS = 40;
+/** How far a cover may reach beyond its outline, as a share of the outline's size; and how much larger a hull may be. */
+const COVER_REACH = 0.005;
+const HULL_SHARE = 0.03;
+
+/** Rounded corners and notches cost the search dearly and gain it nothing: a cover stands in for them. */
+function coverOf(ring: Ring): Ring {
+  if (ring.length / 2 <= PLAIN_CORNERS) return ring;
+  const [x0, y0, x1, y1] = boundsOf(ring);
+  const reach = COVER_REACH * Math.max(x1 - x0, y1 - y0);
+  return coverRing(ring, PLAIN_CORNERS / 2, reach, HULL_SHARE);
+}
+
+/** Most angles that a freely turning outline is tried at, convex and concave: the latter's no-fit regions are dear. */
 const MOST_ALIGNED = 24;
+const FEW_ALIGNED = 8;
 
 /** Angles in degrees that lay an edge of the outline along a side of the sheet, longest edges first. */
-function alignedAngles(ring: Ring): number[] {
+function alignedAngles(ring: Ring, most: number): number[] {
   const n = ring.length;
   const edges: { angle: number; length: number }[] = [];
   for (let i = 0; i < n; i += 2) {
@@ -100,7 +119,7 @@ function alignedAngles(ring: Ring): number[] {
     for (const quarter of [0, 90, 180, 270]) {
       const degrees = (((angle + quarter) % 360) + 360) % 360;
       const near = angles.some((a) => Math.abs(((a - degrees + 540) % 360) - 180) < 1e-6);
-      if (!near && angles.length < MOST_ALIGNED)
+      if (!near && angles.length < most)
         angles.push(Math.abs(degrees - Math.round(degrees)) < 1e-9 ? Math.round(degrees) % 360 : degrees);
     }
   return angles;
