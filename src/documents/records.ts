@@ -1,9 +1,9 @@
 import type { FaceForm } from '../detailing/faces.js';
-import type { Mat4 } from '../maths/mat4.js';
 import type { Finding } from '../model/finding.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
 import type { NestingPlan, StockPlan } from '../model/plan.js';
+import type { ShapedPiece } from '../model/shaped.js';
 import type { Solution, Utilisation } from '../model/solution.js';
 import type { Topology } from '../model/topology.js';
 import type { Equilibrium } from '../statics/equilibrium.js';
@@ -23,6 +23,8 @@ export interface Assessment {
   /** What the reciprocal figure says, for check.json and the sheets; null: there is none. */
   readonly reciprocal: ReciprocalResult | null;
   readonly utilisations: readonly Utilisation[];
+  /** Everything that the stages found, waived or not, in the stages' order. */
+  readonly found: readonly Finding[];
   /** All findings, worst first; waived stops are in `waived` instead of stopping. */
   readonly findings: readonly Finding[];
   readonly waived: readonly Finding[];
@@ -33,21 +35,17 @@ export interface Assessment {
   readonly hold: readonly string[];
 }
 
-/** What stays of a shaped hub once its mesh is written and dropped. Lengths mm, volume mm³. */
+/** A hub as it was made: its pieces in print orientation and the files that hold them (none where they are withheld). */
 export interface MadeHub {
   readonly mark: string;
-  readonly volume: number;
-  /** Extents in print orientation. */
-  readonly size: readonly [number, number, number];
-  /** From the STL's mm to the truss's axes. */
-  readonly placement: Mat4;
-  readonly triangles: number;
-  readonly path: string | null;
+  readonly pieces: readonly ShapedPiece[];
+  readonly files: readonly string[];
 }
 
 /** Everything that the papers of a pack draw on. */
 export interface PackRecords extends Assessment {
-  readonly shaped: ReadonlyMap<string, MadeHub>;
+  /** By node mark; hubs that could not be made are missing. */
+  readonly made: ReadonlyMap<string, MadeHub>;
   readonly stock: StockPlan | null;
   readonly nesting: NestingPlan | null;
 }

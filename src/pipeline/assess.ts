@@ -70,7 +70,7 @@ export function assess(file: Truss, job: Job): Assessment {
     solution,
     reciprocal: reciprocal.counts ? reciprocal : null,
     utilisations: judgement.utilisations,
-    findings: [
+    found: [
       ...(forces ? [] : given.findings),
       ...reciprocal.findings,
       ...(equilibrium?.findings ?? []),

@@ -1,5 +1,6 @@
 import { sha256 } from '../machine/hash.js';
-import type { PanelPart, StrutPart } from '../model/parts.js';
+import type { PanelPart, Parts, StrutPart } from '../model/parts.js';
+import type { PackPart } from './pack-writer.js';
 
 const digestOf = (made: unknown): string => sha256(new TextEncoder().encode(JSON.stringify(made)));
 
@@ -30,4 +31,12 @@ export function panelDigest(panel: PanelPart): string | null {
     panel.holes.map(line),
     panel.engraving.map(line),
   ]);
+}
+
+/** One entry a strut and a panel for the manifest; `filesOf` names the files that hold a panel's cut. */
+export function cutParts(parts: Parts, filesOf: (panel: PanelPart) => readonly string[]): readonly PackPart[] {
+  return [
+    ...parts.struts.map((s): PackPart => ({ mark: s.mark, kind: 'strut', digest: strutDigest(s), files: [] })),
+    ...parts.panels.map((p): PackPart => ({ mark: p.mark, kind: 'panel', digest: panelDigest(p), files: filesOf(p) })),
+  ];
 }

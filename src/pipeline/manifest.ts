@@ -36,7 +36,7 @@ export interface Totals {
 
 export function manifestOf(
   a: Assessment,
-  shaped: ReadonlyMap<string, MadeHub>,
+  hubs: ReadonlyMap<string, MadeHub>,
   made: {
     readonly inputs: readonly Input[];
     readonly parts: readonly PackPart[];
@@ -54,7 +54,7 @@ export function manifestOf(
     hold: a.hold,
     withheld: made.withheld,
     inputs: made.inputs,
-    totals: totalsOf(a, shaped),
+    totals: totalsOf(a, hubs),
     parts: made.parts,
     files: made.files,
   };
@@ -68,7 +68,9 @@ const sum = <T>(items: Iterable<T>, of: (item: T) => number): number => {
 
 const KG_PER_MM3 = 1e-9;
 
-function totalsOf(a: Assessment, shaped: ReadonlyMap<string, MadeHub>): Totals {
+const volumeOf = (hub: MadeHub): number => sum(hub.pieces, (p) => p.volume);
+
+function totalsOf(a: Assessment, made: ReadonlyMap<string, MadeHub>): Totals {
   const { struts, hubs, panels } = a.parts;
   return {
     struts: struts.length,
@@ -77,11 +79,11 @@ function totalsOf(a: Assessment, shaped: ReadonlyMap<string, MadeHub>): Totals {
     strut_m: sum(struts, (s) => s.cutLength ?? 0) / 1000,
     strut_mass_kg: sum(struts, (s) => s.mass ?? 0),
     node_mass_kg: sum(hubs, (h) => {
-      const solid = shaped.get(h.mark);
-      return solid ? solid.volume * h.material.density * KG_PER_MM3 : (h.mass ?? 0);
+      const solid = made.get(h.mark);
+      return solid ? volumeOf(solid) * h.material.density * KG_PER_MM3 : (h.mass ?? 0);
     }),
     panel_mass_kg: sum(panels, (p) => p.mass ?? 0),
-    printed_volume_mm3: sum(shaped.values(), (s) => s.volume),
+    printed_volume_mm3: sum(made.values(), volumeOf),
     panel_area_m2: sum(panels, (p) => p.area) / 1e6,
   };
 }

@@ -1,9 +1,9 @@
 import type { Assessment } from '../documents/records.js';
 import { settleFindings } from '../model/hold.js';
 
-type Unsettled = Omit<Assessment, 'waived' | 'status' | 'hold'>;
+type Unsettled = Omit<Assessment, 'findings' | 'waived' | 'status' | 'hold'>;
 
 /** Applies the job's waivers to what the stages found and gives the verdict. */
 export function settle(found: Unsettled): Assessment {
-  return { ...found, ...settleFindings(found.findings, found.job, found.notChecked) };
+  return { ...found, ...settleFindings(found.found, found.job, found.notChecked) };
 }

@@ -1,6 +1,7 @@
 import { check } from './check.js';
 import type { CliCommand } from './command.js';
+import { make } from './make.js';
 import { newJob } from './new.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, check];
+export const commands: readonly CliCommand[] = [newJob, make, check];

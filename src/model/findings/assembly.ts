@@ -1,2 +1,37 @@
-/** Findings of the assembly stage. */
-export const ASSEMBLY_FINDINGS = {} as const;
+import { entry, num } from './entry.js';
+
+/** Findings of the order of building. */
+export const ASSEMBLY_FINDINGS = {
+  'truss-in-pieces': entry(
+    'warn',
+    'truss',
+    '',
+    (f) => `is in ${num(f.value, 0)} pieces that no strut joins; each is ordered by itself`,
+  ),
+  'start-unknown': entry(
+    'warn',
+    'node',
+    '',
+    () => 'is no node to start from; name one of the truss under "assembly", or leave it out',
+  ),
+  'strut-cannot-enter': entry(
+    'warn',
+    'strut',
+    '',
+    () =>
+      'cannot get in between its two hubs once they stand; give one of its ends a closing detail (drop-in or slide) under "struts", or clamp a hub',
+  ),
+  'hub-out-of-reach': entry(
+    'note',
+    'node',
+    '',
+    (f) =>
+      `no hand reaches it in step ${f.about?.['step']} past the struts that stand; build it into a unit on the bench`,
+  ),
+  'node-needs-prop': entry(
+    'note',
+    'node',
+    '',
+    (f) => `needs a prop from step ${f.about?.['step']} until more struts hold it`,
+  ),
+} as const;

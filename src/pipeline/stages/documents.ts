@@ -1,0 +1,45 @@
+import { checkReport } from '../../documents/check-json.js';
+import { forceSheets } from '../../documents/forces/force-sheets.js';
+import { forcesCsv } from '../../documents/forces/forces-csv.js';
+import { writeJson } from '../../documents/formats/json.js';
+import type { Fonts } from '../../documents/kit/fonts.js';
+import { barAnglesCsv } from '../../documents/nodes/bar-angles.js';
+import { barDirectionsCsv } from '../../documents/nodes/bar-directions.js';
+import { nodeSheets } from '../../documents/nodes/node-sheets.js';
+import { placementJson } from '../../documents/nodes/placement.js';
+import { outlinesJson } from '../../documents/panels/outlines.js';
+import { panelListCsv } from '../../documents/panels/panel-list.js';
+import type { PackRecords } from '../../documents/records.js';
+import { report } from '../../documents/report/report.js';
+import { cutListCsv } from '../../documents/struts/cut-list-csv.js';
+import { cutListPdf } from '../../documents/struts/cut-list-pdf.js';
+import { stockPlanJson } from '../../documents/struts/stock-plan.js';
+import type { Run } from '../../model/run.js';
+import type { PackWriter } from '../pack-writer.js';
+
+type Make = (records: PackRecords, fonts: Fonts) => Uint8Array | Promise<{ readonly bytes: Uint8Array }>;
+
+/** Every paper and table of a pack, in the order of writing. A new one is a file in documents and a line here. */
+const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
+  ['check.json', (r) => writeJson(checkReport(r))],
+  ['report.pdf', report],
+  ['forces/forces.csv', forcesCsv],
+  ['forces/force-sheets.pdf', forceSheets],
+  ['struts/cut-list.csv', cutListCsv],
+  ['struts/cut-list.pdf', cutListPdf],
+  ['struts/stock-plan.json', stockPlanJson],
+  ['nodes/bar-directions.csv', barDirectionsCsv],
+  ['nodes/bar-angles.csv', barAnglesCsv],
+  ['nodes/placement.json', placementJson],
+  ['nodes/node-sheets.pdf', nodeSheets],
+  ['panels/panel-list.csv', panelListCsv],
+  ['panels/outlines.json', outlinesJson],
+];
+
+export async function writeDocuments(records: PackRecords, fonts: Fonts, writer: PackWriter, run: Run): Promise<void> {
+  for (const [i, [path, make]] of DOCUMENTS.entries()) {
+    const made = await make(records, fonts);
+    await writer.put(path, made instanceof Uint8Array ? made : made.bytes);
+    run.tell({ stage: 'Papers', done: i + 1, total: DOCUMENTS.length });
+  }
+}

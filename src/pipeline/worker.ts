@@ -1,0 +1,4 @@
+import { serve } from '../machine/worker.js';
+import { TASKS } from './tasks.js';
+
+serve(TASKS);

@@ -1,0 +1,81 @@
+import type { Job } from '../../model/job/index.js';
+import type { Parts, Socket } from '../../model/parts.js';
+import type { Topology } from '../../model/topology.js';
+
+/** One strut as assembly sees it, by node index and strut index. */
+export interface Link {
+  readonly strut: number;
+  readonly ends: readonly [number, number];
+  readonly sockets: readonly [Socket | null, Socket | null];
+  /** Axis length, mm. */
+  readonly length: number;
+  /** Travel along its axis before an end is free of a socket, mm: the shallower engagement, less the play of both ends. */
+  readonly travel: number;
+  /** Sideways movement of an end that its bending limit and its socket's play allow, mm. */
+  readonly aside: number;
+  /** Closing detail at either end. */
+  readonly detail: { readonly end: 0 | 1; readonly kind: 'drop-in' | 'slide' | 'clamp' } | null;
+  readonly mass: number;
+}
+
+/** What the search for an order works on. */
+export interface AssemblySetting {
+  readonly topology: Topology;
+  readonly job: Job;
+  readonly parts: Parts;
+  readonly links: readonly Link[];
+  /** Links at each node, by node index. */
+  readonly linksAt: readonly (readonly Link[])[];
+  readonly hubMass: Float64Array;
+}
+
+export function assemblySetting(topology: Topology, parts: Parts, job: Job): AssemblySetting {
+  const sockets = new Map(parts.hubs.flatMap((h) => h.sockets.map((s) => [`${s.strut}@${h.mark}`, s] as const)));
+  const systemOf = new Map(parts.hubs.map((h) => [h.mark, h.system]));
+  const links = topology.truss.members.map((member, strut): Link => {
+    const part = parts.struts[strut]!;
+    const own = member.ends.map((node) => sockets.get(`${member.mark}@${node}`) ?? null) as [
+      Socket | null,
+      Socket | null,
+    ];
+    const ends = member.ends.map((node) => topology.nodeIndex.get(node)!) as [number, number];
+    const length = topology.axisLength[strut]!;
+    const depth = Math.min(own[0]?.depth ?? 0, own[1]?.depth ?? 0);
+    const play = (part.ends[0].float ?? 0) + (part.ends[1].float ?? 0);
+    const detail = ([0, 1] as const)
+      .map((end) => ({ end, kind: systemOf.get(member.ends[end]) === 'clamp' ? 'clamp' : part.ends[end].detail }))
+      .find((d) => d.kind !== 'plain');
+    return {
+      strut,
+      ends,
+      sockets: own,
+      length,
+      travel: Math.max(0, depth - play),
+      aside: asideOf(own, length, job.assembly.springStrain),
+      detail: (detail ?? null) as Link['detail'],
+      mass: part.mass ?? 0,
+    };
+  });
+  const linksAt: Link[][] = topology.truss.nodes.map(() => []);
+  for (const link of links) for (const end of link.ends) linksAt[end]!.push(link);
+  const hubMass = new Float64Array(topology.truss.nodes.length);
+  for (const hub of parts.hubs) hubMass[topology.nodeIndex.get(hub.mark)!] = hub.mass ?? 0;
+  return { topology, job, parts, links, linksAt, hubMass };
+}
+
+/**
+ * A cantilever of length L and depth D bent to the strain e at its root stands aside by 2 e L² / (3 D); a strut that is
+ * loose by c in a socket of depth s tilts by c / s besides.
+ */
+function asideOf(sockets: Link['sockets'], length: number, strain: number): number {
+  let least = Number.POSITIVE_INFINITY;
+  for (const socket of sockets) {
+    if (!socket) continue;
+    const { shape } = socket.section;
+    const depth = shape.kind === 'rectangle' ? Math.min(shape.width, shape.height) : shape.diameter;
+    const bore = typeof socket.bore === 'number' ? socket.bore : Math.min(...socket.bore);
+    const play = Math.max(0, bore - (socket.section.measured ?? depth));
+    least = Math.min(least, (2 * strain * length ** 2) / (3 * depth) + (length * play) / socket.depth);
+  }
+  return Number.isFinite(least) ? least : 0;
+}
