@@ -61,13 +61,27 @@ export function parseJson(text: string, name: string): JsonDocument {
 /** Offset of the first bracket that is nested too deep, or null: the parser recurses, so this is checked first. */
 function tooDeep(text: string): number | null {
   let depth = 0;
-  // A text (up to its quotation mark or the end of its line), a comment, or a bracket.
-  for (const match of text.matchAll(/"[^"\\\r\n]*(?:\\.[^"\\\r\n]*)*"?|\/\/.*|\/\*[\s\S]*?(?:\*\/|$)|[[\]{}]/g)) {
-    if (match[0] === '{' || match[0] === '[') depth++;
-    if (match[0] === '}' || match[0] === ']') depth--;
-    if (depth > LIMITS.depth) return match.index;
+  for (let i = 0; i < text.length; i++) {
+    const c = text[i];
+    if (c === '"') i = endOfText(text, i);
+    else if (c === '/' && text[i + 1] === '/') i = endOr(text.indexOf('\n', i), text);
+    else if (c === '/' && text[i + 1] === '*') i = endOr(text.indexOf('*/', i + 2), text);
+    else if (c === '}' || c === ']') depth--;
+    else if ((c === '{' || c === '[') && ++depth > LIMITS.depth) return i;
   }
   return null;
+}
+
+const endOr = (found: number, text: string): number => (found < 0 ? text.length : found);
+
+/** Offset of the quotation mark that ends the text begun at `start`, or of the line's end where none does. */
+function endOfText(text: string, start: number): number {
+  for (let i = start + 1; i < text.length; i++) {
+    const c = text[i];
+    if (c === '\\') i++;
+    else if (c === '"' || c === '\n' || c === '\r') return i;
+  }
+  return text.length;
 }
 
 /** The value of a tree, with its own keys only; `__proto__` is never taken over. */
