@@ -1,7 +1,8 @@
 import { check } from './check.js';
 import type { CliCommand } from './command.js';
+import { convert } from './convert.js';
 import { make } from './make.js';
 import { newJob } from './new.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, make, check];
+export const commands: readonly CliCommand[] = [newJob, make, check, convert];
