@@ -32,6 +32,43 @@ export const STRENGTH_FINDINGS = {
     (f) =>
       `${num(f.value, 0)} sockets are deeper than ${num(f.about?.['factor'] as number, 2)} strut sizes because their bond has to carry more; the deepest, of ${f.about?.['end']}, is ${num(f.about?.['depth_mm'] as number, 1)} mm`,
   ),
+  'panel-over-stressed': entry(
+    'stop',
+    'panel',
+    '',
+    (f) =>
+      `utilisation ${num(f.value, 2)} under ${f.about?.['combination']}, by ${f.about?.['rule']}; use a thicker sheet than ${num(f.about?.['thickness'] as number, 1)} mm or hold it at more points`,
+    { withholds: true },
+  ),
+  'panel-sags': entry(
+    'stop',
+    'panel',
+    'mm',
+    (f) =>
+      `bows by ${num(f.value, 1)} mm under ${f.about?.['combination']}, more than the ${num(f.limit, 1)} mm at which it slips out of its ${f.about?.['holdBy']}; use a thicker sheet or a deeper bite`,
+    { withholds: true },
+  ),
+  'panel-not-carried': entry(
+    'stop',
+    'panel',
+    'N',
+    (f) =>
+      `nothing carries ${num(f.value, 1)} N of ${f.about?.['sense']} on it (${f.about?.['combination']}): held by ${f.about?.['holdBy']}; hold it at three points out of line at least`,
+  ),
+  'fixing-over-loaded': entry(
+    'stop',
+    'panel',
+    'N',
+    (f) =>
+      `one of its ${f.about?.['holdBy']} carries ${num(f.value, 1)} N under ${f.about?.['combination']}, more than ${num(f.limit, 1)} N; use more of them`,
+  ),
+  'fixing-untested': entry(
+    'warn',
+    'panel',
+    'N',
+    (f) =>
+      `one of its ${f.about?.['holdBy']} must hold ${num(f.value, 1)} N (${f.about?.['combination']}); test one and give panels.fixingCapacity_N`,
+  ),
   'strength-out-of-scope': entry(
     'warn',
     'strut',

@@ -1,0 +1,120 @@
+import { describe, expect, it } from 'vitest';
+import type { Vec3 } from '../../src/maths/vec3.js';
+import { type Job, jobSchema } from '../../src/model/job/index.js';
+import type { Truss } from '../../src/model/truss.js';
+import { assess } from '../../src/pipeline/assess.js';
+import type { PanelCombination } from '../../src/strength/panel/load.js';
+import { judgePanels } from '../../src/strength/panels.js';
+import { rulesOf } from '../../src/strength/rules.js';
+import { mapped, trussOf } from '../helpers/truss.js';
+
+const jobWith = (more: object): Job =>
+  jobSchema.parse({ format: 'strutwright-job/1', title: 'T', truss: 't.json', ...more });
+const SIDE = 500;
+/** Invented: one square panel of 500 mm, level, over four struts. */
+const truss = trussOf({
+  nodes: [
+    [0, 0, 0],
+    [SIDE, 0, 0],
+    [SIDE, SIDE, 0],
+    [0, SIDE, 0],
+  ],
+  edges: [
+    [0, 1],
+    [1, 2],
+    [2, 3],
+    [3, 0],
+  ],
+  faces: [[0, 1, 2, 3]],
+  panels: true,
+  forces: [1, 1, 1, 1],
+});
+const combination = (name: string, factors: Record<string, number>): PanelCombination => ({
+  name,
+  duration: 'short',
+  factors: new Map(Object.entries(factors)),
+});
+const WIND = { name: 'wind', kind: 'wind', pressure_kN_per_m2: 1, direction: 'normal' };
+const run = (job: Job, combos: readonly PanelCombination[], t: Truss = truss) =>
+  judgePanels(t, assess(t, job).parts, combos, job, rulesOf(job));
+
+describe('a square of acrylic over the struts', () => {
+  const panels = { seating: 'over', fixingCapacity_N: 100 };
+  const job = jobWith({ panels, loads: { cases: [WIND] }, analysis: { selfWeight: false } });
+
+  it('rests on its edges under pressure: 0.0479 q a² as the handbook has it', () => {
+    const { utilisations, findings } = run(job, [combination('1.5 wind', { wind: 1.5 })]);
+    // Timoshenko and Woinowsky-Krieger, table 8 (from memory), Poisson 0.3 against 0.37 here: M = (1 + nu)/2 (Mx + My), 5 % more.
+    const wanted = (6 * 0.0479 * (1.37 / 1.3) * 0.0015 * SIDE ** 2) / 9 / (97 / 3);
+    expect(utilisations[0]!.rule).toBe('panel stress, factor 3');
+    expect(Math.abs(utilisations[0]!.utilisation / wanted - 1)).toBeLessThan(0.06);
+    expect(findings).toEqual([]);
+  });
+
+  it('hangs on its ties in suction, whose forces sum to the load', () => {
+    const { utilisations } = run(job, [combination('-1.5 wind', { wind: -1.5 })]);
+    expect(utilisations[0]!.force).toBeGreaterThan(0);
+    const plenty = jobWith({ panels: { ...panels, fixingCapacity_N: 0.001 }, loads: { cases: [WIND] } });
+    const weak = run(plenty, [combination('-1.5 wind', { wind: -1.5 })]);
+    const holes = assess(truss, plenty).parts.panels[0]!.holes.length;
+    const share = (0.0015 * SIDE ** 2) / holes;
+    const finding = weak.findings.find((f) => f.code === 'fixing-over-loaded')!;
+    expect(finding.value).toBeGreaterThan(0.8 * share);
+    expect(finding.value).toBeLessThan(4 * share);
+  });
+
+  it('is over-stressed by ten times the wind, and the finding withholds it', () => {
+    const { findings } = run(job, [combination('20 wind', { wind: 20 })]);
+    expect(findings).toMatchObject([{ code: 'panel-over-stressed', subject: 'F0', kind: 'panel', level: 'stop' }]);
+  });
+});
+
+describe('its own weight', () => {
+  const job = (panels: object, use = 'table'): Job => jobWith({ use, panels: { fixingCapacity_N: 50, ...panels } });
+  const own = [combination('1.35 G', { 'self-weight': 1.35 })];
+  const tilted = (angle: number): Truss =>
+    mapped(
+      truss,
+      ([x, y, z]): Vec3 => [x, y * Math.cos(angle) - z * Math.sin(angle), y * Math.sin(angle) + z * Math.cos(angle)],
+    );
+
+  it('presses a level panel by rho g t, an upright one not at all', () => {
+    const level = run(job({ seating: 'over' }), own).utilisations[0]!;
+    const part = assess(truss, job({ seating: 'over' })).parts.panels[0]!;
+    const inward = part.frame.z[2] > 0 ? -1 : 1;
+    expect(level.force / inward).toBeCloseTo(1.35 * 1190e-9 * 9.80665 * 3 * part.area, 6);
+    expect(run(job({ seating: 'over' }), own, tilted(Math.PI / 2)).utilisations).toEqual([]);
+  });
+
+  it('the standing stress of acrylic is held against 5 MPa', () => {
+    const thin = run(job({ seating: 'between', thickness_mm: 1, holdBy: 'channel', bite_mm: 20 }), own);
+    // Of a 1 mm sheet of 500 mm: 6 x 0.05 x 1.17e-5 x 250000 = 0.88 MPa.
+    const { utilisation, rule } = thin.utilisations[0]!;
+    expect(utilisation).toBeGreaterThan(0.1);
+    expect(['panel deflection, at most half the bite', 'panel stress that stands, at most 5 MPa']).toContain(rule);
+  });
+
+  it('a thin sheet bows out of a shallow channel', () => {
+    const { findings } = run(job({ thickness_mm: 1, holdBy: 'channel', bite_mm: 4, gap_mm: 1 }), own);
+    expect(findings.map((f) => f.code)).toEqual(['panel-sags']);
+    expect(findings[0]!.value).toBeGreaterThan(findings[0]!.limit!);
+  });
+
+  it('held by nothing it is a warning on a table and a stop overhead', () => {
+    for (const [use, level] of [
+      ['table', 'warn'],
+      ['overhead', 'stop'],
+    ] as const) {
+      const { findings, utilisations } = run(job({ seating: 'between', holdBy: 'none' }, use), own);
+      expect(findings).toMatchObject([{ code: 'panel-not-carried', level }]);
+      expect(utilisations).toEqual([]);
+    }
+  });
+
+  it('overhead, ties that nobody has tested are named with the force they must hold', () => {
+    const overhead = jobWith({ use: 'overhead', panels: { seating: 'under' } });
+    const { findings } = run(overhead, [combination('1.35 G', { 'self-weight': 1.35 })]);
+    expect(findings.map((f) => f.code)).toEqual(['fixing-untested']);
+    expect(findings[0]!.value).toBeGreaterThan(0);
+  });
+});
