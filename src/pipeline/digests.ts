@@ -37,6 +37,13 @@ export function panelDigest(panel: PanelPart): string | null {
 export function cutParts(parts: Parts, filesOf: (panel: PanelPart) => readonly string[]): readonly PackPart[] {
   return [
     ...parts.struts.map((s): PackPart => ({ mark: s.mark, kind: 'strut', digest: strutDigest(s), files: [] })),
-    ...parts.panels.map((p): PackPart => ({ mark: p.mark, kind: 'panel', digest: panelDigest(p), files: filesOf(p) })),
+    ...parts.panels.map(
+      (p): PackPart => ({
+        mark: p.mark,
+        kind: 'panel',
+        digest: filesOf(p).length > 0 ? panelDigest(p) : null,
+        files: filesOf(p),
+      }),
+    ),
   ];
 }

@@ -12,6 +12,7 @@ import { packWriter, type WriteFile } from './pack-writer.js';
 import { settle } from './settle.js';
 import { writeDocuments } from './stages/documents.js';
 import { makeHubs } from './stages/hubs.js';
+import { writeSheetFiles } from './stages/sheet-files.js';
 import { planSheets } from './stages/sheets.js';
 import { planBars } from './stages/stock.js';
 import { TASKS } from './tasks.js';
@@ -49,13 +50,14 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   });
   const records: PackRecords = { ...settled, made: hubs.made, stock: bars.plan, nesting: sheets.plan };
 
+  const cutting = await writeSheetFiles(records, writer);
   await writeDocuments(records, await loadFonts(), writer, run);
 
   const manifest = manifestOf(records, hubs.made, {
     inputs: options.inputs ?? [],
-    parts: [...cutParts(records.parts, () => []), ...hubs.parts],
+    parts: [...cutParts(records.parts, (p) => cutting.filesOf(p.mark)), ...hubs.parts],
     files: writer.files(),
-    withheld: hubs.withheld,
+    withheld: [...hubs.withheld, ...cutting.withheld],
   });
   await options.write('manifest.json', new TextEncoder().encode(`${JSON.stringify(manifest, null, 2)}\n`));
   return manifest;

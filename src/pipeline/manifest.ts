@@ -16,6 +16,8 @@ export interface Manifest {
   /** Parts whose machine files are withheld, by mark. */
   readonly withheld: readonly string[];
   readonly inputs: readonly Input[];
+  /** State of the kerf in the sheets' machine files. */
+  readonly kerf: { readonly kerf_mm: number; readonly measured: boolean; readonly compensated: 'here' | 'shop' };
   readonly totals: Totals;
   readonly parts: readonly PackPart[];
   /** All files but manifest.json. */
@@ -54,6 +56,11 @@ export function manifestOf(
     hold: a.hold,
     withheld: made.withheld,
     inputs: made.inputs,
+    kerf: {
+      kerf_mm: a.job.cutter.kerf_mm,
+      measured: a.job.cutter.kerfMeasured,
+      compensated: a.job.cutter.compensate,
+    },
     totals: totalsOf(a, hubs),
     parts: made.parts,
     files: made.files,

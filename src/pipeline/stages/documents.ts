@@ -7,6 +7,7 @@ import { barAnglesCsv } from '../../documents/nodes/bar-angles.js';
 import { barDirectionsCsv } from '../../documents/nodes/bar-directions.js';
 import { nodeSheets } from '../../documents/nodes/node-sheets.js';
 import { placementJson } from '../../documents/nodes/placement.js';
+import { nestingJson } from '../../documents/panels/nesting-json.js';
 import { outlinesJson } from '../../documents/panels/outlines.js';
 import { panelListCsv } from '../../documents/panels/panel-list.js';
 import type { PackRecords } from '../../documents/records.js';
@@ -34,6 +35,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['nodes/node-sheets.pdf', nodeSheets],
   ['panels/panel-list.csv', panelListCsv],
   ['panels/outlines.json', outlinesJson],
+  ['panels/nesting.json', nestingJson],
 ];
 
 export async function writeDocuments(records: PackRecords, fonts: Fonts, writer: PackWriter, run: Run): Promise<void> {
