@@ -7,6 +7,8 @@ import { complexOf, givenCells } from './complex.js';
 import { countDiagrams } from './count-diagrams.js';
 import { fileDiagram } from './file-diagram.js';
 import { findDiagram } from './find-diagram.js';
+import { planeFigure } from './plane/plane-figure.js';
+import { planeReciprocal } from './plane/plane-reciprocal.js';
 import { NOTHING, type ReciprocalResult } from './result.js';
 import { traceCells } from './trace-cells.js';
 
@@ -15,7 +17,7 @@ import { traceCells } from './trace-cells.js';
  * diagram of the truss file or one that is found, what it says of every strut and node, how it compares with the given
  * and the analysed forces (N by member index), and the findings.
  *
- * A truss without cells or a diagram, whose job does not ask for one, gives nothing and no findings. Where the forces
+ * A plane truss is read by lifting. A truss in space without cells or a diagram, whose job does not ask for one, gives nothing and no findings. Where the forces
  * come from elsewhere a fault of the diagram is a warning, and that there is none is a note.
  */
 export function reciprocalOf(
@@ -60,6 +62,8 @@ function diagramOf(
   analysed: Float64Array | null,
 ): ReciprocalResult {
   const { truss } = topology;
+  const figure = truss.cells.length === 0 && !truss.reciprocal ? planeFigure(topology) : null;
+  if (figure) return planeReciprocal(topology, job, figure, given, analysed);
   if (source !== 'reciprocal' && !truss.reciprocal && truss.cells.length === 0) return NOTHING;
   const cells = truss.cells.length > 0 ? { list: givenCells(topology), findings: [] } : traceCells(topology);
   if (!cells.list) return { ...NOTHING, findings: cells.findings };
@@ -86,4 +90,5 @@ const NOTED = new Set([
   'reciprocal-misses-forces',
   'reciprocal-misses-loads',
   'face-in-no-cell',
+  'regions-not-found',
 ]);
