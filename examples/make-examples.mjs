@@ -60,18 +60,18 @@ function loopOf(face, corners, normal) {
 // Direction (azimuth, elevation in degrees), distance of the outer face and of the inner face in mm.
 // A flat bottom to stand on, twelve faces in all, none alike; found by trying, for struts long enough to be made.
 export const LANTERN_FACES = [
-  [0, -90, 293, 150],
-  [199, -51, 326, 177],
-  [7, -30, 333, 199],
-  [137, -41, 420, 239],
-  [256, -16, 255, 149],
-  [33, -7, 278, 155],
-  [190, 43, 278, 140],
-  [15, 13, 334, 177],
-  [77, 70, 234, 144],
-  [205, 68, 265, 134],
-  [50, 63, 252, 148],
-  [160, 85, 219, 120],
+  [0, -90, 205, 105],
+  [199, -51, 228, 124],
+  [7, -30, 233, 139],
+  [137, -41, 294, 167],
+  [256, -16, 178, 104],
+  [33, -7, 195, 108],
+  [190, 43, 195, 98],
+  [15, 13, 234, 124],
+  [77, 70, 164, 101],
+  [205, 68, 186, 94],
+  [50, 63, 176, 104],
+  [160, 85, 153, 84],
 ];
 
 export function lantern(faces = LANTERN_FACES) {
@@ -155,8 +155,8 @@ export function lantern(faces = LANTERN_FACES) {
     });
   });
   const largest = Math.max(...members.map((m) => Math.abs(m.raw)));
-  const LARGEST_N = 60;
-  const reciprocalSize = 5000; // mm of diagram for one unit of gradient (1/mm), so that the diagram is drawn in hundreds of mm
+  const LARGEST_N = 40;
+  const reciprocalSize = 3500; // mm of diagram for one unit of gradient (1/mm), so that the diagram is drawn in hundreds of mm
   const faceList = [
     ...faces.map((_, f) => ({
       id: name('F', f),
