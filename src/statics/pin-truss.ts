@@ -1,6 +1,7 @@
 import { analyse } from '../maths/sparse/analyse.js';
 import { fromTriplets, type SparseMatrix } from '../maths/sparse/csc.js';
-import { type Factor, factorise } from '../maths/sparse/factorise.js';
+import { diagonalOf, type Factor, factorise } from '../maths/sparse/factorise.js';
+import { addToDiagonal } from '../maths/sparse/null-space.js';
 import { solve } from '../maths/sparse/solve.js';
 import { blockPoints, type Freedoms, gather, numberFreedoms, spread } from './freedoms.js';
 import { barDirections, type PinFigure } from './pin-figure.js';
@@ -11,6 +12,8 @@ const SINGULAR_PIVOT = 1e-11;
 export interface PinTruss extends PinFigure {
   /** E A of each bar, N; positive. */
   readonly axialStiffness: Float64Array;
+  /** Force that each bar carries before any load, N: its t/L stiffens the nodes sideways. It is not in the results. Absent: none. */
+  readonly prestress?: ArrayLike<number>;
 }
 
 /** Loads of one case. */
@@ -32,6 +35,25 @@ export interface PinResult {
   readonly residual: number;
 }
 
+/** Share of the largest diagonal entry that is added where a figure can move. */
+const SOFTENING = 1e-9;
+
+/**
+ * The bars' elastic answer to loads that the figure can carry (in the range of A) and to free elongations, whether or not the
+ * figure can move: a faint spring at every node holds the mechanisms, and refinement takes its share out again. N.
+ */
+export function elasticForces(truss: PinTruss, loads: PinLoads): Float64Array {
+  const freedoms = numberFreedoms(truss.fixed, 3);
+  const { lengths, units } = barDirections(truss);
+  const k = Float64Array.from(lengths, (l, e) => truss.axialStiffness[e] / l);
+  const stiffness = pinStiffness(truss, freedoms, k, units);
+  const most = diagonalOf(stiffness).reduce((a, b) => Math.max(a, b), 0);
+  const held = addToDiagonal(stiffness, SOFTENING * (most > 0 ? most : 1));
+  const right = rightSide(truss, loads, k, units);
+  const { x } = solve(factorPin(truss, freedoms, held), stiffness, [gather(freedoms, right)]);
+  return strained(truss, units, k, spread(freedoms, x[0]), loads);
+}
+
 export type PinSolution =
   | { readonly state: 'solved'; readonly cases: readonly PinResult[]; readonly pivotRatio: number }
   /** The figure can move: `node` has a freedom that no bar resists. */
@@ -46,43 +68,36 @@ export function solvePinTruss(truss: PinTruss, cases: readonly PinLoads[]): PinS
   const freedoms = numberFreedoms(truss.fixed, 3);
   const { lengths, units } = barDirections(truss);
   const k = Float64Array.from(lengths, (l, e) => truss.axialStiffness[e] / l);
-  const stiffness = pinStiffness(truss, freedoms, k, units);
+  const stiffness = pinStiffness(
+    truss,
+    freedoms,
+    k,
+    units,
+    truss.prestress && Float64Array.from(lengths, (l, e) => truss.prestress![e] / l),
+  );
   const factor = factorPin(truss, freedoms, stiffness);
   if (factor.state === 'zero pivot') return { state: 'mechanism', node: nodeOf(freedoms, factor.stoppedAt) };
   if (factor.pivotRatio < SINGULAR_PIVOT) return { state: 'mechanism', node: nodeOf(freedoms, weakest(factor)) };
-  const right = cases.map((c) => {
-    const p = c.forces.slice();
-    if (c.freeElongation)
-      addBarForces(
-        p,
-        truss,
-        units,
-        c.freeElongation.map((e0, e) => k[e] * e0),
-        -1,
-      );
-    return gather(freedoms, p);
-  });
+  const right = cases.map((c) => gather(freedoms, rightSide(truss, c, k, units)));
   const { x, residual } = solve(factor, stiffness, right);
   return {
     state: 'solved',
     pivotRatio: factor.pivotRatio,
     cases: cases.map((c, i) => {
       const displacements = spread(freedoms, x[i]);
-      const axial = Float64Array.from(
-        k,
-        (ke, e) => ke * (elongation(truss, units, displacements, e) - (c.freeElongation?.[e] ?? 0)),
-      );
+      const axial = strained(truss, units, k, displacements, c);
       return { axial, displacements, reactions: reactionsOf(truss, units, axial, c.forces), residual: residual[i] };
     }),
   };
 }
 
-/** Lower triangle of A diag(k) Aᵀ, with every entry of each pair of joined nodes present. */
+/** Lower triangle of A diag(k) Aᵀ, plus `across` (t/L) square to each bar, with every entry of each pair of joined nodes present. */
 export function pinStiffness(
   figure: PinFigure,
   freedoms: Freedoms,
   k: ArrayLike<number>,
   units: Float64Array,
+  across?: ArrayLike<number>,
 ): SparseMatrix {
   const rows: number[] = [];
   const columns: number[] = [];
@@ -99,7 +114,8 @@ export function pinStiffness(
       for (let t = 0; t < 2; t++)
         for (let i = 0; i < 3; i++)
           for (let j = 0; j < 3; j++) {
-            const v = k[e] * units[3 * e + i] * units[3 * e + j];
+            const q = across ? across[e] : 0;
+            const v = (k[e] - q) * units[3 * e + i] * units[3 * e + j] + (i === j ? q : 0);
             put(
               freedoms.of[3 * figure.ends[2 * e + s] + i],
               freedoms.of[3 * figure.ends[2 * e + t] + j],
@@ -111,6 +127,18 @@ export function pinStiffness(
 
 const factorPin = (figure: PinFigure, freedoms: Freedoms, k: SparseMatrix): Factor =>
   factorise(analyse(k, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, figure.nodes) }), k);
+
+/** p + A (EA/L) e0 over all nodes. */
+function rightSide(truss: PinTruss, c: PinLoads, k: Float64Array, units: Float64Array): Float64Array {
+  const p = c.forces.slice();
+  const push = c.freeElongation?.map((e0, e) => k[e] * e0);
+  if (push) addBarForces(p, truss, units, push, -1);
+  return p;
+}
+
+/** (EA/L)(Aᵀ d - e0) of every bar, N. */
+const strained = (truss: PinTruss, units: Float64Array, k: Float64Array, d: Float64Array, c: PinLoads): Float64Array =>
+  k.map((ke, e) => ke * (elongation(truss, units, d, e) - (c.freeElongation?.[e] ?? 0)));
 
 const nodeOf = (freedoms: Freedoms, freedom: number): number => Math.floor(freedoms.of.indexOf(freedom) / 3);
 

@@ -1,7 +1,7 @@
 import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import { orthonormalise } from '../maths/sparse/orthonormalise.js';
 import { barDirections, type PinFigure } from './pin-figure.js';
-import { addBarForces, solvePinTruss } from './pin-truss.js';
+import { addBarForces, elasticForces } from './pin-truss.js';
 
 /** The least eigenvalue counts as positive above this share of the largest |t / L|: round-off of sums over some thousand bars. */
 const POSITIVE = 1e-9;
@@ -59,16 +59,14 @@ export interface ForceSplit {
   readonly selfStress: Float64Array;
 }
 
-/** Splits t into load part and self-stress. null where the figure can move, so that loads have no elastic answer. */
+/** Splits t into load part and self-stress, whether or not the figure can move: t balances some load, so that load can be carried. */
 export function splitForces(
   figure: PinFigure & { readonly axialStiffness: Float64Array },
   axial: Float64Array,
-): ForceSplit | null {
+): ForceSplit {
   const { units } = barDirections(figure);
   const balanced = new Float64Array(figure.nodes.length);
   addBarForces(balanced, figure, units, axial, -1);
-  const solution = solvePinTruss(figure, [{ forces: balanced }]);
-  if (solution.state !== 'solved') return null;
-  const byLoad = solution.cases[0].axial;
+  const byLoad = elasticForces(figure, { forces: balanced });
   return { byLoad, selfStress: axial.map((t, e) => t - byLoad[e]) };
 }

@@ -9,6 +9,8 @@ import { rigidMotions } from './rigid-body.js';
 
 /** Where the elimination's pivots leave room for doubt (0.7 % of 3,000 random structures), inverse iteration decides. */
 const DOUBTFUL_PIVOT = 1e-6;
+/** A pivot overstates the singular value it stands for; this margin over the cut has been enough. */
+const PIVOT_MARGIN = 100;
 const DOUBTFUL_DROP = 1e-12;
 /** Up to this many freedoms inverse iteration always runs, to give the singular value next to zero: half a second there. */
 const ARBITER_FREEDOMS = 16000;
@@ -38,7 +40,10 @@ export interface FigureCounts {
   readonly nearMechanisms: readonly Mechanism[];
   /** Bars that each carry a state of self-stress: one a state. */
   readonly redundantBars: Int32Array;
-  /** Bar forces in equilibrium with no load, the redundant bar's at 1, for each state. Made when asked for. */
+  /**
+   * Bar forces in equilibrium with no load, the redundant bar's at 1, for each state; the states of near-mechanisms that are
+   * counted come last, their largest force at 1. Made when asked for.
+   */
   selfStress(state: number): SparseVector;
   /** Which of the two ways decided the rank. */
   readonly decidedBy: 'elimination' | 'inverse iteration';
@@ -48,14 +53,16 @@ export interface FigureCounts {
 /**
  * s = b - r states of self-stress and m = f - r - (rigid-body freedoms) mechanisms, with bases of both (Maxwell 1864;
  * Calladine, Int. J. Solids Struct. 14 (1978) 161-172). The rank comes from a sparse elimination of the equilibrium
- * matrix; where its pivots leave doubt another order of bars is tried and inverse iteration decides.
+ * matrix; where its pivots leave doubt another order of bars is tried and inverse iteration decides. Singular values up to
+ * `zero` count as nought: for coordinates that were rounded the caller gives more than round-off.
  */
-export function countStates(figure: PinFigure): FigureCounts {
+export function countStates(figure: PinFigure, zero: number = SINGULAR_CUT): FigureCounts {
   const freedoms = numberFreedoms(figure.fixed, 3);
   const a = equilibriumMatrix(figure, freedoms);
   const axes = sweepAxes(figure);
   let elimination = sweep(figure, freedoms, a, axes[0]);
-  const doubtful = (e: ColumnElimination): boolean => e.leastPivot < DOUBTFUL_PIVOT || e.largestDropped > DOUBTFUL_DROP;
+  const doubtful = (e: ColumnElimination): boolean =>
+    e.leastPivot < Math.max(DOUBTFUL_PIVOT, PIVOT_MARGIN * zero) || e.largestDropped > DOUBTFUL_DROP;
   for (const axis of axes.slice(1)) {
     if (!doubtful(elimination)) break;
     const other = sweep(figure, freedoms, a, axis);
@@ -67,12 +74,15 @@ export function countStates(figure: PinFigure): FigureCounts {
   let rank = elimination.rank;
   let decidedBy: FigureCounts['decidedBy'] = 'elimination';
   let near: Mechanism[] = [];
+  let counted: readonly Float64Array[] = []; // near-mechanisms that count as mechanisms
   let least: number | null = null;
   const nulls = freedoms.count - elimination.rank;
   if (freedoms.count > 0 && nulls <= ARBITER_VECTORS && (doubtful(elimination) || freedoms.count <= ARBITER_FREEDOMS)) {
     const space = leftNullSpace(a, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, figure.nodes) });
-    least = space.next[0]?.value ?? null;
-    near = space.next
+    counted = space.next.filter((n) => n.value <= zero).map((n) => n.vector);
+    const others = space.next.slice(counted.length);
+    least = others[0]?.value ?? null;
+    near = others
       .filter((n) => n.value < NEAR_MECHANISM)
       .map((n) => ({ shape: scaled(spread(freedoms, n.vector)), singularValue: n.value }));
     const byIteration = freedoms.count - space.vectors.length;
@@ -88,6 +98,11 @@ export function countStates(figure: PinFigure): FigureCounts {
         }));
     }
   }
+  rank -= counted.length;
+  shapes = [
+    ...shapes,
+    ...counted.map((z) => ({ shape: scaled(spread(freedoms, z)), singularValue: norm(multiplyTransposed(a, z)) })),
+  ];
   return {
     bars: a.columns,
     freedoms: freedoms.count,
@@ -98,7 +113,12 @@ export function countStates(figure: PinFigure): FigureCounts {
     mechanismShapes: shapes,
     nearMechanisms: near,
     redundantBars: elimination.dependent,
-    selfStress: (state) => elimination.columnNull(state),
+    selfStress: (state) => {
+      if (state < elimination.dependent.length) return elimination.columnNull(state);
+      // The bar forces of a near-null: its right singular vector, Aᵀ z, with the largest at 1.
+      const t = scaled(multiplyTransposed(a, counted[state - elimination.dependent.length]));
+      return { indices: Int32Array.from(t.keys()), values: t };
+    },
     decidedBy,
     leastSingularValue: least,
   };

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { cross, normalise, perpendicular, type Vec3 } from '../../src/maths/vec3.js';
-import { bucklingFactors } from '../../src/statics/frame/buckling.js';
+import { bucklingFactors } from '../../src/statics/frame/frame-buckling.js';
 import type { Frame, FrameMember } from '../../src/statics/frame/member.js';
 import { prepareFrame, solveFrame } from '../../src/statics/frame/solve-frame.js';
 import { subdivide } from '../../src/statics/frame/subdivide.js';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { solvePinTruss } from '../../src/statics/pin-truss.js';
+import { elasticForces, solvePinTruss } from '../../src/statics/pin-truss.js';
 import { prestressTest, splitForces } from '../../src/statics/prestress.js';
 import { countStates } from '../../src/statics/state-counts.js';
 
@@ -91,13 +91,26 @@ describe('self-stress', () => {
     ).toBe(false);
   });
 
+  it('comes from one strut made too short, though the figure can move, and then carries a load across', () => {
+    const free = { ...line, fixed: Uint8Array.of(1, 1, 1, 0, 0, 1, 1, 1, 1) };
+    const t = elasticForces(free, { forces: new Float64Array(9), freeElongation: Float64Array.of(-1, 0) });
+    // Both bars at EA 1 / (2 L) = 500 N, as where the middle is held (by hand).
+    expect([...t].map((x) => Math.round(x * 1e6) / 1e6)).toEqual([500, 500]);
+    const p = new Float64Array(9);
+    p[4] = 2;
+    const s = solvePinTruss({ ...free, prestress: t }, [{ forces: p }]);
+    if (s.state !== 'solved') throw new Error(s.state);
+    // Across: 2 t / L = 1 N/mm.
+    expect(s.cases[0].displacements[4]).toBeCloseTo(2, 9);
+  });
+
   it('is told apart from what the loads call for', () => {
     const p = new Float64Array(9);
     p[3] = 800;
     const s = solvePinTruss(line, [{ forces: p }]);
     if (s.state !== 'solved') throw new Error(s.state);
     const given = s.cases[0].axial.map((t) => t + 123);
-    const split = splitForces(line, given)!;
+    const split = splitForces(line, given);
     expect([...split.selfStress].map((x) => Math.round(x * 1e6) / 1e6)).toEqual([123, 123]);
     expect(split.byLoad[0]).toBeCloseTo(400, 9);
   });

@@ -3,8 +3,6 @@ import { seededRandom } from '../random.js';
 
 /** Vectors that go through the operator together; square and round struts buckle in pairs, and a block finds both. */
 const BLOCK = 4;
-/** A Ritz value whose residual is below this share of it has converged. */
-const CONVERGED = 1e-10;
 /** A new vector that keeps less than this share of its length adds nothing to the space. */
 const DEPENDENT = 1e-10;
 
@@ -18,7 +16,8 @@ export interface Krylov {
 /**
  * The `wanted` largest eigenvalues of an operator that is self-adjoint in the inner product of a definite matrix B, by block
  * Lanczos with full reorthogonalisation (Grimes, Lewis and Simon, SIAM J. Matrix Anal. Appl. 15 (1994) 228-272).
- * `apply` takes a block of vectors; `weigh` gives B x. Stops at `most` basis vectors at the latest.
+ * `apply` takes a block of vectors; `weigh` gives B x. A Ritz value whose residual is below `converged` of it counts as found.
+ * Stops at `most` basis vectors at the latest.
  */
 export function largestEigenvalues(
   n: number,
@@ -26,6 +25,7 @@ export function largestEigenvalues(
   weigh: (x: Float64Array) => Float64Array,
   wanted: number,
   most: number,
+  converged: number,
 ): Krylov {
   const random = seededRandom(7);
   const basis: Float64Array[] = [];
@@ -46,7 +46,7 @@ export function largestEigenvalues(
     }
     if (fresh.length === 0) return found;
     images.push(...apply(fresh));
-    found = ritz(basis, weighed, images, weigh, wanted, steps);
+    found = ritz(basis, weighed, images, weigh, wanted, steps, converged);
     if (found.values.length >= wanted || basis.length >= Math.min(n, most)) return found;
     block = images.slice(-fresh.length).map((v) => v.slice());
   }
@@ -76,6 +76,7 @@ function ritz(
   weigh: (x: Float64Array) => Float64Array,
   wanted: number,
   steps: number,
+  converged: number,
 ): Krylov {
   const m = basis.length;
   const h = Matrix.zeros(m, m);
@@ -103,7 +104,7 @@ function ritz(
     }
     axpy(residual, vector, -value);
     const size = Math.sqrt(Math.max(0, dot(residual, weigh(residual))));
-    if (!(size <= CONVERGED * Math.max(Math.abs(value), Math.abs(eigen.realEigenvalues[order[0]])))) break;
+    if (!(size <= converged * Math.max(Math.abs(value), Math.abs(eigen.realEigenvalues[order[0]])))) break;
     values.push(value);
     vectors.push(vector);
   }

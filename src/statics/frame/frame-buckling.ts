@@ -1,0 +1,43 @@
+import { spread } from '../freedoms.js';
+import { type LoadFactors, lowestLoadFactors } from '../load-factors.js';
+import { assembleFrame } from './assemble.js';
+import { geometricStiffness } from './geometric-stiffness.js';
+import { toGlobal } from './rotate.js';
+import type { PreparedFrame } from './solve-frame.js';
+
+/** Lowest load factors of a structure under one set of axial forces. */
+export interface Buckling {
+  /** Ascending; every factor times the loads makes it buckle in its shape. Empty where nothing is compressed enough. */
+  readonly factors: readonly number[];
+  /** Displacements over all nodes by factor (six a node of a frame, three of a pinned truss); largest displacement 1. */
+  readonly shapes: readonly Float64Array[];
+  readonly sturm: LoadFactors['sturm'];
+}
+
+/**
+ * Linear buckling of a frame. `axial` is the force of each member of the frame, N, tension positive; members should be
+ * subdivided, four elements a strut: one overestimates a pin-ended strut by 21.6 %.
+ */
+export function bucklingFactors(
+  prepared: Extract<PreparedFrame, { state: 'stiff' }>,
+  axial: ArrayLike<number>,
+  wanted = 4,
+): Buckling {
+  const { frame, freedoms, stiffness, factor, analysis } = prepared;
+  const geometric = assembleFrame(frame, freedoms, (e) =>
+    toGlobal(frame.members[e], geometricStiffness(frame.members[e], axial[e])),
+  );
+  const { pairs, sturm } = lowestLoadFactors(stiffness, geometric, analysis, factor, wanted);
+  return {
+    factors: pairs.map((p) => p.lambda),
+    shapes: pairs.map((p) => scaled(spread(freedoms, p.vector))),
+    sturm,
+  };
+}
+
+/** Largest displacement (not rotation) at 1. */
+function scaled(v: Float64Array): Float64Array {
+  let most = 0;
+  for (let i = 0; i < v.length; i++) if (i % 6 < 3 && Math.abs(v[i]) > Math.abs(most)) most = v[i];
+  return most === 0 ? v : v.map((x) => x / most + 0);
+}
