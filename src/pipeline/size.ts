@@ -7,6 +7,7 @@ import type { Job } from '../model/job/index.js';
 import type { Material } from '../model/material.js';
 import type { Parts } from '../model/parts.js';
 import { type Section, sectionProperties } from '../model/section.js';
+import type { SizeChoice } from '../model/sizing.js';
 import type { Utilisation } from '../model/solution.js';
 import type { Truss } from '../model/truss.js';
 import { allActions, type Loading } from '../strength/actions.js';
@@ -18,19 +19,6 @@ export interface SizedRound {
   readonly parts: Parts;
   readonly loading: Loading;
   readonly utilisations: readonly Utilisation[];
-}
-
-/** A group of struts, or one that is in none, and the section it came out with. */
-export interface SizeChoice {
-  /** The group's name or the strut's mark. */
-  readonly name: string;
-  readonly struts: readonly string[];
-  /** Section before; null where it was unknown. */
-  readonly from: string | null;
-  readonly to: string;
-  /** Highest utilisation of its struts and their sockets, with the section it came out with; null where nothing judged them. */
-  readonly utilisation: number | null;
-  readonly rule: string;
 }
 
 export interface Sizing {

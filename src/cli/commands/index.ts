@@ -3,6 +3,7 @@ import type { CliCommand } from './command.js';
 import { convert } from './convert.js';
 import { make } from './make.js';
 import { newJob } from './new.js';
+import { size } from './size.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, make, check, convert];
+export const commands: readonly CliCommand[] = [newJob, make, check, size, convert];

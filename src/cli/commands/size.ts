@@ -1,0 +1,55 @@
+import { sizingReport } from '../../documents/sizing-json.js';
+import { withSections } from '../../documents/truss/with-sections.js';
+import { FileFault } from '../../machine/file-fault.js';
+import { readText, writeOne } from '../../machine/files.js';
+import { join } from '../../machine/paths.js';
+import { LIMITS } from '../../model/limits.js';
+import { loadJob } from '../../pipeline/load.js';
+import { sizeJob } from '../../pipeline/size-job.js';
+import { EXIT } from '../exit.js';
+import { saySizing } from '../terminal/say-sizing.js';
+import type { CliCommand } from './command.js';
+
+export const size: CliCommand = {
+  usage: 'size <job>',
+  summary: "Choose the lightest of the job's struts.sizes for every strut or group that passes.",
+  examples: [
+    'strutwright size my-table/job.json                              what would change, and what it weighs',
+    'strutwright size my-table/job.json -o my-table/truss-sized.json and a truss file with the sections in it',
+    'strutwright size my-table/job.json --json                       the same as data, for a script',
+  ],
+  define: (command) =>
+    command
+      .option('-o, --out <truss>', 'write the truss file with the chosen sections; an existing file is never replaced')
+      .option('--json', 'print the choices as JSON on stdout'),
+  async run({ arguments: [path], options, terminal }) {
+    const result = await loadJob(path!);
+    if ('faults' in result) {
+      for (const fault of result.faults) terminal.talk(`${fault}\n`);
+      return EXIT.refused;
+    }
+    const { truss, job, folder } = result.loaded;
+    const sizing = await sizeJob(truss, job);
+    const out = options['out'];
+    try {
+      if (typeof out === 'string' && sizing.choices.length > 0) {
+        const text = await readText(join(folder, job.truss), 4 * LIMITS.fileCharacters);
+        await writeOne(
+          out,
+          withSections(
+            text,
+            sizing.truss.members.map((m) => m.section!),
+          ),
+        );
+      }
+    } catch (error) {
+      if (!(error instanceof FileFault)) throw error;
+      terminal.talk(`${error.message}\n`);
+      return EXIT.refused;
+    }
+    terminal.result(options['json'] ? `${JSON.stringify(sizingReport(sizing), null, 2)}\n` : saySizing(sizing));
+    if (typeof out === 'string' && sizing.choices.length > 0)
+      terminal.talk(`Wrote ${out}; name it under "truss" in the job.\n`);
+    return sizing.findings.some((f) => f.level !== 'note') ? EXIT.flagged : EXIT.clear;
+  },
+};

@@ -1,0 +1,36 @@
+import type { Finding } from '../model/finding.js';
+import { sayFinding } from '../model/findings/index.js';
+import type { SizeChoice } from '../model/sizing.js';
+
+/** A sizing as data for scripts; masses in kg, null where not known. */
+export function sizingReport(sizing: {
+  readonly choices: readonly SizeChoice[];
+  readonly rounds: number;
+  readonly massBefore: number | null;
+  readonly massAfter: number | null;
+  readonly findings: readonly Finding[];
+}): object {
+  return {
+    format: 'strutwright-size/1',
+    rounds: sizing.rounds,
+    massBefore_kg: sizing.massBefore,
+    massAfter_kg: sizing.massAfter,
+    sections: sizing.choices.map(({ name, struts, from, to, utilisation, rule }) => ({
+      name,
+      struts,
+      from,
+      to,
+      utilisation,
+      rule,
+    })),
+    findings: sizing.findings.map((f) => ({
+      level: f.level,
+      code: f.code,
+      subject: f.subject,
+      value: f.value,
+      limit: f.limit,
+      message: sayFinding(f),
+      kind: f.kind,
+    })),
+  };
+}

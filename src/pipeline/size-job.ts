@@ -1,0 +1,16 @@
+import type { Job } from '../model/job/index.js';
+import type { Truss } from '../model/truss.js';
+import { assess } from './assess.js';
+import { type Sizing, sizeSections } from './size.js';
+
+/** Sizes the struts of a job with the assessment that `check` makes. `file` is the truss as read; the job's scale is applied inside. */
+export const sizeJob = (file: Truss, job: Job, tell?: (round: number, heavier: number) => void): Promise<Sizing> =>
+  sizeSections(
+    file,
+    job,
+    async (truss) => {
+      const { parts, utilisations, forces, solution } = await assess(truss, job);
+      return { parts, utilisations, loading: { forces: forces?.values ?? null, solution } };
+    },
+    tell,
+  );
