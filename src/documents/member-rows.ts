@@ -39,17 +39,9 @@ function worstByStrut(utilisations: readonly Utilisation[]): Map<string, Utilisa
   return worst;
 }
 
-/** Bars are numbered in the plan's order. */
 function barsByStrut(records: PackRecords): Map<string, string> {
-  const bars = new Map<string, string>();
-  records.stock?.bars.forEach((bar, i) => {
-    for (const cut of bar.cuts) bars.set(cut.mark, barMark(i));
-  });
-  return bars;
+  return new Map((records.stock?.bars ?? []).flatMap((bar) => bar.cuts.map((cut) => [cut.mark, bar.mark] as const)));
 }
-
-/** Mark of a bar by its place in the stock plan. */
-export const barMark = (index: number): string => `B${String(index + 1).padStart(2, '0')}`;
 
 function envelopeOf(actions: readonly MemberActions[]): MemberRow['envelope'] {
   if (actions.length === 0) return null;

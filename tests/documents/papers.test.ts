@@ -139,10 +139,6 @@ describe('tables of a pack', () => {
     const { topology } = records;
     const evil = {
       ...records,
-      solution: {
-        ...records.solution!,
-        cases: [{ ...records.solution!.cases[0]!, name: '=HYPERLINK("x")' }],
-      },
       utilisations: [
         { mark: 'S1', kind: 'strut' as const, at: null, combination: '=1+1', force: 1, utilisation: 9, rule: '@x' },
       ],

@@ -2,6 +2,7 @@ import { ROUND_OFF } from '../../model/tolerance.js';
 import { GIVEN_CASE } from '../../model/truss.js';
 import { CAUTION } from '../cautions.js';
 import { issueOf } from '../issue.js';
+import { writeFitted } from '../kit/fit-text.js';
 import type { Fonts } from '../kit/fonts.js';
 import { SIZE } from '../kit/ink.js';
 import { Paper, type Written } from '../kit/paper.js';
@@ -9,14 +10,15 @@ import { type Column, drawTable } from '../kit/table.js';
 import { fixed, type Units, unitsOf } from '../kit/units.js';
 import { type Camera, FRONT, ISOMETRIC, LEFT, PLAN, project, RIGHT } from '../kit/view/camera.js';
 import { drawForceLegend, FORCE_LEGEND_HEIGHT } from '../kit/view/force-legend.js';
+import type { ViewArrow } from '../kit/view/marks/arrow.js';
 import { drawProjectedViews } from '../kit/view/projected-views.js';
 import { strokeOfForce } from '../kit/view/stroke.js';
-import { drawTrussView, type ViewArrow, type ViewNode, type ViewStrut } from '../kit/view/truss-view.js';
+import { drawTrussView, fillFactor, type ViewNode, type ViewStrut } from '../kit/view/truss-view.js';
 import { largestForce, type MemberRow, memberRows } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
 
 /** Struts whose numbers one picture carries: more cannot be told apart on A4. */
-const LABELLED = 44;
+const LABELLED = 52;
 /** In a truss of more struts only the isometric view is split until every strut has its number beside it. */
 const ALL_VIEWS_UP_TO = 600;
 
@@ -26,7 +28,7 @@ export async function forceSheets(records: PackRecords, fonts: Fonts): Promise<W
   const paper = new Paper(issueOf(records, fonts), 'Force sheets', CAUTION, units.words);
   const rows = memberRows(records);
   const largest = rows.reduce((most, r) => Math.max(most, Math.abs(r.force ?? 0)), 0);
-  const scene = sceneOf(records, rows, largest);
+  const scene = sceneOf(records, rows, largest, units);
 
   overview(paper, records, scene, largest, units);
   const side = records.job.output.projection === 'first-angle' ? LEFT : RIGHT;
@@ -45,7 +47,7 @@ interface Scene {
   readonly strut: (row: MemberRow, i: number) => ViewStrut;
 }
 
-function sceneOf(records: PackRecords, rows: readonly MemberRow[], largest: number): Scene {
+function sceneOf(records: PackRecords, rows: readonly MemberRow[], largest: number, units: Units): Scene {
   const { truss, nodeIndex } = records.topology;
   const supported = new Set(truss.supports.map((s) => s.node));
   const ends = rows.map(({ member }) => [nodeIndex.get(member.ends[0])!, nodeIndex.get(member.ends[1])!] as const);
@@ -63,7 +65,10 @@ function sceneOf(records: PackRecords, rows: readonly MemberRow[], largest: numb
               length: 11,
               newton: Math.hypot(...load.force),
             }))
-            .map(({ newton, ...arrow }) => ({ ...arrow, label: fixed(newton, newton >= 100 ? 0 : 1) })),
+            .map(({ newton, ...arrow }) => ({
+              ...arrow,
+              label: `${units.force(newton).replace('+', '')} ${units.forceUnit}`,
+            })),
     strut: (row, i) => ({
       mark: row.member.mark,
       from: ends[i]![0],
@@ -98,25 +103,25 @@ function pictures(
   largest: number,
   units: Units,
 ): void {
-  const layers = layersOf(camera, scene, rows.length);
-  layers.forEach((layer, k) => {
-    const part = layers.length === 1 ? '' : `, part ${k + 1} of ${layers.length}`;
+  const parts = partsOf(camera, scene, rows);
+  const orientation = paper.orientationFor((room) => fillFactor(scene.nodes, camera, room));
+  for (const part of parts) {
     const area = paper.addSheet({
-      title: `${camera.name}${part}`,
-      instruction:
-        layers.length === 1
-          ? `Force in ${units.forceUnit} beside each strut: T pulls, C pushes. Not to scale: take no length from this sheet.`
-          : `Force in ${units.forceUnit} beside each strut that is drawn full, from ${k === 0 ? 'the nearest on' : k === layers.length - 1 ? 'the farthest' : 'the middle'}; thin lines are on the other parts. T pulls, C pushes. Not to scale.`,
+      title: part.name === '' ? camera.name : `${camera.name}: ${part.name}`,
+      instruction: `Force in ${units.forceUnit} beside each strut: T pulls, C pushes. ${
+        parts.length > 1 ? 'Thin lines: see the other sheets of this view. ' : ''
+      }Not to scale.`,
+      orientation,
     });
-    const shown = new Set(layer);
-    const touched = new Set(layer.flatMap((i) => scene.ends[i]!));
+    const shown = new Set(part.members);
+    const touched = new Set(part.members.flatMap((i) => scene.ends[i]!));
     const drawn = drawTrussView(
       paper.pen,
       { ...area, height: area.height - FORCE_LEGEND_HEIGHT - 6 },
       {
         camera,
         scale: 'fill',
-        nodes: scene.nodes.map((n, i) => ({ ...n, labelled: touched.has(i) })),
+        nodes: scene.nodes.map((n, i) => ({ ...n, show: touched.has(i) ? 'mark' : 'dot' })),
         arrows: scene.arrows.filter((a) => touched.has(a.node)),
         struts: rows.map((row, i) => {
           const strut = scene.strut(row, i);
@@ -131,23 +136,47 @@ function pictures(
     );
     const foot = area.y + area.height - FORCE_LEGEND_HEIGHT;
     if (drawn.unplaced.length > 0)
-      paper.pen.text(`No room here, see the table: ${drawn.unplaced.join(', ')}`, area.x, foot - 1.5, {
-        size: SIZE.note,
-      });
+      writeFitted(
+        paper.pen,
+        `No room here, see the table: ${drawn.unplaced.join(', ')}`,
+        area.x,
+        foot - 1.5,
+        area.width,
+        { size: SIZE.note },
+      );
     drawForceLegend(paper.pen, area.x, foot, largest, units);
-  });
+  }
 }
 
-/** Struts by depth, nearest first, in as many even parts as keep every part's labels legible. Indices of members. */
-function layersOf(camera: Camera, scene: Scene, count: number): number[][] {
+/** What one sheet of a view shows in full. */
+interface Part {
+  readonly name: string;
+  readonly members: readonly number[];
+}
+
+/**
+ * The struts of a view in parts whose labels stay legible: all in one where they can be, else by the truss's own groups
+ * where each is small enough, else by depth, nearest first.
+ */
+function partsOf(camera: Camera, scene: Scene, rows: readonly MemberRow[]): Part[] {
+  const all = rows.map((_, i) => i);
+  if (rows.length <= LABELLED) return [{ name: '', members: all }];
+  const groups = new Map<string, number[]>();
+  rows.forEach((row, i) => {
+    const key = row.member.group ?? 'other struts';
+    groups.set(key, [...(groups.get(key) ?? []), i]);
+  });
+  const sheets = Math.ceil(rows.length / LABELLED);
+  if (groups.size > 1 && groups.size <= 2 * sheets && [...groups.values()].every((g) => g.length <= LABELLED))
+    return [...groups].map(([name, members]) => ({ name, members }));
   const depth = scene.ends.map(
     ([a, b]) => project(camera, scene.nodes[a]!.at)[2] + project(camera, scene.nodes[b]!.at)[2],
   );
-  const order = Array.from({ length: count }, (_, i) => i).sort((a, b) => depth[b]! - depth[a]! || a - b);
-  const parts = Math.max(1, Math.ceil(count / LABELLED));
-  return Array.from({ length: parts }, (_, k) =>
-    order.slice(Math.round((k * count) / parts), Math.round(((k + 1) * count) / parts)),
-  );
+  const order = all.sort((a, b) => depth[b]! - depth[a]! || a - b);
+  return Array.from({ length: sheets }, (_, k) => ({
+    name: `layer ${k + 1} of ${sheets}${k === 0 ? ', nearest' : k === sheets - 1 ? ', farthest' : ''}`,
+    members: order.slice(Math.round((k * rows.length) / sheets), Math.round(((k + 1) * rows.length) / sheets)),
+  }));
 }
 
 function table(paper: Paper, records: PackRecords, rows: readonly MemberRow[], units: Units): void {

@@ -91,6 +91,15 @@ export class Paper {
     return this.area;
   }
 
+  /** The way to lay a sheet at which a picture comes out larger; upright where wide gains little. */
+  orientationFor(size: (room: { readonly width: number; readonly height: number }) => number): Orientation {
+    const factor = (orientation: Orientation): number => {
+      const page = pageSize(this.issue.job.output.paper, orientation);
+      return size({ width: page.width - 2 * MARGIN, height: page.height - 2 * MARGIN - TITLE_BLOCK_HEIGHT - HEAD });
+    };
+    return factor('wide') > GAIN * factor('upright') ? 'wide' : 'upright';
+  }
+
   /** Starts another sheet like the last. */
   continueSheet(): Area {
     const last = this.sheets.at(-1)!;
@@ -153,4 +162,8 @@ export class Paper {
   }
 }
 
+/** What title and instruction take of a sheet, and a legend under a picture, about, mm. */
+const HEAD = 40;
+/** How much larger a picture must come out before its sheet is turned. */
+const GAIN = 1.12;
 const CONTINUED = ', continued';

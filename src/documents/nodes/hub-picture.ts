@@ -159,7 +159,7 @@ function drawMarks(
           cost: off + 3 * Math.abs(turn),
         });
       }
-    return { key: sleeve.strut, owner: `${i}`, width, height: 2.8, anchor: [x, y], places };
+    return { key: sleeve.strut, owner: `${i}`, width, height: 2.8, anchors: [[x, y]], places };
   });
   const outlines = bodies.map((b, i) => {
     const [c, s] = [Math.cos(b.angle), Math.sin(b.angle)];

@@ -27,11 +27,11 @@ const PICTURE = 52;
 /** Width of the tables beside the pictures, mm. */
 const TABLES = 84;
 /** Head of a block: the node's mark, read across a bench. */
-const HEAD = 12;
-const TEXT = 8;
+const HEAD = 11;
+const TEXT = 7.5;
 const ANGLE_ROW = lineHeight(TEXT) * 1.12;
 /** Between blocks, down and across, mm. */
-const GAP = { down: 3, across: 10 } as const;
+const GAP = { down: 2.5, across: 10 } as const;
 /** Sheets wider than this carry two columns of blocks, mm. */
 const TWO_COLUMNS = 380;
 

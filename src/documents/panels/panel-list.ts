@@ -1,13 +1,12 @@
 import { DECIMALS, writeCsv } from '../formats/csv.js';
 import type { PackRecords } from '../records.js';
 
-/** panel-list.csv: one row a panel, always; `sheet` is the number of the nested sheet, blank where there is none. */
+/** panel-list.csv: one row a panel, always; `sheet` is the mark of the nested sheet, blank where there is none. */
 export function panelListCsv(records: PackRecords): Uint8Array {
   const { topology, parts, nesting, job } = records;
-  const sheets = new Map<string, number>();
-  nesting?.sheets.forEach((sheet, i) => {
-    for (const placement of sheet.placements) sheets.set(placement.mark, i + 1);
-  });
+  const sheets = new Map(
+    (nesting?.sheets ?? []).flatMap((sheet) => sheet.placements.map((placed) => [placed.mark, sheet.mark] as const)),
+  );
   return writeCsv(
     [
       { name: 'mark', value: (p) => p.mark },

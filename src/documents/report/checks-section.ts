@@ -13,7 +13,9 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
   if (forms.length > 0) {
     const worst = forms.reduce((most, form) => (form.flatness > most.flatness ? form : most));
     flow.paragraph(
-      `Flatness of ${forms.length} faces: the worst is ${worst.mark}, out of flat by ${units.length(worst.flatness, 3)} ${units.lengthUnit}.`,
+      worst.flatness < FLAT
+        ? `Flatness of ${forms.length} faces: all are flat to ${units.length(FLAT, 3)} ${units.lengthUnit}.`
+        : `Flatness of ${forms.length} faces: the worst is ${worst.mark}, out of flat by ${units.length(worst.flatness, 3)} ${units.lengthUnit}.`,
     );
   }
   const counts = solution?.counts;
@@ -32,6 +34,9 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
   if (notChecked.length > 0) flow.paragraph(`Not checked: ${notChecked.join(', ')}.`, { bold: true });
 }
 
-/** Three significant figures, without an exponent for what a person reads. */
+/** What no sheet and no eye can tell from flat, mm. */
+const FLAT = 0.001;
+
+/** Three significant figures, without an exponent; below a ten-thousandth nobody needs to know how far. */
 const plain = (value: number): string =>
-  value === 0 ? '0' : Math.abs(value) < 1e-6 ? 'below 0.000001' : String(Number(value.toPrecision(3)));
+  value === 0 ? '0' : Math.abs(value) < 1e-4 ? 'below 0.0001' : String(Number(value.toPrecision(3)));

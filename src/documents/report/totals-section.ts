@@ -39,7 +39,7 @@ export function totalsSection(flow: Flow, records: PackRecords, units: Units): v
       { head: 'Amount', align: 'right', value: (t) => t.amount },
       { head: `Mass\n${units.massUnit}`, align: 'right', value: (t) => t.mass },
     ],
-    rows,
+    rows.filter((row) => row.count !== '0'),
   );
 }
 

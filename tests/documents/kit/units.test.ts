@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { drawingScale } from '../../../src/documents/kit/drawing-scale.js';
 import { fixed, inchFraction, unitsOf } from '../../../src/documents/kit/units.js';
-import { readable } from '../../../src/documents/kit/view/truss-view.js';
+import { readable } from '../../../src/documents/kit/view/marks/strut-mark.js';
 import { defaultJob } from '../../../src/model/job/index.js';
 
 describe('units of output', () => {

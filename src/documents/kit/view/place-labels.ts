@@ -15,8 +15,8 @@ export interface Label {
   readonly height: number;
   /** The part of the drawing it belongs to: lines of the same key cost nothing. */
   readonly owner: string;
-  /** Where it points to when every place is taken. */
-  readonly anchor: Point;
+  /** Where its leader may end when every place is taken, best first. */
+  readonly anchors: readonly Point[];
   readonly places: readonly Place[];
   /** Where every place is taken it is left out instead of going elsewhere. */
   readonly stays?: boolean;
@@ -86,7 +86,7 @@ export function placeLabels(
     const farthest = Math.hypot(area.width, area.height);
     if (!best && !label.stays)
       for (let radius = RING; radius < Math.min(farthest, least); radius += RING)
-        for (const place of ring(label, radius)) consider(place);
+        for (const anchor of label.anchors) for (const place of ring(label, anchor, radius)) consider(place);
     if (!best) continue;
     const { box, leader }: Place = best;
     placed.set(label.key, best);
@@ -96,21 +96,21 @@ export function placeLabels(
   return placed;
 }
 
-/** Places round a label's anchor at one distance, about one a ring's width apart. */
-function ring(label: Label, radius: number): Place[] {
+/** Places round an anchor at one distance, about one a ring's width apart. */
+function ring(label: Label, anchor: Point, radius: number): Place[] {
   const count = Math.max(8, Math.ceil((2 * Math.PI * radius) / RING));
   return Array.from({ length: count }, (_, k) => {
     const angle = (2 * Math.PI * k) / count;
     const [c, s] = [Math.cos(angle), Math.sin(angle)];
     return {
       box: {
-        x: label.anchor[0] + c * (radius + label.width / 2),
-        y: label.anchor[1] + s * (radius + label.height / 2),
+        x: anchor[0] + c * (radius + label.width / 2),
+        y: anchor[1] + s * (radius + label.height / 2),
         width: label.width,
         height: label.height,
         angle: 0,
       },
-      leader: label.anchor,
+      leader: anchor,
       cost: radius,
     };
   });
