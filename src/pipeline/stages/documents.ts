@@ -10,6 +10,7 @@ import { placementJson } from '../../documents/nodes/placement.js';
 import { nestingJson } from '../../documents/panels/nesting-json.js';
 import { outlinesJson } from '../../documents/panels/outlines.js';
 import { panelListCsv } from '../../documents/panels/panel-list.js';
+import { sheetsPdf } from '../../documents/panels/sheets-pdf.js';
 import type { PackRecords } from '../../documents/records.js';
 import { report } from '../../documents/report/report.js';
 import { cutListCsv } from '../../documents/struts/cut-list-csv.js';
@@ -36,6 +37,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['panels/panel-list.csv', panelListCsv],
   ['panels/outlines.json', outlinesJson],
   ['panels/nesting.json', nestingJson],
+  ['panels/sheets.pdf', sheetsPdf],
 ];
 
 export async function writeDocuments(records: PackRecords, fonts: Fonts, writer: PackWriter, run: Run): Promise<void> {
