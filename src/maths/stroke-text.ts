@@ -1,4 +1,5 @@
-import modeling from '@jscad/modeling';
+// The text part alone: the whole package takes ten times as long to load.
+import jscadText from '@jscad/modeling/src/text/index.js';
 
 /** A stroke as points, in units of the capital height; x right, y up from the baseline. */
 export type Stroke = readonly (readonly [number, number])[];
@@ -69,7 +70,7 @@ export function strokeGlyph(character: string): Glyph {
 }
 
 function makeGlyph(character: string): Glyph {
-  const { segments } = modeling.text.vectorChar({ height: 1 / CAPITAL, xOffset: 0, yOffset: 0 }, character);
+  const { segments } = jscadText.vectorChar({ height: 1 / CAPITAL, xOffset: 0, yOffset: 0 }, character);
   const raw = (segments as [number, number][][]).filter((s) => s.length > 1);
   if (raw.length === 0) return { width: BLANK, strokes: [] };
   const left = Math.min(...raw.flat().map((p) => p[0]));

@@ -1,9 +1,5 @@
-import { checkReport } from '../../documents/check-json.js';
-import { assess } from '../../pipeline/assess.js';
-import { loadJob } from '../../pipeline/load.js';
 import { EXIT } from '../exit.js';
 import { painter } from '../terminal/paint.js';
-import { sayAssessment } from '../terminal/say-assessment.js';
 import type { CliCommand } from './command.js';
 
 export const check: CliCommand = {
@@ -15,6 +11,13 @@ export const check: CliCommand = {
   ],
   define: (command) => command.option('--json', 'print the check as JSON on stdout'),
   async run({ arguments: [path], options, terminal }) {
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [{ checkReport }, { assess }, { loadJob }, { sayAssessment }] = await Promise.all([
+      import('../../documents/check-json.js'),
+      import('../../pipeline/assess.js'),
+      import('../../pipeline/load.js'),
+      import('../terminal/say-assessment.js'),
+    ]);
     const result = await loadJob(path!);
     if ('faults' in result) {
       for (const fault of result.faults) terminal.talk(`${fault}\n`);

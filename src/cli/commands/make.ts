@@ -1,10 +1,6 @@
 import { InvalidArgumentError } from 'commander';
 import { FileFault } from '../../machine/file-fault.js';
-import { openPackFolder } from '../../machine/pack-folder.js';
 import { join } from '../../machine/paths.js';
-import { openPool } from '../../machine/pool.js';
-import { loadJob } from '../../pipeline/load.js';
-import { makePack } from '../../pipeline/make.js';
 import type { Manifest } from '../../pipeline/manifest.js';
 import { EXIT } from '../exit.js';
 import { painter } from '../terminal/paint.js';
@@ -28,6 +24,13 @@ export const make: CliCommand = {
       .option('--workers <n>', 'threads that shape hubs (default: one a processor, at most 8)', wholeNumber)
       .option('--json', 'print the manifest as JSON on stdout'),
   async run({ arguments: [path], options, terminal }) {
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [{ loadJob }, { makePack }, { openPackFolder }, { openPool }] = await Promise.all([
+      import('../../pipeline/load.js'),
+      import('../../pipeline/make.js'),
+      import('../../machine/pack-folder.js'),
+      import('../../machine/pool.js'),
+    ]);
     const result = await loadJob(path!);
     if ('faults' in result) {
       for (const fault of result.faults) terminal.talk(`${fault}\n`);

@@ -1,7 +1,7 @@
-import jscad from '@jscad/modeling';
 import { clearanceAt } from '../../maths/polygon/clearance.js';
 import { poleOfInaccessibility } from '../../maths/polygon/poleOfInaccessibility.js';
 import { type Ring, toPoints, toRing } from '../../maths/polygon/ring.js';
+import { layOutText, strokeText } from '../../maths/stroke-text.js';
 import type { Point2, Polyline2 } from '../../model/parts.js';
 
 /** What is written on a panel. */
@@ -67,19 +67,9 @@ const inside = (strokes: readonly Polyline2[], rings: readonly Ring[], clear: nu
 
 /** Single-stroke letters with capitals `height` mm high, their left foot at 0,0. */
 export function letters(text: string, height: number): { strokes: Point2[][]; width: number } {
-  const raw = jscad.text.vectorText({ height: height / CAPITALS, align: 'left' }, text) as unknown as [
-    number,
-    number,
-  ][][];
-  const all = raw.flat();
-  if (all.length === 0) return { strokes: [], width: 0 };
-  const left = Math.min(...all.map((p) => p[0]));
-  const width = Math.max(...all.map((p) => p[0])) - left;
-  return { strokes: raw.map((line) => line.map((p): Point2 => [p[0] - left, p[1]])), width };
+  const strokes = strokeText(text).map((line) => line.map(([x, y]): Point2 => [x * height, y * height]));
+  return { strokes, width: layOutText(text).width * height };
 }
-
-/** Height of the font's capitals over the height it is asked for: 31.5 units for 21, measured. */
-const CAPITALS = 1.5;
 
 function wordsBlock(words: PanelWords, h: number): { strokes: Polyline2[]; size: [number, number] } {
   const mark = letters(words.mark, h);
