@@ -57,3 +57,36 @@ export interface PlannedSheet {
   }[];
   readonly yield: number;
 }
+
+/** Print beds with the pieces on them, bed after bed in printing order. */
+export interface BedPlan {
+  readonly beds: readonly PlannedBed[];
+  /** Pieces that fit no printer, by node mark. */
+  readonly unplaced: readonly string[];
+}
+
+export interface PlannedBed {
+  /** bed-01, bed-02 ...: also the name of its file. */
+  readonly mark: string;
+  readonly printer: string;
+  readonly shape: 'rectangle' | 'circle';
+  /** Usable size, mm; a circle's diameter both ways. */
+  readonly width: number;
+  readonly depth: number;
+  readonly items: readonly BedItem[];
+  /** Sum of the pieces' volumes, mm³, and their mass, kg. */
+  readonly volume: number;
+  readonly mass: number;
+  readonly layers: number;
+  /** volume / flow + layers x change, s; within about 30 %. */
+  readonly time: number;
+}
+
+/** A piece on a bed: turned about z by 0 or 90 degrees about its own corner, then its box's lower corner stands at x, y. */
+export interface BedItem {
+  readonly mark: string;
+  readonly piece: string;
+  readonly x: number;
+  readonly y: number;
+  readonly turned: boolean;
+}

@@ -1,5 +1,5 @@
 import { frameToWorld, invertRigid, type Mat4, multiply4, translation } from '../maths/mat4.js';
-import { cross, dot, perpendicular, type Vec3, Z_AXIS } from '../maths/vec3.js';
+import { cross, type Vec3 } from '../maths/vec3.js';
 import type { ShapedPiece } from '../model/shaped.js';
 import type { Bench, Manifold } from './kernel.js';
 import type { Lie } from './orientation.js';
@@ -14,8 +14,7 @@ const STEEPEST = Math.SQRT1_2;
  * cleans it. null where cleaning would drop more than specks.
  */
 export function layDown(bench: Bench, solid: Manifold, lie: Lie, at: Vec3, piece: string): ShapedPiece | null {
-  const x = sideways(lie.up);
-  const turn = invertRigid(frameToWorld([0, 0, 0], x, cross(lie.up, x)));
+  const turn = invertRigid(frameToWorld([0, 0, 0], lie.level, cross(lie.up, lie.level)));
   const turned = bench.hold(solid.transform(columns(turn)), 'turned');
   const { min } = turned.boundingBox();
   const move = translation([-min[0], -min[1], -min[2]]);
@@ -41,11 +40,6 @@ export function layDown(bench: Bench, solid: Manifold, lie: Lie, at: Vec3, piece
     placement: multiply4(translation(at), invertRigid(multiply4(move, turn))),
     ...undersides(positions, triangles),
   };
-}
-
-/** A level direction of the print: near the truss's x or y, so that parts alike lie alike. */
-function sideways(up: Vec3): Vec3 {
-  return Math.abs(dot(up, Z_AXIS)) > 1 - 1e-9 ? [1, 0, 0] : perpendicular(up);
 }
 
 /** Kernel's order: columns. */

@@ -1,5 +1,6 @@
 import { convexHull2 } from '../maths/convex-hull2.js';
-import { cross, dot, negate, normalise, perpendicular, type Vec3 } from '../maths/vec3.js';
+import { smallestBox } from '../maths/smallest-box.js';
+import { addScaled, cross, dot, negate, normalise, perpendicular, scale, type Vec3 } from '../maths/vec3.js';
 import type { Job } from '../model/job/index.js';
 import type { Manifold } from './kernel.js';
 
@@ -7,6 +8,8 @@ import type { Manifold } from './kernel.js';
 export interface Lie {
   /** The solid's direction that points up on the printer. */
   readonly up: Vec3;
+  /** The level direction that becomes x: that of the smallest box round the footprint. */
+  readonly level: Vec3;
   readonly contact: number;
   /** Stands safely on a face of its own; else it needs a raft. */
   readonly stable: boolean;
@@ -32,33 +35,41 @@ const STEEPEST = Math.SQRT1_2;
  * plus weight x mean squared sine of the pull's angle to the layers. Candidates are the largest faces of the solid's hull on which it
  * stands with at least 10 mm² and its middle of mass over them; where there are none, the faces of the hull that it can balance on.
  */
-export function chooseLie(solid: Manifold, pulls: readonly Pull[], weights: Job['nodes']['orientation']): Lie {
+export function chooseLie(
+  solid: Manifold,
+  pulls: readonly Pull[],
+  weights: Job['nodes']['orientation'],
+  fits: (box: readonly [number, number, number]) => boolean = () => true,
+): Lie {
   const surface = surfaceOf(solid);
   const hull = solid.hull();
   const faces = hullFaces(hull);
+  const hullCorners = pointsOf(hull);
   hull.delete();
   let best: Lie | null = null;
   let bestCost = Number.POSITIVE_INFINITY;
   for (const face of faces.slice(0, CANDIDATES)) {
     const up = negate(face.normal);
-    const { contact, overhang, height, stable } = weigh(surface, up);
+    const { contact, overhang, height, stable, width, depth, level } = weigh(surface, hullCorners, up);
     const raft = stable && contact >= LEAST_CONTACT ? 0 : RAFT;
     const cost =
       raft +
+      (fits([width, depth, height]) ? 0 : TOO_LARGE) +
       (weights.overhang * overhang) / surface.area +
       (weights.height * height) / surface.extent +
       weights.tension * acrossLayers(pulls, up) -
       1e-3 * Math.min(1, contact / 200);
     if (cost < bestCost - 1e-9) {
       bestCost = cost;
-      best = { up, contact, stable: raft === 0 };
+      best = { up, level, contact, stable: raft === 0 };
     }
   }
-  return best ?? { up: [0, 0, 1], contact: 0, stable: false };
+  return best ?? { up: [0, 0, 1], level: [1, 0, 0], contact: 0, stable: false };
 }
 
-/** A lie that needs a raft is taken only when there is no other. */
+/** A lie that needs a raft is taken only when there is no other; so is one that no printer can hold. */
 const RAFT = 10;
+const TOO_LARGE = 100;
 
 /** Mean of sin² of the angle between pull and layers, weighted by tension; struts in compression do not count. */
 function acrossLayers(pulls: readonly Pull[], up: Vec3): number {
@@ -113,7 +124,18 @@ function corners(positions: Float32Array, triangles: Uint32Array, t: number): [V
   return [at(0), at(1), at(2)];
 }
 
-function weigh(surface: Surface, up: Vec3): { contact: number; overhang: number; height: number; stable: boolean } {
+interface Weighed {
+  readonly contact: number;
+  readonly overhang: number;
+  readonly height: number;
+  readonly stable: boolean;
+  /** Smallest box round the footprint, and the direction of its width. */
+  readonly width: number;
+  readonly depth: number;
+  readonly level: Vec3;
+}
+
+function weigh(surface: Surface, corners: readonly Vec3[], up: Vec3): Weighed {
   const { positions, triangles, normals } = surface;
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   const levels = new Float64Array(positions.length / 3);
@@ -141,7 +163,16 @@ function weigh(surface: Surface, up: Vec3): { contact: number; overhang: number;
     } else overhang += area;
   }
   const middle: [number, number] = [dot(surface.middle, x), dot(surface.middle, y)];
-  return { contact, overhang, height: high - low, stable: contains(convexHull2(feet), middle) };
+  const footprint = smallestBox(convexHull2(corners.map((p): [number, number] => [dot(p, x), dot(p, y)])));
+  return {
+    contact,
+    overhang,
+    height: high - low,
+    stable: contains(convexHull2(feet), middle),
+    width: footprint.width,
+    depth: footprint.depth,
+    level: addScaled(scale(x, footprint.direction[0]), y, footprint.direction[1]),
+  };
 }
 
 function contains(hull: readonly (readonly [number, number])[], p: readonly [number, number]): boolean {
@@ -152,6 +183,11 @@ function contains(hull: readonly (readonly [number, number])[], p: readonly [num
       return (b[0] - a[0]) * (p[1] - a[1]) - (b[1] - a[1]) * (p[0] - a[0]) >= 0;
     })
   );
+}
+
+function pointsOf(solid: Manifold): Vec3[] {
+  const { vertProperties: p } = solid.getMesh();
+  return Array.from({ length: p.length / 3 }, (_, i): Vec3 => [p[3 * i]!, p[3 * i + 1]!, p[3 * i + 2]!]);
 }
 
 /** Faces of a convex solid, coplanar triangles together, largest first. */

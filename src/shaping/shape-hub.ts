@@ -3,7 +3,7 @@ import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
 import type { HubPart } from '../model/parts.js';
-import type { ShapedHub } from '../model/shaped.js';
+import type { ShapedHub, ShapedPiece } from '../model/shaped.js';
 import { type Channel, pinOf, ventOf } from './channels.js';
 import { HubSpace } from './hub-space.js';
 import { Bench, loadKernel, SolidFailed } from './kernel.js';
@@ -28,9 +28,10 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
     const marks = job.nodes.marks ? marksOf(hub, job, space, findings) : [];
     const solid = socketSolid(bench, space, { marks, channels, chamfer: job.nodes.chamfer_mm });
     const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
-    const lie = chooseLie(solid, pulls, job.nodes.orientation);
+    const lie = chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
     const piece = layDown(bench, solid, lie, hub.at, '');
     const faults = piece ? openEdges(piece.positions, piece.triangles) : 1;
+    if (piece) findings.push(...sizeFindings(hub, piece, job));
     if (!piece || faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
     return { mark: hub.mark, pieces: piece && faults === 0 ? [piece] : [], findings };
   } catch (error) {
@@ -40,6 +41,29 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
   } finally {
     bench.clear();
   }
+}
+
+/** Whether a printer's usable volume takes a box, upright or turned by a quarter. */
+function holds(printer: Job['printers'][number], [width, depth, height]: readonly [number, number, number]): boolean {
+  const free = (size: number): number => size - 2 * printer.margin_mm;
+  if (height > printer.height_mm) return false;
+  if (printer.bed === 'circle') return Math.hypot(width, depth) <= free(printer.width_mm);
+  const [a, b] = [free(printer.width_mm), free(printer.depth_mm)];
+  return (width <= a && depth <= b) || (width <= b && depth <= a);
+}
+
+/** Share of a surface that hangs unsupported above which a note says so. */
+const MUCH_OVERHANG = 0.3;
+
+function sizeFindings(hub: HubPart, piece: ShapedPiece, job: Job): Finding[] {
+  const findings: Finding[] = [];
+  if (!job.printers.some((p) => holds(p, piece.box))) {
+    const limit = Math.max(...job.printers.map((p) => Math.max(p.width_mm, p.depth_mm, p.height_mm)));
+    findings.push(finding('node-too-large', hub.mark, { value: Math.max(...piece.box), limit }));
+  }
+  if (piece.overhang > MUCH_OVERHANG)
+    findings.push(finding('much-overhang', hub.mark, { value: piece.overhang, limit: MUCH_OVERHANG }));
+  return findings;
 }
 
 function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Channel[] {

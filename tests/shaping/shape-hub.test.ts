@@ -67,3 +67,40 @@ it('gives the same bytes each time, and makes nothing of a hub that cannot be ma
   const none = await shapeHub({ ...made.hub, makeable: false }, made.job);
   expect(none.pieces).toEqual([]);
 });
+
+it('lies flat on the bed by a face of its own, and says so when no printer can hold it', async () => {
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  const made = randomHub(11, { count: 6, least: 30 });
+  const { pieces } = await shapeHub(made.hub, made.job);
+  expect(pieces[0]!.contact).toBeGreaterThan(10);
+  const tiny = { ...made.job, printers: made.job.printers.map((p) => ({ ...p, width_mm: 30, depth_mm: 30 })) };
+  const { findings } = await shapeHub(made.hub, tiny);
+  const found = findings.find((f) => f.code === 'node-too-large')!;
+  expect(found.level).toBe('stop');
+  expect(found.value).toBeGreaterThan(26);
+});
+
+it('keeps the strut in tension nearer the layers than when another is in tension, when that is all that is asked for', async () => {
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  let gained = 0;
+  for (const seed of [21, 22, 23]) {
+    const made = randomHub(seed, { count: 5, least: 40 });
+    const job = { ...made.job, nodes: { ...made.job.nodes, orientation: { overhang: 0, height: 0, tension: 1 } } };
+    const lean = async (tension: number[]): Promise<number> => {
+      const { placement } = (await shapeHub(made.hub, job, tension)).pieces[0]!;
+      // Third column of the placement: the print's up in the truss's axes.
+      const up = [placement[2]!, placement[6]!, placement[10]!];
+      const d = made.hub.sockets[0]!.direction;
+      return Math.abs(up[0]! * d[0] + up[1]! * d[1] + up[2]! * d[2]);
+    };
+    const pulled = await lean([100, 0, 0, 0, 0]);
+    for (let other = 1; other < 5; other++) {
+      const tension = [0, 0, 0, 0, 0];
+      tension[other] = 100;
+      const left = await lean(tension);
+      expect(pulled).toBeLessThan(left + 1e-6);
+      gained += left - pulled;
+    }
+  }
+  expect(gained).toBeGreaterThan(0.5);
+});

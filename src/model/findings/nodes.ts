@@ -67,4 +67,11 @@ export const NODE_FINDINGS = {
     '',
     (f) => `no room to engrave ${f.about?.['marks']}; write by hand what is missing`,
   ),
+  'much-overhang': entry(
+    'note',
+    'node',
+    '',
+    (f) =>
+      `${num((f.value ?? 0) * 100, 0)} % of its surface overhangs steeper than 45° in the best orientation; print it with supports`,
+  ),
 } as const;

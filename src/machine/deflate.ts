@@ -1,0 +1,8 @@
+import { constants, deflateRawSync } from 'node:zlib';
+
+/**
+ * Compresses bytes to whole deflate blocks that end on a byte boundary, none of them the last of its stream: such runs can be joined
+ * one after another into one stream. Same bytes for one major version of Node.
+ */
+export const deflateBlocks = (bytes: Uint8Array): Uint8Array =>
+  Uint8Array.from(deflateRawSync(bytes, { level: 6, finishFlush: constants.Z_SYNC_FLUSH }));
