@@ -6,6 +6,8 @@ import type { Utilisation } from '../model/solution.js';
 import type { Truss } from '../model/truss.js';
 import { allActions, type Loading } from './actions.js';
 import { judgeMembers } from './members.js';
+import { panelCombinations } from './panel/combinations.js';
+import { judgePanels } from './panels.js';
 import { rulesOf } from './rules.js';
 import { judgeSockets } from './sockets.js';
 import { unverified } from './unverified.js';
@@ -13,7 +15,7 @@ import { useFindings } from './use.js';
 
 /** Verdicts on every part, and what is wrong with them. */
 export interface Judgement {
-  /** Struts in the truss's order, then sockets by hub. A part that could not be judged has no entry. */
+  /** Struts in the truss's order, then sockets by hub, then panels. A part that could not be judged has no entry. */
   readonly utilisations: readonly Utilisation[];
   readonly findings: readonly Finding[];
   /** "strength", in the one or the other. */
@@ -31,19 +33,22 @@ export function judge(truss: Truss, parts: Parts, loading: Loading, job: Job): J
   const loaded = actions.some((a) => a.some((one) => one.axial !== 0 || one.momentY !== 0 || one.momentZ !== 0));
   const members = judgeMembers(parts.struts, actions, job, rules);
   const sockets = judgeSockets(parts, actions, job, rules);
-  const utilisations = [...members.utilisations, ...sockets.utilisations];
-  const doubtful = utilisations.length > 0 ? unverified(parts, job) : [];
+  const panels = judgePanels(truss, parts, panelCombinations(truss, job), job, rules);
+  const utilisations = [...members.utilisations, ...sockets.utilisations, ...panels.utilisations];
+  const judged = members.utilisations.length > 0;
+  const doubtful = judged ? unverified(parts, job) : [];
   return {
     utilisations,
     findings: [
       ...members.findings,
       ...sockets.findings,
+      ...panels.findings,
       ...useFindings(parts, job, loaded),
       ...(doubtful.length > 0
         ? [finding('values-unverified', 'truss', { about: { materials: doubtful.join(', ') } })]
         : []),
     ],
-    checked: utilisations.length > 0 ? ['strength'] : [],
-    notChecked: utilisations.length > 0 ? [] : ['strength'],
+    checked: judged ? ['strength'] : [],
+    notChecked: judged ? [] : ['strength'],
   };
 }

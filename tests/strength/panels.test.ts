@@ -3,6 +3,7 @@ import type { Vec3 } from '../../src/maths/vec3.js';
 import { type Job, jobSchema } from '../../src/model/job/index.js';
 import type { Truss } from '../../src/model/truss.js';
 import { assess } from '../../src/pipeline/assess.js';
+import { panelCombinations } from '../../src/strength/panel/combinations.js';
 import type { PanelCombination } from '../../src/strength/panel/load.js';
 import { judgePanels } from '../../src/strength/panels.js';
 import { rulesOf } from '../../src/strength/rules.js';
@@ -100,13 +101,14 @@ describe('its own weight', () => {
     expect(findings[0]!.value).toBeGreaterThan(findings[0]!.limit!);
   });
 
-  it('held by nothing it is a warning on a table and a stop overhead', () => {
+  it('held by nothing it is a stop overhead', () => {
     for (const [use, level] of [
-      ['table', 'warn'],
+      ['table', null],
       ['overhead', 'stop'],
     ] as const) {
       const { findings, utilisations } = run(job({ seating: 'between', holdBy: 'none' }, use), own);
-      expect(findings).toMatchObject([{ code: 'panel-not-carried', level }]);
+      // On a table the detailing has said already that nothing holds it.
+      expect(findings.map((f) => f.level)).toEqual(level ? [level] : []);
       expect(utilisations).toEqual([]);
     }
   });
@@ -116,5 +118,30 @@ describe('its own weight', () => {
     const { findings } = run(overhead, [combination('1.35 G', { 'self-weight': 1.35 })]);
     expect(findings.map((f) => f.code)).toEqual(['fixing-untested']);
     expect(findings[0]!.value).toBeGreaterThan(0);
+  });
+});
+
+describe('combinations by EN 1990', () => {
+  it('a canopy under snow and wind: 1.35 G + 1.5 snow + 0.9 wind governs inward, 0.9 G + 1.5 uplift outward', () => {
+    const cases = [
+      { name: 'snow', kind: 'snow', pressure_kN_per_m2: 0.56 },
+      { name: 'wind down', kind: 'wind', pressure_kN_per_m2: 0.24, direction: 'normal' },
+      { name: 'wind up', kind: 'wind', pressure_kN_per_m2: -0.43, direction: 'normal' },
+    ];
+    const job = jobWith({
+      use: 'outdoor',
+      loads: { cases },
+      panels: { seating: 'over', fixingCapacity_N: 0.1, thickness_mm: 4 },
+    });
+    const { parts } = assess(truss, job);
+    const { findings } = judgePanels(truss, parts, panelCombinations(truss, job), job, rulesOf(job));
+    const up = parts.panels[0]!.frame.z[2] > 0;
+    expect(up).toBe(true);
+    const weak = findings.find((f) => f.code === 'fixing-over-loaded')!;
+    expect(weak.about!['combination']).toBe('0.9 G + 1.5 wind up');
+    // EN 1990 (6.10) by hand: 0.9 x 1.19 x 9.807e-3 x 4 - 1.5 x 0.43 = -0.603 kN/m².
+    const total = 0.603e-3 * parts.panels[0]!.area;
+    expect(weak.value).toBeGreaterThan((0.8 * total) / parts.panels[0]!.holes.length);
+    expect(weak.value).toBeLessThan(total / 4);
   });
 });

@@ -58,7 +58,8 @@ export function judgePanel(
     const supports = panelSupports(part, corners, job, load.sense);
     const plate = supports && bendPlate(part.outline, material.poisson ?? POISSON, supports);
     if (!plate) {
-      findings.push(notCarried(part, load, job));
+      // On a table the missing hold is said already; there is no load to speak of.
+      if (supports || job.panels.holdBy !== 'none' || grave(job)) findings.push(notCarried(part, load, job));
       continue;
     }
     const stands = Math.max(0, load.sense === 'pressure' ? standing : -standing);
@@ -174,19 +175,21 @@ function fixingCheck(part: PanelPart, plate: PlateResponse, load: Worst, job: Jo
   const capacity = job.panels.fixingCapacity_N;
   const about = { holdBy: job.panels.holdBy, combination: load.combination };
   if (capacity === undefined) {
-    if (job.use === 'outdoor' || job.use === 'overhead')
-      findings.push(finding('fixing-untested', part.mark, { value: most, about }));
+    if (grave(job)) findings.push(finding('fixing-untested', part.mark, { value: most, about }));
     return [];
   }
   if (most > capacity) findings.push(finding('fixing-over-loaded', part.mark, { value: most, limit: capacity, about }));
   return [{ utilisation: most / capacity, rule: 'force on one fixing of the panel' }];
 }
 
+/** Weather on it or people under it. */
+const grave = (job: Job): boolean => job.use === 'outdoor' || job.use === 'overhead';
+
 /** Where people are under it or weather is on it, a panel that nothing carries is a stop. */
 const notCarried = (part: PanelPart, load: Worst, job: Job): Finding =>
   finding('panel-not-carried', part.mark, {
     value: load.q * part.area,
     limit: 0,
-    level: job.use === 'outdoor' || job.use === 'overhead' ? 'stop' : 'warn',
+    level: grave(job) ? 'stop' : 'warn',
     about: { sense: load.sense, combination: load.combination, holdBy: job.panels.holdBy },
   });

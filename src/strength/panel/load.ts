@@ -1,6 +1,8 @@
 import type { Job } from '../../model/job/index.js';
 import type { PanelPart } from '../../model/parts.js';
 import type { MemberActions } from '../../model/solution.js';
+import { GRAVITY } from '../../statics/loads/load-case.js';
+import { SELF_WEIGHT } from '../../statics/loads/self-weight.js';
 
 /** A combination as panels need it: factors by case name. */
 export interface PanelCombination {
@@ -9,8 +11,6 @@ export interface PanelCombination {
   readonly factors: ReadonlyMap<string, number>;
 }
 
-/** Standard acceleration of free fall, m/s² (3rd CGPM 1901). */
-const GRAVITY = 9.80665;
 /** MPa for one kN/m². */
 const KN_PER_M2 = 1e-3;
 /** MPa of 1 mm of a material of 1 kg/m³ in a field of 1 m/s². */
@@ -24,7 +24,7 @@ export function panelPressures(part: PanelPart, job: Job): ReadonlyMap<string, n
   const nz = part.frame.z[2];
   const pressures = new Map<string, number>();
   if (job.analysis.selfWeight && part.material)
-    pressures.set('self-weight', part.material.density * GRAVITY * part.thickness * WEIGHT * nz);
+    pressures.set(SELF_WEIGHT, part.material.density * GRAVITY * part.thickness * WEIGHT * nz);
   for (const c of job.loads.cases) {
     if (c.pressure_kN_per_m2 === undefined) continue;
     if (c.groups !== undefined && (part.group === null || !c.groups.includes(part.group))) continue;
@@ -43,6 +43,6 @@ export function combinedPressure(combination: PanelCombination, pressures: Reado
 
 /** Names of the cases that stand for good. */
 export const standingCases = (job: Job): readonly string[] => [
-  'self-weight',
+  SELF_WEIGHT,
   ...job.loads.cases.filter((c) => c.kind === 'permanent').map((c) => c.name),
 ];
