@@ -117,7 +117,7 @@ export class Master {
     this.model.run();
     const { colValue, rowDual } = this.model.getSolution();
     const iterations = Number(this.model.info.get('simplex_iteration_count'));
-    meter.spend(300 + Math.max(iterations, 1) * (5 + 0.25 * this.m) + 0.5 * this.patterns.length);
+    meter.spend(300 + Math.max(iterations, 1) * (8 + 0.35 * this.m) + 0.5 * this.patterns.length);
     const duals = new Float64Array(this.m);
     for (let i = 0; i < this.m; i++) duals[i] = Math.max(0, rowDual[i]!);
     const binDuals = new Float64Array(this.k);

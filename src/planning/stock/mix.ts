@@ -22,10 +22,10 @@ export interface MixBound {
 export interface MixLimits {
   /** Mixes dearer than this are of no interest. */
   readonly ceiling?: number;
-  /** Least cost asked for (a search for other mixes; the result is no lower bound then). */
-  readonly floor?: number;
   /** Least spare capacity asked for, in steps beyond all pieces' weights (no lower bound then either). */
   readonly spare?: number;
+  /** Looks for the mix of most capacity under the ceiling, instead of the cheapest. */
+  readonly roomiest?: boolean;
 }
 
 /** Nodes of the small integer programme over the mix; past them its own dual bound is used. */
@@ -53,10 +53,12 @@ export function mixBound(
   if (bins.length === 1) {
     let n = 0;
     for (const r of rows) n = Math.max(n, r.worth > 0 ? Math.ceil(r.worth / r.carry[0]!) : 0);
-    if (limits.floor) n = Math.max(n, Math.ceil(limits.floor / bins[0]!.cost));
-    return n <= bins[0]!.available ? { cost: n * bins[0]!.cost, mix: [n] } : { cost: Infinity, mix: undefined };
+    return n <= bins[0]!.available && n * bins[0]!.cost <= (limits.ceiling ?? Infinity)
+      ? { cost: n * bins[0]!.cost, mix: [n] }
+      : { cost: Infinity, mix: undefined };
   }
   const k = bins.length;
+  const widest = Math.max(...bins.map((b) => b.capacity));
   const lower: number[] = [];
   const upper: number[] = [];
   const starts = [0];
@@ -76,9 +78,9 @@ export function mixBound(
     });
     starts.push(indices.length);
   }
-  if (limits.floor !== undefined || limits.ceiling !== undefined) {
-    lower.push(limits.floor ?? -highs.infinity);
-    upper.push(limits.ceiling ?? highs.infinity);
+  if (limits.ceiling !== undefined) {
+    lower.push(-highs.infinity);
+    upper.push(limits.ceiling);
     bins.forEach((bin, b) => {
       indices.push(b);
       values.push(bin.cost);
@@ -89,7 +91,7 @@ export function mixBound(
     {
       numCols: k,
       numRows: lower.length,
-      colCost: Float64Array.from(bins, (b) => b.cost),
+      colCost: Float64Array.from(bins, (b) => (limits.roomiest ? -b.capacity / widest : b.cost)),
       colLower: new Float64Array(k),
       colUpper: Float64Array.from(bins, (b) => (b.available < Infinity ? b.available : highs.infinity)),
       rowLower: Float64Array.from(lower),
@@ -119,7 +121,7 @@ export function mixBound(
       if (status === infeasible || status === unboundedOrInfeasible) return { cost: Infinity, mix: undefined };
       const dual = model.info.get('mip_dual_bound') as number;
       // Costs are whole multiples of the unit, so a bound within a millionth below one is that one.
-      const cost = Math.ceil(dual / unit - 1e-6) * unit;
+      const cost = limits.roomiest ? 0 : Math.ceil(dual / unit - 1e-6) * unit;
       const { colValue } = model.getSolution();
       const mix = Array.from(colValue, (v) => Math.round(v));
       const found = mix.reduce((s, n, b) => s + n * bins[b]!.cost, 0);

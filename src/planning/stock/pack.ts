@@ -4,7 +4,8 @@ import type { Meter } from './effort.js';
 import { type Generation, type GenerationAim, generate } from './generate.js';
 import { Master } from './master.js';
 import type { Pricer } from './pricer.js';
-import type { CuttingProblem, Pattern, Run } from './problem.js';
+import { type CuttingProblem, type Pattern, patternLoad, type Run } from './problem.js';
+import { repair } from './repair.js';
 
 export type Packing =
   | { readonly state: 'packed'; readonly runs: Run[] }
@@ -16,6 +17,8 @@ export type Packing =
 const NOTHING_LEFT = 1e-9;
 /** A fraction this near to a whole number of bars is that number. */
 const WHOLE = 1e-6;
+/** Share of the bars still to be cut that one step of a dive settles. */
+const BARS_A_STEP = 0.04;
 
 /**
  * Looks for a plan that cuts all pieces from exactly these bars, by diving: the linear programme is solved, its whole bars
@@ -70,7 +73,7 @@ export class Packer {
     return generate(this.master, this.pricer, this.problem, this.problem.demand, this.mix, this.aim, this.costs, meter);
   }
 
-  dive(random: Random | undefined, backtracks: number, meter: Meter): Run[] | undefined {
+  dive(random: Random, first: boolean, backtracks: number, meter: Meter): Run[] | undefined {
     const { problem } = this;
     interface Level {
       readonly left: Int32Array;
@@ -83,13 +86,15 @@ export class Packer {
     const runs: Run[] = [];
     let jump = 1;
     let chances = backtracks;
-    let loose = random !== undefined;
+    let loose = !first;
     for (;;) {
       if (left.every((d) => d === 0)) return runs;
       if (meter.exhausted) return undefined;
       this.master.remain(left, stock);
       const g = generate(this.master, this.pricer, problem, left, stock, this.aimFor(stock), this.costs, meter);
       if (g.state !== 'reached') {
+        const mended = repair(problem, runs, left, stock, random, meter);
+        if (mended) return mended;
         if (chances-- <= 0 || stack.length === 0) return undefined;
         const to = Math.max(0, stack.length - jump);
         jump = Math.min(jump * 2, 64);
@@ -102,28 +107,64 @@ export class Packer {
         continue;
       }
       stack.push({ left: left.slice(), stock: stock.slice(), runs: runs.length });
-      const { times } = g.solution;
-      let kept = false;
-      for (let j = 0; j < times.length; j++) {
-        const whole = Math.floor(times[j]! + WHOLE);
-        if (whole > 0 && this.keep(this.master.patterns[j]!, whole, left, stock, runs)) kept = true;
-      }
-      if (!kept) {
-        const j = choose(times, loose ? (random ?? halfway) : undefined);
-        this.keep(this.master.patterns[j]!, 1, left, stock, runs);
-      }
+      this.advance(g.solution.times, left, stock, runs, loose ? random : undefined);
     }
   }
 
-  /** Cuts a pattern up to `most` times as far as bars and pieces last; what is not needed any more is left out. */
-  private keep(p: Pattern, most: number, left: Int32Array, stock: number[], runs: Run[]): boolean {
+  /**
+   * Keeps the patterns that the linear programme uses most and that waste least: spare room is worth more at the end,
+   * when few pieces are left to fill it. A share of the bars at once, one by one when few are left.
+   */
+  private advance(
+    times: Float64Array,
+    left: Int32Array,
+    stock: number[],
+    runs: Run[],
+    random: Random | undefined,
+  ): void {
+    const { weights, bins } = this.problem;
+    let bars = 0;
+    let spare = 0;
+    for (let b = 0; b < bins.length; b++) {
+      bars += stock[b]!;
+      spare += stock[b]! * bins[b]!.capacity;
+    }
+    for (let i = 0; i < left.length; i++) spare -= left[i]! * weights[i]!;
+    const usual = Math.max(1, spare) / bars;
+    const candidates: { j: number; score: number }[] = [];
+    for (let j = 0; j < times.length; j++) {
+      if (times[j]! < WHOLE) continue;
+      const p = this.master.patterns[j]!;
+      const waste = bins[p.bin]!.capacity - patternLoad(weights, p);
+      const chance = random ? 0.5 + random() : 1;
+      candidates.push({ j, score: Math.min(times[j]!, 1) * Math.exp(-waste / usual) * chance });
+    }
+    candidates.sort((a, b) => b.score - a.score || a.j - b.j);
+    const share = Math.max(1, Math.floor(bars * BARS_A_STEP));
+    let kept = 0;
+    for (const { j } of candidates) {
+      const whole = Math.max(1, Math.floor(times[j]! + WHOLE));
+      if (kept > 0 && kept + 1 > share) break;
+      kept += this.keep(
+        this.master.patterns[j]!,
+        Math.min(whole, Math.max(1, share - kept)),
+        left,
+        stock,
+        runs,
+        kept > 0,
+      );
+    }
+  }
+
+  /** Cuts a pattern up to `most` times as far as bars and pieces last; what is not needed any more is left out, unless `whole`. */
+  private keep(p: Pattern, most: number, left: Int32Array, stock: number[], runs: Run[], whole: boolean): number {
     let times = Math.min(most, stock[p.bin]!);
     for (let j = 0; j < p.items.length; j++) {
       times = Math.min(times, Math.floor(left[p.items[j]!]! / p.counts[j]!));
     }
     let pattern = p;
     if (times === 0) {
-      if (stock[p.bin]! <= 0) return false;
+      if (whole || stock[p.bin]! <= 0) return 0;
       const items: number[] = [];
       const counts: number[] = [];
       for (let j = 0; j < p.items.length; j++) {
@@ -133,34 +174,13 @@ export class Packer {
           counts.push(n);
         }
       }
-      if (items.length === 0) return false;
+      if (items.length === 0) return 0;
       pattern = { bin: p.bin, items: Int32Array.from(items), counts: Int32Array.from(counts) };
       times = 1;
     }
     for (let j = 0; j < pattern.items.length; j++) left[pattern.items[j]!]! -= times * pattern.counts[j]!;
     stock[p.bin]! -= times;
     runs.push({ pattern, times });
-    return true;
+    return times;
   }
-}
-
-const halfway: Random = () => 0.5;
-
-/** The largest fraction, or one drawn with a chance that grows with the square of its fraction. */
-function choose(times: Float64Array, random: Random | undefined): number {
-  let largest = 0;
-  let sum = 0;
-  for (let j = 0; j < times.length; j++) {
-    if (times[j]! > times[largest]!) largest = j;
-    sum += times[j]! > WHOLE ? times[j]! ** 2 : 0;
-  }
-  if (!random) return largest;
-  let mark = random() * sum;
-  for (let j = 0; j < times.length; j++) {
-    if (times[j]! > WHOLE) {
-      mark -= times[j]! ** 2;
-      if (mark <= 0) return j;
-    }
-  }
-  return largest;
 }

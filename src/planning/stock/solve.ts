@@ -20,6 +20,11 @@ const gcd = (a: number, b: number): number => (b === 0 ? a : gcd(b, a % b));
 
 /** Value-correction rounds before column generation. */
 const QUICK_ROUNDS = 12;
+/** Dives a mix in the first round, and dead ends from which each goes back. */
+const FIRST_DIVES = 1;
+const BACKTRACKS = 12;
+/** First growth of the spare room after a mix that could not be packed. */
+const FIRST_STRIDE = 0.05;
 
 /**
  * Least-cost plan and a proven lower bound of its cost.
@@ -99,47 +104,63 @@ export function solveCutting(highs: Highs, problem: CuttingProblem, seed: number
     master.dispose();
   }
 
-  let spare = 0;
-  for (let turn = 0; !done() && bound.mix && turn < 200; turn++) {
-    const mix = bound.mix;
-    const mixCost = mix.reduce((s, n, b) => s + n * costs[b]!, 0);
-    if (mixCost >= cost) break;
-    const packer = new Packer(highs, problem, pricer, mix, pool);
-    try {
-      const g = packer.relax(effort);
-      if (g.state === 'refuted' || g.state === 'converged') {
-        const duals = g.state === 'refuted' ? g.boundDuals : g.solution.duals;
-        const r = requirementFrom(problem, duals, pricer, effort);
-        const held = r.carry.reduce((s, v, b) => s + (mix[b]! > 0 ? v * mix[b]! : 0), 0);
-        pool.length = 0;
-        pool.push(...packer.patterns);
-        if (held >= r.worth) {
-          // Rounding blurred the reason: ask for more room instead.
-          spare = Math.max(spare + 1, Math.ceil(slack(problem, mix) * 1.02));
-        } else {
-          requirements.push(r);
+  // Each round packs the cheapest mix, then mixes with more and more room, each with a few dives; a plan found sends the
+  // search back half-way to the last mix that failed. Later rounds dive more often.
+  for (let dives = FIRST_DIVES; !done(); dives *= 2) {
+    let spare = 0;
+    let failed = 0;
+    let stride = FIRST_STRIDE;
+    while (!done()) {
+      const ceiling = cost - unit;
+      const cheapest = mixBound(highs, problem, requirements, unit, effort, { spare, ceiling });
+      if (spare === 0) lowerBound = Math.max(lowerBound, Math.min(cheapest.cost, cost));
+      if (!cheapest.mix || done()) break;
+      const mixCost = costOf(problem, cheapest.mix);
+      if (mixCost >= cost) break;
+      // Of the mixes at that cost, the one with most room is the easiest to pack.
+      const roomiest =
+        bins.length > 1 &&
+        mixBound(highs, problem, requirements, unit, effort, { spare, ceiling: mixCost, roomiest: true }).mix;
+      const mix = roomiest || cheapest.mix;
+      const room = slack(problem, mix);
+      const packer = new Packer(highs, problem, pricer, mix, pool);
+      try {
+        const relaxed = packer.relax(effort);
+        if (relaxed.state === 'exhausted') break;
+        if (relaxed.state !== 'reached') {
+          const duals = relaxed.state === 'refuted' ? relaxed.boundDuals : relaxed.solution.duals;
+          const reason = requirementFrom(problem, duals, pricer, effort);
+          const held = reason.carry.reduce((sum, v, b) => sum + (mix[b]! > 0 ? v * mix[b]! : 0), 0);
+          if (held < reason.worth) requirements.push(reason);
+          // Whole numbers blurred the reason: ask for a little more room instead.
+          else spare = Math.max(room, spare) + 1;
+          continue;
         }
-      } else if (g.state === 'reached') {
         let runs: Run[] | undefined;
-        for (let attempt = 0; attempt < (bins.length === 1 ? 1000 : 12) && !runs && !effort.exhausted; attempt++) {
-          runs = packer.dive(attempt === 0 ? undefined : random, 12, effort);
+        for (let dive = 0; dive < dives && !runs && !effort.exhausted; dive++) {
+          runs = packer.dive(random, dive === 0, BACKTRACKS, effort);
         }
+        if (runs) {
+          offer({ runs, complete: true });
+          spare = Math.max(failed + 1, Math.floor((failed + room) / 2));
+          if (room <= failed + 1) break;
+        } else {
+          failed = Math.max(failed, room);
+          spare = room + 1 + Math.floor(room * stride);
+          stride *= 1.6;
+        }
+      } finally {
         pool.length = 0;
         pool.push(...packer.patterns);
-        if (runs) offer({ runs, complete: true });
-        else if (bins.length === 1) break;
-        else spare = Math.max(spare + 1, Math.ceil(slack(problem, mix) * 1.05) + 1);
-      } else break;
-    } finally {
-      packer.dispose();
+        packer.dispose();
+      }
     }
-    const proven = mixBound(highs, problem, requirements, unit, effort);
-    lowerBound = Math.max(lowerBound, proven.cost);
-    if (done()) break;
-    bound = spare > 0 ? mixBound(highs, problem, requirements, unit, effort, { spare, ceiling: cost - unit }) : proven;
   }
   return answer();
 }
+
+const costOf = (problem: CuttingProblem, mix: readonly number[]): number =>
+  mix.reduce((sum, n, b) => sum + n * problem.bins[b]!.cost, 0);
 
 /** Steps of capacity beyond the weight of all pieces. */
 function slack(problem: CuttingProblem, mix: readonly number[]): number {
