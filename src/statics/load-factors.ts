@@ -10,11 +10,11 @@ const SHIFT = 0.97;
 /** Sturm counts are taken this share below the lowest and above the highest factor: wider than the factors' own error. */
 const STURM = 1e-4;
 /** Basis vectors of the first search (rough) and of the second. */
-const ROUGH_BASIS = 80;
+const ROUGH_BASIS = 60;
 const FINE_BASIS = 120;
 /** Residuals, as shares of the eigenvalue, at which the two searches are content. */
-const ROUGH = 1e-3;
-const FINE = 1e-9;
+const ROUGH = 0.03;
+const FINE = 1e-6;
 /** Load factors above this are as good as none: the members would have failed long before. */
 const NO_FACTOR = 1e8;
 
@@ -75,6 +75,11 @@ export function lowestLoadFactors(
   const negative = (lambda: number): number => negativePivots(factorise(analysis, combine(k, kg, lambda)));
   const agrees = negative(first * (1 - STURM)) === 0 && negative(last * (1 + STURM)) >= pairs.length;
   return { pairs, sturm: agrees ? 'agrees' : 'disagrees' };
+}
+
+/** Whether any load factor lies between 0 and lambda: K + lambda Kg has then a negative pivot (one factorisation). */
+export function hasFactorBelow(k: SparseMatrix, kg: SparseMatrix, analysis: Analysis, lambda: number): boolean {
+  return negativePivots(factorise(analysis, combine(k, kg, lambda))) !== 0;
 }
 
 /** K + lambda Kg: both have one pattern. */

@@ -2,7 +2,7 @@ import { analyse } from '../maths/sparse/analyse.js';
 import { factorise } from '../maths/sparse/factorise.js';
 import type { Buckling } from './frame/frame-buckling.js';
 import { blockPoints, numberFreedoms, spread } from './freedoms.js';
-import { lowestLoadFactors } from './load-factors.js';
+import { hasFactorBelow, lowestLoadFactors } from './load-factors.js';
 import { barDirections } from './pin-figure.js';
 import { type PinTruss, pinStiffness } from './pin-truss.js';
 
@@ -11,14 +11,7 @@ import { type PinTruss, pinStiffness } from './pin-truss.js';
  * Struts that buckle between their nodes are checked one by one elsewhere. Three displacements a node in the shapes.
  */
 export function pinBuckling(truss: PinTruss, axial: ArrayLike<number>, wanted = 4): Buckling {
-  const freedoms = numberFreedoms(truss.fixed, 3);
-  const { lengths, units } = barDirections(truss);
-  const zero = new Float64Array(lengths.length);
-  const q = (t: ArrayLike<number>): Float64Array => Float64Array.from(lengths, (l, e) => t[e] / l);
-  const before = truss.prestress ? q(truss.prestress) : undefined;
-  const k = pinStiffness(truss, freedoms, q(truss.axialStiffness), units, before);
-  const kg = pinStiffness(truss, freedoms, zero, units, q(axial));
-  const analysis = analyse(k, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, truss.nodes) });
+  const { freedoms, k, kg, analysis } = matrices(truss, axial);
   const { pairs, sturm } = lowestLoadFactors(k, kg, analysis, factorise(analysis, k), wanted);
   return {
     factors: pairs.map((p) => p.lambda),
@@ -29,4 +22,21 @@ export function pinBuckling(truss: PinTruss, axial: ArrayLike<number>, wanted = 
     }),
     sturm,
   };
+}
+
+/** Whether the pinned truss buckles below lambda times these axial forces. */
+export function pinBucklesBelow(truss: PinTruss, axial: ArrayLike<number>, lambda: number): boolean {
+  const { k, kg, analysis } = matrices(truss, axial);
+  return hasFactorBelow(k, kg, analysis, lambda);
+}
+
+function matrices(truss: PinTruss, axial: ArrayLike<number>) {
+  const freedoms = numberFreedoms(truss.fixed, 3);
+  const { lengths, units } = barDirections(truss);
+  const perLength = (t: ArrayLike<number>): Float64Array => Float64Array.from(lengths, (l, e) => t[e] / l);
+  const before = truss.prestress ? perLength(truss.prestress) : undefined;
+  const k = pinStiffness(truss, freedoms, perLength(truss.axialStiffness), units, before);
+  const kg = pinStiffness(truss, freedoms, new Float64Array(lengths.length), units, perLength(axial));
+  const analysis = analyse(k, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, truss.nodes) });
+  return { freedoms, k, kg, analysis };
 }

@@ -40,8 +40,8 @@ export interface AnalyseOptions {
   readonly points?: ArrayLike<number>;
 }
 
-/** Small systems are ordered by minimum degree alone: nested dissection cannot win there. */
-const DISSECT_FROM_BLOCKS = 200;
+/** Cheaper factors (multiplications) are ordered by minimum degree alone: trying another order costs more than it can save. */
+const DISSECT_FROM_WORK = 2e7;
 
 /**
  * Order of elimination and supernodes of a symmetric matrix (lower triangle with a full diagonal). Minimum degree and,
@@ -55,7 +55,7 @@ export function analyse(lower: SparseMatrix, options: AnalyseOptions = {}): Anal
   const fillOf: Record<string, number> = { 'minimum degree': byDegree.fill };
   let best = byDegree;
   let ordering: Analysis['ordering'] = 'minimum degree';
-  if (options.points && graph.count >= DISSECT_FROM_BLOCKS) {
+  if (options.points && byDegree.work >= DISSECT_FROM_WORK) {
     const dissected = supernodes(graph, nestedDissection(graph, options.points));
     fillOf['nested dissection'] = dissected.fill;
     if (dissected.fill < best.fill) {

@@ -31,6 +31,7 @@ export function largestEigenvalues(
   const basis: Float64Array[] = [];
   const weighed: Float64Array[] = []; // B times the basis
   const images: Float64Array[] = []; // operator times the basis
+  const small: number[][] = [];
   let block: Float64Array[] = Array.from({ length: Math.min(BLOCK, n) }, () =>
     Float64Array.from({ length: n }, () => random() - 0.5),
   );
@@ -46,7 +47,7 @@ export function largestEigenvalues(
     }
     if (fresh.length === 0) return found;
     images.push(...apply(fresh));
-    found = ritz(basis, weighed, images, weigh, wanted, steps, converged);
+    found = ritz(small, basis, weighed, images, weigh, wanted, steps, converged);
     if (found.values.length >= wanted || basis.length >= Math.min(n, most)) return found;
     block = images.slice(-fresh.length).map((v) => v.slice());
   }
@@ -69,7 +70,9 @@ function join(
   return { unit, weight };
 }
 
+/** Ritz pairs; `small` is the operator on the basis and grows with it. */
 function ritz(
+  small: number[][],
   basis: readonly Float64Array[],
   weighed: readonly Float64Array[],
   images: readonly Float64Array[],
@@ -79,14 +82,15 @@ function ritz(
   converged: number,
 ): Krylov {
   const m = basis.length;
-  const h = Matrix.zeros(m, m);
-  for (let i = 0; i < m; i++)
+  for (let i = small.length; i < m; i++) {
+    small.push([]);
     for (let j = 0; j <= i; j++) {
       const v = (dot(weighed[i], images[j]) + dot(weighed[j], images[i])) / 2;
-      h.set(i, j, v);
-      h.set(j, i, v);
+      small[i][j] = v;
+      small[j][i] = v;
     }
-  const eigen = new EigenvalueDecomposition(h, { assumeSymmetric: true });
+  }
+  const eigen = new EigenvalueDecomposition(new Matrix(small), { assumeSymmetric: true });
   const order = eigen.realEigenvalues
     .map((_, k) => k)
     .sort((a, b) => eigen.realEigenvalues[b] - eigen.realEigenvalues[a]);

@@ -15,6 +15,8 @@ export interface Supernodes {
   readonly rows: readonly Int32Array[];
   /** Entries of the factor with its diagonal, before supernodes were widened: the fill that orders are compared by. */
   readonly fill: number;
+  /** Multiplications that the elimination takes, before supernodes were widened. */
+  readonly work: number;
 }
 
 /** A supernode joins its parent while the explicit zeros stay below these shares of the joint front, by its width (measured). */
@@ -34,10 +36,12 @@ export function supernodes(graph: BlockGraph, eliminate: Int32Array): Supernodes
   const { parent, rows } = columnStructures(graph, eliminate);
   const w = Float64Array.from(eliminate, (b) => graph.weights[b]);
   let fill = 0;
+  let work = 0;
   const below = new Float64Array(n);
   for (let j = 0; j < n; j++) {
     for (const i of rows[j]) below[j] += w[i];
     fill += w[j] * below[j] + (w[j] * (w[j] + 1)) / 2;
+    work += w[j] * (below[j] + w[j] / 2) ** 2;
   }
 
   // A group is named by its last column; its rows are that column's.
@@ -68,7 +72,7 @@ export function supernodes(graph: BlockGraph, eliminate: Int32Array): Supernodes
       zeros[j] = held;
     }
   }
-  return number(n, parent, rows, eliminate, into, top, fill);
+  return { ...number(n, parent, rows, eliminate, into, top), fill, work };
 }
 
 /** Postorder of the tree of groups, columns renumbered with it. */
@@ -79,8 +83,7 @@ function number(
   eliminate: Int32Array,
   into: Int32Array,
   top: (j: number) => number,
-  fill: number,
-): Supernodes {
+): Omit<Supernodes, 'fill' | 'work'> {
   const columns: number[][] = Array.from({ length: n }, () => []);
   for (let j = 0; j < n; j++) columns[top(j)].push(j); // ascending within a group: descendants first
   const kids: number[][] = Array.from({ length: n }, () => []);
@@ -122,7 +125,6 @@ function number(
     starts: Int32Array.from(starts),
     parent: Int32Array.from(heads, (j) => (parent[j] < 0 ? -1 : indexOf[top(parent[j])])),
     rows: heads.map((j) => rows[j].map((i) => place[i]).sort()),
-    fill,
   };
 }
 

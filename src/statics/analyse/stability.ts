@@ -4,20 +4,20 @@ import type { Job } from '../../model/job/index.js';
 import type { Parts } from '../../model/parts.js';
 import type { BucklingResult } from '../../model/solution.js';
 import type { Topology } from '../../model/topology.js';
-import { bucklingFactors } from '../frame/frame-buckling.js';
+import { bucklesBelow, bucklingFactors } from '../frame/frame-buckling.js';
 import { type PreparedFrame, prepareFrame } from '../frame/solve-frame.js';
 import { type Subdivided, subdivide } from '../frame/subdivide.js';
 import type { Combination } from '../loads/combinations.js';
 import type { LoadCase } from '../loads/load-case.js';
-import { pinBuckling } from '../pin-buckling.js';
+import { pinBucklesBelow, pinBuckling } from '../pin-buckling.js';
 import { designStiffness } from './design-stiffness.js';
 import type { Model } from './model.js';
 import { axialForces, PER_MEMBER, type Response } from './response.js';
 
 /** Elements a strut: one overestimates a pin-ended strut by 21.6 %, four by 0.05 %. */
 const ELEMENTS = 4;
-/** Combinations that are searched for their load factors: those that compress the struts most against Euler's load. */
-const SEARCHED = 4;
+/** Combinations that are looked at: those that compress the struts most against Euler's load. */
+const TRIED = 12;
 /** EN 1993-1-1 5.2.1 (3): second-order effects may be left out from here on; below 3 an approximate method is not allowed (5.2.2 (5)). */
 const SECOND_ORDER = 10;
 const LEAST = 3;
@@ -39,7 +39,7 @@ export function stabilityOf(
   combinations: readonly Combination[],
   responses: readonly Response[],
 ): Stability {
-  const chosen = mostCompressed(topology, parts, responses).slice(0, SEARCHED);
+  const chosen = mostCompressed(topology, parts, responses).slice(0, TRIED);
   const buckling: BucklingResult[] = [];
   const findings: Finding[] = [];
   let worst: { readonly factor: number; readonly combination: string } | null = null;
@@ -52,9 +52,16 @@ export function stabilityOf(
   }
   for (const c of chosen) {
     const { name } = combinations[c]!;
-    const found = cut
-      ? bucklingFactors(cut.prepared, elementForces(topology, responses[c]!, cut.sub))
-      : pinBuckling((model as Extract<Model, { kind: 'pinned' }>).truss, axialForces(responses[c]!));
+    const softer = designStiffness(job, parts, permanentShare(topology, cases, combinations[c]!));
+    const pinned = model.kind === 'pinned' ? model.truss : null;
+    const axial = cut ? elementForces(topology, responses[c]!, cut.sub) : axialForces(responses[c]!);
+    // One factorisation says whether this combination is worse than the worst so far; only then are its factors sought.
+    if (worst) {
+      const limit = worst.factor / softer;
+      const worse = cut ? bucklesBelow(cut.prepared, axial, limit) : pinBucklesBelow(pinned!, axial, limit);
+      if (!worse) continue;
+    }
+    const found = cut ? bucklingFactors(cut.prepared, axial) : pinBuckling(pinned!, axial);
     const stride = cut ? 6 : 3;
     const shape = found.shapes[0];
     buckling.push({
@@ -70,7 +77,7 @@ export function stabilityOf(
     if (found.sturm === 'disagrees')
       findings.push(finding('buckling-unsettled', 'truss', { about: { combination: name } }));
     if (found.factors.length === 0) continue;
-    const factor = found.factors[0]! * designStiffness(job, parts, permanentShare(topology, cases, combinations[c]!));
+    const factor = found.factors[0]! * softer;
     if (worst === null || factor < worst.factor) worst = { factor, combination: name };
   }
   if (worst && worst.factor < SECOND_ORDER)

@@ -30,3 +30,45 @@ export function assembleFrame(frame: Frame, freedoms: Freedoms, elementOf: (e: n
     values.subarray(0, at),
   );
 }
+
+/**
+ * The same sum with a factor for each member, on the pattern of a matrix that assembleFrame made: the members' matrices are
+ * made and placed once, the returned function only adds them up.
+ */
+export function frameSum(
+  frame: Frame,
+  freedoms: Freedoms,
+  pattern: SparseMatrix,
+  elementOf: (e: number) => Float64Array,
+): (factors: ArrayLike<number>) => SparseMatrix {
+  const { starts, indices } = pattern;
+  const place = new Int32Array(78 * frame.members.length);
+  const value = new Float64Array(place.length);
+  const memberStarts = new Int32Array(frame.members.length + 1);
+  let at = 0;
+  const f = new Int32Array(12);
+  frame.members.forEach((m, e) => {
+    const k = elementOf(e);
+    for (let i = 0; i < 12; i++) f[i] = freedoms.of[6 * m.ends[i < 6 ? 0 : 1] + (i % 6)];
+    for (let i = 0; i < 12; i++)
+      for (let j = 0; j <= i; j++) {
+        if (f[i] < 0 || f[j] < 0 || k[12 * i + j] === 0) continue;
+        const [row, column] = [Math.max(f[i], f[j]), Math.min(f[i], f[j])];
+        let [low, high] = [starts[column], starts[column + 1] - 1];
+        while (low < high) {
+          const middle = (low + high) >> 1;
+          if (indices[middle] < row) low = middle + 1;
+          else high = middle;
+        }
+        place[at] = low;
+        value[at++] = k[12 * i + j];
+      }
+    memberStarts[e + 1] = at;
+  });
+  return (factors) => {
+    const values = new Float64Array(pattern.values.length);
+    for (let e = 0; e < frame.members.length; e++)
+      for (let p = memberStarts[e]; p < memberStarts[e + 1]; p++) values[place[p]] += factors[e] * value[p];
+    return { ...pattern, values };
+  };
+}

@@ -1,9 +1,12 @@
+import type { SparseMatrix } from '../../maths/sparse/csc.js';
 import { spread } from '../freedoms.js';
-import { type LoadFactors, lowestLoadFactors } from '../load-factors.js';
-import { assembleFrame } from './assemble.js';
+import { hasFactorBelow, type LoadFactors, lowestLoadFactors } from '../load-factors.js';
+import { frameSum } from './assemble.js';
 import { geometricStiffness } from './geometric-stiffness.js';
 import { toGlobal } from './rotate.js';
 import type { PreparedFrame } from './solve-frame.js';
+
+type StiffFrame = Extract<PreparedFrame, { state: 'stiff' }>;
 
 /** Lowest load factors of a structure under one set of axial forces. */
 export interface Buckling {
@@ -18,21 +21,34 @@ export interface Buckling {
  * Linear buckling of a frame. `axial` is the force of each member of the frame, N, tension positive; members should be
  * subdivided, four elements a strut: one overestimates a pin-ended strut by 21.6 %.
  */
-export function bucklingFactors(
-  prepared: Extract<PreparedFrame, { state: 'stiff' }>,
-  axial: ArrayLike<number>,
-  wanted = 4,
-): Buckling {
-  const { frame, freedoms, stiffness, factor, analysis } = prepared;
-  const geometric = assembleFrame(frame, freedoms, (e) =>
-    toGlobal(frame.members[e], geometricStiffness(frame.members[e], axial[e])),
-  );
+export function bucklingFactors(prepared: StiffFrame, axial: ArrayLike<number>, wanted = 4): Buckling {
+  const { freedoms, stiffness, factor, analysis } = prepared;
+  const geometric = frameGeometric(prepared, axial);
   const { pairs, sturm } = lowestLoadFactors(stiffness, geometric, analysis, factor, wanted);
   return {
     factors: pairs.map((p) => p.lambda),
     shapes: pairs.map((p) => scaled(spread(freedoms, p.vector))),
     sturm,
   };
+}
+
+/** Whether the frame buckles below lambda times these axial forces. */
+export const bucklesBelow = (prepared: StiffFrame, axial: ArrayLike<number>, lambda: number): boolean =>
+  hasFactorBelow(prepared.stiffness, frameGeometric(prepared, axial), prepared.analysis, lambda);
+
+/** Geometric stiffness of each prepared frame as a sum over its members: made once, summed for each set of forces. */
+const sums = new WeakMap<StiffFrame, (axial: ArrayLike<number>) => SparseMatrix>();
+
+function frameGeometric(prepared: StiffFrame, axial: ArrayLike<number>): SparseMatrix {
+  let sum = sums.get(prepared);
+  if (!sum) {
+    const { frame, freedoms, stiffness } = prepared;
+    sum = frameSum(frame, freedoms, stiffness, (e) =>
+      toGlobal(frame.members[e], geometricStiffness(frame.members[e], 1)),
+    );
+    sums.set(prepared, sum);
+  }
+  return sum(axial);
 }
 
 /** Largest displacement (not rotation) at 1. */
