@@ -1,24 +1,18 @@
-import { axesOfStruts } from '../detailing/axes.js';
 import { crossingFindings } from '../detailing/crossings.js';
-import { deepenSockets } from '../detailing/deepen.js';
-import { faceForms } from '../detailing/faces.js';
-import { detailHubs } from '../detailing/hubs.js';
-import { detailPanels } from '../detailing/panels/detail-panels.js';
-import { sectionsOf } from '../detailing/sections.js';
-import { detailStruts } from '../detailing/struts.js';
-import { nodeSystem } from '../detailing/systems/index.js';
 import type { Assessment } from '../documents/records.js';
 import type { Job } from '../model/job/index.js';
-import type { Parts } from '../model/parts.js';
 import { scaleTruss } from '../model/scale-truss.js';
 import { sectionProperties } from '../model/section.js';
+import type { Solution } from '../model/solution.js';
 import { topologyOf } from '../model/topology.js';
 import type { Truss } from '../model/truss.js';
+import { analyseTruss } from '../statics/analyse/analyse-truss.js';
 import { equilibriumOf } from '../statics/equilibrium.js';
 import { givenForces } from '../statics/given-forces.js';
 import { forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
 import { depthFindings, requiredDepths } from '../strength/depths.js';
 import { judge } from '../strength/judge.js';
+import { detail, layOut } from './detail.js';
 import { settle } from './settle.js';
 
 /**
@@ -28,58 +22,46 @@ import { settle } from './settle.js';
 export function assess(file: Truss, job: Job): Assessment {
   const truss = scaleTruss(file, job);
   const topology = topologyOf(truss);
+  const layout = layOut(topology, job);
+  const radii = Float64Array.from(layout.sections, (s) => (s ? sectionProperties(s.shape).circumradius : 0));
 
-  const { sections, findings: sectionFindings } = sectionsOf(truss, job);
-  const radii = Float64Array.from(sections, (s) => (s ? sectionProperties(s.shape).circumradius : 0));
-  const faces = faceForms(topology, {
-    flatnessWarn: job.fit.flatnessWarn_mm,
-    flatnessStop: job.fit.flatnessStop_mm ?? null,
-  });
-  const axes = axesOfStruts(topology, job, faces.forms);
   const given = givenForces(truss);
   const reciprocal = reciprocalOf(topology, job);
-  const forces = forcesFrom(forceSource(topology, job), given.forces, reciprocal.forces);
-  const equilibrium = forces && equilibriumOf(topology, forces.values, job.fit);
+  const source = forceSource(topology, job);
+  const claimed = source === 'given' ? given.forces : source === 'reciprocal' ? reciprocal.forces : null;
+  const equilibrium = claimed && equilibriumOf(topology, claimed, job.fit);
 
-  const shallow = detailHubs(topology, job, sections, axes);
-  const rough = detailStruts(topology, job, sections, axes, shallow.hubs);
-  const solution = null;
-  const loading = { forces: forces?.values ?? null, solution };
-  const depths = requiredDepths(truss, { struts: rough.struts, hubs: shallow.hubs, panels: [] }, loading, job);
-  const hubs = deepenSockets(shallow.hubs, depths, job);
-  const struts = depths.size > 0 ? detailStruts(topology, job, sections, axes, hubs) : rough;
-  const panels = detailPanels({
-    topology,
-    job,
-    forms: faces.forms,
-    sections,
-    axes,
-    hubs,
-    hubOutline: (hub, slab) => nodeSystem(hub.system)?.outline(hub, slab, job) ?? [],
-  });
-  const parts: Parts = { struts: struts.struts, hubs, panels: panels.panels };
-  const judgement = judge(truss, parts, loading, job);
+  // Sockets are as deep as what they carry asks for, and what they carry depends on what the parts weigh: once round.
+  const analyse = (made: ReturnType<typeof detail>) =>
+    analyseTruss({ topology, job, parts: made.parts, forms: layout.forms, given: claimed });
+  let made = detail(layout, new Map());
+  let analysis = analyse(made);
+  const depths = requiredDepths(truss, made.parts, { forces: claimed, solution: analysis.solution }, job);
+  if (depths.size > 0) {
+    made = detail(layout, depths);
+    analysis = analyse(made);
+  }
+  const { solution } = analysis;
+  const judgement = judge(truss, made.parts, { forces: claimed, solution }, job);
 
   return settle({
     job,
     topology,
-    forms: faces.forms,
-    parts,
-    forces,
+    forms: layout.forms,
+    parts: made.parts,
+    forces: shownForces(source, claimed, solution, truss.members.length),
     equilibrium,
     solution,
     reciprocal: reciprocal.counts ? reciprocal : null,
     utilisations: judgement.utilisations,
     found: [
-      ...(forces ? [] : given.findings),
+      ...(claimed ? [] : given.findings),
       ...reciprocal.findings,
       ...(equilibrium?.findings ?? []),
-      ...faces.findings,
+      ...layout.findings,
       ...crossingFindings(topology, radii),
-      ...sectionFindings,
-      ...shallow.findings,
-      ...struts.findings,
-      ...panels.findings,
+      ...made.findings,
+      ...analysis.findings,
       ...depthFindings(depths, job),
       ...judgement.findings,
     ],
@@ -88,19 +70,25 @@ export function assess(file: Truss, job: Job): Assessment {
       ...(reciprocal.diagram ? ['reciprocal'] : []),
       'flatness',
       'lengths',
+      ...solution.checked,
       ...judgement.checked,
     ],
-    notChecked: [...(equilibrium ? [] : ['equilibrium']), ...judgement.notChecked, 'stability'],
+    notChecked: [...(equilibrium ? [] : ['equilibrium']), ...solution.notChecked, ...judgement.notChecked],
   });
 }
 
-/** The member forces of the source that the job names. */
-function forcesFrom(
+/** The member forces that papers show: of the job's source; from analysis the largest of all combinations, by member. */
+function shownForces(
   source: ReturnType<typeof forceSource>,
-  given: Float64Array | null,
-  reciprocal: Float64Array | null,
+  claimed: Float64Array | null,
+  solution: Solution,
+  members: number,
 ): Assessment['forces'] {
-  if (source === 'given' && given) return { source, values: given };
-  if (source === 'reciprocal' && reciprocal) return { source, values: reciprocal };
-  return null;
+  if (source !== 'analysis') return claimed && { source, values: claimed };
+  if (solution.combinations.length === 0) return null;
+  const values = new Float64Array(members);
+  solution.actions.forEach((actions, m) => {
+    for (const { axial } of actions) if (Math.abs(axial) > Math.abs(values[m]!)) values[m] = axial;
+  });
+  return { source, values };
 }

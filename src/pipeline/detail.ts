@@ -1,0 +1,63 @@
+import { axesOfStruts } from '../detailing/axes.js';
+import { deepenSockets } from '../detailing/deepen.js';
+import { type FaceForm, faceForms } from '../detailing/faces.js';
+import { detailHubs } from '../detailing/hubs.js';
+import { detailPanels } from '../detailing/panels/detail-panels.js';
+import { sectionsOf } from '../detailing/sections.js';
+import { detailStruts } from '../detailing/struts.js';
+import { nodeSystem } from '../detailing/systems/index.js';
+import type { Finding } from '../model/finding.js';
+import type { Job } from '../model/job/index.js';
+import type { Parts, StrutPart } from '../model/parts.js';
+import type { Section } from '../model/section.js';
+import type { Topology } from '../model/topology.js';
+
+/** What detailing knows before any force is: sections, faces, axes. By the truss's indices. */
+export interface Layout {
+  readonly topology: Topology;
+  readonly job: Job;
+  readonly sections: readonly (Section | null)[];
+  readonly forms: readonly FaceForm[];
+  readonly axes: readonly StrutPart['axes'][];
+  readonly findings: readonly Finding[];
+}
+
+export function layOut(topology: Topology, job: Job): Layout {
+  const sections = sectionsOf(topology.truss, job);
+  const faces = faceForms(topology, {
+    flatnessWarn: job.fit.flatnessWarn_mm,
+    flatnessStop: job.fit.flatnessStop_mm ?? null,
+  });
+  return {
+    topology,
+    job,
+    sections: sections.sections,
+    forms: faces.forms,
+    axes: axesOfStruts(topology, job, faces.forms),
+    findings: [...faces.findings, ...sections.findings],
+  };
+}
+
+/** Hubs, struts and panels as numbers; `depths` asks sockets to be deeper than the job's, in mm by the key of `requiredDepths`. */
+export function detail(
+  layout: Layout,
+  depths: Parameters<typeof deepenSockets>[1],
+): { readonly parts: Parts; readonly findings: readonly Finding[] } {
+  const { topology, job, sections, forms, axes } = layout;
+  const shallow = detailHubs(topology, job, sections, axes);
+  const hubs = deepenSockets(shallow.hubs, depths, job);
+  const struts = detailStruts(topology, job, sections, axes, hubs);
+  const panels = detailPanels({
+    topology,
+    job,
+    forms,
+    sections,
+    axes,
+    hubs,
+    hubOutline: (hub, slab) => nodeSystem(hub.system)?.outline(hub, slab, job) ?? [],
+  });
+  return {
+    parts: { struts: struts.struts, hubs, panels: panels.panels },
+    findings: [...shallow.findings, ...struts.findings, ...panels.findings],
+  };
+}
