@@ -2,7 +2,7 @@ import type { FaceForm } from '../detailing/faces.js';
 import type { Finding } from '../model/finding.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
-import type { NestingPlan, StockPlan } from '../model/plan.js';
+import type { BedPlan, NestingPlan, StockPlan } from '../model/plan.js';
 import type { ShapedPiece } from '../model/shaped.js';
 import type { Solution, Utilisation } from '../model/solution.js';
 import type { Topology } from '../model/topology.js';
@@ -48,4 +48,5 @@ export interface PackRecords extends Assessment {
   readonly made: ReadonlyMap<string, MadeHub>;
   readonly stock: StockPlan | null;
   readonly nesting: NestingPlan | null;
+  readonly beds: BedPlan | null;
 }

@@ -10,6 +10,7 @@ import type { Input } from './load.js';
 import { type Manifest, manifestOf } from './manifest.js';
 import { packWriter, type WriteFile } from './pack-writer.js';
 import { settle } from './settle.js';
+import { writeBeds } from './stages/beds.js';
 import { writeDocuments } from './stages/documents.js';
 import { makeHubs } from './stages/hubs.js';
 import { writeSheetFiles } from './stages/sheet-files.js';
@@ -41,6 +42,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   const assessed = assess(truss, job);
 
   const hubs = await makeHubs(assessed, run, writer);
+  const beds = await writeBeds(hubs.printable, job, writer);
   const bars = await planBars(assessed.parts.struts, job);
   const sheets = await planSheets(assessed.parts.panels, job);
 
@@ -48,7 +50,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     ...assessed,
     found: [...assessed.found, ...hubs.findings, ...bars.findings, ...sheets.findings],
   });
-  const records: PackRecords = { ...settled, made: hubs.made, stock: bars.plan, nesting: sheets.plan };
+  const records: PackRecords = { ...settled, made: hubs.made, stock: bars.plan, nesting: sheets.plan, beds };
 
   const cutting = await writeSheetFiles(records, writer);
   await writeDocuments(records, await loadFonts(), writer, run);

@@ -23,6 +23,7 @@ export function packRecords(change: Partial<Job> = {}, truss: Truss = inventedTr
     made: new Map(),
     stock: null,
     nesting: null,
+    beds: null,
   };
 }
 

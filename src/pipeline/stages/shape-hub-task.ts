@@ -1,4 +1,6 @@
 import { writeStl } from '../../documents/formats/stl.js';
+import { type PackedObject, packObject } from '../../documents/formats/three-mf.js';
+import { deflateBlocks } from '../../machine/deflate.js';
 import type { Job } from '../../model/job/index.js';
 import type { HubPart } from '../../model/parts.js';
 import type { ShapedHub } from '../../model/shaped.js';
@@ -9,16 +11,30 @@ export interface ShapeHubInput {
   readonly job: Job;
   /** Largest tension of each socket's strut, N, in the sockets' order. */
   readonly tension: readonly number[];
+  /** Number of its first piece as an object of a bed; a hub has fewer pieces than `PIECES`. */
+  readonly object: number;
 }
+
+/** Object numbers kept free for each hub. */
+export const PIECES = 16;
 
 export interface ShapeHubOutput {
   readonly shaped: ShapedHub;
   /** Bytes of each piece's STL. */
   readonly stl: readonly Uint8Array[];
+  /** Each piece as an object of a bed file. */
+  readonly objects: readonly PackedObject[];
 }
 
-/** Shapes one hub and writes its STL, in whatever thread. */
-export async function shapeHubTask({ hub, job, tension }: ShapeHubInput): Promise<ShapeHubOutput> {
+/** Shapes one hub and writes its STL and its part of a bed file, in whatever thread. */
+export async function shapeHubTask({ hub, job, tension, object }: ShapeHubInput): Promise<ShapeHubOutput> {
   const shaped = await shapeHub(hub, job, tension);
-  return { shaped, stl: shaped.pieces.map((p) => writeStl(p.positions, p.triangles, hub.mark)) };
+  return {
+    shaped,
+    stl: shaped.pieces.map((p) => writeStl(p.positions, p.triangles, hub.mark)),
+    objects: shaped.pieces.map((p, i) => {
+      const name = p.piece ? `${hub.mark}.${p.piece}` : hub.mark;
+      return packObject(p.positions, p.triangles, object + i, name, `${name}/${hub.revision}`, deflateBlocks);
+    }),
+  };
 }

@@ -1,0 +1,26 @@
+import type { PackedObject } from '../../documents/formats/three-mf.js';
+import { bedFile } from '../../documents/nodes/bed-file.js';
+import { deflateBlocks } from '../../machine/deflate.js';
+import type { Job } from '../../model/job/index.js';
+import type { BedPlan } from '../../model/plan.js';
+import { type PrintPiece, planBeds } from '../../planning/beds/plan-beds.js';
+import type { PackWriter } from '../pack-writer.js';
+
+/** A piece of a hub that is sound, packed for a bed file. */
+export interface PrintablePiece extends PrintPiece {
+  readonly object: PackedObject;
+}
+
+/** Arranges the pieces on the job's printers and writes a 3MF file a bed. */
+export async function writeBeds(pieces: readonly PrintablePiece[], job: Job, writer: PackWriter): Promise<BedPlan> {
+  const plan = planBeds(pieces, job.printers);
+  const byName = new Map(pieces.map((p) => [`${p.mark} ${p.piece}`, p]));
+  for (const bed of plan.beds) {
+    const objectOf = (mark: string, piece: string) => {
+      const { object, box } = byName.get(`${mark} ${piece}`)!;
+      return { object, depth: box[1] };
+    };
+    await writer.put(`nodes/beds/${bed.mark}.3mf`, bedFile(bed, objectOf, job.title, job.date, deflateBlocks));
+  }
+  return plan;
+}
