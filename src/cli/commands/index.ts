@@ -2,8 +2,9 @@ import { check } from './check.js';
 import type { CliCommand } from './command.js';
 import { convert } from './convert.js';
 import { make } from './make.js';
+import { mend } from './mend.js';
 import { newJob } from './new.js';
 import { size } from './size.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, make, check, size, convert];
+export const commands: readonly CliCommand[] = [newJob, make, check, size, mend, convert];

@@ -172,7 +172,8 @@ export const RECIPROCAL_FINDINGS = {
     'stop',
     'truss',
     'mm',
-    (f) => `mending would move ${f.about?.['node']} by ${num(f.value)} mm, more than the ${num(f.limit)} mm allowed`,
+    (f) =>
+      `mending would move ${f.about?.['node']} by ${num(f.value, 4)} mm, more than the ${num(f.limit, 6)} mm allowed`,
   ),
   'mend-changes-forces': entry(
     'stop',
@@ -184,6 +185,7 @@ export const RECIPROCAL_FINDINGS = {
     'stop',
     'truss',
     '',
-    (f) => `could not be mended: ${f.about?.['what']} stays at ${num(f.value, 6)}, wanted ${num(f.limit, 6)}`,
+    (f) =>
+      `could not be mended: ${f.about?.['what']} stays at ${num(f.value, 12)} of the mean strut or the largest force, wanted ${num(f.limit, 12)}`,
   ),
 } as const;
