@@ -50,3 +50,14 @@ export interface Material {
 
 /** Where one value of a material comes from. */
 export const sourceOf = (material: Material, value: string): Source => material.sources?.[value] ?? material.source;
+
+/** Whether every strength of the material is verified: read in its source, or tested by the user. */
+export const isVerified = (material: Material): boolean =>
+  Object.keys(material.strength).every((symbol) => sourceOf(material, symbol).verified);
+
+/** Whether a strength of the material comes from the user's own test. */
+export const isTested = (material: Material): boolean =>
+  Object.keys(material.strength).some((symbol) => {
+    const { mark, verified } = sourceOf(material, symbol);
+    return mark === 'user' && verified;
+  });

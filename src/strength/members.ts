@@ -22,8 +22,13 @@ export function judgeMembers(
   const utilisations: Utilisation[] = [];
   const findings: Finding[] = [];
   const lacking = new Map<string, { standard: Standard; values: readonly string[]; count: number }>();
+  const unknown = new Map<string, { material: string; count: number }>();
   struts.forEach((strut, i) => {
     const { section, material } = strut;
+    if (section !== null && material === null) {
+      const before = unknown.get(section.name)?.count ?? 0;
+      unknown.set(section.name, { material: section.material, count: before + 1 });
+    }
     if (section === null || material === null || (actions[i]?.length ?? 0) === 0) return;
     const said = judgeStrut(section.shape, material, strut.axisLength, actions[i]!, job, rules);
     if (said.kind === 'lacking') {
@@ -48,5 +53,7 @@ export function judgeMembers(
     const about = { material, standard: standard.name, struts: count, values: values.join(', ') };
     findings.push(finding('material-value-missing', 'truss', { about }));
   }
+  for (const [section, { material, count }] of unknown)
+    findings.push(finding('section-material-unknown', 'truss', { value: count, about: { section, material } }));
   return { utilisations, findings };
 }

@@ -1,7 +1,7 @@
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
-import type { Material } from '../model/material.js';
+import { isTested, type Material } from '../model/material.js';
 import type { Parts } from '../model/parts.js';
 
 /** Least softening point of a plastic in the sun, °C. */
@@ -15,9 +15,6 @@ function plastics(parts: Parts): readonly Material[] {
   return [...new Map(all.filter(isPlastic).map((m) => [m.name, m])).values()];
 }
 
-/** A strength of the material comes from the user's own test. */
-const tested = (material: Material): boolean => material.source.mark === 'user' && material.source.verified;
-
 /** What the use asks of the materials: tested connectors overhead and outdoors, plastics that stay hard and a service class outdoors. */
 export function useFindings(parts: Parts, job: Job, carriesLoad: boolean): readonly Finding[] {
   const { use } = job;
@@ -26,7 +23,7 @@ export function useFindings(parts: Parts, job: Job, carriesLoad: boolean): reado
   const all = plastics(parts);
   if (carriesLoad)
     for (const material of all)
-      if (material.family === 'plastic-print' && !tested(material))
+      if (material.family === 'plastic-print' && !isTested(material))
         found.push(finding('connectors-untested', 'truss', { about: { material: material.title, use } }));
   if (use !== 'outdoor') return found;
   for (const material of all) {

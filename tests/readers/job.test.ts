@@ -37,6 +37,10 @@ describe('each fault has its place and its mending', () => {
       '"sections": { "my": { "shape": { "kind": "hexagon" }, "material": "oak" } }',
       /sections\.my\.shape\.kind is "hexagon": write "round" or "tube" or "rectangle"$/,
     ],
+    [
+      '"sections": { "my": { "shape": { "kind": "tube", "diameter_mm": 10, "wall_mm": 5 }, "material": "S235" } }',
+      /the wall of section "my" is half its diameter of 10 mm or more: write less than 5/,
+    ],
     ['"printers": []', /printers is too short: write at least 1 of them/],
     ['"seed": 1.5', /seed/],
     ['"loads": { "cases": [ { "name": "a\\nb", "kind": "snow" } ] }', /is no name for a case/],

@@ -120,6 +120,16 @@ describe('a strut under its given force', () => {
     expect(missing.about).toMatchObject({ material: 'beech-dowel', struts: 1, values: 'fmk, ft0k, fc0k, fvk, E0.05' });
   });
 
+  it('a section whose material nobody knows is named once, with its number of struts', () => {
+    const job = defaultJob();
+    const { truss, parts } = oneStrut(job, -100);
+    const struts = parts.struts.map((s) => ({ ...s, material: null }));
+    const { findings, utilisations } = judge(truss, { ...parts, struts }, FORCES_OF_FILE, job);
+    expect(utilisations).toEqual([]);
+    expect(findings).toMatchObject([{ code: 'section-material-unknown', level: 'stop', value: 1 }]);
+    expect(findings[0]!.about).toEqual({ section: 'beech-8', material: 'beech-dowel' });
+  });
+
   it('without forces nothing is judged, and it says so', () => {
     const job = defaultJob();
     const { truss, parts } = oneStrut(job, 0);

@@ -1,5 +1,5 @@
 import type { Job } from '../job/index.js';
-import type { Material } from '../material.js';
+import type { Material, Source } from '../material.js';
 import type { Section } from '../section.js';
 import { MATERIALS } from './materials/index.js';
 import { SECTIONS } from './sections/index.js';
@@ -34,20 +34,40 @@ export function materialNamed(job: Job, name: string): Material | null {
   const density = own.density_kg_per_m3 ?? base?.density;
   const modulus = own.modulus_MPa ?? base?.modulus;
   if (density === undefined || modulus === undefined) return null;
+  const source: Source = own.source ? { text: own.source, mark: 'user', verified: true } : UNSTATED;
+  const values = known({
+    modulus05: own.modulus05_MPa,
+    shearModulus: own.shearModulus_MPa,
+    poisson: own.poisson,
+    expansion: own.expansion_per_K,
+    densityK: own.densityK_kg_per_m3,
+    softening: own.softening_C,
+    buckling: own.buckling,
+  });
+  const given = [
+    ...(own.density_kg_per_m3 === undefined ? [] : ['density']),
+    ...(own.modulus_MPa === undefined ? [] : ['modulus']),
+    ...Object.keys(values),
+    ...Object.keys(own.strength_MPa),
+  ];
   return {
     ...(base ?? { family: 'board' as const }),
+    ...(own.family ? { family: own.family } : {}),
     name,
     title: own.title ?? base?.title ?? name,
     density,
     modulus,
-    ...(own.softening_C !== undefined ? { softening: own.softening_C } : {}),
+    ...values,
     strength: { ...base?.strength, ...own.strength_MPa },
-    source: own.source ? { text: own.source, mark: 'user', verified: true } : (base?.source ?? UNSTATED),
+    // What the job does not give keeps the source it had.
+    source: base?.source ?? source,
+    sources: { ...base?.sources, ...Object.fromEntries(given.map((value) => [value, source])) },
   };
 }
 
-const UNSTATED = {
-  text: 'given in the job without a source',
-  mark: 'user',
-  verified: false,
-} as const;
+/** The entries that have a value. */
+function known<T extends Readonly<Record<string, unknown>>>(values: T): { [K in keyof T]?: Exclude<T[K], undefined> } {
+  return Object.fromEntries(Object.entries(values).filter(([, v]) => v !== undefined)) as ReturnType<typeof known<T>>;
+}
+
+const UNSTATED: Source = { text: 'given in the job without a source', mark: 'user', verified: false };

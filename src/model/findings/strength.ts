@@ -82,6 +82,13 @@ export const STRENGTH_FINDINGS = {
     (f) =>
       `${f.about?.['struts']} struts of ${f.about?.['material']} were not judged by ${f.about?.['standard']}: it needs ${f.about?.['values']}; give them under "materials"`,
   ),
+  'section-material-unknown': entry(
+    'stop',
+    'truss',
+    '',
+    (f) =>
+      `${num(f.value, 0)} struts of section ${f.about?.['section']} have no material: "${f.about?.['material']}" is in neither the catalogue nor the job, or lacks density or modulus; add it under "materials"`,
+  ),
   'values-unverified': entry(
     'note',
     'truss',

@@ -36,9 +36,26 @@ export const materialsSchema = z
     z.strictObject({
       like: z.string().optional().describe('A material of the catalogue whose other values hold.'),
       title: z.string().optional(),
+      family: z
+        .enum(['timber', 'glulam', 'steel', 'aluminium', 'plastic-print', 'acrylic', 'board', 'plastic-sheet'])
+        .optional()
+        .describe('Decides the standard and the checks. Absent: of the material it is like, else board.'),
       density_kg_per_m3: z.number().positive().optional(),
       modulus_MPa: z.number().positive().optional(),
+      modulus05_MPa: z.number().positive().optional().describe('5 % fractile along the grain, for EN 1995-1-1.'),
+      shearModulus_MPa: z.number().positive().optional(),
+      poisson: z.number().min(0).lt(0.5).optional(),
+      expansion_per_K: z.number().nonnegative().optional(),
+      densityK_kg_per_m3: z
+        .number()
+        .positive()
+        .optional()
+        .describe('Characteristic density, for bolts and pins in timber.'),
       softening_C: z.number().optional(),
+      buckling: z
+        .enum(['a0', 'a', 'b', 'c', 'd', 'A', 'B'])
+        .optional()
+        .describe('Buckling curve of EN 1993-1-1 or class of EN 1999-1-1.'),
       strength_MPa: z
         .record(z.string(), z.number().positive())
         .default({})

@@ -63,8 +63,9 @@ export function compressionChecks(member: MemberToJudge, r: Resistance, s: Stres
 /** Lateral buckling of a rectangle bent about its strong axis, with compression or without: EN 1995-1-1 6.3.3 (6.33), (6.35). The unbraced length is the buckling length. */
 export function lateralChecks(member: MemberToJudge, r: Resistance, s: Stresses, f: DesignStrengths): Verdict[] {
   const { shape, material } = member;
-  if (shape.kind !== 'rectangle') return [];
-  const strongIsY = shape.height >= shape.width;
+  // A square has no strong axis to buckle from.
+  if (shape.kind !== 'rectangle' || shape.width === shape.height) return [];
+  const strongIsY = shape.height > shape.width;
   const [b, h] = strongIsY ? [shape.width, shape.height] : [shape.height, shape.width];
   const [stress, strength] = strongIsY ? [s.my, f.fmy] : [s.mz, f.fmz];
   if (stress === 0) return [];
