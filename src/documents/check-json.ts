@@ -108,8 +108,9 @@ function displacementsOf(a: Assessment): CheckReport['displacements'] {
 
 function memberReport(a: Assessment, mark: string, i: number): MemberReport {
   const force: Record<string, number | null> = {};
+  // The sources given and reciprocal have the one case that they claim; analysis has its load cases.
   if (a.forces && a.forces.source !== 'analysis') force['given'] = a.forces.values[i]!;
-  for (const c of a.solution?.cases ?? []) if (c.forces) force[c.name] = c.forces[i]!;
+  else for (const c of a.solution?.cases ?? []) if (c.forces && c.kind !== 'given') force[c.name] = c.forces[i]!;
   const worst = worstOf(a, mark);
   return {
     mark,

@@ -29,19 +29,17 @@ export function assess(file: Truss, job: Job): Assessment {
   const reciprocal = reciprocalOf(topology, job);
   const source = forceSource(topology, job);
   const claimed = source === 'given' ? given.forces : source === 'reciprocal' ? reciprocal.forces : null;
-  const equilibrium = claimed && equilibriumOf(topology, claimed, job.fit);
 
   // Sockets are as deep as what they carry asks for, and what they carry depends on what the parts weigh: once round.
-  const analyse = (made: ReturnType<typeof detail>) =>
-    analyseTruss({ topology, job, parts: made.parts, forms: layout.forms, given: claimed });
+  const analyse = (made: ReturnType<typeof detail>, buckling: boolean) =>
+    analyseTruss({ topology, job, parts: made.parts, forms: layout.forms, given: claimed, buckling });
   let made = detail(layout, new Map());
-  let analysis = analyse(made);
-  const depths = requiredDepths(truss, made.parts, { forces: claimed, solution: analysis.solution }, job);
-  if (depths.size > 0) {
-    made = detail(layout, depths);
-    analysis = analyse(made);
-  }
+  const rough = analyse(made, false).solution;
+  const depths = requiredDepths(truss, made.parts, { forces: claimed, solution: rough }, job);
+  if (depths.size > 0) made = detail(layout, depths);
+  const analysis = analyse(made, job.analysis.buckling);
   const { solution } = analysis;
+  const equilibrium = claimed ? equilibriumOf(topology, claimed, job.fit) : analysis.equilibrium;
   const judgement = judge(truss, made.parts, { forces: claimed, solution }, job);
 
   return settle({

@@ -109,7 +109,7 @@ export function loadsOf(topology: Topology, caseName: string): Vec3[] {
 
 /** Held against all loads and reactions together, and never against less than the largest member force: in a truss that
  * only stresses itself the reactions are round-off. */
-function balanceOfWhole(topology: Topology, outer: readonly Vec3[], largestForce: number): Equilibrium['whole'] {
+export function balanceOfWhole(topology: Topology, outer: readonly Vec3[], largestForce: number): Equilibrium['whole'] {
   const { nodes } = topology.truss;
   const centre = mean(nodes.map((n) => n.at));
   let [force, moment]: [Vec3, Vec3] = [ZERO, ZERO];
@@ -136,4 +136,4 @@ function judged(
 }
 
 /** a / b; 0 where there is nothing to hold against and nothing left over. */
-const ratio = (a: number, b: number): number => (b > 0 ? a / b : a > 0 ? 1 : 0);
+export const ratio = (a: number, b: number): number => (b > 0 ? a / b : a > 0 ? 1 : 0);

@@ -31,6 +31,8 @@ export interface PinResult {
   readonly displacements: Float64Array;
   /** N, three a node: what the support gives to the node in its held directions, 0 elsewhere. */
   readonly reactions: Float64Array;
+  /** What is left of bar forces and loads at the free freedoms, N, three a node. */
+  readonly imbalance: Float64Array;
   /** Normalised residual of the solve. */
   readonly residual: number;
 }
@@ -86,7 +88,15 @@ export function solvePinTruss(truss: PinTruss, cases: readonly PinLoads[]): PinS
     cases: cases.map((c, i) => {
       const displacements = spread(freedoms, x[i]);
       const axial = strained(truss, units, k, displacements, c);
-      return { axial, displacements, reactions: reactionsOf(truss, units, axial, c.forces), residual: residual[i] };
+      const left = c.forces.slice();
+      addBarForces(left, truss, units, axial, 1);
+      return {
+        axial,
+        displacements,
+        reactions: left.map((v, k) => (truss.fixed[k] ? 0 - v : 0)),
+        imbalance: left.map((v, k) => (truss.fixed[k] ? 0 : v)),
+        residual: residual[i],
+      };
     }),
   };
 }
@@ -177,16 +187,4 @@ export function addBarForces(
       p[3 * figure.ends[2 * e] + i] += sign * axial[e] * units[3 * e + i];
       p[3 * figure.ends[2 * e + 1] + i] -= sign * axial[e] * units[3 * e + i];
     }
-}
-
-/** What the supports give: minus loads and pulls of the bars, in the held directions. */
-export function reactionsOf(
-  figure: PinFigure,
-  units: Float64Array,
-  axial: Float64Array,
-  loads: Float64Array,
-): Float64Array {
-  const p = loads.slice();
-  addBarForces(p, figure, units, axial, 1);
-  return p.map((v, i) => (figure.fixed[i] ? 0 - v : 0));
 }

@@ -6,6 +6,7 @@ import type { Parts } from '../../model/parts.js';
 import type { CaseResult, MemberActions, Solution } from '../../model/solution.js';
 import type { Topology } from '../../model/topology.js';
 import { GIVEN_CASE } from '../../model/truss.js';
+import type { Equilibrium } from '../equilibrium.js';
 import type { Segment } from '../frame/member.js';
 import { loadCases, SELF_STRESS } from '../loads/cases.js';
 import { combinationsOf } from '../loads/combinations.js';
@@ -14,6 +15,7 @@ import { climbed, missingLoads } from '../loads/required.js';
 import { elasticForces } from '../pin-truss.js';
 import { prestressTest, splitForces } from '../prestress.js';
 import { climberActions } from './climber.js';
+import { equilibriumOfCase } from './equilibrium-of-case.js';
 import { figureOf } from './figure.js';
 import { strutStiffness } from './member-stiffness.js';
 import { jointsHold, type Model, modelOf, respond } from './model.js';
@@ -36,16 +38,22 @@ export interface AnalysisInput {
   readonly forms: readonly FaceForm[];
   /** Forces that the truss file or its reciprocal diagram claims, N by member index; null: none. */
   readonly given: Float64Array | null;
+  /** false leaves the search for load factors out, for a first pass whose parts will still change; absent: as the job says. */
+  readonly buckling?: boolean;
+}
+
+export interface Analysed {
+  readonly solution: Solution;
+  readonly findings: readonly Finding[];
+  /** Balance of the first case that the truss file loads (else of the first case); null where nothing was solved. */
+  readonly equilibrium: Equilibrium | null;
 }
 
 /**
  * All that statics finds out of a truss and its job: states and mechanisms, cases and combinations with forces, displacements
  * and reactions, actions of every member, buckling, supports. A truss without supports is counted and not loaded.
  */
-export function analyseTruss(input: AnalysisInput): {
-  readonly solution: Solution;
-  readonly findings: readonly Finding[];
-} {
+export function analyseTruss(input: AnalysisInput): Analysed {
   const { topology, job, parts, given } = input;
   const { truss } = topology;
   const findings: Finding[] = [];
@@ -55,6 +63,7 @@ export function analyseTruss(input: AnalysisInput): {
   const stop = (notChecked: readonly string[]) => ({
     solution: bare(states, given, notChecked),
     findings,
+    equilibrium: null,
   });
   if (truss.supports.length === 0) {
     findings.push(finding('supports-missing', 'truss'));
@@ -86,7 +95,7 @@ export function analyseTruss(input: AnalysisInput): {
   if (model.kind === 'mechanism' || (model.kind === 'pinned' && counts.mechanisms > 0 && !held?.holds)) {
     const node = model.kind === 'mechanism' ? truss.nodes[model.node]!.mark : 'it';
     findings.push(...mechanismStops(states, node));
-    return { solution: { ...bare(states, given, ['loads', 'stability']), counts }, findings };
+    return { solution: { ...bare(states, given, ['loads', 'stability']), counts }, findings, equilibrium: null };
   }
 
   const { responses, residual } = respond(model, topology, parts, cases);
@@ -114,9 +123,10 @@ export function analyseTruss(input: AnalysisInput): {
   }
   if (given) findings.push(...besideGiven(topology, given, pin, cases, responses, actions, job));
 
-  const stability = job.analysis.buckling
-    ? stabilityOf(topology, job, parts, model, cases, combinations, combined)
-    : null;
+  const stability =
+    (input.buckling ?? job.analysis.buckling)
+      ? stabilityOf(topology, job, parts, model, cases, combinations, combined)
+      : null;
   if (stability) findings.push(...stability.findings);
   findings.push(...mechanismNotes(states, job, parts, stability?.lowest ?? null, held));
   findings.push(...upliftFindings(topology, job, combinations, combined));
@@ -131,7 +141,12 @@ export function analyseTruss(input: AnalysisInput): {
     displacements: r.displacements,
     reactions: reactionsOf(topology, r),
   });
+  const shown = Math.max(
+    0,
+    cases.findIndex((c) => truss.loads.some((l) => l.case === c.name)),
+  );
   return {
+    equilibrium: cases.length > 0 ? equilibriumOfCase(topology, cases[shown]!, responses[shown]!) : null,
     solution: {
       counts,
       cases: [...givenCase(given), ...responses.map((r, i) => result(cases[i]!.name, cases[i]!.kind, r))],

@@ -17,6 +17,8 @@ export interface Response {
   readonly displacements: Float64Array;
   /** N, three a node. */
   readonly reactions: Float64Array;
+  /** Force that is left over at each node, N, three a node. */
+  readonly imbalance: Float64Array;
 }
 export const PER_MEMBER = 12;
 
@@ -53,11 +55,13 @@ export function frameResponse(c: LoadCase, result: FrameResult, members: readonl
   });
   const displacements = new Float64Array(result.displacements.length / 2);
   const reactions = new Float64Array(result.reactions.length / 2);
+  const imbalance = new Float64Array(result.imbalance.length / 2);
   for (let i = 0; i < displacements.length; i += 3) {
     displacements.set(result.displacements.subarray(2 * i, 2 * i + 3), i);
     reactions.set(result.reactions.subarray(2 * i, 2 * i + 3), i);
+    imbalance.set(result.imbalance.subarray(2 * i, 2 * i + 3), i);
   }
-  return { member, displacements, reactions };
+  return { member, displacements, reactions, imbalance };
 }
 
 /** Members of a pinned truss are simple beams under their own load. */
@@ -79,7 +83,8 @@ export function pinResponse(
     member[at + 2] = (-member[at + 8]! * l) / 2;
     member[at + 3] = (-member[at + 9]! * l) / 2;
   });
-  return { member, displacements: result.displacements, reactions: result.reactions };
+  const { displacements, reactions, imbalance } = result;
+  return { member, displacements, reactions, imbalance };
 }
 
 function setLoads(member: Float64Array, e: number, c: LoadCase, axes: FrameMember['axes']): void {
@@ -108,6 +113,7 @@ export function combine(responses: readonly Response[], factors: readonly (reado
     member: sum((r) => r.member),
     displacements: sum((r) => r.displacements),
     reactions: sum((r) => r.reactions),
+    imbalance: sum((r) => r.imbalance),
   };
 }
 

@@ -29,6 +29,8 @@ export interface FrameResult {
   readonly endForces: Float64Array;
   /** What the supports give, six a node: N, N mm. */
   readonly reactions: Float64Array;
+  /** What is left of member end forces and loads at the free freedoms, six a node: N, N mm. */
+  readonly imbalance: Float64Array;
   readonly residual: number;
 }
 
@@ -94,6 +96,7 @@ export function solveFrame(
       displacements,
       endForces,
       reactions: balance.map((v, k) => (frame.fixed[k] ? v + 0 : 0)),
+      imbalance: balance.map((v, k) => (frame.fixed[k] ? 0 : 0 - v)),
       residual: residual[i],
     };
   });

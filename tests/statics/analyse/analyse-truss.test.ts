@@ -133,6 +133,15 @@ describe('rigid joints', () => {
   });
 });
 
+it.each(['pinned', 'rigid'] as const)('the balance of a case counts bending and line loads (%s)', (joints) => {
+  const r = run(tripod([5, 3, -20]), { analysis: { joints } } as never);
+  const e = r.equilibrium!;
+  expect(e.case).toBe('given');
+  expect(e.maxRelative).toBeLessThan(1e-9);
+  expect(e.whole.relative).toBeLessThan(1e-9);
+  expect(e.reactions.reduce((sum, s) => sum + s.force[2], 0)).toBeCloseTo(20, 8);
+});
+
 describe('what cannot stand', () => {
   it('a strut on one foot can swing: a stop, not a number', () => {
     const truss = trussOf({
