@@ -1,9 +1,13 @@
+import { readFileSync } from 'node:fs';
 import type { PackRecords } from '../../src/documents/records.js';
 import { cross, distance, dot, normalise, subtract } from '../../src/maths/vec3.js';
 import { defaultJob, type Job } from '../../src/model/job/index.js';
 import type { PanelPart, Point2 } from '../../src/model/parts.js';
 import type { Truss } from '../../src/model/truss.js';
 import { assess } from '../../src/pipeline/assess.js';
+import { readJob } from '../../src/readers/job.js';
+import { readTruss } from '../../src/readers/truss.js';
+import { analyseTruss } from '../../src/statics/analyse/analyse-truss.js';
 import { inventedTruss } from './invented.js';
 
 /** The records of a pack of the invented truss, by the program's own stages; panels are the bare faces. */
@@ -25,6 +29,17 @@ export function packRecords(change: Partial<Job> = {}, truss: Truss = inventedTr
     nesting: null,
     beds: null,
   };
+}
+
+/** The committed example of a loaded canopy, with its analysis. */
+export function canopyRecords(change: (truss: Truss) => Truss = (truss) => truss): PackRecords {
+  const text = (name: string): string =>
+    readFileSync(new URL(`../../examples/canopy/${name}`, import.meta.url), 'utf8');
+  const truss = change(readTruss(text('truss.json'), 'truss.json').truss!);
+  const records = packRecords(readJob(text('job.json'), 'job.json').job!, truss);
+  const { topology, job, parts, forms, forces } = records;
+  const { solution } = analyseTruss({ topology, job, parts, forms, given: forces?.values ?? null });
+  return { ...records, solution };
 }
 
 function barePanels(truss: Truss): PanelPart[] {

@@ -14,7 +14,7 @@ import { cutListPdf } from '../../src/documents/struts/cut-list-pdf.js';
 import { loadFonts } from '../../src/machine/fonts.js';
 import { add, cross, scale, type Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob } from '../../src/model/job/index.js';
-import { packRecords } from './pack-records.js';
+import { canopyRecords, packRecords } from './pack-records.js';
 import { checkPdf, outside, overlaps, textOf } from './pdf.js';
 
 const fonts = await loadFonts();
@@ -52,6 +52,24 @@ describe('papers of a pack', () => {
       records.findings.map((f) => f.subject).filter((s) => s !== 'truss'),
     );
     expect(text).toContain('On hold');
+  });
+  it('the report draws deflection, buckling and mechanisms where there are any', async () => {
+    const standing = holds(await report(canopyRecords(), fonts));
+    expect(standing).toContain('Deflected shape');
+    expect(standing).toContain('Lowest buckling shape');
+    expect(standing).not.toContain('Mechanism 1');
+    const short = holds(
+      await report(
+        // A corner held by three struts swings once one of them is gone.
+        canopyRecords((truss) => ({ ...truss, members: truss.members.filter((m) => m.mark !== 'S02') })),
+        fonts,
+      ),
+    );
+    expect(short).toContain('Mechanism 1 of');
+  });
+  it('force sheets of a loaded truss show its loads', async () => {
+    const text = holds(await forceSheets(canopyRecords(), fonts));
+    expect(text).toContain('24.00 N');
   });
   it.each(['A3', 'Letter'] as const)('all hold on %s in inches and pounds', async (paper) => {
     const us = packRecords({

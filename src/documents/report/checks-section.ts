@@ -1,6 +1,7 @@
 import type { Flow } from '../kit/flow.js';
 import { fixed, type Units } from '../kit/units.js';
 import type { PackRecords } from '../records.js';
+import { MECHANISMS_SHOWN } from './pictures/mechanisms.js';
 
 /** What was checked and how it came out, in words; then what was not checked. */
 export function checksSection(flow: Flow, records: PackRecords, units: Units): void {
@@ -21,9 +22,11 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
   const counts = solution?.counts;
   if (counts) {
     flow.paragraph(
-      `As a pin-jointed figure on its supports the truss has ${counts.selfStressStates} states of self-stress, ${counts.mechanisms} mechanisms and ${counts.rigidBody} rigid-body freedoms left.`,
+      `As a pin-jointed figure on its supports the truss has ${plural(counts.selfStressStates, 'state')} of self-stress, ${plural(counts.mechanisms, 'mechanism')} and ${plural(counts.rigidBody, 'rigid-body freedom')} left.`,
     );
-    for (const note of counts.mechanismNotes) flow.paragraph(`Mechanism: ${note.words}.`);
+    for (const note of counts.mechanismNotes.slice(0, MECHANISMS_SHOWN)) flow.paragraph(`Mechanism: ${note.words}.`);
+    const more = counts.mechanismNotes.length - MECHANISMS_SHOWN;
+    if (more > 0) flow.paragraph(`And ${more} more mechanisms of this kind.`);
   }
   for (const buckling of solution?.buckling ?? [])
     if (buckling.factors[0] !== undefined)
@@ -33,6 +36,8 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
   flow.paragraph(`Checked: ${checked.length > 0 ? checked.join(', ') : 'nothing'}.`);
   if (notChecked.length > 0) flow.paragraph(`Not checked: ${notChecked.join(', ')}.`, { bold: true });
 }
+
+const plural = (n: number, word: string): string => `${n === 0 ? 'no' : n} ${word}${n === 1 ? '' : 's'}`;
 
 /** What no sheet and no eye can tell from flat, mm. */
 const FLAT = 0.001;

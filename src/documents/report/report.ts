@@ -8,7 +8,7 @@ import { largestForce } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
 import { checksSection } from './checks-section.js';
 import { findingsSection } from './findings-section.js';
-import { picturesSection } from './pictures-section.js';
+import { picturesSection } from './pictures/index.js';
 import { totalsSection } from './totals-section.js';
 import { utilisationSection } from './utilisation-section.js';
 
