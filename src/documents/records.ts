@@ -1,4 +1,5 @@
 import type { FaceForm } from '../detailing/faces.js';
+import type { AssemblyPlan } from '../model/assembly.js';
 import type { Finding } from '../model/finding.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
@@ -49,4 +50,5 @@ export interface PackRecords extends Assessment {
   readonly stock: StockPlan | null;
   readonly nesting: NestingPlan | null;
   readonly beds: BedPlan | null;
+  readonly assembly: AssemblyPlan | null;
 }

@@ -33,6 +33,8 @@ export interface AssemblyStep {
   readonly hold_min: number;
   /** Largest deflection of what stands under its own weight, mm; null where it was not computed. */
   readonly deflection_mm: number | null;
+  /** What stands can move without straining, even with its props. */
+  readonly unstable: boolean;
   /** Whether a hand (and a driver, where joints are screwed or pinned) reaches every new hub. */
   readonly access: boolean;
   /** Of the parts of this step, kg. */

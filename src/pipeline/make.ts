@@ -4,6 +4,7 @@ import { runHere } from '../machine/run-here.js';
 import type { Job } from '../model/job/index.js';
 import type { Run } from '../model/run.js';
 import type { Truss } from '../model/truss.js';
+import { planAssembly } from '../planning/assembly/plan-assembly.js';
 import { assess } from './assess.js';
 import { cutParts } from './digests.js';
 import type { Input } from './load.js';
@@ -46,11 +47,20 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   const bars = await planBars(assessed.parts.struts, job);
   const sheets = await planSheets(assessed.parts.panels, job);
 
+  const assembly = planAssembly(assessed);
+
   const settled = settle({
     ...assessed,
-    found: [...assessed.found, ...hubs.findings, ...bars.findings, ...sheets.findings],
+    found: [...assessed.found, ...hubs.findings, ...bars.findings, ...sheets.findings, ...assembly.findings],
   });
-  const records: PackRecords = { ...settled, made: hubs.made, stock: bars.plan, nesting: sheets.plan, beds };
+  const records: PackRecords = {
+    ...settled,
+    made: hubs.made,
+    stock: bars.plan,
+    nesting: sheets.plan,
+    beds,
+    assembly: assembly.plan,
+  };
 
   const cutting = await writeSheetFiles(records, writer);
   await writeDocuments(records, await loadFonts(), writer, run);

@@ -28,6 +28,7 @@ export function packRecords(change: Partial<Job> = {}, truss: Truss = inventedTr
     stock: null,
     nesting: null,
     beds: null,
+    assembly: null,
   };
 }
 

@@ -21,6 +21,14 @@ export const ASSEMBLY_FINDINGS = {
     () =>
       'cannot get in between its two hubs once they stand; give one of its ends a closing detail (drop-in or slide) under "struts", or clamp a hub',
   ),
+  'step-unstable': entry(
+    'stop',
+    'truss',
+    '',
+    (f) =>
+      `what stands after step ${num(f.value, 0)} can move freely, props and all; glue or pin the sockets, or add supports`,
+    { waivable: false },
+  ),
   'hub-out-of-reach': entry(
     'note',
     'node',

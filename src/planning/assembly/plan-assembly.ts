@@ -5,12 +5,13 @@ import { finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { Parts } from '../../model/parts.js';
 import type { Topology } from '../../model/topology.js';
+import { piecesOf } from '../../statics/analyse/figure.js';
 import { hasAccess } from './access.js';
 import { packBags, sparesOf } from './bags.js';
 import { benchUnits } from './bench-units.js';
-import { pieces } from './pieces.js';
 import { isHeld, orderPiece, type PieceOrder } from './search.js';
 import { type AssemblySetting, assemblySetting, type Link } from './setting.js';
+import { standsAs } from './stands.js';
 
 /** Largest deflection, mm, of what stands under its own weight; null where it cannot be computed. Nodes and struts by index. */
 export type Deflection = (
@@ -25,7 +26,6 @@ export interface AssemblyInput {
   readonly job: Job;
   /** By face index. */
   readonly forms: readonly FaceForm[];
-  readonly deflection: Deflection | null;
 }
 
 /** Deflections are computed at most this many times in an order, evenly spread, so that time stays in bounds. */
@@ -43,10 +43,10 @@ export function planAssembly(input: AssemblyInput): {
   const findings: Finding[] = [];
   const { start } = input.job.assembly;
   if (start !== undefined && !input.topology.nodeIndex.has(start)) findings.push(finding('start-unknown', start));
-  const found = pieces(setting);
+  const found = piecesOf(input.topology);
   if (found.length > 1) findings.push(finding('truss-in-pieces', 'truss', { value: found.length, limit: 1 }));
   const steps: AssemblyStep[] = [];
-  for (const piece of found) pieceSteps(setting, orderPiece(setting, piece, input.job.seed), input.deflection, steps);
+  for (const piece of found) pieceSteps(setting, orderPiece(setting, piece, input.job.seed), steps);
   panelSteps(setting, input.forms, steps);
 
   const closing = steps.flatMap((s) => s.struts.filter((e) => e.entry === 'blocked' || e.entry === 'detail'));
@@ -54,6 +54,7 @@ export function planAssembly(input: AssemblyInput): {
   for (const s of steps) {
     if (!s.access)
       for (const hub of s.hubs) findings.push(finding('hub-out-of-reach', hub, { about: { step: s.number } }));
+    if (s.unstable) findings.push(finding('step-unstable', 'truss', { value: s.number }));
     for (const prop of s.props) findings.push(finding('node-needs-prop', prop, { about: { step: s.number } }));
   }
   return {
@@ -68,12 +69,7 @@ export function planAssembly(input: AssemblyInput): {
   };
 }
 
-function pieceSteps(
-  setting: AssemblySetting,
-  order: PieceOrder,
-  deflection: Deflection | null,
-  steps: AssemblyStep[],
-): void {
+function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: AssemblyStep[]): void {
   const { topology, job, parts } = setting;
   const mark = (node: number): string => topology.truss.nodes[node]!.mark;
   const hubOf = new Map(parts.hubs.map((h) => [h.mark, h]));
@@ -96,7 +92,8 @@ function pieceSteps(
     for (const n of release) propped.delete(n);
     for (const n of props) propped.add(n);
     const number = steps.length + 1;
-    const measured = deflection !== null && (last || number % every === 0);
+    const measured = last || number % every === 0;
+    const stands = measured ? standsAs(setting, nodes, standing, [...propped], order.start.nodes) : null;
     const strutMass = new Map(parts.struts.map((s) => [s.mark, s.mass ?? 0]));
     steps.push({
       number,
@@ -107,13 +104,8 @@ function pieceSteps(
       props: props.map(mark),
       release: release.map(mark),
       hold_min: glued && entries.length > 0 ? job.assembly.hold_min : 0,
-      deflection_mm: measured
-        ? deflection(
-            nodes,
-            standing.map((l) => l.strut),
-            [...propped],
-          )
-        : null,
+      deflection_mm: typeof stands === 'number' ? stands : null,
+      unstable: stands === 'unstable',
       access: hubs.every((n) => {
         const hub = hubOf.get(mark(n));
         return !hub || hasAccess(setting, hub, standing);
@@ -167,6 +159,7 @@ function panelSteps(setting: AssemblySetting, forms: readonly FaceForm[], steps:
       release: [],
       hold_min: 0,
       deflection_mm: null,
+      unstable: false,
       access: true,
       mass_kg: panel.mass ?? 0,
     });
