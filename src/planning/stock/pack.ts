@@ -19,6 +19,8 @@ const NOTHING_LEFT = 1e-9;
 const WHOLE = 1e-6;
 /** Share of the bars still to be cut that one step of a dive settles. */
 const BARS_A_STEP = 0.04;
+/** Dead ends from one repair to the next: it costs as much as several dives where bars are few and nearly full. */
+const REPAIR_EVERY = 4;
 
 /**
  * Looks for a plan that cuts all pieces from exactly these bars, by diving: the linear programme is solved, its whole bars
@@ -86,6 +88,7 @@ export class Packer {
     const runs: Run[] = [];
     let jump = 1;
     let chances = backtracks;
+    let deadEnds = 0;
     let loose = !first;
     for (;;) {
       if (left.every((d) => d === 0)) return runs;
@@ -93,7 +96,7 @@ export class Packer {
       this.master.remain(left, stock);
       const g = generate(this.master, this.pricer, problem, left, stock, this.aimFor(stock), this.costs, meter);
       if (g.state !== 'reached') {
-        const mended = repair(problem, runs, left, stock, random, meter);
+        const mended = deadEnds++ % REPAIR_EVERY === 0 ? repair(problem, runs, left, stock, random, meter) : undefined;
         if (mended) return mended;
         if (chances-- <= 0 || stack.length === 0) return undefined;
         const to = Math.max(0, stack.length - jump);

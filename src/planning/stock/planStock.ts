@@ -8,8 +8,14 @@ import { solveCutting } from './solve.js';
 import { linearSolver } from './solver.js';
 import { STEPS_PER_MM, stepsDown, stepsUp, wholePrices } from './steps.js';
 
-/** Work of the usual search: half a minute on one core at the hardest, most jobs end in less than a second. */
-const USUAL_EFFORT = 20e6;
+/**
+ * Work of the usual search, in microseconds of a desk computer of 2020; most jobs end in less than a second. One kind of
+ * bar: half a minute at the hardest. Several: a quarter of a minute, and more for more pieces.
+ */
+const ONE_KIND_EFFORT = 25e6;
+const EFFORT = 6e6;
+const EFFORT_A_PIECE = 30e3;
+const MOST_EFFORT = 70e6;
 
 const gcd = (a: number, b: number): number => (b === 0 ? a : gcd(b, a % b));
 
@@ -27,11 +33,6 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
   if (faults.some((f) => !f.place.startsWith('pieces['))) return { ...nothing, faults };
   const bad = new Set(faults.map((f) => f.place));
   const end = request.timeLimitMs !== undefined && clock ? clock() + request.timeLimitMs : undefined;
-  const effort = new Effort(
-    USUAL_EFFORT * (request.effort ?? 1),
-    end !== undefined && clock ? () => clock() >= end : undefined,
-  );
-
   const kerf = stepsUp(request.kerf);
   const room = (s: StockKind): number =>
     stepsDown(s.length) - stepsUp(request.endTrim ?? 0) * (s.trimmedEnds ?? request.trimmedEnds ?? 1);
@@ -69,6 +70,12 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
     })),
   );
   const real = problem.bins.length;
+  const count = problem.demand.reduce((sum, d) => sum + d, 0);
+  const usual = real === 1 ? ONE_KIND_EFFORT : Math.min(EFFORT + EFFORT_A_PIECE * count, MOST_EFFORT);
+  const effort = new Effort(
+    usual * (request.effort ?? 1),
+    end !== undefined && clock ? () => clock() >= end : undefined,
+  );
   const solved = solveCutting(await linearSolver(), withSubstitute(problem), request.seed ?? 1, effort);
   const laid = layOut(
     recover(problem, solved.runs),

@@ -9,11 +9,11 @@ interface Bar {
   room: number;
 }
 
-/** Nodes of one search for the fullest bar: few at first, more once that gains nothing. */
-const FILL_NODES = [500, 4_000, 20_000];
+/** Nodes of one search for the fullest bar; a bar of a dozen pieces is nearly always filled to the last step or two. */
+const FILL_NODES = 500;
 /** Losses of squared room that pass with a fair chance, as a share of the largest room's square (simulated annealing at one temperature). */
 const WARMTH = 0.002;
-/** Moves without gain, beside some for each bar, before the search looks deeper, or gives up. */
+/** Moves without gain, beside some for each bar, before the search gives up. */
 const PATIENCE = 1500;
 const PATIENCE_A_BAR = 25;
 
@@ -60,13 +60,9 @@ export function repair(
   const patience = PATIENCE + PATIENCE_A_BAR * bars.length;
   let spread = bars.reduce((sum, b) => sum + b.room * b.room, 0);
   let highest = spread;
-  let depth = 0;
   for (let idle = 0; leftWeight > 0; idle++) {
     if (meter.exhausted) return undefined;
-    if (idle > patience) {
-      if (++depth >= FILL_NODES.length) break;
-      idle = 0;
-    }
+    if (idle > patience) break;
     const few = Math.min(bars.length, random() < 0.5 ? 2 : 3);
     const chosen: Bar[] = [];
     // Half the time the bar with most room takes part, since that is where the rest has to go, and half the time one of
@@ -96,7 +92,7 @@ export function repair(
       const fill = fills[c]!;
       const capacity = bins[chosen[c]!.bin]!.capacity;
       // The first bars are filled to the brim; what remains must go on the last.
-      const room = fullest(weights, pool, capacity, fill, list, FILL_NODES[depth]!, random, meter);
+      const room = fullest(weights, pool, capacity, fill, list, random, meter);
       for (let i = 0; i < pool.length; i++) pool[i]! -= fill[i]!;
       rooms.push(room);
       after += room * room;
@@ -133,7 +129,6 @@ function fullest(
   capacity: number,
   fill: Int32Array,
   list: Int32Array,
-  nodeLimit: number,
   random: Random,
   meter: Meter,
 ): number {
@@ -160,7 +155,7 @@ function fullest(
       for (let j = 0; j < k; j++) fill[list[j]!] = taken[j]!;
       if (room === 0) return true;
     }
-    if (k === n || ++nodes > nodeLimit) return nodes > nodeLimit;
+    if (k === n || ++nodes > FILL_NODES) return nodes > FILL_NODES;
     // Even all the rest would not fill the bar better.
     if (room - after[k]! >= best) return false;
     const w = weights[list[k]!]!;
