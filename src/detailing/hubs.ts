@@ -8,6 +8,7 @@ import type { HubPart, Socket, StrutPart } from '../model/parts.js';
 import type { Section } from '../model/section.js';
 import type { Topology } from '../model/topology.js';
 import { nodeSystem } from './systems/index.js';
+import { clearance, measuredSize } from './systems/printing.js';
 import type { BarEnd, NodeSystem } from './systems/system.js';
 
 export interface DetailedHubs {
@@ -32,6 +33,10 @@ export function detailHubs(
   const middle = mean(topology.truss.nodes.map((n) => n.at));
   const material = materialNamed(job, job.nodes.material);
   if (!material) findings.push(finding('node-material-unknown', 'truss', { about: { material: job.nodes.material } }));
+
+  const bored = sections.find((s) => s !== null);
+  if (bored && !job.nodes.clearanceMeasured)
+    findings.push(finding('clearance-not-measured', 'truss', { value: clearance(job, measuredSize(bored)) }));
 
   const drafts: Draft[] = [];
   topology.truss.nodes.forEach((node, i) => {

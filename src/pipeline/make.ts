@@ -13,6 +13,7 @@ import { packWriter, type WriteFile } from './pack-writer.js';
 import { settle } from './settle.js';
 import { writeBeds } from './stages/beds.js';
 import { writeDocuments } from './stages/documents.js';
+import { writeGauges } from './stages/gauge.js';
 import { makeHubs } from './stages/hubs.js';
 import { writeSheetFiles } from './stages/sheet-files.js';
 import { planSheets } from './stages/sheets.js';
@@ -43,6 +44,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   const assessed = assess(truss, job);
 
   const hubs = await makeHubs(assessed, run, writer);
+  const gauges = await writeGauges(assessed.parts.struts, job, writer);
   const beds = await writeBeds(hubs.printable, job, writer);
   const bars = await planBars(assessed.parts.struts, job);
   const sheets = await planSheets(assessed.parts.panels, job);
@@ -67,7 +69,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
 
   const manifest = manifestOf(records, hubs.made, {
     inputs: options.inputs ?? [],
-    parts: [...cutParts(records.parts, (p) => cutting.filesOf(p.mark)), ...hubs.parts],
+    parts: [...cutParts(records.parts, (p) => cutting.filesOf(p.mark)), ...hubs.parts, ...gauges],
     files: writer.files(),
     withheld: [...hubs.withheld, ...cutting.withheld],
   });

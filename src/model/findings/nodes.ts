@@ -74,4 +74,11 @@ export const NODE_FINDINGS = {
     (f) =>
       `${num((f.value ?? 0) * 100, 0)} % of its surface overhangs steeper than 45° in the best orientation; print it with supports`,
   ),
+  'clearance-not-measured': entry(
+    'note',
+    'truss',
+    'mm',
+    (f) =>
+      `the sockets' clearance of ${num(f.value, 2)} mm is a starting value and not measured; print the fit gauge, then set nodes.clearance_mm and nodes.clearanceMeasured`,
+  ),
 } as const;
