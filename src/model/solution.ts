@@ -35,6 +35,8 @@ export interface MemberActions {
   readonly torsion: number;
   /** Shortest load duration class in the combination (EN 1995-1-1 3.1.3 (2)). */
   readonly duration: 'permanent' | 'long' | 'medium' | 'short' | 'instantaneous';
+  /** Moments about local y and z at the "from" end and at the "to" end, where its sockets begin, absolute; absent: not known apart. */
+  readonly endMoments?: readonly [readonly [number, number], readonly [number, number]];
 }
 
 export interface MechanismNote {

@@ -28,19 +28,24 @@ export function* socketsWithCases(
       const part = i === undefined ? undefined : parts.struts[i];
       const strut = part?.material;
       if (!part || !strut) continue;
-      const float = part.ends.find((e) => e.node === hub.mark)?.float ?? job.saw.endFloat_mm;
+      const end = part.ends[0].node === hub.mark ? 0 : 1;
+      const float = part.ends[end].float ?? job.saw.endFloat_mm;
       const cases = (actions[i!] ?? []).map((a) => ({
         socket,
         strut,
         hub: hub.material,
         float,
-        actions: a,
+        actions: atEnd(a, end),
         rules,
         bond,
       }));
       if (cases.length > 0) yield { hub, socket, cases };
     }
 }
+
+/** The actions as one end feels them: its own moments where they are known. */
+const atEnd = (a: MemberActions, end: 0 | 1): MemberActions =>
+  a.endMoments ? { ...a, momentY: a.endMoments[end][0], momentZ: a.endMoments[end][1] } : a;
 
 /** Utilisation of every socket, by the path that its joint names; findings above 1 and where there is no path. */
 export function judgeSockets(

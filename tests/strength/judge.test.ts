@@ -2,9 +2,21 @@ import { describe, expect, it } from 'vitest';
 import { materialNamed, sectionNamed } from '../../src/model/catalogue/resolve.js';
 import { defaultJob, type Job, jobSchema } from '../../src/model/job/index.js';
 import type { HubPart, Joint, Parts, Socket, StrutPart } from '../../src/model/parts.js';
+import type { MemberActions, Solution } from '../../src/model/solution.js';
 import type { Truss } from '../../src/model/truss.js';
+import { axialOnly } from '../../src/strength/actions.js';
 import { judge } from '../../src/strength/judge.js';
 
+const NO_SOLUTION: Solution = {
+  counts: null,
+  cases: [],
+  combinations: [],
+  actions: [],
+  buckling: [],
+  solveResidual: null,
+  checked: [],
+  notChecked: [],
+};
 const FORCES_OF_FILE = { forces: null, solution: null };
 
 /** Two invented nodes L mm apart with one strut, and its sockets. */
@@ -217,5 +229,29 @@ describe('what the use asks for', () => {
     const found = codes(job);
     for (const code of ['connectors-untested', 'softening-low', 'service-class-missing'])
       expect(found).not.toContain(code);
+  });
+});
+
+describe('moments at the ends', () => {
+  it('each socket feels its own end’s moment, the strut the largest between them', () => {
+    const job = defaultJob();
+    const { truss, parts } = oneStrut(job, 0);
+    const action: MemberActions = {
+      ...axialOnly('G', 10, 'permanent'),
+      momentY: 900,
+      endMoments: [
+        [100, 0],
+        [400, 300],
+      ],
+    };
+    const solution = { ...NO_SOLUTION, actions: [[action]] };
+    const unforced = { ...truss, members: truss.members.map((m) => ({ ...m, force: null })) };
+    const { utilisations } = judge(unforced, parts, { forces: null, solution }, job);
+    const of = (at: string | null): number => utilisations.find((u) => u.at === at)!.utilisation;
+    // By hand: pressure 6 M / (d L²) = 6 x 500 / (8 x 13.25²) MPa on plastic of 47 / 4 MPa, wall (pi/32)(12.45⁴ - 8.45⁴)/12.45 = 149.4 mm³.
+    expect(of('B')).toBeGreaterThan(of('A'));
+    const wall = 10 / 65.66 / 5.875 + 500 / 149.4 / 5.875;
+    expect(of('B')).toBeCloseTo(wall, 2);
+    expect(of(null)).toBeGreaterThan((3 * 900) / 50.27 / 55);
   });
 });

@@ -140,12 +140,15 @@ export function actionsOf(
     PER_MEMBER * e,
     PER_MEMBER * e + PER_MEMBER,
   );
+  // Forces on the first end: M(x) = -m1 + sign (v x + w x²/2), extreme where v + w x = 0.
+  const at = (x: number, m1: number, v: number, w: number, sign: 1 | -1): number =>
+    Math.abs(-m1 + sign * (v * x + (w * x * x) / 2));
   const bend = (m1: number, v: number, w: number, sign: 1 | -1): number => {
-    // Forces on the first end: M(x) = -m1 + sign (v x + w x²/2), extreme where v + w x = 0.
-    const at = (x: number): number => Math.abs(-m1 + sign * (v * x + (w * x * x) / 2));
     const peak = w !== 0 ? -v / w : from;
-    return Math.max(at(from), at(to), peak > from && peak < to ? at(peak) : 0);
+    const between = peak > from && peak < to ? at(peak, m1, v, w, sign) : 0;
+    return Math.max(at(from, m1, v, w, sign), at(to, m1, v, w, sign), between);
   };
+  const endMoments = (x: number): readonly [number, number] => [at(x, my, vz, wz, -1), at(x, mz, vy, wy, 1)];
   const shear = (v: number, w: number): number => Math.max(Math.abs(v + w * from), Math.abs(v + w * to));
   return {
     combination,
@@ -156,5 +159,6 @@ export function actionsOf(
     momentZ: bend(mz, vy, wy, 1) + Math.abs(extraZ),
     torsion: Math.abs(t),
     duration,
+    endMoments: [endMoments(from), endMoments(to)],
   };
 }
