@@ -28,3 +28,19 @@ export function woodLimit(
   const ultimate = material.strength[symbol];
   return ultimate === undefined ? null : ultimate / rules.factor;
 }
+
+/**
+ * What a hub of a material may carry, MPa; null: not known. Wood by its own rule; a print by the plastic's, `ftZ` being tension
+ * across its layers, whatever way it is printed.
+ */
+export function hubLimit(
+  hub: Material,
+  symbol: 'ft' | 'ftZ' | 'fc' | 'fv',
+  duration: Duration,
+  rules: Rules,
+): number | null {
+  if (hub.family === 'timber' || hub.family === 'glulam')
+    return woodLimit(hub, symbol === 'ftZ' ? 'ft' : symbol, duration, rules);
+  const strength = hub.strength[symbol] ?? (symbol === 'ftZ' ? hub.strength['ft'] : undefined);
+  return strength === undefined ? null : plasticLimit(strength, duration, rules);
+}

@@ -1,3 +1,4 @@
+import { nodeSystem } from '../detailing/systems/index.js';
 import { GLUE_LINE } from '../model/catalogue/glue.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
@@ -5,7 +6,7 @@ import type { Job } from '../model/job/index.js';
 import type { HubPart, Parts, Socket } from '../model/parts.js';
 import type { MemberActions, Utilisation } from '../model/solution.js';
 import type { Judged } from './members.js';
-import type { SocketCase } from './socket/case.js';
+import type { SocketCase, SocketPasses } from './socket/case.js';
 import { requiredDepth } from './socket/depth.js';
 import { judgeSocket } from './socket/index.js';
 import type { Rules, Verdict } from './standard.js';
@@ -22,8 +23,9 @@ export function* socketsWithCases(
 ): Generator<{ readonly hub: HubPart; readonly socket: Socket; readonly cases: readonly SocketCase[] }> {
   const strutIndex = new Map(parts.struts.map((s, i) => [s.mark, i]));
   const bond = job.nodes.bondStrength_MPa ?? GLUE_LINE.strength;
-  for (const hub of parts.hubs)
-    for (const socket of hub.sockets) {
+  for (const hub of parts.hubs) {
+    const passes = passesOf(hub, job);
+    for (const [k, socket] of hub.sockets.entries()) {
       const i = strutIndex.get(socket.strut);
       const part = i === undefined ? undefined : parts.struts[i];
       const strut = part?.material;
@@ -35,12 +37,30 @@ export function* socketsWithCases(
         strut,
         hub: hub.material,
         float,
+        passes: passes[k] ?? null,
         actions: atEnd(a, end),
         rules,
         bond,
       }));
       if (cases.length > 0) yield { hub, socket, cases };
     }
+  }
+}
+
+/** Systems whose struts stand in sleeves of their own; the others' hold them on plugs or in solid bodies. */
+const SLEEVES: readonly string[] = ['socket', 'foot', 'clamp'];
+
+/** What each socket of a hub passes force through, in the sockets' order; empty where the hub could not be made. */
+function passesOf(hub: HubPart, job: Job): readonly SocketPasses[] {
+  if (hub.sockets.some((s) => s.setback === null)) return [];
+  const hollow = SLEEVES.includes(hub.system);
+  const strengths = nodeSystem(hub.system)?.strength(hub, job) ?? [];
+  return strengths.map((s, k) => ({
+    wallArea: s.wallArea,
+    bondPerDepth: s.bondArea / hub.sockets[k]!.depth,
+    stopArea: s.stopArea,
+    hollow,
+  }));
 }
 
 /** The actions as one end feels them: its own moments where they are known. */

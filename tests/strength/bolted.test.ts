@@ -37,6 +37,7 @@ const socketCase = (axial: number, more: Partial<BoltedEnd> = {}, shearZ = 0): S
   strut: MATERIALS.get('C24')!,
   hub: MATERIALS.get('PA12-powder')!,
   float: 0,
+  passes: null,
   actions: { ...axialOnly('given', axial, 'medium'), shearZ },
   rules: { serviceClass: 1, factor: 3 },
   bond: 3,

@@ -5,7 +5,7 @@ import { plateInTheMiddle, yieldMoment } from '../en1995/joint/double-shear.js';
 import { embeddingStrength } from '../en1995/joint/embedding.js';
 import { effectiveNumber, leastDistances } from '../en1995/joint/row.js';
 import { splittingCapacity } from '../en1995/joint/splitting.js';
-import { plasticLimit, woodLimit } from '../limits.js';
+import { hubLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
 import { strutArea } from './geometry.js';
@@ -38,12 +38,8 @@ export const bolted: SocketPath = (c) => {
       across / (factor * splittingCapacity(2 * timber, depth, depth / 2)),
       'EN 1995-1-1 8.1.4 (8.4), splitting at the bolts',
     );
-  const crush = hub.strength['fc'];
-  if (crush !== undefined)
-    push(
-      force / (end.bolts * end.diameter * end.plate * plasticLimit(crush, actions.duration, rules)),
-      'bearing of the bolts in the plate',
-    );
+  const crush = hubLimit(hub, 'fc', actions.duration, rules);
+  if (crush !== null) push(force / (end.bolts * end.diameter * end.plate * crush), 'bearing of the bolts in the plate');
   const hole = end.diameter + HOLE_OVER;
   const least = leastDistances(end.diameter);
   if (end.bolts > 1 && force > 0) push(least.along / end.spacing, 'EN 1995-1-1 table 8.4, distance between bolts');
@@ -53,18 +49,11 @@ export const bolted: SocketPath = (c) => {
     const net = woodLimit(strut, 'ft', actions.duration, rules);
     const left = strutArea(c) - end.slot * depth - 2 * timber * hole;
     if (net !== null) push(force / (left * net), 'EN 1995-1-1 5.2, net section of the slotted end');
-    const pull = hub.strength['ftZ'] ?? hub.strength['ft'];
-    if (pull !== undefined)
-      push(
-        force / ((depth - hole) * end.plate * plasticLimit(pull, actions.duration, rules)),
-        'net section of the plate, across layers',
-      );
-    const shear = hub.strength['fv'];
-    if (shear !== undefined)
-      push(
-        force / (2 * end.bolts * end.plateEnd * end.plate * plasticLimit(shear, actions.duration, rules)),
-        'tear-out of the plate behind its bolts',
-      );
+    const pull = hubLimit(hub, 'ftZ', actions.duration, rules);
+    if (pull !== null) push(force / ((depth - hole) * end.plate * pull), 'net section of the plate, across layers');
+    const shear = hubLimit(hub, 'fv', actions.duration, rules);
+    if (shear !== null)
+      push(force / (2 * end.bolts * end.plateEnd * end.plate * shear), 'tear-out of the plate behind its bolts');
   }
   return checks;
 };

@@ -1,14 +1,14 @@
 import { plasticLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
-import { engaged, perimeter } from './geometry.js';
+import { bondSurface, engaged } from './geometry.js';
 import { GLUE_FRACTURE, gluedRodCapacity } from './glued-rod.js';
 import { sleeveChecks } from './sleeve.js';
 
 /** Glued: the bond on the engaged perimeter carries tension and compression (the strut floats off the stop), then the sleeve. */
 export const glued: SocketPath = (c) => {
   const { actions, rules, bond, strut } = c;
-  const surface = perimeter(c) * engaged(c);
+  const surface = bondSurface(c);
   const force = Math.abs(actions.axial);
   const checks: Verdict[] = [];
   if (surface > 0) {

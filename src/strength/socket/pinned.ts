@@ -2,7 +2,7 @@ import { PIN_STEEL } from '../../model/catalogue/pin.js';
 import { GAMMA_M_CONNECTION, kMod } from '../../model/catalogue/timber-factors.js';
 import { PIN_FACTORS, pinBearing, pinUse } from '../en1993/pin.js';
 import { embeddingStrength } from '../en1995/joint/embedding.js';
-import { plasticLimit, woodLimit } from '../limits.js';
+import { hubLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
 import { acrossPin, engaged, sleeve, strutArea } from './geometry.js';
@@ -24,9 +24,8 @@ export const pinned: SocketPath = (c) => {
   const checks: Verdict[] = [...pinChecks(c, force)];
   const push = (utilisation: number, rule: string): void => void checks.push({ utilisation, rule });
 
-  const crush = hub.strength['fc'];
-  if (crush !== undefined)
-    push(force / (2 * d * wall * plasticLimit(crush, duration, rules)), 'bearing of the pin on the socket walls');
+  const crush = hubLimit(hub, 'fc', duration, rules);
+  if (crush !== null) push(force / (2 * d * wall * crush), 'bearing of the pin on the socket walls');
   const wood = woodBearing(c);
   if (wood !== null) push(force / (d * t * wood), 'EN 1995-1-1 8.5.1.1 (8.16), bearing of the pin on the strut');
   const { shape } = socket.section;
@@ -46,12 +45,8 @@ export const pinned: SocketPath = (c) => {
     const plug = woodLimit(strut, 'fv', duration, rules);
     if (plug !== null)
       push(end > 0 ? force / (2 * end * t * plug) : NO_END_DISTANCE, 'plug shear of the strut behind the pin');
-    const plastic = hub.strength['fv'];
-    if (plastic !== undefined)
-      push(
-        force / (4 * (socket.depth / 2) * wall * plasticLimit(plastic, duration, rules)),
-        'plug shear of the socket walls',
-      );
+    const plastic = hubLimit(hub, 'fv', duration, rules);
+    if (plastic !== null) push(force / (4 * (socket.depth / 2) * wall * plastic), 'plug shear of the socket walls');
   }
   return [...checks, ...sleeveChecks(c, sleeve(c).area - 2 * d * wall)];
 };

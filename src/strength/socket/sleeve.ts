@@ -1,4 +1,4 @@
-import { plasticLimit, woodLimit } from '../limits.js';
+import { hubLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase } from './case.js';
 import { acrossPin, engaged, sleeve } from './geometry.js';
@@ -10,28 +10,26 @@ import { acrossPin, engaged, sleeve } from './geometry.js';
 export function sleeveChecks(c: SocketCase, area = sleeve(c).area): Verdict[] {
   const { actions, hub, rules, strut } = c;
   const { duration } = actions;
-  const strength = actions.axial >= 0 ? (hub.strength['ftZ'] ?? hub.strength['ft']) : hub.strength['fc'];
   const checks: Verdict[] = [];
   const moment = Math.hypot(actions.momentY, actions.momentZ);
-  if (strength !== undefined) {
-    const bent = hub.strength['ftZ'] ?? strength;
+  const along = hubLimit(hub, actions.axial >= 0 ? 'ftZ' : 'fc', duration, rules);
+  const bent = hubLimit(hub, 'ftZ', duration, rules) ?? along;
+  if (along !== null && bent !== null)
     checks.push({
-      utilisation:
-        Math.abs(actions.axial) / area / plasticLimit(strength, duration, rules) +
-        moment / sleeve(c).modulus / plasticLimit(bent, duration, rules),
+      utilisation: Math.abs(actions.axial) / area / along + moment / sleeve(c).modulus / bent,
       rule: `socket wall ${actions.axial >= 0 ? 'tension across layers' : 'compression'}${moment > 0 ? ' with bending' : ''}`,
     });
-  }
   if (moment > 0) {
     const pressure = (6 * moment) / (acrossPin(c) * engaged(c) ** 2);
-    const limits = [
-      hub.strength['fc'] === undefined ? null : plasticLimit(hub.strength['fc'], duration, rules),
-      woodLimit(strut, 'fc90', duration, rules),
-    ].filter((l) => l !== null);
-    if (limits.length > 0 && Number.isFinite(pressure))
+    const plastic = hubLimit(hub, 'fc', duration, rules);
+    const wood = woodLimit(strut, 'fc90', duration, rules);
+    if (!Number.isFinite(pressure)) return checks;
+    if (plastic !== null)
+      checks.push({ utilisation: pressure / plastic, rule: 'bearing of the strut on its socket under bending' });
+    if (wood !== null)
       checks.push({
-        utilisation: pressure / Math.min(...limits),
-        rule: 'bearing of the strut in its socket under bending',
+        utilisation: pressure / wood,
+        rule: 'EN 1995-1-1 6.1.5 (6.3), bearing of the socket on the strut',
       });
   }
   return checks;
