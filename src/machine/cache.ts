@@ -1,4 +1,4 @@
-import { readdir, readFile, rename, rm, writeFile } from 'node:fs/promises';
+import { readdir, readFile, rename, rm, stat, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { sha256 } from './hash.js';
 import { makeFolder } from './make-folder.js';
@@ -11,6 +11,8 @@ import { makeFolder } from './make-folder.js';
 export interface Cache {
   /** The bytes kept under a digest (64 hexadecimal digits), or null. */
   get(digest: string): Promise<Uint8Array | null>;
+  /** Whether there is an entry, sound or not. */
+  has(digest: string): Promise<boolean>;
   put(digest: string, bytes: Uint8Array): Promise<void>;
   /** Removes every entry that this run neither read nor wrote. */
   prune(): Promise<void>;
@@ -41,6 +43,11 @@ export async function openCache(folder: string, version: string): Promise<Cache>
       used.add(digest);
       return new Uint8Array(bytes);
     },
+    has: (digest) =>
+      stat(place(digest)).then(
+        () => true,
+        () => false,
+      ),
     async put(digest, bytes) {
       if (!DIGEST.test(digest)) return;
       used.add(digest);

@@ -11,6 +11,7 @@ import type { Input } from './load.js';
 import { type Manifest, manifestOf } from './manifest.js';
 import { packWriter, type WriteFile } from './pack-writer.js';
 import { settle } from './settle.js';
+import { lineageOf, type Since } from './since.js';
 import { writeBeds } from './stages/beds.js';
 import { writeDocuments } from './stages/documents.js';
 import { writeGauges } from './stages/gauge.js';
@@ -28,6 +29,8 @@ export interface MakeOptions {
   readonly each?: Run['each'];
   /** Files that the truss and the job came from, for the manifest. */
   readonly inputs?: readonly Input[];
+  /** The manifest of an earlier pack: only what has changed since is written and planned. */
+  readonly since?: Since;
 }
 
 /**
@@ -43,11 +46,23 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   const writer = packWriter(options.write);
   const assessed = assess(truss, job);
 
-  const hubs = await makeHubs(assessed, run, writer);
+  const lineage = lineageOf(options.since ?? null, job.revision);
+  const cut = cutParts(assessed.parts, lineage);
+  const done = new Set(
+    cut.filter((p) => lineage.unchanged(p.kind, p.mark, p.digest)).map((p) => `${p.kind} ${p.mark}`),
+  );
+
+  const hubs = await makeHubs(assessed, run, writer, lineage);
   const gauges = await writeGauges(assessed.parts.struts, job, writer);
   const beds = await writeBeds(hubs.printable, job, writer);
-  const bars = await planBars(assessed.parts.struts, job);
-  const sheets = await planSheets(assessed.parts.panels, job);
+  const bars = await planBars(
+    assessed.parts.struts.filter((s) => !done.has(`strut ${s.mark}`)),
+    job,
+  );
+  const sheets = await planSheets(
+    assessed.parts.panels.filter((p) => !done.has(`panel ${p.mark}`)),
+    job,
+  );
 
   const assembly = planAssembly(assessed);
 
@@ -57,6 +72,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   });
   const records: PackRecords = {
     ...settled,
+    parts: { ...settled.parts, hubs: hubs.hubs },
     made: hubs.made,
     stock: bars.plan,
     nesting: sheets.plan,
@@ -69,9 +85,14 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
 
   const manifest = manifestOf(records, hubs.made, {
     inputs: options.inputs ?? [],
-    parts: [...cutParts(records.parts, (p) => cutting.filesOf(p.mark)), ...hubs.parts, ...gauges],
+    parts: [
+      ...cut.map((p) => (p.kind === 'panel' ? { ...p, files: cutting.filesOf(p.mark) } : p)),
+      ...hubs.parts,
+      ...gauges,
+    ],
     files: writer.files(),
-    withheld: [...hubs.withheld, ...cutting.withheld],
+    withheld: [...hubs.withheld, ...cutting.withheld.filter((mark) => !done.has(`panel ${mark}`))],
+    since: options.since && { title: options.since.title, revision: options.since.revision },
   });
   await options.write('manifest.json', new TextEncoder().encode(`${JSON.stringify(manifest, null, 2)}\n`));
   return manifest;

@@ -15,6 +15,8 @@ export interface Manifest {
   readonly hold: readonly string[];
   /** Parts whose machine files are withheld, by mark. */
   readonly withheld: readonly string[];
+  /** The earlier issue whose unchanged parts are not in this pack's machine files and plans. */
+  readonly since?: { readonly title: string; readonly revision: string };
   readonly inputs: readonly Input[];
   /** State of the kerf in the sheets' machine files. */
   readonly kerf: { readonly kerf_mm: number; readonly measured: boolean; readonly compensated: 'here' | 'shop' };
@@ -44,6 +46,7 @@ export function manifestOf(
     readonly parts: readonly PackPart[];
     readonly files: readonly PackFile[];
     readonly withheld: readonly string[];
+    readonly since?: Manifest['since'];
   },
 ): Manifest {
   return {
@@ -55,6 +58,7 @@ export function manifestOf(
     status: a.status,
     hold: a.hold,
     withheld: made.withheld,
+    ...(made.since ? { since: made.since } : {}),
     inputs: made.inputs,
     kerf: {
       kerf_mm: a.job.cutter.kerf_mm,

@@ -13,6 +13,10 @@ export interface PackPart {
   readonly kind: PartKind;
   /** Over what is made, not over where it stands; null where its machine file is withheld. */
   readonly digest: string | null;
+  /** The same without labels: parts of one form differ in their letters at most. */
+  readonly form: string | null;
+  /** Revision letter of the part's own last change. */
+  readonly revision: string;
   readonly files: readonly string[];
 }
 

@@ -1,5 +1,4 @@
 import { LENGTH_UNITS, type LengthUnit } from '../../model/units.js';
-import { convertFile } from '../../pipeline/convert.js';
 import { EXIT } from '../exit.js';
 import { sayConversion } from '../terminal/say-conversion.js';
 import type { CliCommand } from './command.js';
@@ -30,6 +29,7 @@ export const convert: CliCommand = {
       for (const line of wrong) terminal.talk(`strutwright: ${line}\n`);
       return EXIT.refused;
     }
+    const { convertFile } = await import('../../pipeline/convert.js');
     const text = (key: string): string | null => (typeof options[key] === 'string' ? (options[key] as string) : null);
     const outcome = await convertFile({
       file: file!,

@@ -1,5 +1,6 @@
 import { check } from './check.js';
 import type { CliCommand } from './command.js';
+import { compare } from './compare.js';
 import { convert } from './convert.js';
 import { make } from './make.js';
 import { mend } from './mend.js';
@@ -7,4 +8,4 @@ import { newJob } from './new.js';
 import { size } from './size.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, make, check, size, mend, convert];
+export const commands: readonly CliCommand[] = [newJob, make, check, size, mend, compare, convert];

@@ -16,7 +16,8 @@ export async function writeGauges(struts: readonly StrutPart[], job: Job, writer
     const bytes = writeStl(piece.positions, piece.triangles, `gauge ${section.name}`);
     const path = `nodes/${mark}.stl`;
     await writer.put(path, bytes);
-    parts.push({ mark, kind: 'gauge', digest: sha256(bytes), files: [path] });
+    const digest = sha256(bytes);
+    parts.push({ mark, kind: 'gauge', digest, form: digest, revision: job.revision, files: [path] });
   }
   return parts;
 }

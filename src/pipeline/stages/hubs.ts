@@ -1,13 +1,19 @@
 import type { Assessment, MadeHub } from '../../documents/records.js';
-import { sha256 } from '../../machine/hash.js';
 import type { Finding } from '../../model/finding.js';
 import { isWithheld, settleFindings } from '../../model/hold.js';
+import type { Job } from '../../model/job/index.js';
+import type { HubPart } from '../../model/parts.js';
 import type { Run } from '../../model/run.js';
+import { digestOf } from '../digests.js';
 import type { PackPart, PackWriter } from '../pack-writer.js';
+import type { Lineage } from '../since.js';
 import type { PrintablePiece } from './beds.js';
+import { type CanonicalHub, canonicalHub, formOf, placeHub } from './canonical-hub.js';
 import { PIECES, type ShapeHubInput, type ShapeHubOutput } from './shape-hub-task.js';
 
 export interface MadeHubs {
+  /** All hubs, each with the revision letter of its own last change. */
+  readonly hubs: readonly HubPart[];
   readonly made: ReadonlyMap<string, MadeHub>;
   readonly findings: readonly Finding[];
   readonly parts: readonly PackPart[];
@@ -17,52 +23,77 @@ export interface MadeHubs {
 }
 
 /** Shapes every hub, writes the STL of each that is sound, and keeps only what papers and beds need of it. */
-export async function makeHubs(a: Assessment, run: Run, writer: PackWriter): Promise<MadeHubs> {
+export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, lineage: Lineage): Promise<MadeHubs> {
   const made = new Map<string, MadeHub>();
   const findings: Finding[] = [];
   const parts: PackPart[] = [];
   const withheld: string[] = [];
   const printable: PrintablePiece[] = [];
   const tension = tensionOf(a);
-  const inputs = a.parts.hubs.map(
-    (hub, i): ShapeHubInput => ({
+  const drafts = a.parts.hubs.map((hub, i) => ({
+    ...draftOf(
       hub,
-      job: a.job,
-      tension: hub.sockets.map((s) => tension.get(s.strut) ?? 0),
-      object: 1 + i * PIECES,
-    }),
+      a.job,
+      hub.sockets.map((s) => tension.get(s.strut) ?? 0),
+      lineage,
+    ),
+    object: 1 + i * PIECES,
+  }));
+  const again = drafts.filter((d) => !d.unchanged);
+  for (const { part } of drafts.filter((d) => d.unchanged)) parts.push(part);
+  await run.each<ShapeHubInput, ShapeHubOutput>(
+    'shape-hub',
+    again.map((d) => ({ ...d.input, object: d.object })),
+    async (output, index) => {
+      const { hub, part, toTruss } = again[index]!;
+      const shaped = placeHub(output.shaped, toTruss);
+      findings.push(...shaped.findings);
+      const own = settleFindings([...a.findings.filter((f) => f.subject === hub.mark), ...shaped.findings], a.job, []);
+      const keep = shaped.pieces.length > 0 && !isWithheld('node', hub.mark, own.findings);
+      const files: string[] = [];
+      for (const [i, piece] of shaped.pieces.entries()) {
+        if (!keep) continue;
+        const path = `nodes/stl/${hub.mark}${piece.piece ? `.${piece.piece}` : ''}.stl`;
+        await writer.put(path, output.stl[i]!);
+        files.push(path);
+        printable.push({
+          mark: hub.mark,
+          piece: piece.piece,
+          box: piece.box,
+          volume: piece.volume,
+          mass: piece.volume * MM3_TO_M3 * hub.material.density,
+          object: output.objects[i]!,
+        });
+      }
+      if (!keep) withheld.push(hub.mark);
+      if (shaped.pieces.length > 0) made.set(hub.mark, { mark: hub.mark, pieces: shaped.pieces, files });
+      parts.push(keep ? { ...part, files } : { ...part, digest: null, form: null });
+      run.tell({ stage: 'Hubs', done: index + 1, total: again.length });
+    },
   );
-  await run.each<ShapeHubInput, ShapeHubOutput>('shape-hub', inputs, async ({ shaped, stl, objects }, index) => {
-    const hub = a.parts.hubs[index]!;
-    findings.push(...shaped.findings);
-    const own = settleFindings([...a.findings.filter((f) => f.subject === hub.mark), ...shaped.findings], a.job, []);
-    const keep = shaped.pieces.length > 0 && !isWithheld('node', hub.mark, own.findings);
-    const files: string[] = [];
-    for (const [i, piece] of shaped.pieces.entries()) {
-      if (!keep) continue;
-      const path = `nodes/stl/${hub.mark}${piece.piece ? `.${piece.piece}` : ''}.stl`;
-      await writer.put(path, stl[i]!);
-      files.push(path);
-      printable.push({
-        mark: hub.mark,
-        piece: piece.piece,
-        box: piece.box,
-        volume: piece.volume,
-        mass: piece.volume * MM3_TO_M3 * hub.material.density,
-        object: objects[i]!,
-      });
-    }
-    if (!keep) withheld.push(hub.mark);
-    if (shaped.pieces.length > 0) made.set(hub.mark, { mark: hub.mark, pieces: shaped.pieces, files });
-    parts.push({
-      mark: hub.mark,
-      kind: 'node',
-      digest: keep ? sha256([hub.material.name, ...stl.map(sha256)].join(' ')) : null,
-      files,
-    });
-    run.tell({ stage: 'Hubs', done: index + 1, total: inputs.length });
-  });
-  return { made, findings, parts, withheld, printable };
+  const hubs = drafts.map(({ hub, part }) => ({ ...hub, revision: part.revision }));
+  return { hubs, made, findings, parts, withheld, printable };
+}
+
+interface Draft extends CanonicalHub {
+  readonly hub: HubPart;
+  readonly part: PackPart;
+  /** Made before, exactly so. */
+  readonly unchanged: boolean;
+}
+
+/** A hub as it will be made: with the revision letter of its own last change on it. */
+function draftOf(hub: HubPart, job: Job, tension: readonly number[], lineage: Lineage): Draft {
+  const { input, toTruss } = canonicalHub(hub, job, tension);
+  const digest = hub.makeable ? digestOf({ ...input, hub: { ...input.hub, revision: '' } }) : null;
+  const revision = lineage.revision('node', hub.mark, digest);
+  return {
+    hub,
+    toTruss,
+    input: { ...input, hub: { ...input.hub, revision } },
+    part: { mark: hub.mark, kind: 'node', digest, form: digest && digestOf(formOf(input)), revision, files: [] },
+    unchanged: lineage.unchanged('node', hub.mark, digest),
+  };
 }
 
 const MM3_TO_M3 = 1e-9;
