@@ -189,6 +189,15 @@ export class Pen {
     if (style.width !== undefined) this.polyline(box, style, true);
   }
 
+  /** Fills many upright boxes, given by their upper left corners, in one path. */
+  fillBoxes(
+    boxes: readonly { readonly x: number; readonly y: number; readonly width: number; readonly height: number }[],
+    fill: string,
+  ): void {
+    for (const b of boxes) this.doc.rect(b.x * POINTS, b.y * POINTS, b.width * POINTS, b.height * POINTS);
+    this.doc.fill(fill);
+  }
+
   /** A rectangle with half-round ends; a circle where width = height. */
   pill(box: Box, style: LineStyle & { readonly fill?: string }): void {
     const [x, y] = [box.x - box.width / 2, box.y - box.height / 2];

@@ -13,8 +13,12 @@ import { panelListCsv } from '../../documents/panels/panel-list.js';
 import { sheetsPdf } from '../../documents/panels/sheets-pdf.js';
 import type { PackRecords } from '../../documents/records.js';
 import { report } from '../../documents/report/report.js';
+import { buyingListCsv } from '../../documents/struts/buying-list.js';
 import { cutListCsv } from '../../documents/struts/cut-list-csv.js';
 import { cutListPdf } from '../../documents/struts/cut-list-pdf.js';
+import { labelsPdf } from '../../documents/struts/labels.js';
+import { offcutsJson } from '../../documents/struts/offcuts.js';
+import { sawPlanPdf } from '../../documents/struts/saw-plan.js';
 import { stockPlanJson } from '../../documents/struts/stock-plan.js';
 import type { Run } from '../../model/run.js';
 import type { PackWriter } from '../pack-writer.js';
@@ -30,6 +34,10 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['struts/cut-list.csv', cutListCsv],
   ['struts/cut-list.pdf', cutListPdf],
   ['struts/stock-plan.json', stockPlanJson],
+  ['struts/saw-plan.pdf', sawPlanPdf],
+  ['struts/labels.pdf', labelsPdf],
+  ['struts/buying-list.csv', buyingListCsv],
+  ['struts/offcuts.json', offcutsJson],
   ['nodes/bar-directions.csv', barDirectionsCsv],
   ['nodes/bar-angles.csv', barAnglesCsv],
   ['nodes/placement.json', placementJson],
