@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import type { PackRecords } from '../../src/documents/records.js';
-import { cross, distance, dot, normalise, subtract } from '../../src/maths/vec3.js';
+import { cross, distance, dot, normalise, subtract, type Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob, type Job } from '../../src/model/job/index.js';
 import type { PanelPart, Point2 } from '../../src/model/parts.js';
 import type { Truss } from '../../src/model/truss.js';
@@ -32,15 +32,54 @@ export function packRecords(change: Partial<Job> = {}, truss: Truss = inventedTr
   };
 }
 
-/** The committed example of a loaded canopy, with its analysis. */
-export function canopyRecords(change: (truss: Truss) => Truss = (truss) => truss): PackRecords {
-  const text = (name: string): string =>
-    readFileSync(new URL(`../../examples/canopy/${name}`, import.meta.url), 'utf8');
+/** A committed example of the program, with its analysis. */
+export function exampleRecords(
+  name: 'canopy' | 'lantern',
+  change: (truss: Truss) => Truss = (truss) => truss,
+): PackRecords {
+  const text = (file: string): string =>
+    readFileSync(new URL(`../../examples/${name}/${file}`, import.meta.url), 'utf8');
   const truss = change(readTruss(text('truss.json'), 'truss.json').truss!);
   const records = packRecords(readJob(text('job.json'), 'job.json').job!, truss);
   const { topology, job, parts, forms, forces } = records;
   const { solution } = analyseTruss({ topology, job, parts, forms, given: forces?.values ?? null });
   return { ...records, solution };
+}
+
+/** A plane truss that stresses itself: a triangle in a triangle, joined corner to corner, standing upright in x and z. */
+export function planeTruss(): Truss {
+  const at = (radius: number, k: number): Vec3 => [
+    radius * Math.cos((2 * Math.PI * k) / 3),
+    0,
+    radius * Math.sin((2 * Math.PI * k) / 3),
+  ];
+  const corner = [0, 1, 2];
+  const pairs = [
+    ...corner.map((k) => [`A${k}`, `A${(k + 1) % 3}`] as const),
+    ...corner.map((k) => [`B${k}`, `B${(k + 1) % 3}`] as const),
+    ...corner.map((k) => [`A${k}`, `B${k}`] as const),
+  ];
+  return {
+    nodes: [
+      ...corner.map((k) => ({ mark: `A${k}`, at: at(300, k) })),
+      ...corner.map((k) => ({ mark: `B${k}`, at: at(120, k) })),
+    ],
+    members: pairs.map((ends, i) => ({
+      mark: `S${i + 1}`,
+      ends,
+      force: null,
+      section: null,
+      area: null,
+      modulus: null,
+      roll: null,
+      group: null,
+    })),
+    faces: [],
+    cells: [],
+    reciprocal: null,
+    supports: [],
+    loads: [],
+  };
 }
 
 function barePanels(truss: Truss): PanelPart[] {

@@ -14,7 +14,7 @@ import { cutListPdf } from '../../src/documents/struts/cut-list-pdf.js';
 import { loadFonts } from '../../src/machine/fonts.js';
 import { add, cross, scale, type Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob } from '../../src/model/job/index.js';
-import { canopyRecords, packRecords } from './pack-records.js';
+import { exampleRecords, packRecords, planeTruss } from './pack-records.js';
 import { checkPdf, outside, overlaps, textOf } from './pdf.js';
 
 const fonts = await loadFonts();
@@ -54,22 +54,40 @@ describe('papers of a pack', () => {
     expect(text).toContain('On hold');
   });
   it('the report draws deflection, buckling and mechanisms where there are any', async () => {
-    const standing = holds(await report(canopyRecords(), fonts));
+    const standing = holds(await report(exampleRecords('canopy'), fonts));
     expect(standing).toContain('Deflected shape');
     expect(standing).toContain('Lowest buckling shape');
     expect(standing).not.toContain('Mechanism 1');
     const short = holds(
       await report(
         // A corner held by three struts swings once one of them is gone.
-        canopyRecords((truss) => ({ ...truss, members: truss.members.filter((m) => m.mark !== 'S02') })),
+        exampleRecords('canopy', (truss) => ({ ...truss, members: truss.members.filter((m) => m.mark !== 'S02') })),
         fonts,
       ),
     );
     expect(short).toContain('Mechanism 1 of');
   });
   it('force sheets of a loaded truss show its loads', async () => {
-    const text = holds(await forceSheets(canopyRecords(), fonts));
+    const text = holds(await forceSheets(exampleRecords('canopy'), fonts));
     expect(text).toContain('24.00 N');
+  });
+  it('truss and force diagram stand on one sheet with the same marks, and each node has its polyhedron', async () => {
+    const lantern = exampleRecords('lantern');
+    const text = holds(await forceSheets(lantern, fonts));
+    const diagram = text.slice(text.indexOf('Form and forces'));
+    for (const { mark } of lantern.topology.truss.members)
+      expect(diagram.split(new RegExp(`\\b${mark}\\b`)).length).toBeGreaterThan(2);
+    for (const { cell } of lantern.reciprocal!.diagram!.vertices) expect(diagram).toContain(cell);
+    expect(holds(await nodeSheets(lantern, fonts))).toContain('closed to');
+  });
+  it('a plane truss is drawn square to its plane beside its diagram', async () => {
+    const base = defaultJob();
+    const plane = packRecords(
+      { forces: { ...base.forces, source: 'reciprocal', fix: [{ strut: 'S1', force_N: -10 }] } },
+      planeTruss(),
+    );
+    expect(plane.reciprocal!.diagram!.kind).toBe('plane');
+    for (const write of [forceSheets, nodeSheets, report]) holds(await write(plane, fonts));
   });
   it.each(['A3', 'Letter'] as const)('all hold on %s in inches and pounds', async (paper) => {
     const us = packRecords({

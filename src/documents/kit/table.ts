@@ -86,7 +86,7 @@ export function drawSmallTable<Row>(
 
 /** Height of a small table whose cells take one line each, mm. */
 export const smallTableHeight = (rows: number, headLines: number, size: number = SIZE.body): number =>
-  headLines * lineHeight(SIZE.note) + 1.9 + rows * (lineHeight(size) + 1);
+  headLines * lineHeight(SIZE.note) + 1.9 + rows * (lineHeight(size) + ROW_PAD.close);
 
 interface Layout {
   readonly widths: readonly number[];
@@ -101,6 +101,8 @@ interface Layout {
 const GROUP = 8;
 /** Between columns, mm: least and most. */
 const GAP = { least: 2.5, most: 9, close: 5 } as const;
+/** Added to a line of text, mm. */
+const ROW_PAD = { usual: 1, close: 0.6 } as const;
 const TICK = 3.2;
 /** Type no smaller than this, pt. */
 const LEAST_SIZE = 7;
@@ -145,7 +147,7 @@ function layOut<Row>(
     gap,
     total: sum(widths) + gaps(gap),
     size,
-    rowHeight: lineHeight(size) + 1,
+    rowHeight: lineHeight(size) + (most === GAP.close ? ROW_PAD.close : ROW_PAD.usual),
     headHeight: headLines * lineHeight(SIZE.note) + 2.5,
     headLines,
   };

@@ -1,4 +1,5 @@
 import { angleBetween } from '../../maths/vec3.js';
+import type { ForceDiagram, NodePolyhedron } from '../../model/force-diagram.js';
 import type { HubPart, Socket } from '../../model/parts.js';
 import { CAUTION } from '../cautions.js';
 import { issueOf } from '../issue.js';
@@ -21,15 +22,16 @@ import {
   hubPictureScale,
   outsideCamera,
 } from './hub-picture.js';
+import { drawForcePolyhedron } from './polyhedron-picture.js';
 
 /** Width of one picture and its greatest height, mm. */
 const PICTURE = 52;
-/** Width of the tables beside the pictures, mm. */
-const TABLES = 84;
+/** Width of the tables beside two and beside three pictures, mm. */
+const TABLES = { two: 84, three: 77 } as const;
 /** Head of a block: the node's mark, read across a bench. */
-const HEAD = 11;
+const HEAD = 10;
 const TEXT = 7.5;
-const ANGLE_ROW = lineHeight(TEXT) * 1.12;
+const ANGLE_ROW = lineHeight(TEXT) * 1.06;
 /** Between blocks, down and across, mm. */
 const GAP = { down: 2.5, across: 10 } as const;
 /** Sheets wider than this carry two columns of blocks, mm. */
@@ -45,19 +47,21 @@ export async function nodeSheets(records: PackRecords, fonts: Fonts): Promise<Wr
     instruction:
       'Hold the printed node as in its picture and check each socket’s mark before gluing. Azimuth: anticlockwise from x in plan; elevation: up from level; setback: from the node to the stop; depth: from the stop to the mouth.',
   });
+  const diagram = records.reciprocal?.diagram ?? null;
+  const polyhedra = new Map((diagram?.nodes ?? []).map((node) => [node.mark, node]));
   const columns = area.width > TWO_COLUMNS ? 2 : 1;
   const width = (area.width - (columns - 1) * GAP.across) / columns;
   const hubs = [...records.parts.hubs].sort((a, b) => byMark(a.mark, b.mark));
   let y = area.y;
   for (let i = 0; i < hubs.length; i += columns) {
-    const row = hubs.slice(i, i + columns).map((hub) => blockOf(hub, width));
+    const row = hubs.slice(i, i + columns).map((hub) => blockOf(hub, polyhedra.get(hub.mark) ?? null, width));
     const height = Math.max(...row.map((block) => block.height));
     if (y + height > area.y + area.height && y > area.y) {
       area = paper.continueSheet();
       y = area.y;
     }
     row.forEach((block, k) => {
-      drawBlock(paper.pen, { x: area.x + k * (width + GAP.across), y, width, height }, block, cuts, units);
+      drawBlock(paper.pen, { x: area.x + k * (width + GAP.across), y, width, height }, block, cuts, units, diagram);
     });
     y += height + GAP.down;
   }
@@ -67,6 +71,7 @@ export async function nodeSheets(records: PackRecords, fonts: Fonts): Promise<Wr
 /** One node's block, measured. */
 interface Block {
   readonly hub: HubPart;
+  readonly polyhedron: NodePolyhedron | null;
   readonly pictures: readonly { readonly name: string; readonly picture: HubPicture }[];
   readonly pictureWidth: number;
   readonly pictureHeight: number;
@@ -75,8 +80,8 @@ interface Block {
   readonly height: number;
 }
 
-function blockOf(hub: HubPart, width: number): Block {
-  const pictureWidth = Math.min(PICTURE, (width - TABLES) / 2);
+function blockOf(hub: HubPart, polyhedron: NodePolyhedron | null, width: number): Block {
+  const pictureWidth = Math.min(PICTURE, polyhedron ? (width - TABLES.three) / 3 : (width - TABLES.two) / 2);
   const pictures = [outsideCamera(hub.outward), { ...PLAN, name: 'From above' }].map((camera) => ({
     name: camera.name,
     picture: hubPicture(hub, camera),
@@ -87,14 +92,29 @@ function blockOf(hub: HubPart, width: number): Block {
   const pictureHeight = Math.max(...pictures.map(({ picture }) => hubPictureHeight(picture, scale.factor)));
   const n = hub.sockets.length;
   const tables = smallTableHeight(n, 2, TEXT) + (n > 1 ? 4 + n * ANGLE_ROW : 0);
-  return { hub, pictures, pictureWidth, pictureHeight, scale, height: HEAD + Math.max(pictureHeight + 5, tables) + 1 };
+  return {
+    hub,
+    polyhedron,
+    pictures,
+    pictureWidth,
+    pictureHeight,
+    scale,
+    height: HEAD + Math.max(pictureHeight + 5, tables) + 1,
+  };
 }
 
-function drawBlock(pen: Pen, area: Area, block: Block, cuts: ReadonlyMap<string, number | null>, units: Units): void {
+function drawBlock(
+  pen: Pen,
+  area: Area,
+  block: Block,
+  cuts: ReadonlyMap<string, number | null>,
+  units: Units,
+  diagram: ForceDiagram | null,
+): void {
   const { x, y, width } = area;
   const { hub, pictureWidth, pictureHeight } = block;
   pen.line([x, y], [x + width, y], { width: LINE.hair });
-  const wide = pen.text(hub.mark, x, y + 9, { size: 24, bold: true });
+  const wide = pen.text(hub.mark, x, y + 8.2, { size: 24, bold: true });
   const said = [
     ...(hub.makeable ? [] : ['cannot be made: see the report']),
     `at ${hub.at.map((c) => units.length(c)).join(', ')} ${units.lengthUnit}`,
@@ -105,7 +125,7 @@ function drawBlock(pen: Pen, area: Area, block: Block, cuts: ReadonlyMap<string,
     hub.material.title,
     `revision ${hub.revision}`,
   ];
-  writeFitted(pen, said.join(' · '), x + wide + 5, y + 8, width - wide - 5, { size: SIZE.body }, 6.5);
+  writeFitted(pen, said.join(' · '), x + wide + 5, y + 7.6, width - wide - 5, { size: SIZE.body }, 6.5);
   const top = y + HEAD;
   block.pictures.forEach(({ name, picture }, k) => {
     const box: Area = { x: x + k * (pictureWidth + 1), y: top, width: pictureWidth, height: pictureHeight };
@@ -117,7 +137,22 @@ function drawBlock(pen: Pen, area: Area, block: Block, cuts: ReadonlyMap<string,
       colour: INK.grey,
     });
   });
-  const left = x + 2 * pictureWidth + 3;
+  if (diagram && block.polyhedron) {
+    const box: Area = { x: x + 2 * (pictureWidth + 1), y: top, width: pictureWidth, height: pictureHeight };
+    drawForcePolyhedron(pen, box, diagram, block.polyhedron, outsideCamera(hub.outward));
+    const closure = Math.hypot(...block.polyhedron.closure);
+    pen.text(
+      `Forces, closed to ${closure < 0.001 ? '0.001' : fixed(closure, 3)} N`,
+      box.x + pictureWidth / 2,
+      top + pictureHeight + 3,
+      {
+        size: SIZE.note,
+        align: 'centre',
+        colour: INK.grey,
+      },
+    );
+  }
+  const left = x + (block.polyhedron ? 3 : 2) * (pictureWidth + 1) + 1;
   const end = drawSmallTable(pen, left, top - 2, x + width - left, socketColumns(cuts, units), hub.sockets, TEXT);
   if (hub.sockets.length > 1) drawAngles(pen, left, end + 2, x + width - left, hub.sockets);
 }

@@ -19,6 +19,7 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
         : `Flatness of ${forms.length} faces: the worst is ${worst.mark}, out of flat by ${units.length(worst.flatness, 3)} ${units.lengthUnit}.`,
     );
   }
+  reciprocalWords(flow, records);
   const counts = solution?.counts;
   if (counts) {
     flow.paragraph(
@@ -35,6 +36,22 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
       );
   flow.paragraph(`Checked: ${checked.length > 0 ? checked.join(', ') : 'nothing'}.`);
   if (notChecked.length > 0) flow.paragraph(`Not checked: ${notChecked.join(', ')}.`, { bold: true });
+}
+
+function reciprocalWords(flow: Flow, { reciprocal }: PackRecords): void {
+  if (!reciprocal?.counts) return;
+  const { dimension, selfStressStates, reached } = reciprocal.counts;
+  if (dimension !== null)
+    flow.paragraph(
+      `Reciprocal figure: ${plural(dimension, 'independent diagram')}${
+        selfStressStates === null ? '' : ` beside ${plural(selfStressStates, 'state')} of self-stress`
+      }${reached === null ? '' : `, of which the diagrams reach ${reached}`}.`,
+    );
+  const { residuals } = reciprocal;
+  if (residuals)
+    flow.paragraph(
+      `Of the diagram, the largest angle between a strut and its polygon’s normal is ${plain((residuals.maxAngle * 180) / Math.PI)}°, and the worst node’s polyhedron closes to ${plain(residuals.maxClosure)} N.`,
+    );
 }
 
 const plural = (n: number, word: string): string => `${n === 0 ? 'no' : n} ${word}${n === 1 ? '' : 's'}`;

@@ -7,6 +7,7 @@ import { unitsOf } from '../kit/units.js';
 import { largestForce } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
 import { checksSection } from './checks-section.js';
+import { comparisonSection } from './comparison-section.js';
 import { findingsSection } from './findings-section.js';
 import { picturesSection } from './pictures/index.js';
 import { totalsSection } from './totals-section.js';
@@ -28,6 +29,7 @@ export async function report(records: PackRecords, fonts: Fonts): Promise<Writte
   flow.heading('Cautions', 30);
   for (const { trade, words } of CAUTIONS) flow.paragraph(`${trade}. ${words}`);
   picturesSection(paper, flow, records, units);
+  comparisonSection(paper, flow, records, units);
   utilisationSection(flow, records, units);
   return paper.finish();
 }

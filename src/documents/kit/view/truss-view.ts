@@ -6,7 +6,14 @@ import type { Pen } from '../pen.js';
 import { type Camera, project } from './camera.js';
 import { arrowLabel, arrowOnSheet, drawArrow, type ViewArrow } from './marks/arrow.js';
 import { drawNodeMark, nodeLabel, nodeMarkHeight } from './marks/node-mark.js';
-import { drawStrutMark, fitsOnStrut, type StrutMark, strutLabel, strutMarkWidth } from './marks/strut-mark.js';
+import {
+  drawStrutMark,
+  fitsOnStrut,
+  type StrutMark,
+  spotLabel,
+  strutLabel,
+  strutMarkWidth,
+} from './marks/strut-mark.js';
 import { drawSupport } from './marks/support.js';
 import { type Place, placeLabels } from './place-labels.js';
 import { drawStroke, type Stroke, strokeWidth } from './stroke.js';
@@ -33,6 +40,8 @@ export interface TrussView {
   readonly nodes: readonly ViewNode[];
   readonly struts: readonly ViewStrut[];
   readonly arrows?: readonly ViewArrow[];
+  /** Marks that belong to points: of polygons, at their middles. */
+  readonly spots?: readonly { readonly mark: StrutMark; readonly at: Vec3 }[];
   /** iso: the largest scale of ISO 5455 that fits; fill: as large as the area allows, not to scale; or that scale. */
   readonly scale: 'iso' | 'fill' | { readonly factor: number; readonly name: string };
   /** Room round the figure for marks that move outward, mm. */
@@ -74,7 +83,8 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
   }));
   for (const { from, to } of arrows) drawArrow(pen, from, to);
 
-  const marks = placedMarks(pen, area, view, at, flat, arrows);
+  const spots = (view.spots ?? []).map((spot) => onSheet(project(view.camera, spot.at)));
+  const marks = placedMarks(pen, area, view, { at, flat, arrows, spots });
   const { nodes, struts, size } = marks;
   for (const place of [...nodes.values(), ...struts.values()]) drawLeader(pen, place);
   view.nodes.forEach((node, i) => {
@@ -85,6 +95,10 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
   view.struts.forEach((strut, i) => {
     const place = struts.get(`strut ${i}`);
     if (place) drawStrutMark(pen, place.box, strut.label!, size);
+  });
+  view.spots?.forEach((spot, i) => {
+    const place = struts.get(`spot ${i}`);
+    if (place) drawStrutMark(pen, place.box, spot.mark, size);
   });
   for (const { arrow, key } of arrows) {
     const place = struts.get(key);
@@ -100,6 +114,14 @@ interface DrawnArrow {
   readonly to: Point;
 }
 
+/** Everything as it stands on the sheet. */
+interface Drawn {
+  readonly at: readonly Point[];
+  readonly flat: readonly Vec3[];
+  readonly arrows: readonly DrawnArrow[];
+  readonly spots: readonly Point[];
+}
+
 interface PlacedMarks {
   readonly size: number;
   readonly nodes: ReadonlyMap<string, Place>;
@@ -109,31 +131,16 @@ interface PlacedMarks {
 }
 
 /** Places all marks at the largest type at which each finds room; at the smallest, as many as do. */
-function placedMarks(
-  pen: Pen,
-  area: Area,
-  view: TrussView,
-  at: readonly Point[],
-  flat: readonly Vec3[],
-  arrows: readonly DrawnArrow[],
-): PlacedMarks {
-  const largest = typeSize(pen, view, at);
+function placedMarks(pen: Pen, area: Area, view: TrussView, drawn: Drawn): PlacedMarks {
+  const largest = typeSize(pen, view, drawn.at);
   let placed: PlacedMarks | undefined;
   for (const size of SIZES)
-    if (size <= largest && (!placed || placed.missing.length > 0))
-      placed = marksAt(pen, area, view, at, flat, arrows, size);
+    if (size <= largest && (!placed || placed.missing.length > 0)) placed = marksAt(pen, area, view, drawn, size);
   return placed!;
 }
 
-function marksAt(
-  pen: Pen,
-  area: Area,
-  view: TrussView,
-  at: readonly Point[],
-  flat: readonly Vec3[],
-  arrows: readonly DrawnArrow[],
-  size: number,
-): PlacedMarks {
+function marksAt(pen: Pen, area: Area, view: TrussView, drawn: Drawn, size: number): PlacedMarks {
+  const { at, flat, arrows, spots } = drawn;
   const lines = [
     ...view.struts
       .filter((s) => s.stroke.kind !== 'faint')
@@ -154,12 +161,13 @@ function marksAt(
   const arrowLabels = arrows
     .filter(({ arrow }) => arrow.label !== '')
     .map(({ arrow, key, from, to }) => arrowLabel(pen, arrow, key, from, to, size));
+  const spotLabels = spots.map((spot, i) => spotLabel(pen, `spot ${i}`, view.spots![i]!.mark, spot, size));
   const taken = [...nodes.values()].map((p) => p.box);
   const dots = at.map(([x, y]): Box => ({ x, y, width: 1.2, height: 1.2, angle: 0 }));
-  const struts = placeLabels([...arrowLabels, ...strutLabels], area, lines, [...taken, ...dots]);
+  const struts = placeLabels([...arrowLabels, ...strutLabels, ...spotLabels], area, lines, [...taken, ...dots]);
   const missing = [
     ...(stays ? [] : nodeLabels.filter((l) => !nodes.has(l.key))),
-    ...strutLabels.filter((l) => !struts.has(l.key)),
+    ...[...strutLabels, ...spotLabels].filter((l) => !struts.has(l.key)),
   ];
   return { size, nodes, struts, missing: missing.map((l) => l.owner) };
 }

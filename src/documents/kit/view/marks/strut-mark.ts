@@ -68,6 +68,22 @@ export function strutLabel(
   return { key, owner, width, height, anchors: [0.5, 0.3, 0.7, 0.12, 0.88].map(along), places };
 }
 
+/** A mark that belongs to a point: on it, else aside with a leader. */
+export function spotLabel(pen: Pen, key: string, mark: StrutMark, at: Point, size: number): Label {
+  const [width, height] = [strutMarkWidth(pen, mark, size), strutMarkHeight(size)];
+  const places: Place[] = [{ box: { x: at[0], y: at[1], width, height, angle: 0 }, leader: null, cost: 0 }];
+  for (const off of [3, 5, 8, 12, 17])
+    for (let k = 0; k < 12; k++) {
+      const [c, s] = [Math.cos((k * Math.PI) / 6), Math.sin((k * Math.PI) / 6)];
+      places.push({
+        box: { x: at[0] + c * (off + width / 2), y: at[1] + s * (off + height / 2), width, height, angle: 0 },
+        leader: at,
+        cost: 4 + off,
+      });
+    }
+  return { key, owner: mark.bold, width, height, anchors: [at], places };
+}
+
 /** Angle of a line on the sheet, turned so that what is written along it is never upside down: -90° <= angle < 90°. */
 export function readable(dx: number, dy: number): number {
   let angle = Math.atan2(dy, dx);
