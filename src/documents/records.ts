@@ -1,6 +1,7 @@
 import type { FaceForm } from '../detailing/faces.js';
 import type { AssemblyPlan } from '../model/assembly.js';
 import type { Finding } from '../model/finding.js';
+import type { FitUp } from '../model/fit-up.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
 import type { BedPlan, NestingPlan, StockPlan } from '../model/plan.js';
@@ -51,4 +52,5 @@ export interface PackRecords extends Assessment {
   readonly nesting: NestingPlan | null;
   readonly beds: BedPlan | null;
   readonly assembly: AssemblyPlan | null;
+  readonly fitUp: FitUp | null;
 }

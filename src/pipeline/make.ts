@@ -5,6 +5,8 @@ import type { Job } from '../model/job/index.js';
 import type { Run } from '../model/run.js';
 import type { Truss } from '../model/truss.js';
 import { planAssembly } from '../planning/assembly/plan-assembly.js';
+import { fitUpFindings } from '../planning/fit-up/findings.js';
+import { planFitUp } from '../planning/fit-up/plan-fit-up.js';
 import { assess } from './assess.js';
 import { cutParts } from './digests.js';
 import type { Input } from './load.js';
@@ -65,10 +67,18 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   );
 
   const assembly = planAssembly(assessed);
+  const fitUp = planFitUp(assessed.topology, assessed.parts, job);
 
   const settled = settle({
     ...assessed,
-    found: [...assessed.found, ...hubs.findings, ...bars.findings, ...sheets.findings, ...assembly.findings],
+    found: [
+      ...assessed.found,
+      ...hubs.findings,
+      ...bars.findings,
+      ...sheets.findings,
+      ...assembly.findings,
+      ...fitUpFindings(fitUp),
+    ],
   });
   const records: PackRecords = {
     ...settled,
@@ -78,6 +88,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     nesting: sheets.plan,
     beds,
     assembly: assembly.plan,
+    fitUp,
   };
 
   const cutting = await writeSheetFiles(records, writer);

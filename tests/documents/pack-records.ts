@@ -29,6 +29,7 @@ export function packRecords(change: Partial<Job> = {}, truss: Truss = inventedTr
     nesting: null,
     beds: null,
     assembly: null,
+    fitUp: null,
   };
 }
 

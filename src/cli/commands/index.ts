@@ -1,3 +1,4 @@
+import { asBuilt } from './as-built.js';
 import { check } from './check.js';
 import type { CliCommand } from './command.js';
 import { compare } from './compare.js';
@@ -8,4 +9,4 @@ import { newJob } from './new.js';
 import { size } from './size.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, make, check, size, mend, compare, convert];
+export const commands: readonly CliCommand[] = [newJob, make, check, size, mend, compare, asBuilt, convert];

@@ -29,6 +29,13 @@ export const ASSEMBLY_FINDINGS = {
       `what stands after step ${num(f.value, 0)} can move freely, props and all; glue or pin the sockets, or add supports`,
     { waivable: false },
   ),
+  'fit-up-chance': entry(
+    'warn',
+    'truss',
+    '',
+    (f) =>
+      `every loop closes within its play in ${num(f.value, 3)} of cases, wanted ${num(f.limit, 3)}; ${f.about?.['mend']}`,
+  ),
   'hub-out-of-reach': entry(
     'note',
     'node',

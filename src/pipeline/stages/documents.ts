@@ -1,3 +1,4 @@
+import { fitUpCsv, fitUpJson } from '../../documents/assembly/fit-up.js';
 import { checkReport } from '../../documents/check-json.js';
 import { forceSheets } from '../../documents/forces/force-sheets.js';
 import { forcesCsv } from '../../documents/forces/forces-csv.js';
@@ -42,6 +43,8 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['nodes/bar-angles.csv', barAnglesCsv],
   ['nodes/placement.json', placementJson],
   ['nodes/node-sheets.pdf', nodeSheets],
+  ['assembly/fit-up.csv', fitUpCsv],
+  ['assembly/fit-up.json', fitUpJson],
   ['panels/panel-list.csv', panelListCsv],
   ['panels/outlines.json', outlinesJson],
   ['panels/nesting.json', nestingJson],

@@ -12,7 +12,7 @@ import { piecesOf } from './figure.js';
  * Singular values of the equilibrium matrix (unit bar directions) up to this count as nought: what coordinates rounded to a
  * thousandth of a millimetre in a strut of some hundred leave, and far below any error of a cut length.
  */
-const ROUNDED = 1e-5;
+export const ROUNDED = 1e-5;
 
 /** Counts of the pinned figure with their mechanisms in words. */
 export interface States {

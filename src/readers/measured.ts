@@ -1,0 +1,72 @@
+import { parse } from 'csv-parse/sync';
+import { nearest } from '../maths/nearest.js';
+import type { Vec3 } from '../maths/vec3.js';
+import { type Fault, quoted } from './fault.js';
+
+/** What a table of measurements says; mm. */
+export interface MeasuredFile {
+  readonly lengths: ReadonlyMap<string, number>;
+  readonly nodes: ReadonlyMap<string, Vec3>;
+}
+
+const LENGTHS = ['mark', 'length_mm'];
+const NODES = ['node', 'x_mm', 'y_mm', 'z_mm'];
+
+/**
+ * Reads measured cut lengths (`mark,length_mm`) or node places (`node,x_mm,y_mm,z_mm`), comma or semicolon with decimal
+ * comma, of a truss with the given marks. The table, or every fault.
+ */
+export function readMeasured(
+  text: string,
+  name: string,
+  marks: { readonly struts: ReadonlySet<string>; readonly nodes: ReadonlySet<string> },
+): { readonly measured: MeasuredFile | null; readonly faults: readonly Fault[] } {
+  const faults: Fault[] = [];
+  const fault = (line: number, what: string, mend: string): void =>
+    void faults.push({ file: name, line, column: 1, what, mend });
+  const semicolon = /^[^\n]*;/.test(text);
+  let rows: { record: string[]; info: { lines: number } }[] = [];
+  try {
+    rows = parse(text, {
+      bom: true,
+      delimiter: semicolon ? ';' : ',',
+      trim: true,
+      info: true,
+      relaxColumnCount: true,
+      skipEmptyLines: true,
+    }) as never;
+  } catch (error) {
+    fault(1, `is no table: ${(error as Error).message.split('\n')[0]}`, 'save it as comma-separated text');
+    return { measured: null, faults };
+  }
+  const header = rows[0]?.record.map((h) => h.toLowerCase()) ?? [];
+  const columns = [LENGTHS, NODES].find((c) => c.every((h) => header.includes(h)));
+  if (!columns) {
+    fault(1, 'its first line names neither mark,length_mm nor node,x_mm,y_mm,z_mm', 'name the columns so');
+    return { measured: null, faults };
+  }
+  const known = columns === LENGTHS ? marks.struts : marks.nodes;
+  const lengths = new Map<string, number>();
+  const nodes = new Map<string, Vec3>();
+  for (const { record, info } of rows.slice(1)) {
+    const [mark, ...numbers] = columns.map((c) => record[header.indexOf(c)] ?? '');
+    const values = numbers.map((n) => Number(semicolon ? n.replace(',', '.') : n));
+    if (!known.has(mark!)) {
+      const near = nearest(mark!, known);
+      fault(
+        info.lines,
+        `${quoted(mark!)} is no ${columns === LENGTHS ? 'strut' : 'node'} of the truss`,
+        near ? `did you mean ${near}?` : 'use the marks of the cut list',
+      );
+    } else if (
+      values.some((v, i) => !Number.isFinite(v) || numbers[i] === '') ||
+      (columns === LENGTHS && values[0]! <= 0)
+    ) {
+      fault(info.lines, `${quoted(numbers.join(', '))} is no measurement in mm`, 'give a number');
+    } else if (lengths.has(mark!) || nodes.has(mark!))
+      fault(info.lines, `${mark} is measured twice`, 'keep one line of it');
+    else if (columns === LENGTHS) lengths.set(mark!, values[0]!);
+    else nodes.set(mark!, values as unknown as Vec3);
+  }
+  return { measured: faults.length === 0 ? { lengths, nodes } : null, faults };
+}
