@@ -71,6 +71,8 @@ export function detailHubs(
           about: { a: pair.a, b: pair.b },
         }),
       );
+    for (const strut of found?.throughPlate ?? [])
+      findings.push(finding('strut-through-plate', node.mark, { about: { strut } }));
     drafts.push({
       system,
       whole: sockets.length === bars.length,

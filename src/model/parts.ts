@@ -77,6 +77,8 @@ export interface Socket {
   readonly pin: number;
   /** Where the strut's end is slotted and bolted instead of standing in a sleeve. */
   readonly bolted?: BoltedEnd;
+  /** How the hub holds the strut; absent: a sleeve round it. A spigot goes into a tube and a plate into a slot: `bore` is then their own size. */
+  readonly form?: 'sleeve' | 'spigot' | 'plate';
 }
 
 /** A node connector as numbers. Its solid is made from these alone. */

@@ -1,6 +1,6 @@
 import { largest, type Sleeve } from '../detailing/systems/sleeve.js';
 import { add, addScaled, scale, type Vec3 } from '../maths/vec3.js';
-import type { HubSpace } from './hub-space.js';
+import { BODY, type HubSpace } from './hub-space.js';
 
 /** A round hole through a hub: a vent or a pin. Relative to the node, mm. */
 export interface Channel {
@@ -76,6 +76,55 @@ export function pinOf(space: HubSpace, index: number, web: number): Channel | nu
   }
   return null;
 }
+
+/** The bolt holes of a plate: through the plate alone, since the strut's path round it is clear. */
+export function boltHolesOf(space: HubSpace, index: number): Channel[] {
+  const s = space.sleeves[index]!;
+  const end = s.socket.bolted;
+  if (!end) return [];
+  const side = end.along === 'y' ? s.socket.y : s.socket.z;
+  const half = end.plate / 2 + PAST;
+  return Array.from({ length: end.bolts }, (_, k) => ({
+    from: addScaled(scale(s.socket.direction, s.stop + end.endDistance + k * end.spacing), side, -half),
+    direction: side,
+    length: 2 * half,
+    radius: (end.diameter + BOLT_HOLE) / 2,
+    sleeve: index,
+    meets: [index],
+  }));
+}
+
+/** Holes of a foot's plate: the anchors through it, and a blind one from below for the levelling screw, as deep as the struts allow. */
+export function plateHolesOf(space: HubSpace, web: number): Channel[] {
+  const { base } = space.shape;
+  if (!base) return [];
+  const { count, diameter, circle, turn } = base.anchors;
+  const under = base.top - base.thickness;
+  const up = (x: number, y: number, from: number, to: number, radius: number): Channel => ({
+    from: [x, y, from],
+    direction: [0, 0, 1],
+    length: to - from,
+    radius,
+    sleeve: BODY,
+    meets: [BODY],
+  });
+  const holes = Array.from({ length: count }, (_, k) => {
+    const angle = turn + (2 * Math.PI * k) / count;
+    return up(circle * Math.cos(angle), circle * Math.sin(angle), under - PAST, base.top + PAST, diameter / 2);
+  });
+  if (base.levelling > 0) {
+    let top = base.top;
+    while (top < 0 && space.clearOfPaths([0, 0, top + STEP], base.levelling / 2 + web, NONE)) top += STEP;
+    holes.push(up(0, 0, under - PAST, top, base.levelling / 2));
+  }
+  return holes;
+}
+
+/** No sleeve is left out of a search. */
+const NONE = -2;
+
+/** Play of a bolt in its hole, mm: within the 1 mm of EN 1995-1-1 10.4.3 (1). */
+const BOLT_HOLE = 0.5;
 
 /** Shares of the depth, from the stop: the middle first, then outwards where neighbours part. */
 const PIN_AT = [0.5, 0.6, 0.7] as const;

@@ -1,6 +1,7 @@
 import type { Sleeve } from '../detailing/systems/sleeve.js';
-import { add, addScaled, cross, dot, scale, type Vec3 } from '../maths/vec3.js';
+import { add, addScaled, cross, dot, length, scale, subtract, type Vec3 } from '../maths/vec3.js';
 import type { Job } from '../model/job/index.js';
+import type { Channel } from './channels.js';
 import { type Lettering, type TextSurface, textSize } from './engraving.js';
 import type { HubSpace } from './hub-space.js';
 
@@ -50,7 +51,7 @@ const MOST_HALF_ANGLE = 1.35;
 
 /**
  * A free place on a sleeve for a line of text, the largest letters first: along the strut or round it, on the side that looks most
- * towards `towards`, clear of other pieces and of the sides already `taken`. null where no legible size fits.
+ * towards `towards`, clear of other pieces, of holes, and of the sides already `taken`. null where no legible size fits.
  *
  * @param words the line as it reads along the strut, and as it reads round it
  */
@@ -62,17 +63,20 @@ export function placeMark(
   chamfer: number,
   towards: Vec3,
   taken: readonly { readonly side: number; readonly halfAngle: number }[],
+  holes: readonly Channel[],
 ): MarkPlace | null {
   const s = space.sleeves[sleeve]!;
   const from = s.coneTop + MARGIN;
-  const to = s.mouth - chamfer - MARGIN;
+  const bolts = s.socket.bolted;
+  // A plate is marked between the shoulder and its first bolt.
+  const to = bolts ? s.stop + bolts.endDistance - 1.5 * bolts.diameter : s.mouth - chamfer - MARGIN;
   const middle = (from + to) / 2;
   for (const lettering of letterings)
     for (const turn of ['along', 'round'] as const) {
       const text = words[turn];
       const { width, height } = textSize(text, lettering);
-      const [length, across] = turn === 'along' ? [width, height] : [height, width];
-      if (length > to - from) continue;
+      const [reach, across] = turn === 'along' ? [width, height] : [height, width];
+      if (reach > to - from) continue;
       let best: MarkPlace | null = null;
       let bestScore = Number.NEGATIVE_INFINITY;
       for (const { side, radius, room, halfAngle } of sidesOf(s, across)) {
@@ -81,7 +85,7 @@ export function placeMark(
         const surface = surfaceOf(s, side, radius, middle, turn);
         const score = dot(outwardOf(s, side), towards);
         if (score <= bestScore + 1e-9) continue;
-        if (!patchIsFree(space, sleeve, surface, width, height)) continue;
+        if (!patchIsFree(space, sleeve, surface, width, height, holes)) continue;
         bestScore = score;
         best = { text, sleeve, lettering, surface, side, halfAngle };
       }
@@ -140,16 +144,35 @@ function surfaceOf(s: Sleeve, side: number, radius: number, middle: number, turn
   };
 }
 
-function patchIsFree(space: HubSpace, sleeve: number, surface: TextSurface, width: number, height: number): boolean {
+function patchIsFree(
+  space: HubSpace,
+  sleeve: number,
+  surface: TextSurface,
+  width: number,
+  height: number,
+  holes: readonly Channel[],
+): boolean {
   const { direction: d, y, z } = space.sleeves[sleeve]!.socket;
-  for (let i = 0; i <= 4; i++)
-    for (let j = 0; j <= 2; j++) {
-      const [a, b, along] = surface((i / 4 - 0.5) * width, (j / 2 - 0.5) * height, 0.2);
+  for (let i = 0; i <= 8; i++)
+    for (let j = 0; j <= 4; j++) {
+      const [a, b, along] = surface((i / 8 - 0.5) * width, (j / 4 - 0.5) * height, 0.2);
       const p = addScaled(addScaled(scale(d, along), y, a), z, b);
-      if (!space.free(p, AIR, sleeve)) return false;
+      if (holes.some((h) => nearHole(h, p))) return false;
+      if (i % 2 === 0 && j % 2 === 0 && !space.free(p, AIR, sleeve)) return false;
     }
   return true;
 }
+
+/** Whether a point lies in a hole or within a stroke of its rim. */
+function nearHole(hole: Channel, p: Vec3): boolean {
+  const away = subtract(p, hole.from);
+  const along = dot(away, hole.direction);
+  if (along < -AIR || along > hole.length + AIR) return false;
+  return length(addScaled(away, hole.direction, -along)) < hole.radius + RIM;
+}
+
+/** Half the distance of the points that are looked at, and a little, mm. */
+const RIM = 0.9;
 
 /** A direction square to a strut that looks as much as may be towards `wanted`. */
 export function sideTowards(direction: Vec3, wanted: Vec3): Vec3 {

@@ -1,16 +1,17 @@
+import { hubShape } from '../detailing/systems/hub-shape.js';
 import { LEAST_WALL } from '../detailing/systems/printing.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
 import type { HubPart } from '../model/parts.js';
 import type { ShapedHub, ShapedPiece } from '../model/shaped.js';
-import { type Channel, pinOf, ventOf } from './channels.js';
+import { boltHolesOf, type Channel, pinOf, plateHolesOf, ventOf } from './channels.js';
 import { HubSpace } from './hub-space.js';
 import { Bench, loadKernel, SolidFailed } from './kernel.js';
 import { layDown } from './lay-down.js';
 import { letteringsFor, type MarkPlace, placeMark, sideTowards } from './mark-places.js';
 import { openEdges } from './open-edges.js';
-import { chooseLie } from './orientation.js';
+import { chooseLie, type Lie } from './orientation.js';
 import { socketSolid } from './socket-solid.js';
 
 /**
@@ -23,12 +24,14 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
   const bench = new Bench(await loadKernel());
   const findings: Finding[] = [];
   try {
-    const space = new HubSpace(hub.sockets);
+    const space = new HubSpace(hubShape(hub, job));
     const channels = channelsOf(hub, job, space, findings);
-    const marks = job.nodes.marks ? marksOf(hub, job, space, findings) : [];
+    const marks = job.nodes.marks ? marksOf(hub, job, space, channels, findings) : [];
     const solid = socketSolid(bench, space, { marks, channels, chamfer: job.nodes.chamfer_mm });
     const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
-    const lie = chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
+    const lie = space.shape.base
+      ? ON_PLATE
+      : chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
     const piece = layDown(bench, solid, lie, hub.at, '');
     const faults = piece ? openEdges(piece.positions, piece.triangles) : 1;
     if (piece) findings.push(...sizeFindings(hub, piece, job));
@@ -42,6 +45,9 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
     bench.clear();
   }
 }
+
+/** A foot stands as it is used: its plate's underside must be flat. */
+const ON_PLATE: Lie = { up: [0, 0, 1], level: [1, 0, 0], contact: 0, stable: true };
 
 /** Whether a printer's usable volume takes a box, upright or turned by a quarter. */
 function holds(printer: Job['printers'][number], [width, depth, height]: readonly [number, number, number]): boolean {
@@ -68,14 +74,15 @@ function sizeFindings(hub: HubPart, piece: ShapedPiece, job: Job): Finding[] {
 
 function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Channel[] {
   const web = LEAST_WALL[job.nodes['process']];
-  const channels: Channel[] = [];
+  const channels: Channel[] = plateHolesOf(space, web);
   hub.sockets.forEach((s, i) => {
     if (s.pin > 0) {
       const pin = pinOf(space, i, web);
       if (pin) channels.push(pin);
       else findings.push(finding('pin-meets-bore', hub.mark, { value: s.pin, about: { strut: s.strut } }));
     }
-    if (job.nodes.vent_mm > 0) {
+    channels.push(...boltHolesOf(space, i));
+    if (job.nodes.vent_mm > 0 && space.sleeves[i]!.hollow) {
       const vent = ventOf(space, i, job.nodes.vent_mm, web);
       if (vent) channels.push(vent);
       else findings.push(finding('vent-left-out', hub.mark, { about: { strut: s.strut } }));
@@ -84,7 +91,13 @@ function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]
   return channels;
 }
 
-function marksOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): MarkPlace[] {
+function marksOf(
+  hub: HubPart,
+  job: Job,
+  space: HubSpace,
+  channels: readonly Channel[],
+  findings: Finding[],
+): MarkPlace[] {
   const places: MarkPlace[] = [];
   const taken = hub.sockets.map((): MarkPlace[] => []);
   const leastWall = LEAST_WALL[job.nodes['process']];
@@ -99,6 +112,7 @@ function marksOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): 
       job.nodes.chamfer_mm,
       [sense * towards[0], sense * towards[1], sense * towards[2]],
       taken[i]!,
+      channels,
     );
     if (!found) return false;
     places.push(found);

@@ -1,4 +1,5 @@
-import { grow, type Half, largest, outlineOf, ringPoints, type Sleeve } from '../detailing/systems/sleeve.js';
+import { type BasePlate, INTO_PLATE, levelRing } from '../detailing/systems/base-plate.js';
+import { grow, type Half, largest, outlineOf, ringPoints, type Sleeve, smallest } from '../detailing/systems/sleeve.js';
 import type { Vec3 } from '../maths/vec3.js';
 import type { Channel } from './channels.js';
 import { addLettering } from './engraving.js';
@@ -24,30 +25,86 @@ export function socketSolid(bench: Bench, space: HubSpace, cuts: HubCuts): Manif
   const pieces = space.sleeves.map((s) => sleeveSolid(bench, s, cuts.chamfer));
   const body = bodySolid(bench, space);
   if (body) pieces.push(body);
+  if (space.shape.base) pieces.push(plateSolid(bench, space.shape.base, cuts.chamfer));
   const outside = bench.hold(kernel.Manifold.union(pieces), 'outside');
-  const cutters = [
-    ...space.sleeves.map((s) => pathSolid(bench, s, cuts.chamfer, space.reach + 1)),
+  const paths = space.sleeves.map((s) => pathSolid(bench, s, cuts.chamfer, space.reach + 1));
+  const last = [
     ...cuts.channels.map((c) => channelSolid(bench, c)),
     ...space.sleeves.flatMap((s, i) => letteringSolid(bench, s, i, cuts.marks) ?? []),
   ];
-  const hub = bench.hold(kernel.Manifold.difference([outside, ...cutters]), 'hub');
-  for (const solid of [...pieces, outside, ...cutters]) bench.free(solid);
+  const cores = space.sleeves.filter((s) => !s.hollow).map((s) => coreSolid(bench, s, cuts.chamfer));
+  // Spigots stand in their own struts' paths: they are put in after the paths are cut, and marked and bored with the rest.
+  const hub =
+    cores.length === 0
+      ? bench.hold(kernel.Manifold.difference([outside, ...paths, ...last]), 'hub')
+      : withCores(bench, outside, paths, cores, last);
+  for (const solid of [...pieces, outside, ...paths, ...cores, ...last]) bench.free(solid);
   return hub;
 }
+
+function withCores(
+  bench: Bench,
+  outside: Manifold,
+  paths: readonly Manifold[],
+  cores: readonly Manifold[],
+  last: readonly Manifold[],
+): Manifold {
+  const { Manifold } = bench.kernel;
+  const bored = bench.hold(Manifold.difference([outside, ...paths]), 'hub');
+  const cored = bench.hold(Manifold.union([bored, ...cores]), 'spigots');
+  const hub = bench.hold(Manifold.difference([cored, ...last]), 'hub');
+  bench.free(bored);
+  bench.free(cored);
+  return hub;
+}
+
+/** A spigot or plate from inside its shoulder to its end, which is chamfered to lead the strut on. */
+function coreSolid(bench: Bench, s: Sleeve, chamfer: number): Manifold {
+  const n = sidesFor(largest(s.rootHalf));
+  const ring = (z: number, half: Half) => ({ z, outline: outlineOf(half, n) });
+  const c = Math.min(Math.max(chamfer, LEAD_IN), smallest(s.outer) / 3, s.socket.depth / 4);
+  const mesh = new MeshBuilder();
+  mesh.loft([
+    ring((s.root + s.stop) / 2, grow(s.outer, -0.02)),
+    ring(s.stop - 0.01, s.outer),
+    ring(s.mouth - c, s.outer),
+    ring(s.mouth, grow(s.outer, -c)),
+  ]);
+  return placed(bench, mesh, s, `spigot ${s.socket.strut}`);
+}
+
+/** Chamfer that leads a tube on, mm; common practice, no source. */
+const LEAD_IN = 1;
 
 function bodySolid(bench: Bench, space: HubSpace): Manifold | null {
   const points = space.sleeves.flatMap((s) =>
     s.rings.flatMap(([at, half]) => ringPoints(s.socket, at, half, sidesFor(largest(half)))),
   );
+  const { base } = space.shape;
+  if (base) points.push(...levelRing(base.top - INTO_PLATE, base.pedestal, sidesFor(base.pedestal)));
   if (points.length === 0) return null;
   return bench.hold(bench.kernel.Manifold.hull(points.map((p) => [p[0], p[1], p[2]])), 'body');
+}
+
+/** A foot's plate, chamfered below against the squeezed first layer. */
+function plateSolid(bench: Bench, base: BasePlate, chamfer: number): Manifold {
+  const n = sidesFor(base.radius);
+  const under = base.top - base.thickness;
+  const c = Math.min(chamfer, base.thickness / 3);
+  const mesh = new MeshBuilder();
+  mesh.loft([
+    { z: under, outline: outlineOf(base.radius - c, n) },
+    { z: under + c + 1e-3, outline: outlineOf(base.radius, n) },
+    { z: base.top, outline: outlineOf(base.radius, n) },
+  ]);
+  return transformed(bench, mesh, [1, 0, 0], [0, 1, 0], [0, 0, 1], [0, 0, 0], 'plate');
 }
 
 /** The path of a strut: the bore from its stop, widened at the mouth, and on beyond whatever else the hub has there. */
 function pathSolid(bench: Bench, s: Sleeve, chamfer: number, to: number): Manifold {
   const n = sidesFor(largest(s.outer));
   const ring = (z: number, half: Half) => ({ z, outline: outlineOf(half, n) });
-  const c = chamferOf(s, chamfer);
+  const c = s.hollow ? chamferOf(s, chamfer) : 0;
   const mesh = new MeshBuilder();
   mesh.loft([
     ring(s.stop, s.inner),
@@ -68,8 +125,13 @@ const chamferOf = (s: Sleeve, chamfer: number): number =>
 function sleeveSolid(bench: Bench, s: Sleeve, chamfer: number): Manifold {
   const n = sidesFor(largest(s.outer));
   const ring = (z: number, half: Half) => ({ z, outline: outlineOf(half, n) });
-  const c = chamferOf(s, chamfer);
   const mesh = new MeshBuilder();
+  if (!s.hollow) {
+    // Past the stop, where the path is cut: the shoulder is a clean cut and no shared face.
+    mesh.loft([ring(s.root, grow(s.rootHalf, ROOT_INSIDE)), ring(s.stop + 0.2, s.rootHalf)]);
+    return placed(bench, mesh, s, `shoulder ${s.socket.strut}`);
+  }
+  const c = chamferOf(s, chamfer);
   mesh.loft([
     ring(s.root, grow(s.outer, ROOT_INSIDE)),
     ...(s.coneFoot > s.root ? [ring(s.coneFoot, s.cone)] : []),

@@ -8,7 +8,7 @@ export interface RandomHub {
 }
 export function randomHub(
   seed: number,
-  special?: { count?: number; least?: number; nodes?: Readonly<Record<string, unknown>> },
+  special?: { system?: string; count?: number; least?: number; nodes?: Readonly<Record<string, unknown>> },
 ): RandomHub;
 export function checkHub(
   made: RandomHub,

@@ -19,7 +19,16 @@ const lath = (width, height) => ({
   material: 'beech-dowel',
   measured: null,
 });
+const tube = (diameter, wall) => ({
+  name: `t${diameter}`,
+  shape: { kind: 'tube', diameter, wall },
+  material: 'beech-dowel',
+  measured: null,
+});
 const SECTIONS = [round(4), round(6), round(8), round(8), round(10), round(12), lath(8, 14), lath(10, 10), lath(20, 6)];
+
+/** For hubs of spigots: tubes, sawn timber and a dowel among them. */
+const SPIGOT_SECTIONS = [tube(16, 2), tube(12, 1.5), tube(20, 1), lath(8, 14), lath(20, 12), round(8)];
 
 const unit = (v) => {
   const l = Math.hypot(...v);
@@ -32,6 +41,7 @@ export function randomHub(seed, special = {}) {
   const random = seededRandom(seed);
   const count = special.count ?? 3 + Math.floor(random() * 12);
   const least = (special.least ?? 12.5 + 25 * random() ** 2) * (Math.PI / 180);
+  const system = special.system ?? (random() < 0.08 ? 'spigot' : random() < 0.08 ? 'foot' : 'socket');
   const directions = [];
   for (let tries = 0; directions.length < count && tries < 5000; tries++) {
     let d = [random() * 2 - 1, random() * 2 - 1, random() * 2 - 1];
@@ -41,6 +51,7 @@ export function randomHub(seed, special = {}) {
       const other = directions[Math.floor(random() * directions.length)];
       d = unit(other.map((x, k) => -x + 0.02 * d[k]));
     }
+    if (system === 'foot') d[2] = Math.abs(d[2]);
     if (directions.every((o) => angle(o, d) > least)) directions.push(d);
   }
   const job = jobSchema.parse({
@@ -50,15 +61,14 @@ export function randomHub(seed, special = {}) {
     nodes: {
       process: ['filament', 'powder', 'resin'][Math.floor(random() * 3)],
       joint: random() < 0.3 ? 'pinned' : 'glued',
+      systems: { [`N${seed % 1000}`]: system },
       setbacks: random() < 0.2 ? 'equal-at-node' : 'least',
       ...special.nodes,
     },
   });
   const at = [100, -50, 30];
-  const kinds = Array.from(
-    { length: 1 + Math.floor(random() * 3) },
-    () => SECTIONS[Math.floor(random() * SECTIONS.length)],
-  );
+  const pool = system === 'spigot' ? SPIGOT_SECTIONS : SECTIONS;
+  const kinds = Array.from({ length: 1 + Math.floor(random() * 3) }, () => pool[Math.floor(random() * pool.length)]);
   const truss = {
     nodes: [
       { mark: `N${seed % 1000}`, at },
@@ -125,6 +135,10 @@ export async function checkHub({ job, hub }, { cross = false, samples = 24 } = {
   for (const s of hub.sockets) {
     const isRound = typeof s.bore === 'number';
     const spot = (a, b, t) => intoPrint([0, 1, 2].map((k) => s.direction[k] * t + s.y[k] * a + s.z[k] * b));
+    if (s.form === 'spigot' || s.form === 'plate') {
+      faults.push(...spigotFaults(s, spot, solid, random, samples));
+      continue;
+    }
     let [full, hollow] = [0, 0];
     for (let i = 0; i < samples; i++) {
       const phi = 2 * Math.PI * random();
@@ -148,6 +162,35 @@ export async function checkHub({ job, hub }, { cross = false, samples = 24 } = {
     if (hollow > samples / 8) faults.push(`wall of ${s.strut} is missing at ${hollow} of ${samples} points`);
   }
   return { faults, shaped, bytes, volume: seen.volume, closedForm, triangles: stl.count };
+}
+
+/** A spigot is solid to its end but for its holes; round it the strut's own room is empty. */
+function spigotFaults(s, spot, solid, random, samples) {
+  const faults = [];
+  let [missing, inTheWay] = [0, 0];
+  const { shape } = s.section;
+  for (let i = 0; i < samples; i++) {
+    const phi = 2 * Math.PI * random();
+    const t = s.setback + 0.3 + random() * (s.depth - 1.5);
+    const isRound = typeof s.bore === 'number';
+    const core = isRound
+      ? [0.45 * s.bore * Math.cos(phi), 0.45 * s.bore * Math.sin(phi)]
+      : [0.45 * s.bore[0], (s.bore[1] / 2) * 0.9 * (2 * random() - 1)];
+    if (!solid(spot(core[0], core[1], t))) missing++;
+    const strut = isRound
+      ? [0.5, 0.99].map((share) => {
+          const r = s.bore / 2 + share * (shape.diameter / 2 - s.bore / 2) + 0.02;
+          return [r * Math.cos(phi), r * Math.sin(phi)];
+        })
+      : [
+          [s.bore[0] / 2 + 0.5, 0],
+          [-s.bore[0] / 2 - 0.5, s.bore[1] * 0.4],
+        ].map(([a, b]) => (s.bore[0] < s.bore[1] ? [a, b] : [s.bore[0] * 0.4, s.bore[1] / 2 + 0.5]));
+    for (const [a, b] of strut) if (solid(spot(a, b, t))) inTheWay++;
+  }
+  if (missing > samples / 3) faults.push(`spigot of ${s.strut} is missing at ${missing} of ${samples} points`);
+  if (inTheWay > 0) faults.push(`strut ${s.strut} meets plastic at ${inTheWay} points`);
+  return faults;
 }
 
 function inPath(o, p) {

@@ -2,6 +2,8 @@ import { convexHull2 } from '../../maths/convex-hull2.js';
 import { convexHull3, type Hull3 } from '../../maths/convex-hull3.js';
 import { cross, dot, subtract, type Vec3 } from '../../maths/vec3.js';
 import type { Point2 } from '../../model/parts.js';
+import { INTO_PLATE, levelRing } from './base-plate.js';
+import type { HubShape } from './hub-shape.js';
 import { ringPoints, type Sleeve } from './sleeve.js';
 import type { ConvexPiece, Slab } from './system.js';
 
@@ -9,17 +11,28 @@ import type { ConvexPiece, Slab } from './system.js';
 export const COVER_SIDES = 16;
 
 /** Convex hull of the sleeves' rings, relative to the node; null for a lone sleeve. */
-export const bodyHull = (sleeves: readonly Sleeve[], sides: number = COVER_SIDES): Hull3 | null =>
-  convexHull3(sleeves.flatMap((s) => s.rings.flatMap(([at, half]) => ringPoints(s.socket, at, half, sides))));
+export const bodyHull = ({ sleeves, base }: HubShape, sides: number = COVER_SIDES): Hull3 | null =>
+  convexHull3([
+    ...sleeves.flatMap((s) => s.rings.flatMap(([at, half]) => ringPoints(s.socket, at, half, sides))),
+    ...(base ? levelRing(base.top - INTO_PLATE, base.pedestal, sides) : []),
+  ]);
 
 /** The body and, for each sleeve, its cone and its tube, as convex pieces. */
-export function sleeveCover(sleeves: readonly Sleeve[]): ConvexPiece[] {
+export function sleeveCover(shape: HubShape): ConvexPiece[] {
+  const { sleeves, base } = shape;
   const pieces: ConvexPiece[] = [];
-  const body = bodyHull(sleeves);
+  const body = bodyHull(shape);
   if (body) pieces.push({ points: body.points, edges: edgesOf(body) });
+  if (base)
+    pieces.push(
+      between(
+        levelRing(base.top - base.thickness, base.radius, COVER_SIDES),
+        levelRing(base.top, base.radius, COVER_SIDES),
+      ),
+    );
   for (const s of sleeves) {
     pieces.push(prism(s, s.root, s.coneFoot, s.cone, s.cone));
-    pieces.push(prism(s, s.coneFoot, s.coneTop, s.cone, s.outer));
+    if (s.coneTop > s.coneFoot) pieces.push(prism(s, s.coneFoot, s.coneTop, s.cone, s.outer));
     pieces.push(prism(s, s.coneTop, s.mouth, s.outer, s.outer));
   }
   return pieces;
@@ -36,8 +49,11 @@ function edgesOf(hull: Hull3): [number, number][] {
 }
 
 function prism(s: Sleeve, from: number, to: number, low: Sleeve['outer'], high: Sleeve['outer']): ConvexPiece {
-  const bottom = ringPoints(s.socket, from, low, COVER_SIDES);
-  const top = ringPoints(s.socket, to, high, COVER_SIDES);
+  return between(ringPoints(s.socket, from, low, COVER_SIDES), ringPoints(s.socket, to, high, COVER_SIDES));
+}
+
+/** The convex piece between two rings of as many corners. */
+function between(bottom: readonly Vec3[], top: readonly Vec3[]): ConvexPiece {
   const n = bottom.length;
   const edges = bottom.flatMap((_, k): [number, number][] => [
     [k, (k + 1) % n],

@@ -3,8 +3,9 @@ import type { Half, Sleeve } from './sleeve.js';
 
 /** Half-sizes of a sleeve's outside at a distance from the node, between root and mouth. */
 export function outerAt(s: Sleeve, along: number): Half {
+  if (along < s.coneFoot)
+    return along < s.root ? s.rootHalf : between(s.rootHalf, s.cone, part(s.root, s.coneFoot, along));
   if (along >= s.coneTop) return s.outer;
-  if (along <= s.coneFoot) return along < s.root ? s.outer : between(s.outer, s.cone, part(s.root, s.coneFoot, along));
   return between(s.cone, s.outer, part(s.coneFoot, s.coneTop, along));
 }
 

@@ -1,5 +1,5 @@
 import type { HubPart } from '../../model/parts.js';
-import { areaOf, type Half, perimeterOf, type Sleeve, sleevesOf } from './sleeve.js';
+import { areaOf, type Half, largest, perimeterOf, type Sleeve, sleevesOf, smallest } from './sleeve.js';
 import type { SocketStiffness, SocketStrength } from './system.js';
 
 /**
@@ -15,7 +15,8 @@ export function sleeveStiffness(hub: HubPart): SocketStiffness[] {
   const G = hub.material.shearModulus ?? E / (2 * (1 + (hub.material.poisson ?? POISSON)));
   return sleevesOf(hub.sockets).map((s) => {
     const { stop, socket } = s;
-    const [full, wall] = [momentsOf(s.outer), minus(momentsOf(s.outer), momentsOf(s.inner))];
+    const full = momentsOf(s.hollow ? s.outer : s.rootHalf);
+    const wall = s.hollow ? minus(full, momentsOf(s.inner)) : momentsOf(s.outer);
     const series = (modulus: number, key: keyof Moments): number =>
       modulus / (stop / full[key] + socket.depth / (3 * wall[key]));
     return {
@@ -67,6 +68,20 @@ export function sleeveStrength(hub: HubPart, vent: number): SocketStrength[] {
   return sleevesOf(hub.sockets).map((s: Sleeve) => {
     const { pin, wall, depth, strut } = s.socket;
     const hole = (Math.PI * pin * pin) / 4;
+    if (!s.hollow) {
+      // A spigot or plate: its own section carries, glue holds its surface, and the strut stands on the shoulder round it.
+      const width = 2 * largest(s.outer);
+      return {
+        strut,
+        wallArea: areaOf(s.outer) - pin * width,
+        wall: 2 * smallest(s.outer),
+        bondArea: perimeterOf(s.outer) * depth - 2 * hole,
+        stopArea: Math.max(0, areaOf(s.rootHalf) - areaOf(s.outer)),
+        rootArea: areaOf(s.rootHalf),
+        pin: pin > 0 ? { diameter: pin, shearPlanes: 2, bearingArea: pin * width } : null,
+        acrossLayers,
+      };
+    }
     return {
       strut,
       wallArea: areaOf(s.outer) - areaOf(s.inner) - 2 * pin * wall,

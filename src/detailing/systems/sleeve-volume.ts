@@ -1,5 +1,7 @@
 import { addScaled, scale } from '../../maths/vec3.js';
-import { areaOf, type Half, type Sleeve } from './sleeve.js';
+import { plateVolume } from './base-plate.js';
+import type { HubShape } from './hub-shape.js';
+import { areaOf, type Half, largest, type Sleeve } from './sleeve.js';
 import { bodyHull } from './sleeve-cover.js';
 import { between, insidePlanes, insideSleeve } from './sleeve-inside.js';
 
@@ -8,11 +10,12 @@ import { between, insidePlanes, insideSleeve } from './sleeve-inside.js';
  * overlap, less the bores and pin holes. Sleeves are summed over a fixed grid of points of equal volume: 8 along each of cone and
  * tube, 12 round, 3 across; within 2 % of the solid on hubs of 2 to 12 sleeves.
  */
-export function sleeveVolume(sleeves: readonly Sleeve[]): number {
-  const hull = bodyHull(sleeves, 12);
+export function sleeveVolume(shape: HubShape): number {
+  const { sleeves, base } = shape;
+  const hull = bodyHull(shape, 12);
   const planes = hull?.planes ?? new Float64Array(0);
   // A 12-gon that contains its circle is too large by this share of the area.
-  let volume = (hull?.volume ?? 0) / polygonExcess(12);
+  let volume = (hull?.volume ?? 0) / polygonExcess(12) + (base ? plateVolume(base) : 0);
   for (const s of sleeves) {
     for (const [from, to, low, high] of stretches(s)) {
       if (to <= from) continue;
@@ -30,9 +33,10 @@ export function sleeveVolume(sleeves: readonly Sleeve[]): number {
         }
       }
     }
-    volume -= areaOf(s.inner) * (s.mouth - s.stop);
+    if (s.hollow) volume -= areaOf(s.inner) * (s.mouth - s.stop);
     const { pin, wall } = s.socket;
-    volume -= ((Math.PI * pin * pin) / 4) * 2 * wall;
+    const across = s.hollow ? 2 * wall : 2 * largest(s.outer);
+    volume -= ((Math.PI * pin * pin) / 4) * across;
   }
   return Math.max(volume, 0);
 }
@@ -44,7 +48,7 @@ const ACROSS = 3;
 const polygonExcess = (sides: number): number => (Math.tan(Math.PI / sides) * sides) / Math.PI;
 
 const stretches = (s: Sleeve): readonly (readonly [number, number, Half, Half])[] => [
-  [s.root, s.coneFoot, s.outer, s.cone],
+  [s.root, s.coneFoot, s.rootHalf, s.cone],
   [s.coneFoot, s.coneTop, s.cone, s.outer],
   [s.coneTop, s.mouth, s.outer, s.outer],
 ];

@@ -1,5 +1,6 @@
 import { add, addScaled, scale, type Vec3 } from '../../maths/vec3.js';
 import type { Socket } from '../../model/parts.js';
+import { measuredSize } from './printing.js';
 
 /**
  * The shape of a printed hub, in one place for its mass, its cover and its solid.
@@ -20,7 +21,12 @@ export interface Sleeve {
   /** Outer half-sizes of the sleeve: a radius, or half width and half height. */
   readonly outer: Half;
   readonly cone: Half;
+  /** The bore; of a spigot or plate, the strut itself. */
   readonly inner: Half;
+  /** Outer half-sizes at the root: the sleeve's, or a spigot's shoulder. */
+  readonly rootHalf: Half;
+  /** Whether the strut goes in; a spigot or plate goes into the strut and is solid. */
+  readonly hollow: boolean;
   /** Rings of the body: [distance, half-sizes] front and back. */
   readonly rings: readonly (readonly [number, Half])[];
 }
@@ -43,22 +49,36 @@ export const grow = (half: Half, by: number): Half =>
 const shrink = (half: Half, share: number): Half =>
   typeof half === 'number' ? half * share : [half[0] * share, half[1] * share];
 export const largest = (half: Half): number => (typeof half === 'number' ? half : Math.max(half[0], half[1]));
+export const smallest = (half: Half): number => (typeof half === 'number' ? half : Math.min(half[0], half[1]));
 export const areaOf = (half: Half): number =>
   typeof half === 'number' ? Math.PI * half * half : 4 * half[0] * half[1];
 export const perimeterOf = (half: Half): number =>
   typeof half === 'number' ? 2 * Math.PI * half : 4 * (half[0] + half[1]);
 
-/** The bore's half-sizes. */
+/** Half-sizes of what must stay clear of the rest of the hub from the stop outwards: the bore, or the strut that goes over a spigot. */
+export function pathHalf(socket: Socket): Half {
+  if (socket.form === undefined || socket.form === 'sleeve') return boreHalf(socket);
+  const { shape } = socket.section;
+  return shape.kind === 'rectangle'
+    ? [shape.width / 2 + OVER_STRUT, shape.height / 2 + OVER_STRUT]
+    : measuredSize(socket.section) / 2 + OVER_STRUT;
+}
+
+/** Room round a strut that goes over its spigot, mm: its oversize and a little air; common practice, no source. */
+const OVER_STRUT = 0.3;
+
+/** Half-sizes of the bore, or of the spigot or plate. */
 export const boreHalf = (socket: Socket): Half =>
   typeof socket.bore === 'number' ? socket.bore / 2 : [socket.bore[0] / 2, socket.bore[1] / 2];
 
-/** Sleeves of a hub's sockets whose setback is known, in their order. */
-export function sleevesOf(sockets: readonly Socket[]): Sleeve[] {
+/** Sleeves of a hub's sockets whose setback is known, in their order; `based`: a single one has a body too, to stand on a plate. */
+export function sleevesOf(sockets: readonly Socket[], based = false): Sleeve[] {
   const known = sockets.filter((s) => s.setback !== null);
-  return known.map((socket) => sleeve(socket, known.length === 1));
+  return known.map((socket) => sleeve(socket, known.length === 1 && !based));
 }
 
 function sleeve(socket: Socket, alone: boolean): Sleeve {
+  if (socket.form === 'spigot' || socket.form === 'plate') return spigot(socket, alone);
   const stop = socket.setback!;
   const inner = boreHalf(socket);
   const outer = grow(inner, socket.wall);
@@ -77,11 +97,41 @@ function sleeve(socket: Socket, alone: boolean): Sleeve {
     outer,
     cone: alone ? outer : cone,
     inner,
+    rootHalf: outer,
+    hollow: true,
     rings: alone
       ? []
       : [
           [stop - RING_BEHIND, grow(cone, -RING_INSIDE)],
           [Math.min(back, stop - 2 * RING_BEHIND), shrink(outer, BACK_SHARE)],
+        ],
+  };
+}
+
+/** A spigot or plate with a shoulder of the strut's own size that the strut's end stands on. */
+function spigot(socket: Socket, alone: boolean): Sleeve {
+  const stop = socket.setback!;
+  const inner = pathHalf(socket);
+  const shoulder = grow(inner, -OVER_STRUT);
+  const root = alone ? stop - largest(shoulder) : Math.max(stop - largest(shoulder), ROOT_CLEAR * stop);
+  const front = stop - RING_BEHIND;
+  return {
+    socket,
+    root,
+    stop,
+    mouth: stop + socket.depth,
+    coneFoot: stop,
+    coneTop: stop,
+    outer: boreHalf(socket),
+    cone: shoulder,
+    inner,
+    rootHalf: shoulder,
+    hollow: false,
+    rings: alone
+      ? []
+      : [
+          [front, grow(shoulder, -RING_INSIDE)],
+          [Math.min(root, front - RING_BEHIND), shrink(shoulder, BACK_SHARE)],
         ],
   };
 }

@@ -3,29 +3,35 @@ import { materialNamed } from '../../model/catalogue/resolve.js';
 import type { Job } from '../../model/job/index.js';
 import type { Socket } from '../../model/parts.js';
 import { commonSetback, leastSetback } from './half-strip.js';
+import { hubShape } from './hub-shape.js';
 import { leastSetbacks } from './least-setbacks.js';
 import { clearance, LEAST_WALL, measuredSize, sleeveWall, swelling } from './printing.js';
 import { type BarPrism, commonOf, leastOf, type Separation, separations } from './prism-pair.js';
-import { boreHalf, sleevesOf } from './sleeve.js';
+import { pathHalf } from './sleeve.js';
 import { outlineInSlab, sleeveCover } from './sleeve-cover.js';
 import { sleeveStiffness, sleeveStrength } from './sleeve-strength.js';
 import { sleeveVolume } from './sleeve-volume.js';
 import type { BarEnd, ClosePair, NodeSystem, Setbacks } from './system.js';
 
+/** What every hub of sleeves and spigots on a body has in common. */
+export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
+  setbacks: socketSetbacks,
+  cover: (hub, job) => sleeveCover(hubShape(hub, job)),
+  outline: (hub, slab, job) => outlineInSlab(sleeveCover(hubShape(hub, job)), hub.at, slab),
+  mass: (hub, job) =>
+    hub.sockets.some((s) => s.setback === null)
+      ? null
+      : sleeveVolume(hubShape(hub, job)) * MM3_TO_M3 * hub.material.density,
+  stiffness: (hub) => sleeveStiffness(hub),
+  strength: (hub, job) => sleeveStrength(hub, job.nodes.vent_mm),
+};
+
 /** A printed hub with one blind socket a strut, along the strut's true direction. */
 export const SOCKET_SYSTEM: NodeSystem = {
+  ...SLEEVE_HUB,
   name: 'socket',
   title: 'Printed sockets',
   socket: sizeSocket,
-  setbacks: socketSetbacks,
-  cover: (hub) => sleeveCover(sleevesOf(hub.sockets)),
-  outline: (hub, slab) => outlineInSlab(sleeveCover(sleevesOf(hub.sockets)), hub.at, slab),
-  mass: (hub) =>
-    hub.sockets.some((s) => s.setback === null)
-      ? null
-      : sleeveVolume(sleevesOf(hub.sockets)) * MM3_TO_M3 * hub.material.density,
-  stiffness: (hub) => sleeveStiffness(hub),
-  strength: (hub, job) => sleeveStrength(hub, job.nodes.vent_mm),
 };
 
 const MM3_TO_M3 = 1e-9;
@@ -99,7 +105,7 @@ function pairRule(sockets: readonly Socket[], job: Job): Parameters<typeof least
       ? LEAST_WALL[job.nodes['process']]
       : (job.nodes.gap_mm ?? Math.max(sockets[i]!.wall, sockets[j]!.wall));
   const angles = sockets.map((a) => sockets.map((b) => angleBetween(a.direction, b.direction)));
-  const prisms = sockets.map((s): BarPrism => ({ d: s.direction, u: s.y, v: s.z, half: boreHalf(s) }));
+  const prisms = sockets.map((s): BarPrism => ({ d: s.direction, u: s.y, v: s.z, half: pathHalf(s) }));
   const cache = new Map<number, readonly Separation[]>();
   const prismPair = (i: number, j: number): readonly Separation[] => {
     let list = cache.get(i * n + j);

@@ -29,6 +29,8 @@ export interface Setbacks {
   /** From the node to each socket's stop in the sockets' order, mm; null where a pair is too close. */
   readonly setbacks: readonly (number | null)[];
   readonly tooClose: readonly ClosePair[];
+  /** Struts that would run through a foot's base plate. */
+  readonly throughPlate?: readonly string[];
 }
 
 /** Material between two parallel planes: points origin + x X + y Y + z (X cross Y) with from <= z <= to, mm. */

@@ -81,4 +81,11 @@ export const NODE_FINDINGS = {
     (f) =>
       `the sockets' clearance of ${num(f.value, 2)} mm is a starting value and not measured; print the fit gauge, then set nodes.clearance_mm and nodes.clearanceMeasured`,
   ),
+  'strut-through-plate': entry(
+    'stop',
+    'node',
+    '',
+    (f) =>
+      `${f.about?.['strut']} falls too steeply to leave over the base plate; give this node another system or raise it`,
+  ),
 } as const;
