@@ -3,10 +3,21 @@ import { check } from './check.js';
 import type { CliCommand } from './command.js';
 import { compare } from './compare.js';
 import { convert } from './convert.js';
+import { exportTruss } from './export.js';
 import { make } from './make.js';
 import { mend } from './mend.js';
 import { newJob } from './new.js';
 import { size } from './size.js';
 
 /** The commands, in the order of the help. */
-export const commands: readonly CliCommand[] = [newJob, make, check, size, mend, compare, asBuilt, convert];
+export const commands: readonly CliCommand[] = [
+  newJob,
+  make,
+  check,
+  size,
+  mend,
+  compare,
+  asBuilt,
+  convert,
+  exportTruss,
+];
