@@ -31,8 +31,8 @@ export function balanceRows(
   for (let f = 0; f < rowOf.length; f++) {
     if (rowOf[f] >= 0) into.values.push(figure.loads[Math.floor(f / 3)][f % 3] / largest);
   }
+  // Noughts are kept: the pattern must not change from step to step.
   const put = (row: number, column: number, entry: number): void => {
-    if (entry === 0) return;
     into.rows.push(row);
     into.columns.push(column);
     into.entries.push(entry);

@@ -1,4 +1,5 @@
 import { fitPlane } from '../../maths/plane-fit.js';
+import type { Analysis } from '../../maths/sparse/analyse.js';
 import { length, type Vec3 } from '../../maths/vec3.js';
 import type { Finding } from '../../model/finding.js';
 import { finding } from '../../model/findings/index.js';
@@ -123,11 +124,13 @@ export function mend(truss: Truss, options: MendOptions = {}): Mended {
     return rows;
   };
 
+  let analysis: Analysis | null = null;
   let equations = equationsNow();
   let miss = largestOf(equations.values);
   let steps = 0;
   while (miss > tolerance && steps < MOST_STEPS && columns > 0) {
-    x = nearestOn(equations, x);
+    const nearest: ReturnType<typeof nearestOn> = nearestOn(equations, x, analysis);
+    [x, analysis] = [nearest.x, nearest.analysis];
     steps++;
     if (largestOf(x) > ASTRAY) break;
     equations = equationsNow();

@@ -1,4 +1,4 @@
-import { analyse } from '../../maths/sparse/analyse.js';
+import { type Analysis, analyse } from '../../maths/sparse/analyse.js';
 import { fromTriplets } from '../../maths/sparse/csc.js';
 import { factorise } from '../../maths/sparse/factorise.js';
 import { multiply, multiplyTransposed } from '../../maths/sparse/multiply.js';
@@ -13,8 +13,13 @@ const LEAST_DAMPING = 1e-13;
  * The point x + d nearest to nought on the linearised equations J d = -c: x + d = J'(J J' + damping)⁻¹(J x - c),
  * x counted from where everything came from, in scaled unknowns. The damping follows the size of c, which keeps dependent equations from
  * blowing up and lets the steps converge quadratically (Fan and Yuan, Computing 74 (2005) 23-39).
+ * `before`: the analysis of a step with the same pattern, made once.
  */
-export function nearestOn(equations: RowList, x: Float64Array): Float64Array {
+export function nearestOn(
+  equations: RowList,
+  x: Float64Array,
+  before: Analysis | null,
+): { readonly x: Float64Array; readonly analysis: Analysis } {
   const count = equations.values.length;
   const jacobian = fromTriplets(count, x.length, equations.rows, equations.columns, equations.entries);
   const right = multiply(jacobian, x);
@@ -31,7 +36,7 @@ export function nearestOn(equations: RowList, x: Float64Array): Float64Array {
     }
   }
   const shifted = addToDiagonal(gram, Math.max(LEAST_DAMPING, size * size) * diagonal);
-  // The pattern follows the numbers (a strut along an axis has noughts), so it is analysed each time.
-  const factor = factorise(analyse(shifted), shifted);
-  return multiplyTransposed(jacobian, solve(factor, shifted, [right]).x[0]);
+  const analysis = before && before.entry.length === shifted.values.length ? before : analyse(shifted);
+  const factor = factorise(analysis, shifted);
+  return { x: multiplyTransposed(jacobian, solve(factor, shifted, [right]).x[0]), analysis };
 }

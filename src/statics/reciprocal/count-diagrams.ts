@@ -4,7 +4,7 @@ import { type FunctionSpace, functionSpace } from './function-space.js';
 import { type QuadraticForces, quadraticForces } from './quadratic-forces.js';
 import { reachedStates } from './reach.js';
 import type { DiagramCounts } from './result.js';
-import { selfStress } from './self-stress.js';
+import { selfStressStates } from './self-stress.js';
 
 /** A state counts as self-stress up to this singular value, and to a few times what the faces' twist left in the functions. */
 const ROUND_OFF_CUT = 1e-9;
@@ -18,7 +18,8 @@ export function countSpace(
   q: QuadraticForces,
   loaded: boolean,
 ): DiagramCounts {
-  const states = selfStress(topology, loaded, Math.max(ROUND_OFF_CUT, TWIST_FACTOR * space.largestNull)).count;
+  const cut = space.largestNull > ROUND_OFF_CUT ? TWIST_FACTOR * space.largestNull : ROUND_OFF_CUT;
+  const states = selfStressStates(topology, loaded, cut);
   const { V, E, F } = complex.euler;
   return {
     nodes: V,

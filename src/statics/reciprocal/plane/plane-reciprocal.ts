@@ -8,7 +8,7 @@ import type { Topology } from '../../../model/topology.js';
 import { GIVEN_CASE } from '../../../model/truss.js';
 import { equilibriumOf, loadsOf } from '../../equilibrium.js';
 import { type DiagramCounts, NOTHING, type ReciprocalResult } from '../result.js';
-import { selfStress } from '../self-stress.js';
+import { selfStressStates } from '../self-stress.js';
 import { outerForces } from '../settle-diagram.js';
 import { chooseLifting, combine } from './choose-lifting.js';
 import { type Concurrency, concurrencyTests } from './concurrency.js';
@@ -50,7 +50,7 @@ export function planeReciprocal(
   const count = regions.loops.length;
   const lifted = liftings(figure, regions, count, regions.outer, open?.rays ?? []);
   const folds = lifted.basis.map((surface) => foldForces(figure, regions, surface));
-  const states = selfStress(topology, loaded, LIFTING_CUT);
+  const states = selfStressStates(topology, loaded, LIFTING_CUT);
   const nodes = new Set(Array.from(regions.edges.start));
   const counts: DiagramCounts = {
     nodes: nodes.size,
@@ -58,15 +58,15 @@ export function planeReciprocal(
     faces: 0,
     cells: count,
     dimension: lifted.basis.length,
-    selfStressStates: states.count,
+    selfStressStates: states,
     reached: lifted.basis.length,
     leastSingular: lifted.leastSingular,
   };
   const concurrency = loaded ? [] : concurrencyTests(topology, figure, regions, job.fit.residualWarn);
   const findings: Finding[] = [
-    ...(counts.dimension === states.count
+    ...(counts.dimension === states
       ? []
-      : [finding('lifting-count-differs', 'truss', { value: counts.dimension, limit: states.count })]),
+      : [finding('lifting-count-differs', 'truss', { value: counts.dimension, limit: states })]),
     ...concurrency.flatMap((c) => notConcurrent(topology, c, counts.dimension === 0, given, job.fit.residualWarn)),
   ];
   const base = open ? loadedSurface(lifted, open.rays) : null;
