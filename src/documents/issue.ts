@@ -3,7 +3,7 @@ import type { Issue } from './kit/paper.js';
 import type { PackRecords } from './records.js';
 
 /** What every paper of a pack has in common: the job, the faces, what holds it up, and what was not checked though its use asks for it. */
-export function issueOf(records: PackRecords, fonts: Fonts): Issue {
+export function issueOf(records: Pick<PackRecords, 'job' | 'hold' | 'findings'>, fonts: Fonts): Issue {
   return {
     job: records.job,
     fonts,

@@ -8,6 +8,7 @@ import { make } from './make.js';
 import { mend } from './mend.js';
 import { newJob } from './new.js';
 import { size } from './size.js';
+import { stock } from './stock.js';
 
 /** The commands, in the order of the help. */
 export const commands: readonly CliCommand[] = [
@@ -20,4 +21,5 @@ export const commands: readonly CliCommand[] = [
   asBuilt,
   convert,
   exportTruss,
+  stock,
 ];

@@ -13,9 +13,13 @@ import type { PackRecords } from '../records.js';
 import { type BarBatch, barBatches } from './bar-batches.js';
 import { BAR_HEIGHT, drawBar } from './bar-drawing.js';
 import { type BuyingLine, buyingLines } from './buying-list.js';
+import { sayProof } from './proof.js';
+
+/** What a saw plan draws on: a pack's records, or those of pieces that belong to no truss. */
+export type SawRecords = Pick<PackRecords, 'job' | 'stock' | 'hold' | 'findings'>;
 
 /** saw-plan.pdf: the bars to fetch, then every bar to scale with its cuts in sawing order, equal bars together. */
-export async function sawPlanPdf(records: PackRecords, fonts: Fonts): Promise<Written> {
+export async function sawPlanPdf(records: SawRecords, fonts: Fonts): Promise<Written> {
   const { job } = records;
   const plan = records.stock;
   const units = unitsOf(job, 0);
@@ -65,18 +69,10 @@ function fetchTable(flow: Flow, lines: readonly BuyingLine[], cost: number, curr
 
 const headingOf = (s: SectionPlan): string => `${s.section}: ${s.bars} ${s.bars === 1 ? 'bar' : 'bars'}`;
 
-function sayProof(s: SectionPlan, currency: string): string {
-  const unit = currency === '' ? '' : ` ${currency}`;
-  if (s.proven) return 'Proven: no plan for these pieces costs less.';
-  if (s.lowerBound <= 0) return 'Some struts are on no bar: the report names them.';
-  const gap = (100 * (s.cost - s.lowerBound)) / s.lowerBound;
-  return `No plan can cost less than ${fixed(s.lowerBound, 2)}${unit}; this one costs ${fixed(s.cost, 2)}${unit}, ${fixed(gap, 1)} % more.`;
-}
-
 const TICK = 3.2;
 const LINE_GAP = 1.2;
 
-function drawBatch(flow: Flow, paper: Paper, batch: BarBatch, scale: number, records: PackRecords, units: Units): void {
+function drawBatch(flow: Flow, paper: Paper, batch: BarBatch, scale: number, records: SawRecords, units: Units): void {
   const { pen } = paper;
   const bar = batch.bars[0]!;
   const { saw } = records.job;

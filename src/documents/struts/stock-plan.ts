@@ -2,7 +2,7 @@ import { writeJson } from '../formats/json.js';
 import type { PackRecords } from '../records.js';
 
 /** struts/stock-plan.json: every bar with its cuts in sawing order, what is left of it, the cost and its proven lower bound. */
-export function stockPlanJson(records: PackRecords): Uint8Array {
+export function stockPlanJson(records: Pick<PackRecords, 'job' | 'stock'>): Uint8Array {
   const plan = records.stock;
   return writeJson({
     format: 'strutwright-stock-plan/1',

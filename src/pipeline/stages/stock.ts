@@ -5,7 +5,7 @@ import type { StrutPart } from '../../model/parts.js';
 import type { PlannedBar, SectionPlan, StockPlan } from '../../model/plan.js';
 import type { Section } from '../../model/section.js';
 import { planStock } from '../../planning/stock/planStock.js';
-import type { StockKind } from '../../planning/stock/request.js';
+import type { StockKind, StockPiece } from '../../planning/stock/request.js';
 
 /** Bars that dowels are sold in: common practice, no source. */
 const THIN_BAR_MM = 1000;
@@ -14,19 +14,40 @@ const THIN_MM = 12;
 
 const NO_CLOCK = (): number => 0;
 
+export interface PlannedBars {
+  readonly plan: StockPlan;
+  readonly findings: readonly Finding[];
+}
+
 /** Cuts every strut that has a length from the job's bars, each section for itself, offcuts in the rack first. */
-export async function planBars(
-  struts: readonly StrutPart[],
-  job: Job,
-): Promise<{ readonly plan: StockPlan; readonly findings: readonly Finding[] }> {
+export function planBars(struts: readonly StrutPart[], job: Job): Promise<PlannedBars> {
+  const groups = [...bySection(struts)].map(
+    ([section, members]): PieceGroup => ({
+      section,
+      pieces: members.map((s) => ({ mark: s.mark, length: s.cutLength!, quantity: 1 })),
+      usual: usualBar(members[0]!.section!),
+    }),
+  );
+  return planGroups(groups, job);
+}
+
+/** Pieces of one section; `usual` is the length of bar in mm that is sawn where the job names none. */
+export interface PieceGroup {
+  readonly section: string;
+  readonly pieces: readonly StockPiece[];
+  readonly usual: number;
+}
+
+/** Cuts pieces from the job's bars, group by group. */
+export async function planGroups(groups: readonly PieceGroup[], job: Job): Promise<PlannedBars> {
   const findings: Finding[] = [];
   const bars: PlannedBar[] = [];
   const sections: SectionPlan[] = [];
-  for (const [name, members] of bySection(struts)) {
-    const kinds = kindsFor(name, members[0]!.section!, job);
+  for (const { section: name, pieces, usual } of groups) {
+    const kinds = kindsFor(name, usual, job);
     const answer = await planStock(
       {
-        pieces: members.map((s) => ({ mark: s.mark, length: s.cutLength!, quantity: 1 })),
+        pieces,
         stock: kinds,
         kerf: job.saw.kerf_mm,
         endTrim: job.saw.endTrim_mm,
@@ -91,7 +112,7 @@ interface BarKind extends StockKind {
 }
 
 /** Rack offcuts cost nothing and have sawn ends; bars are the job's, or one common length. */
-function kindsFor(name: string, section: Section, job: Job): readonly BarKind[] {
+function kindsFor(name: string, usual: number, job: Job): readonly BarKind[] {
   const rack = job.stock.rack
     .filter((r) => r.section === name)
     .map(
@@ -116,8 +137,11 @@ function kindsFor(name: string, section: Section, job: Job): readonly BarKind[] 
       }),
     );
   if (bought.length > 0) return [...rack, ...bought];
-  const { shape } = section;
+  return [...rack, { name: `${name} x ${usual}`, length: usual, price: 1, rack: false }];
+}
+
+/** Length of the bars that a section is sold in, mm. */
+export function usualBar({ shape }: Section): number {
   const thick = shape.kind === 'rectangle' ? Math.max(shape.width, shape.height) : shape.diameter;
-  const length = thick <= THIN_MM ? THIN_BAR_MM : BAR_MM;
-  return [...rack, { name: `${name} x ${length}`, length, price: 1, rack: false }];
+  return thick <= THIN_MM ? THIN_BAR_MM : BAR_MM;
 }
