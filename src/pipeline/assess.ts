@@ -53,7 +53,8 @@ export function assess(file: Truss, job: Job): Assessment {
     reciprocal: reciprocal.counts ? reciprocal : null,
     utilisations: judgement.utilisations,
     found: [
-      ...(claimed ? [] : given.findings),
+      // Analysis has a balance of its own; that forces are missing is no news where none were asked for.
+      ...(claimed ? [] : given.findings.filter((f) => f.code !== 'forces-missing' || !analysis.equilibrium)),
       ...reciprocal.findings,
       ...(equilibrium?.findings ?? []),
       ...layout.findings,

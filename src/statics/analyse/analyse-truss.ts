@@ -16,7 +16,6 @@ import { elasticForces } from '../pin-truss.js';
 import { prestressTest, splitForces } from '../prestress.js';
 import { climberActions } from './climber.js';
 import { equilibriumOfCase } from './equilibrium-of-case.js';
-import { figureOf } from './figure.js';
 import { strutStiffness } from './member-stiffness.js';
 import { jointsHold, type Model, modelOf, respond } from './model.js';
 import { actionsOf, axialForces, combine, pinLoads, type Response } from './response.js';
@@ -57,8 +56,8 @@ export function analyseTruss(input: AnalysisInput): Analysed {
   const { topology, job, parts, given } = input;
   const { truss } = topology;
   const findings: Finding[] = [];
-  const figure = figureOf(topology);
-  const states = statesOf(topology, figure);
+  const states = statesOf(topology);
+  const { figure } = states;
   findings.push(...states.findings, ...missingLoads(job));
   const stop = (notChecked: readonly string[]) => ({
     solution: bare(states, given, notChecked),

@@ -6,7 +6,7 @@ import { mechanismInWords } from '../mechanism-words.js';
 import type { PinFigure } from '../pin-figure.js';
 import { rigidMotions } from '../rigid-body.js';
 import { countStates, type FigureCounts, loadIsCompatible, NEAR_MECHANISM } from '../state-counts.js';
-import { piecesOf } from './figure.js';
+import { figureOf, piecesOf } from './figure.js';
 
 /**
  * Singular values of the equilibrium matrix (unit bar directions) up to this count as nought: what coordinates rounded to a
@@ -25,7 +25,18 @@ export interface States {
 }
 
 /** Counts the states of the truss on its supports; what its supports leave free is a stop where it has any. */
-export function statesOf(topology: Topology, figure: PinFigure): States {
+export function statesOf(topology: Topology): States {
+  const known = counted.get(topology);
+  if (known) return known;
+  const states = count(topology, figureOf(topology));
+  counted.set(topology, states);
+  return states;
+}
+
+/** Parts change between passes over one truss, its counts do not. */
+const counted = new WeakMap<Topology, States>();
+
+function count(topology: Topology, figure: PinFigure): States {
   const { truss } = topology;
   const counts = countStates(figure, ROUNDED);
   const marks = truss.nodes.map((n) => n.mark);

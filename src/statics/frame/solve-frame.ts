@@ -6,7 +6,7 @@ import { solve } from '../../maths/sparse/solve.js';
 import { blockPoints, type Freedoms, gather, numberFreedoms, spread } from '../freedoms.js';
 import { assembleFrame } from './assemble.js';
 import { chainStiffness, fixedEndForces, type MemberLoad } from './chain-stiffness.js';
-import type { Frame } from './member.js';
+import type { Frame, FrameMember } from './member.js';
 import { toGlobal, vectorToGlobal, vectorToLocal } from './rotate.js';
 
 /** Pivots below this share of their own diagonal entry call for a closer look. */
@@ -50,7 +50,13 @@ export type PreparedFrame =
 /** Assembles and factorises the stiffness of a space frame (McGuire, Gallagher and Ziemian 2000, ch. 4 and 5). */
 export function prepareFrame(frame: Frame): PreparedFrame {
   const freedoms = numberFreedoms(frame.fixed, 6);
-  const local = frame.members.map(chainStiffness);
+  const made = new Map<FrameMember['segments'], Float64Array>();
+  const local = frame.members.map((m) => {
+    const known = m.springs.length === 0 ? made.get(m.segments) : undefined;
+    const k = known ?? chainStiffness(m);
+    if (m.springs.length === 0) made.set(m.segments, k);
+    return k;
+  });
   const stiffness = assembleFrame(frame, freedoms, (e) => toGlobal(frame.members[e], local[e]));
   const options = { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, frame.nodes) };
   const analysis = analyse(stiffness, options);

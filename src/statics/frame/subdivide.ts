@@ -25,6 +25,8 @@ export function subdivide(frame: Frame, parts: number): Subdivided {
     const start: Vec3 = [frame.nodes[3 * m.ends[0]], frame.nodes[3 * m.ends[0] + 1], frame.nodes[3 * m.ends[0] + 2]];
     const whole = m.segments.reduce((sum, s) => sum + s.length, 0);
     let from = m.ends[0];
+    const middle: Segment = { ...m.segments[strut], length: step };
+    const inner = [middle]; // one object for all inner elements, so that their stiffness is made once
     for (let part = 0; part < parts; part++) {
       const first = part === 0;
       const last = part === parts - 1;
@@ -34,11 +36,13 @@ export function subdivide(frame: Frame, parts: number): Subdivided {
         to = nodes.length / 3;
         nodes.push(...addScaled(start, m.axes.x, x2));
       }
-      const middle: Segment = { ...m.segments[strut], length: step };
       members.push({
         ends: [from, to],
         axes: m.axes,
-        segments: [...(first ? m.segments.slice(0, strut) : []), middle, ...(last ? m.segments.slice(strut + 1) : [])],
+        segments:
+          first || last
+            ? [...(first ? m.segments.slice(0, strut) : []), middle, ...(last ? m.segments.slice(strut + 1) : [])]
+            : inner,
         springs: m.springs.filter((s) => owns(s, x1, x2, last)).map((s) => ({ ...s, at: s.at - x1 })),
       });
       memberOf.push(e);
