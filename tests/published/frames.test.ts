@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { cross, normalise, perpendicular, type Vec3 } from '../../src/maths/vec3.js';
 import { bucklingFactors } from '../../src/statics/frame/frame-buckling.js';
 import type { Frame, FrameMember } from '../../src/statics/frame/member.js';
+import { solveSecondOrder } from '../../src/statics/frame/second-order.js';
 import { prepareFrame, solveFrame } from '../../src/statics/frame/solve-frame.js';
 import { subdivide } from '../../src/statics/frame/subdivide.js';
 import { anyRotation, turned } from './motions.js';
@@ -205,6 +206,58 @@ describe('first-order frames of the handbooks', () => {
       anyRotation(5),
     );
     expect(prepareFrame(pinnedAtOneEnd).state).toBe('mechanism');
+  });
+});
+
+describe('second-order analysis', () => {
+  it('an imperfect pin-ended strut bows by e0 / (Pcr / P - 1) more, with P (e0 + bow) at its middle (Timoshenko and Gere 1961, section 1.10)', () => {
+    const [l, parts, e0] = [1000, 8, 2.5];
+    const points: Vec3[] = [
+      [0, 0, 0],
+      [0, 0, l],
+    ];
+    const one = frameOf(points, [[0, 1]], (i) => (i === 0 ? [0, 1, 2, 5] : [0, 1]), ID);
+    const cut = subdivide(one, parts);
+    const prepared = stiff(cut.frame);
+    const critical = (Math.PI ** 2 * EI) / l ** 2;
+    const p = 0.6 * critical;
+    const nodal = new Float64Array(cut.frame.fixed.length);
+    nodal[8] = -p;
+    const bow = new Float64Array(nodal.length);
+    const heights = Array.from({ length: parts + 1 }, (_, i) => cut.frame.nodes[3 * i + 2]);
+    heights.forEach((z, i) => {
+      bow[6 * i] = e0 * Math.sin((Math.PI * z) / l);
+      bow[6 * i + 4] = ((e0 * Math.PI) / l) * Math.cos((Math.PI * z) / l);
+    });
+    const s = solveSecondOrder(prepared, { nodal }, new Float64Array(parts).fill(-p), bow);
+    if (s.state !== 'stands') throw new Error(s.state);
+    const middle = heights.findIndex((z) => Math.abs(z - l / 2) < 1e-9);
+    const more = e0 / (critical / p - 1);
+    expect(s.displacements[6 * middle] / more).toBeCloseTo(1, 3);
+    const moments = cut.frame.members.map((_, e) => Math.hypot(s.endForces[12 * e + 10], s.endForces[12 * e + 11]));
+    expect(Math.max(...moments) / (p * (e0 + more))).toBeCloseTo(1, 2);
+    expect(s.residual).toBeLessThan(1e-14);
+  });
+
+  it('says that a strut above its critical load buckles', () => {
+    const points: Vec3[] = [
+      [0, 0, 0],
+      [0, 0, 1000],
+    ];
+    const cut = subdivide(
+      frameOf(points, [[0, 1]], (i) => (i === 0 ? ALL : []), ID),
+      4,
+    );
+    const p = (1.02 * Math.PI ** 2 * EI) / 4e6;
+    const nodal = new Float64Array(cut.frame.fixed.length);
+    nodal[8] = -p;
+    const s = solveSecondOrder(
+      stiff(cut.frame),
+      { nodal },
+      new Float64Array(4).fill(-p),
+      new Float64Array(nodal.length),
+    );
+    expect(s.state).toBe('buckles');
   });
 });
 

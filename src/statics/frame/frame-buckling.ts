@@ -39,7 +39,8 @@ export const bucklesBelow = (prepared: StiffFrame, axial: ArrayLike<number>, lam
 /** Geometric stiffness of each prepared frame as a sum over its members: made once, summed for each set of forces. */
 const sums = new WeakMap<StiffFrame, (axial: ArrayLike<number>) => SparseMatrix>();
 
-function frameGeometric(prepared: StiffFrame, axial: ArrayLike<number>): SparseMatrix {
+/** Kg of a prepared frame under these axial forces, on the pattern of its stiffness. */
+export function frameGeometric(prepared: StiffFrame, axial: ArrayLike<number>): SparseMatrix {
   let sum = sums.get(prepared);
   if (!sum) {
     const { frame, freedoms, stiffness } = prepared;
