@@ -8,7 +8,7 @@ import type { PanelPart, Point2 } from '../../model/parts.js';
 import type { Utilisation } from '../../model/solution.js';
 import { governing, type Rules, type Verdict } from '../standard.js';
 import { combinedPressure, type PanelCombination, panelPressures, standingCases } from './load.js';
-import { bendPlate, type PlateResponse } from './plate.js';
+import { type Plate, type PlateResponse, plateOf } from './plate.js';
 import { panelSupports, type Sense } from './supports.js';
 
 /** Growth of a sheet's deflection under standing load: the modulus of acrylic and its like halves over years (from memory). */
@@ -54,9 +54,11 @@ export function judgePanel(
   const standing = standingCases(job).reduce((sum, name) => sum + (pressures.get(name) ?? 0), 0);
   const findings: Finding[] = [];
   let worst: { verdict: Verdict; load: Worst } | null = null;
+  let shape: Plate | null = null;
   for (const load of worstPressures(combinations, pressures)) {
     const supports = panelSupports(part, corners, job, load.sense);
-    const plate = supports && bendPlate(part.outline, material.poisson ?? POISSON, supports);
+    shape ??= plateOf(part.outline, material.poisson ?? POISSON);
+    const plate = supports && shape?.bend(supports);
     if (!plate) {
       // On a table the missing hold is said already; there is no load to speak of.
       if (supports || job.panels.holdBy !== 'none' || grave(job)) findings.push(notCarried(part, load, job));
