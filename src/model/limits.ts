@@ -7,4 +7,9 @@ export const LIMITS = {
   faces: 100_000,
   /** Nesting of brackets in a JSON file: the deepest key of a job stands at 6. */
   depth: 32,
+  /** Largest magnitude of any number: its cube in other units is still far from what a double holds. */
+  magnitude: 1e15,
 } as const;
+
+/** Whether a number of an input file is one to reckon with. */
+export const isUsable = (value: number): boolean => Number.isFinite(value) && Math.abs(value) <= LIMITS.magnitude;

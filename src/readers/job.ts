@@ -14,5 +14,14 @@ export function readJob(text: string, name: string): { readonly job: Job | null;
   if (document.value === undefined) return { job: null, faults: document.faults };
   const { value, faults } = checkSchema(document, jobSchema);
   const all = inOrder([...document.faults, ...faults, ...checkJob(document)]);
-  return { job: value && all.length === 0 ? value : null, faults: all };
+  return { job: value && all.length === 0 ? withoutInheritance(value) : null, faults: all };
+}
+
+/** The same record with objects that have their own keys only: a group may be called "constructor". */
+function withoutInheritance<T>(value: T): T {
+  if (Array.isArray(value)) return value.map(withoutInheritance) as T;
+  if (value === null || typeof value !== 'object') return value;
+  const out = Object.create(null) as Record<string, unknown>;
+  for (const [key, part] of Object.entries(value)) out[key] = withoutInheritance(part);
+  return out as T;
 }

@@ -1,5 +1,5 @@
 import { type Node, type ParseError, parseTree } from 'jsonc-parser';
-import { LIMITS } from '../model/limits.js';
+import { isUsable, LIMITS } from '../model/limits.js';
 import { type Fault, quoted } from './fault.js';
 import { linePlaces } from './line-places.js';
 
@@ -87,8 +87,9 @@ function endOfText(text: string, start: number): number {
 /** The value of a tree, with its own keys only; `__proto__` is never taken over. */
 function plainValue(node: Node, report: (offset: number, what: string, mend: string) => void): unknown {
   if (node.type === 'array') return (node.children ?? []).map((child) => plainValue(child, report));
-  if (node.type === 'number' && !Number.isFinite(node.value)) {
-    report(node.offset, 'the number is not finite', 'write a number below 1.8e308');
+  if (node.type === 'number' && !isUsable(node.value)) {
+    const what = Number.isFinite(node.value) ? 'the number is too large' : 'the number is not finite';
+    report(node.offset, what, `write a number below ${LIMITS.magnitude}`);
     return 0;
   }
   if (node.type !== 'object') return node.value;

@@ -59,3 +59,16 @@ describe('each fault has its place and its mending', () => {
     ]);
   });
 });
+
+it('a section, group or case may be called what the language has for itself', () => {
+  const { job } = readJob(
+    LEAST.replace(
+      ' }',
+      ', "struts": { "groups": { "toString": "beech-6" } }, "loads": { "combinations": [ { "name": "c", "factors": { "valueOf": 1 } } ] } }',
+    ),
+    'job.json',
+  );
+  expect(job!.struts.groups['constructor']).toBeUndefined();
+  expect(job!.sections['constructor']).toBeUndefined();
+  expect(job!.struts.groups['toString']).toBe('beech-6');
+});

@@ -89,6 +89,7 @@ describe('each fault has its place, its words and its mending', () => {
     ['"cell": "C1"', '"cell": "C2"', /the force diagram names cell "C2", .* write "C1"/],
     ['"cell": "outside"', '"cell": "C1"', /cell "C1" has two vertices/],
     ['-120.5', '1e999', /^t\.json:8:50: the number is not finite: /],
+    ['-120.5', '-1e300', /^t\.json:8:50: the number is too large: /],
     ['-120.5', 'NaN', /^t\.json:8:50: the number is not finite: /],
     ['-120.5', '-Infinity', /^t\.json:8:50: the number is not finite: /],
     ['-120.5', '"12"', /^t\.json:8:50: members\[0\]\.force is "12", not a number: write a number$/],

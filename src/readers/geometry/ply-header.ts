@@ -24,24 +24,26 @@ export interface PlyHeader {
   readonly lines: number;
 }
 
-const TYPES: Readonly<Record<string, PlyType>> = {
-  char: 'i1',
-  int8: 'i1',
-  uchar: 'u1',
-  uint8: 'u1',
-  short: 'i2',
-  int16: 'i2',
-  ushort: 'u2',
-  uint16: 'u2',
-  int: 'i4',
-  int32: 'i4',
-  uint: 'u4',
-  uint32: 'u4',
-  float: 'f4',
-  float32: 'f4',
-  double: 'f8',
-  float64: 'f8',
-};
+const TYPES: ReadonlyMap<string, PlyType> = new Map(
+  Object.entries({
+    char: 'i1',
+    int8: 'i1',
+    uchar: 'u1',
+    uint8: 'u1',
+    short: 'i2',
+    int16: 'i2',
+    ushort: 'u2',
+    uint16: 'u2',
+    int: 'i4',
+    int32: 'i4',
+    uint: 'u4',
+    uint32: 'u4',
+    float: 'f4',
+    float32: 'f4',
+    double: 'f8',
+    float64: 'f8',
+  } as const),
+);
 
 /** A header is some twenty lines. */
 const MOST_BYTES = 100_000;
@@ -70,8 +72,8 @@ export function plyHeader(file: Uint8Array, log: LineFaults): PlyHeader | null {
     } else if (word === 'property') {
       const list = rest[0] === 'list';
       const [count, type, name] = list
-        ? [TYPES[rest[1] ?? ''], TYPES[rest[2] ?? ''], rest[3]]
-        : [null, TYPES[rest[0] ?? ''], rest[1]];
+        ? [TYPES.get(rest[1] ?? ''), TYPES.get(rest[2] ?? ''), rest[3]]
+        : [null, TYPES.get(rest[0] ?? ''), rest[1]];
       const element = elements.at(-1);
       if (element && type && name && count !== undefined) element.properties.push({ name, type, count });
       else wrong();

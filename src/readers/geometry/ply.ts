@@ -1,5 +1,5 @@
-import { isFinite3, type Vec3 } from '../../maths/vec3.js';
-import { LIMITS } from '../../model/limits.js';
+import type { Vec3 } from '../../maths/vec3.js';
+import { isUsable, LIMITS } from '../../model/limits.js';
 import { bareLine, type RawLine, type RawLoop, type RawReading } from '../../model/raw-geometry.js';
 import { type Fault, quoted } from '../fault.js';
 import { type PlyElement, plyHeader } from './ply-header.js';
@@ -82,7 +82,7 @@ function readVertices(element: PlyElement, values: PlyValues, vertices: Vec3[]):
   for (let i = 0; i < element.count; i++) {
     const read = row(element, values);
     const at = ['x', 'y', 'z'].map((axis) => read.get(axis)) as unknown as Vec3;
-    if (!at.every((v) => typeof v === 'number') || !isFinite3(at))
+    if (!at.every((v) => typeof v === 'number' && isUsable(v)))
       throw new PlyFault(`vertex ${i} has no finite x, y and z`, 'export it again');
     vertices.push(at);
   }

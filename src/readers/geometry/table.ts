@@ -1,4 +1,5 @@
 import { type CsvError, parse } from 'csv-parse/sync';
+import { isUsable } from '../../model/limits.js';
 import { quoted } from '../fault.js';
 import type { LineFaults } from './text-lines.js';
 
@@ -61,7 +62,7 @@ function numberIn(cell: string): number {
   const text = cell.replace(/[\u2212\u2013]/g, '-').replace(',', '.');
   if (!/^[-+]?(\d+\.?\d*|\.\d+)([eE][-+]?\d+)?$/.test(text)) return Number.NaN;
   const value = Number(text);
-  return Number.isFinite(value) ? value : Number.NaN;
+  return isUsable(value) ? value : Number.NaN;
 }
 
 /** A column found by name: its place, and what stands in brackets or after an underscore as its unit. */

@@ -1,4 +1,4 @@
-import { LIMITS } from '../../model/limits.js';
+import { isUsable, LIMITS } from '../../model/limits.js';
 import type { Fault } from '../fault.js';
 
 /** Collects the faults of a file that is read line by line; `line` counts from 1. */
@@ -20,14 +20,14 @@ export class LineFaults {
   }
 }
 
-/** A decimal number as drawing files write it, or NaN: no hexadecimal, no words, nothing that is not finite. */
+/** A decimal number as drawing files write it, or NaN: no hexadecimal, no words, nothing that is not finite or too large. */
 export function plainNumber(text: string): number {
   return /^\s*[-+]?(\d+\.?\d*|\.\d+)([eEdD][-+]?\d+)?\s*$/.test(text)
-    ? finite(Number(text.replace(/[dD]/, 'e')))
+    ? usable(Number(text.replace(/[dD]/, 'e')))
     : Number.NaN;
 }
 
-const finite = (value: number): number => (Number.isFinite(value) ? value : Number.NaN);
+const usable = (value: number): number => (isUsable(value) ? value : Number.NaN);
 
 /** A layer's or group's name as a group of struts: white space joined, what does not print removed; null where nothing is left. */
 export function groupName(text: string): string | null {
