@@ -5,7 +5,7 @@ import type { FindingCode } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { Topology } from '../../model/topology.js';
 import type { CellComplex } from './complex.js';
-import { equilibriumMatrix } from './equilibrium-matrix.js';
+import { trussMatrix } from './equilibrium-matrix.js';
 import { equilibriumTerms } from './equilibrium-terms.js';
 import { type DiagramFit, fitDiagram, refineDiagram } from './fit-diagram.js';
 import { type ForceTerm, residualOf } from './force-terms.js';
@@ -148,10 +148,10 @@ const largestOf = (forces: Float64Array): number => forces.reduce((most, t) => M
 
 /** The forces with the least sum of squares that carry the loads on the supports: where a search can start. */
 function leastForces(topology: Topology, loads: readonly Vec3[]): Float64Array {
-  const { matrix, row } = equilibriumMatrix(topology, true);
+  const { matrix, freedoms } = trussMatrix(topology, true);
   const right = new Float64Array(matrix.rows);
-  loads.forEach((p, i) => {
-    for (let axis = 0; axis < 3; axis++) if (row[3 * i + axis] >= 0) right[row[3 * i + axis]] = -p[axis];
+  freedoms.of.forEach((row, f) => {
+    if (row >= 0) right[row] = loads[Math.floor(f / 3)][f % 3];
   });
   return leastSquares(
     {

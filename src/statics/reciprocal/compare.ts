@@ -3,7 +3,7 @@ import { multiply, multiplyTransposed } from '../../maths/sparse/multiply.js';
 import type { Finding } from '../../model/finding.js';
 import { finding } from '../../model/findings/index.js';
 import type { Topology } from '../../model/topology.js';
-import { equilibriumMatrix } from './equilibrium-matrix.js';
+import { trussMatrix } from './equilibrium-matrix.js';
 
 export type ForceSource = 'given' | 'reciprocal' | 'analysis';
 
@@ -32,7 +32,7 @@ export function compareForces(
   second: { readonly source: ForceSource; readonly forces: Float64Array },
 ): ForceComparison {
   const difference = first.forces.map((t, m) => t - second.forces[m]);
-  const { matrix } = equilibriumMatrix(topology, true);
+  const { matrix } = trussMatrix(topology, true);
   const map = {
     rows: matrix.rows,
     columns: matrix.columns,
