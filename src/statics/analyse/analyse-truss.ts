@@ -127,6 +127,7 @@ export function analyseTruss(input: AnalysisInput): Analysed {
       ? stabilityOf(topology, job, parts, model, cases, combinations, combined)
       : null;
   if (stability) findings.push(...stability.findings);
+  for (const [e, own] of (stability?.secondOrder?.actions ?? []).entries()) actions[e]!.push(...own);
   findings.push(...mechanismNotes(states, job, parts, stability?.lowest ?? null, held));
   findings.push(...upliftFindings(topology, job, combinations, combined));
   findings.push(...overturningFindings(topology, job, cases, combinations));

@@ -13,6 +13,7 @@ import { pinBucklesBelow, pinBuckling } from '../pin-buckling.js';
 import { designStiffness } from './design-stiffness.js';
 import type { Model } from './model.js';
 import { axialForces, PER_MEMBER, type Response } from './response.js';
+import { type SecondOrderActions, secondOrderActions } from './second-order-actions.js';
 
 /** Elements a strut: one overestimates a pin-ended strut by 21.6 %, four by 0.05 %. */
 const ELEMENTS = 4;
@@ -27,6 +28,8 @@ export interface Stability {
   readonly findings: readonly Finding[];
   /** Lowest load factor with design stiffness over all combinations searched; null: nothing buckles. */
   readonly lowest: number | null;
+  /** Second-order actions by member index, where the job asks for them and they matter; null: not made. */
+  readonly secondOrder: SecondOrderActions | null;
 }
 
 /** Lowest load factors of the combinations that matter, judged with the design stiffness. */
@@ -42,12 +45,12 @@ export function stabilityOf(
   const chosen = mostCompressed(topology, parts, responses).slice(0, TRIED);
   const buckling: BucklingResult[] = [];
   const findings: Finding[] = [];
-  let worst: { readonly factor: number; readonly combination: string } | null = null;
+  let worst: { readonly factor: number; readonly combination: string; readonly shape: Float64Array } | null = null;
   let cut: { readonly sub: Subdivided; readonly prepared: Extract<PreparedFrame, { state: 'stiff' }> } | null = null;
   if (model.kind === 'frame') {
     const sub = subdivide(model.prepared.frame, ELEMENTS);
     const prepared = prepareFrame(sub.frame);
-    if (prepared.state !== 'stiff') return { buckling, findings, lowest: null };
+    if (prepared.state !== 'stiff') return { buckling, findings, lowest: null, secondOrder: null };
     cut = { sub, prepared };
   }
   for (const c of chosen) {
@@ -78,17 +81,37 @@ export function stabilityOf(
       findings.push(finding('buckling-unsettled', 'truss', { about: { combination: name } }));
     if (found.factors.length === 0) continue;
     const factor = found.factors[0]! * softer;
-    if (worst === null || factor < worst.factor) worst = { factor, combination: name };
+    if (worst === null || factor < worst.factor) worst = { factor, combination: name, shape: shape! };
   }
-  if (worst && worst.factor < SECOND_ORDER)
-    findings.push(
-      finding(worst.factor < LEAST ? 'buckling-low' : 'second-order', 'truss', {
-        value: worst.factor,
-        limit: worst.factor < LEAST ? LEAST : SECOND_ORDER,
-        about: { combination: worst.combination },
-      }),
-    );
-  return { buckling, findings, lowest: worst?.factor ?? null };
+  if (!worst || worst.factor >= SECOND_ORDER)
+    return { buckling, findings, lowest: worst?.factor ?? null, secondOrder: null };
+  const { factor, combination, shape } = worst;
+  const secondOrder =
+    job.analysis.secondOrder && cut
+      ? secondOrderActions(
+          topology,
+          job,
+          cut.sub,
+          shape,
+          cases,
+          chosen.map((c) => [
+            combinations[c]!,
+            elementForces(topology, responses[c]!, cut.sub),
+            designStiffness(job, parts, permanentShare(topology, cases, combinations[c]!)),
+          ]),
+        )
+      : null;
+  const stands = secondOrder !== null && secondOrder.buckling.length === 0;
+  const low = factor < LEAST && !stands;
+  findings.push(
+    finding(low ? 'buckling-low' : 'second-order', 'truss', {
+      ...(stands ? { level: 'note' as const } : {}),
+      value: factor,
+      limit: low ? LEAST : SECOND_ORDER,
+      about: { combination, made: stands ? 'yes' : 'no' },
+    }),
+  );
+  return { buckling, findings, lowest: factor, secondOrder };
 }
 
 /** Combinations by the largest compression over Euler's load of any strut, worst first; those without compression are left out. */

@@ -142,6 +142,34 @@ it.each(['pinned', 'rigid'] as const)('the balance of a case counts bending and 
   expect(e.reactions.reduce((sum, s) => sum + s.force[2], 0)).toBeCloseTo(20, 8);
 });
 
+describe('second-order effects', () => {
+  // 1.5 kN on three slender legs: the factor falls under 10.
+  const loaded = (n: number, secondOrder: boolean) =>
+    run(tripod([0, 0, -n]), { analysis: { selfWeight: false, secondOrder } } as never);
+  const factor = loaded(100, false).solution.buckling[0].factors[0] * (0.67 / 1.3 / 1.6) * 100;
+
+  it('are flagged below 10 and a stop below 3, and pass once they are analysed with imperfections', () => {
+    const flagged = loaded(factor / 6, false).findings.find((f) => f.code === 'second-order')!;
+    expect(flagged.level).toBe('warn');
+    expect(flagged.value).toBeGreaterThan(3);
+    expect(flagged.value).toBeLessThan(10);
+    const stopped = loaded(factor / 2, false);
+    expect(stopped.findings.find((f) => f.code === 'buckling-low')!.level).toBe('stop');
+    const analysed = loaded(factor / 2, true);
+    expect(analysed.findings.some((f) => f.code === 'buckling-low')).toBe(false);
+    expect(analysed.findings.find((f) => f.code === 'second-order')!.level).toBe('note');
+    const first = analysed.solution.actions[0].find((a) => a.combination === '1.35 given')!;
+    const second = analysed.solution.actions[0].find((a) => a.combination === '1.35 given, second order')!;
+    expect(Math.hypot(second.momentY, second.momentZ)).toBeGreaterThan(Math.hypot(first.momentY, first.momentZ));
+    expect(second.axial / first.axial).toBeCloseTo(1, 1);
+  });
+
+  it('remain a stop where the loads exceed what buckles it', () => {
+    const r = loaded(2 * factor, true);
+    expect(r.findings.find((f) => f.code === 'buckling-low')!.level).toBe('stop');
+  });
+});
+
 describe('what cannot stand', () => {
   it('a strut on one foot can swing: a stop, not a number', () => {
     const truss = trussOf({
