@@ -42,7 +42,7 @@ export function detailStruts(
       (socket, end): StrutEnd => ({
         node: member.ends[end as 0 | 1],
         setback: socket?.setback ?? null,
-        float: lengths.float,
+        float: lengths.floats[end]!,
         detail: socket?.detail ?? 'plain',
       }),
     ) as [StrutEnd, StrutEnd];
@@ -66,7 +66,7 @@ export function detailStruts(
 
 interface Cut {
   readonly cut: number | null;
-  readonly float: number | null;
+  readonly floats: readonly [number | null, number | null];
   readonly problem: 'short' | 'hub' | null;
   /** Least axis length that would do, mm. */
   readonly least: number;
@@ -74,20 +74,24 @@ interface Cut {
 
 /** A strut must at least fill both its sockets: shorter, its sockets would run into each other. */
 function cutBetween(axis: number, from: Socket | null, to: Socket | null, job: Job): Cut {
-  if (from?.setback == null || to?.setback == null) return { cut: null, float: null, problem: 'hub', least: 0 };
+  if (from?.setback == null || to?.setback == null)
+    return { cut: null, floats: [null, null], problem: 'hub', least: 0 };
   const between = axis - from.setback - to.setback;
-  const float = job.saw.endFloat_mm;
-  const cut = roundDownToStep(between - 2 * float, job.saw.step_mm);
+  // A seated end bears on its stop: it gets no play but what the saw's step leaves over.
+  const floats = [from, to].map((s) => (s.joint === 'seated' ? 0 : job.saw.endFloat_mm));
+  const least = floats[0]! + floats[1]!;
+  const cut = roundDownToStep(between - least, job.saw.step_mm);
   const leastBetween = from.depth + to.depth;
   if (cut <= 0 || between < leastBetween) {
     return {
       cut: null,
-      float: null,
+      floats: [null, null],
       problem: 'short',
-      least: from.setback + to.setback + Math.max(leastBetween, 2 * float),
+      least: from.setback + to.setback + Math.max(leastBetween, least),
     };
   }
-  return { cut, float: (between - cut) / 2, problem: null, least: 0 };
+  const first = (between - cut + floats[0]! - floats[1]!) / 2;
+  return { cut, floats: [first, between - cut - first], problem: null, least: 0 };
 }
 
 function socketsByEnd(hubs: readonly HubPart[]): ReadonlyMap<string, Socket> {
