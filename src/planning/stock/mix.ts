@@ -117,7 +117,7 @@ export function mixBound(
       model.run();
       const status = model.getModelStatus();
       const { infeasible, unboundedOrInfeasible } = highs.constants.modelStatus;
-      meter.spend(3000 + 400 * Number(model.info.get('mip_node_count')));
+      meter.spend(30e3 + 4e3 * Number(model.info.get('mip_node_count')));
       if (status === infeasible || status === unboundedOrInfeasible) return { cost: Infinity, mix: undefined };
       const dual = model.info.get('mip_dual_bound') as number;
       // Costs are whole multiples of the unit, so a bound within a millionth below one is that one.

@@ -1,8 +1,10 @@
+import { seededRandom } from '../../maths/random.js';
 import { Effort } from './effort.js';
 import { requestFaults } from './faults.js';
 import { layOut } from './layOut.js';
 import type { Bin, CuttingProblem } from './problem.js';
 import { recover } from './recover.js';
+import { refine } from './refine.js';
 import type { StockAnswer, StockKind, StockPiece, StockRequest, UncutPiece } from './request.js';
 import { solveCutting } from './solve.js';
 import { linearSolver } from './solver.js';
@@ -16,6 +18,8 @@ const ONE_KIND_EFFORT = 25e6;
 const EFFORT = 6e6;
 const EFFORT_A_PIECE = 30e3;
 const MOST_EFFORT = 70e6;
+/** Work spent on fewer patterns and larger offcuts at the same cost. */
+const REFINE_EFFORT = 2e6;
 
 const gcd = (a: number, b: number): number => (b === 0 ? a : gcd(b, a % b));
 
@@ -72,13 +76,18 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
   const real = problem.bins.length;
   const count = problem.demand.reduce((sum, d) => sum + d, 0);
   const usual = real === 1 ? ONE_KIND_EFFORT : Math.min(EFFORT + EFFORT_A_PIECE * count, MOST_EFFORT);
-  const effort = new Effort(
-    usual * (request.effort ?? 1),
-    end !== undefined && clock ? () => clock() >= end : undefined,
-  );
-  const solved = solveCutting(await linearSolver(), withSubstitute(problem), request.seed ?? 1, effort);
+  const expired = end !== undefined && clock ? () => clock() >= end : undefined;
+  const effort = new Effort(usual * (request.effort ?? 1), expired);
+  const highs = await linearSolver();
+  const seed = request.seed ?? 1;
+  const solved = solveCutting(highs, withSubstitute(problem), seed, effort);
+  const runs = recover(problem, solved.runs);
+  const complete = runs.every((r) => r.pattern.bin < real);
+  const chosen = complete
+    ? refine(problem, runs, seededRandom(seed), new Effort(REFINE_EFFORT * (request.effort ?? 1), expired))
+    : runs;
   const laid = layOut(
-    recover(problem, solved.runs),
+    chosen,
     weights.map((w) => ({ steps: w - kerf, pieces: byWeight.get(w)! })),
     kinds.map((k) => k.room),
     kerf,

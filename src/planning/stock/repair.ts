@@ -1,28 +1,15 @@
 import type { Random } from '../../maths/random.js';
 import type { Meter } from './effort.js';
-import { type CuttingProblem, patternOf, type Run } from './problem.js';
-import { merge } from './recover.js';
+import { Exchange } from './exchange.js';
+import type { CuttingProblem, Run } from './problem.js';
 
-interface Bar {
-  readonly bin: number;
-  readonly counts: Int32Array;
-  room: number;
-}
-
-/** Nodes of one search for the fullest bar; a bar of a dozen pieces is nearly always filled to the last step or two. */
-const FILL_NODES = 500;
-/** Losses of squared room that pass with a fair chance, as a share of the largest room's square (simulated annealing at one temperature). */
+/** See Exchange.move: enough to pass a few dozen steps of room while a piece's length is being gathered. */
 const WARMTH = 0.002;
 /** Moves without gain, beside some for each bar, before the search gives up. */
 const PATIENCE = 1500;
 const PATIENCE_A_BAR = 25;
 
-/**
- * Packs what is left over into bars that are nearly full, by exchange: a few bars at a time are emptied, together with
- * the pieces left over, and filled again one after another as full as can be. Waste so gathers on few bars until
- * the rest fits there (the idea of minimum bin slack: Fleszar and Hindi, Computers & OR 29, 2002).
- * Undefined when the moves end with pieces still over.
- */
+/** Packs what is left over into bars that are nearly full, by exchange; undefined when the moves end with pieces still over. */
 export function repair(
   problem: CuttingProblem,
   runs: readonly Run[],
@@ -31,148 +18,16 @@ export function repair(
   random: Random,
   meter: Meter,
 ): Run[] | undefined {
-  const { weights, bins } = problem;
-  const bars: Bar[] = [];
-  for (const { pattern, times } of runs) {
-    for (let t = 0; t < times; t++) {
-      const counts = new Int32Array(weights.length);
-      let room = bins[pattern.bin]!.capacity;
-      pattern.items.forEach((item, j) => {
-        counts[item] = pattern.counts[j]!;
-        room -= weights[item]! * pattern.counts[j]!;
-      });
-      bars.push({ bin: pattern.bin, counts, room });
-    }
-  }
-  spareBars.forEach((n, bin) => {
-    for (let t = 0; t < n; t++) {
-      bars.push({ bin, counts: new Int32Array(weights.length), room: bins[bin]!.capacity });
-    }
-  });
-  if (bars.length === 0) return undefined;
-  const left = over.slice();
-  let leftWeight = 0;
-  for (let i = 0; i < left.length; i++) leftWeight += left[i]! * weights[i]!;
-
-  const list = new Int32Array(weights.length);
-  const pool = new Int32Array(weights.length);
-  const fills: Int32Array[] = [0, 1, 2].map(() => new Int32Array(weights.length));
-  const patience = PATIENCE + PATIENCE_A_BAR * bars.length;
-  let spread = bars.reduce((sum, b) => sum + b.room * b.room, 0);
-  let highest = spread;
-  for (let idle = 0; leftWeight > 0; idle++) {
-    if (meter.exhausted) return undefined;
-    if (idle > patience) break;
-    const few = Math.min(bars.length, random() < 0.5 ? 2 : 3);
-    const chosen: Bar[] = [];
-    // Half the time the bar with most room takes part, since that is where the rest has to go, and half the time one of
-    // those that still have some to give.
-    const roomiest = bars.reduce((most, b) => (b.room > most.room ? b : most));
-    const heat = WARMTH * roomiest.room ** 2;
-    if (random() < 0.5) chosen.push(roomiest);
-    if (random() < 0.5) {
-      const roomy = bars.filter((b) => b.room > 0 && !chosen.includes(b));
-      if (roomy.length > 0) chosen.push(roomy[Math.floor(random() * roomy.length)]!);
-    }
-    while (chosen.length < few) {
-      const b = bars[Math.floor(random() * bars.length)]!;
-      if (!chosen.includes(b)) chosen.push(b);
-    }
-    chosen.sort((a, b) => a.room - b.room);
-    const withLeft = random() < 0.5;
-    let before = 0;
-    for (let i = 0; i < pool.length; i++) {
-      pool[i] = withLeft ? left[i]! : 0;
-      for (const b of chosen) pool[i]! += b.counts[i]!;
-    }
-    for (const b of chosen) before += b.room * b.room;
-    let after = 0;
-    const rooms: number[] = [];
-    for (let c = 0; c < chosen.length; c++) {
-      const fill = fills[c]!;
-      const capacity = bins[chosen[c]!.bin]!.capacity;
-      // The first bars are filled to the brim; what remains must go on the last.
-      const room = fullest(weights, pool, capacity, fill, list, random, meter);
-      for (let i = 0; i < pool.length; i++) pool[i]! -= fill[i]!;
-      rooms.push(room);
-      after += room * room;
-    }
-    let rest = 0;
-    for (let i = 0; i < pool.length; i++) rest += pool[i]! * weights[i]!;
-    const limit = withLeft ? leftWeight : 0;
-    if (rest > limit) continue;
-    if (rest === limit && after < before && random() >= Math.exp((after - before) / heat)) continue;
-    spread += after - before;
-    if (rest < limit || spread > highest) {
+  const exchange = new Exchange(problem, runs, over, spareBars, random, meter);
+  if (exchange.bars.length === 0) return undefined;
+  const patience = PATIENCE + PATIENCE_A_BAR * exchange.bars.length;
+  let highest = exchange.spread;
+  for (let idle = 0; exchange.leftWeight > 0; idle++) {
+    if (meter.exhausted || idle > patience) return undefined;
+    if (exchange.move(WARMTH) || exchange.spread > highest) {
       idle = 0;
-      highest = spread;
-    }
-    chosen.forEach((b, c) => {
-      b.counts.set(fills[c]!);
-      b.room = rooms[c]!;
-    });
-    if (withLeft) {
-      left.set(pool);
-      leftWeight = rest;
+      highest = exchange.spread;
     }
   }
-  if (leftWeight > 0) return undefined;
-  return merge(
-    bars.filter((b) => b.counts.some((n) => n > 0)).map((b) => ({ pattern: patternOf(b.bin, b.counts), times: 1 })),
-  );
-}
-
-/** Fills `fill` from `pool` as full as the search finds, longer pieces first in a shuffled order; returns the room left. */
-function fullest(
-  weights: Int32Array,
-  pool: Int32Array,
-  capacity: number,
-  fill: Int32Array,
-  list: Int32Array,
-  random: Random,
-  meter: Meter,
-): number {
-  let n = 0;
-  for (let i = 0; i < pool.length; i++) if (pool[i]! > 0) list[n++] = i;
-  for (let k = n - 1; k > 0; k--) {
-    if (random() < 0.5) {
-      const other = Math.floor(random() * (k + 1));
-      const t = list[k]!;
-      list[k] = list[other]!;
-      list[other] = t;
-    }
-  }
-  const taken = new Int32Array(n);
-  const after = new Float64Array(n + 1);
-  for (let k = n - 1; k >= 0; k--) after[k] = after[k + 1]! + pool[list[k]!]! * weights[list[k]!]!;
-  let best = capacity + 1;
-  let room = capacity;
-  let nodes = 0;
-  const search = (k: number): boolean => {
-    if (room < best) {
-      best = room;
-      fill.fill(0);
-      for (let j = 0; j < k; j++) fill[list[j]!] = taken[j]!;
-      if (room === 0) return true;
-    }
-    if (k === n || ++nodes > FILL_NODES) return nodes > FILL_NODES;
-    // Even all the rest would not fill the bar better.
-    if (room - after[k]! >= best) return false;
-    const w = weights[list[k]!]!;
-    for (let t = Math.min(pool[list[k]!]!, Math.floor(room / w)); t >= 0; t--) {
-      taken[k] = t;
-      room -= t * w;
-      const found = search(k + 1);
-      room += t * w;
-      if (found) {
-        taken[k] = 0;
-        return true;
-      }
-    }
-    taken[k] = 0;
-    return false;
-  };
-  search(0);
-  meter.spend(1 + nodes * 0.04 + weights.length * 0.04);
-  return best;
+  return exchange.runs();
 }
