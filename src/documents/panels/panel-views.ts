@@ -26,8 +26,9 @@ export function drawPanelViews(paper: Paper, records: PackRecords, panels: reado
     instruction:
       'Each panel with its mark is seen from outside; thin outlines are seen from inside and carry their mark in the other view.',
   });
-  const height = (area.height - 14) / 2;
-  [ISOMETRIC, FROM_BEHIND].forEach((camera, k) => {
+  const cameras = [ISOMETRIC, FROM_BEHIND].filter((c) => panels.some((p) => dot(p.frame.z, c.toward) > 0));
+  const height = (area.height - 7 * cameras.length) / Math.max(2, cameras.length);
+  cameras.forEach((camera, k) => {
     drawView(paper, records, panels, camera, { x: area.x, y: area.y + k * (height + 7), width: area.width, height });
   });
 }

@@ -28,6 +28,8 @@ export interface Layout {
   readonly x: Float64Array;
   readonly y: Float64Array;
   readonly field: Int32Array;
+  /** Left, bottom, right, top of each piece where it is. */
+  readonly box: Float64Array;
   /** Pieces on each field. */
   readonly on: number[][];
   /** n x n: depth of each pair and its weight. */
@@ -55,6 +57,7 @@ export function newLayout(
     x: new Float64Array(n),
     y: new Float64Array(n),
     field: new Int32Array(n).fill(-1),
+    box: new Float64Array(4 * n),
     on: fields.map(() => []),
     depth: new Float64Array(n * n),
     weight: new Float64Array(n * n).fill(1),
@@ -76,11 +79,15 @@ export function put(layout: Layout, i: number, pose: Pose, x: number, y: number,
   layout.pose[i] = pose;
   layout.x[i] = x;
   layout.y[i] = y;
+  layout.box[4 * i] = pose.box[0] + x;
+  layout.box[4 * i + 1] = pose.box[1] + y;
+  layout.box[4 * i + 2] = pose.box[2] + x;
+  layout.box[4 * i + 3] = pose.box[3] + y;
 }
 
 /**
- * Σ weight x depth of piece i against all others on the field, were it at (x, y) in `pose`; stops as soon as the
- * sum passes `cutoff`.
+ * Σ weight x depth of piece i against the others in `among` (all on the field, unless the caller knows which can be
+ * reached), were it at (x, y) in `pose`; stops as soon as the sum passes `cutoff`.
  */
 export function costAt(
   layout: Layout,
@@ -90,34 +97,32 @@ export function costAt(
   y: number,
   field: number,
   cutoff: number,
+  among: readonly number[] = layout.on[field]!,
 ): number {
-  const { spacing, store, tolerance, budget } = layout;
-  const n = layout.shapes.length;
-  const [bx0, by0, bx1, by1] = [
-    pose.box[0] + x - spacing,
-    pose.box[1] + y - spacing,
-    pose.box[2] + x + spacing,
-    pose.box[3] + y + spacing,
-  ];
-  const on = layout.on[field]!;
+  const { spacing, store, tolerance, budget, box, weight } = layout;
+  const row = i * layout.shapes.length;
+  const bx0 = pose.box[0] + x - spacing;
+  const by0 = pose.box[1] + y - spacing;
+  const bx1 = pose.box[2] + x + spacing;
+  const by1 = pose.box[3] + y + spacing;
   let cost = 0;
-  for (let k = 0; k < on.length; k++) {
-    const j = on[k]!;
-    if (j === i) continue;
+  for (let k = 0; k < among.length; k++) {
+    const j = among[k]!;
+    const b = 4 * j;
+    if (box[b]! >= bx1 || box[b + 2]! <= bx0 || box[b + 1]! >= by1 || box[b + 3]! <= by0 || j === i) continue;
     const other = layout.pose[j]!;
     const ox = layout.x[j]!;
     const oy = layout.y[j]!;
-    const box = other.box;
-    if (box[0] + ox >= bx1 || box[2] + ox <= bx0 || box[1] + oy >= by1 || box[3] + oy <= by0) continue;
     budget.spent++;
     const d =
       pose.id <= other.id
         ? depthIn(store.region(pose, other), ox - x, oy - y, spacing)
         : depthIn(store.region(other, pose), x - ox, y - oy, spacing);
     if (d <= tolerance) continue;
-    cost += d * layout.weight[i * n + j]!;
+    cost += d * weight[row + j]!;
     if (cost >= cutoff) return cost;
   }
+  if (layout.fields[field]!.obstacles.length === 0) return cost;
   for (const { pose: solid, clear } of layout.fields[field]!.obstacles) {
     budget.spent++;
     const d =
@@ -132,6 +137,17 @@ export function costAt(
 }
 
 const OBSTACLE_WEIGHT = 20;
+
+/** Other pieces on the field whose boxes come within `reach` and the spacing of the pose at (x, y). */
+export function within(layout: Layout, i: number, pose: Pose, x: number, y: number, field: number, reach: number): number[] {
+  const { box, spacing } = layout;
+  const far = spacing + reach;
+  const [x0, y0, x1, y1] = [pose.box[0] + x - far, pose.box[1] + y - far, pose.box[2] + x + far, pose.box[3] + y + far];
+  return layout.on[field]!.filter((j) => {
+    const b = 4 * j;
+    return j !== i && box[b]! < x1 && box[b + 2]! > x0 && box[b + 1]! < y1 && box[b + 3]! > y0;
+  });
+}
 
 /** Depth of piece i into the solid areas of its field. */
 export function obstacleDepth(layout: Layout, i: number): number {

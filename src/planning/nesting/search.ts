@@ -1,5 +1,5 @@
 import type { Random } from '../../maths/random.js';
-import { costAt, fitsField, type Layout } from './layout.js';
+import { costAt, fitsField, type Layout, within } from './layout.js';
 import type { Pose } from './pose.js';
 
 /** A place for one piece and its weighted depth there. */
@@ -103,6 +103,10 @@ function slide(layout: Layout, i: number, place: Place, first: number, last: num
   const [lowY, highY] = [f.y0 - pose.box[1], f.y1 - pose.box[3]];
   let sx = first;
   let sy = first;
+  // Only pieces within reach of the slide are looked at; the reach is renewed when the place nears its end.
+  const reach = 4 * first;
+  let near = within(layout, i, pose, place.x, place.y, field, reach);
+  let [homeX, homeY] = [place.x, place.y];
   while (place.cost > 0 && (sx > last || sy > last)) {
     const r = random();
     const axis = r < 0.4 ? 0 : r < 0.8 ? 1 : r < 0.9 ? 2 : 3;
@@ -113,7 +117,12 @@ function slide(layout: Layout, i: number, place: Place, first: number, last: num
       const x = Math.min(Math.max(place.x + side * dx, lowX), highX);
       const y = Math.min(Math.max(place.y + side * dy, lowY), highY);
       if (x === place.x && y === place.y) continue;
-      const cost = costAt(layout, i, pose, x, y, field, place.cost);
+      if (Math.abs(x - homeX) > reach || Math.abs(y - homeY) > reach) {
+        near = within(layout, i, pose, place.x, place.y, field, reach);
+        homeX = place.x;
+        homeY = place.y;
+      }
+      const cost = costAt(layout, i, pose, x, y, field, place.cost, near);
       if (cost < place.cost) {
         place.x = x;
         place.y = y;

@@ -97,8 +97,9 @@ function pullIn(layout: Layout, f: number): void {
       put(layout, i, narrow, field.x0 - narrow.box[0], layout.y[i]!, f);
     }
     const p = layout.pose[i]!;
-    layout.x[i] = Math.max(field.x0 - p.box[0], Math.min(layout.x[i]!, field.x1 - p.box[2]));
-    layout.y[i] = Math.max(field.y0 - p.box[1], Math.min(layout.y[i]!, field.y1 - p.box[3]));
+    const x = Math.max(field.x0 - p.box[0], Math.min(layout.x[i]!, field.x1 - p.box[2]));
+    const y = Math.max(field.y0 - p.box[1], Math.min(layout.y[i]!, field.y1 - p.box[3]));
+    put(layout, i, p, x, y, f);
   }
 }
 
