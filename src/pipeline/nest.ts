@@ -40,7 +40,10 @@ const READERS: Readonly<Record<string, (text: string, name: string) => OutlinesR
 };
 
 /** Reads a file of outlines and lays them on sheets; or every fault, one line each. */
-export async function nestFile(call: NestCall, clock: () => number): Promise<NestOutcome | { readonly faults: readonly string[] }> {
+export async function nestFile(
+  call: NestCall,
+  clock: () => number,
+): Promise<NestOutcome | { readonly faults: readonly string[] }> {
   const ending = call.file.split('.').at(-1)!.toLowerCase();
   const read = READERS[ending];
   if (!read) return { faults: [`${call.file}: is no .json, .dxf or .svg file: give outlines in one of these`] };
@@ -64,7 +67,8 @@ export async function nestFile(call: NestCall, clock: () => number): Promise<Nes
       },
       clock,
     );
-    if (answer.faults.length > 0) return { faults: answer.faults.map((f) => `${call.file}: ${f.place}: ${f.wrong}: ${f.mend}`) };
+    if (answer.faults.length > 0)
+      return { faults: answer.faults.map((f) => `${call.file}: ${f.place}: ${f.wrong}: ${f.mend}`) };
     return { reading, answer };
   } catch (error) {
     if (error instanceof FileFault) return { faults: [error.message] };
@@ -79,10 +83,22 @@ export function nestJson(call: NestCall, outcome: NestOutcome): object {
     format: 'strutwright-nesting/1',
     spacing_mm: call.cutter.spacing_mm,
     margin_mm: call.cutter.margin_mm,
-    kerf: { kerf_mm: call.cutter.kerf_mm, measured: call.cutter.kerfMeasured, compensated: call.cutter.compensate, says: sayKerf(call.cutter) },
+    kerf: {
+      kerf_mm: call.cutter.kerf_mm,
+      measured: call.cutter.kerfMeasured,
+      compensated: call.cutter.compensate,
+      says: sayKerf(call.cutter),
+    },
     sheets: answer.sheets.map((s, i) => {
       const kind = call.sheets.find((k) => k.name === s.sheet)!;
-      return { mark: markOf(i), sheet: s.sheet, width_mm: kind.width, height_mm: kind.height, yield: s.yield, placements: s.placements };
+      return {
+        mark: markOf(i),
+        sheet: s.sheet,
+        width_mm: kind.width,
+        height_mm: kind.height,
+        yield: s.yield,
+        placements: s.placements,
+      };
     }),
     lowerBound: answer.lowerBound,
     unplaced: answer.unplaced,
@@ -102,7 +118,10 @@ export async function writeNest(call: NestCall, outcome: NestOutcome, write: Wri
     const kind = call.sheets.find((k) => k.name === sheet.sheet)!;
     const planned = { ...sheet, mark: markOf(i), width: kind.width, height: kind.height, material: '', thickness: 0 };
     const drawing = sheetDrawing(planned, kind, panels, call.cutter, `${basename(call.file)}, ${markOf(i)}`);
-    for (const [ending, text] of [['svg', drawingToSvg(drawing)], ['dxf', drawingToDxf(drawing)]] as const) {
+    for (const [ending, text] of [
+      ['svg', drawingToSvg(drawing)],
+      ['dxf', drawingToDxf(drawing)],
+    ] as const) {
       const path = `sheets/${markOf(i)}.${ending}`;
       await writer.put(path, text);
       for (const p of sheet.placements) files.set(p.mark, (files.get(p.mark) ?? new Set()).add(path));

@@ -6,6 +6,7 @@ import { convert } from './convert.js';
 import { exportTruss } from './export.js';
 import { make } from './make.js';
 import { mend } from './mend.js';
+import { nest } from './nest.js';
 import { newJob } from './new.js';
 import { size } from './size.js';
 import { stock } from './stock.js';
@@ -15,6 +16,7 @@ export const commands: readonly CliCommand[] = [
   newJob,
   make,
   check,
+  nest,
   size,
   mend,
   compare,

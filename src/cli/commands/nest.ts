@@ -81,15 +81,21 @@ export const nest: CliCommand = {
     if (options['json']) terminal.result(`${JSON.stringify(nestJson(call, outcome), null, 2)}\n`);
     else {
       const count = answer.sheets.reduce((sum, s) => sum + s.placements.length, 0);
-      terminal.result(`${count} panels on ${answer.sheets.length} sheets; no plan has fewer than ${answer.lowerBound}.\n`);
+      terminal.result(
+        `${count} panels on ${answer.sheets.length} sheets; no plan has fewer than ${answer.lowerBound}.\n`,
+      );
       answer.sheets.forEach((s, i) => {
-        terminal.result(`  sheet ${i + 1}, ${s.sheet}: ${s.placements.length} panels use ${(100 * s.yield).toFixed(1)} %\n`);
+        terminal.result(
+          `  sheet ${i + 1}, ${s.sheet}: ${s.placements.length} panels use ${(100 * s.yield).toFixed(1)} %\n`,
+        );
       });
       terminal.result(`${sayKerf(call.cutter)}.\n`);
       if (answer.stopped) terminal.result('Stopped by the time limit: another run may give another plan.\n');
     }
     for (const u of answer.unplaced)
-      terminal.talk(`${u.mark}: ${u.quantity} ${u.reason === 'too-large' ? 'fit on no sheet: give a larger sheet' : 'have no sheet left: allow more sheets'}\n`);
+      terminal.talk(
+        `${u.mark}: ${u.quantity} ${u.reason === 'too-large' ? 'fit on no sheet: give a larger sheet' : 'have no sheet left: allow more sheets'}\n`,
+      );
     for (const [what, n] of reading.leftOut) terminal.talk(`${file}: left out ${n} ${what}\n`);
     return answer.unplaced.length > 0 ? EXIT.flagged : EXIT.clear;
   },
@@ -97,15 +103,21 @@ export const nest: CliCommand = {
 
 function sheetOf(text: string, before: NestingSheet[]): NestingSheet[] {
   const m = /^\s*(\d+(?:\.\d+)?)\s*[x×]\s*(\d+(?:\.\d+)?)\s*(?:\*\s*(\d+))?\s*$/i.exec(text);
-  if (!m || !(Number(m[1]) > 0 && Number(m[2]) > 0)) throw new InvalidArgumentError('give width x height in mm, as 600x400 or 600x400*3');
+  if (!m || !(Number(m[1]) > 0 && Number(m[2]) > 0))
+    throw new InvalidArgumentError('give width x height in mm, as 600x400 or 600x400*3');
   const name = `${m[1]} x ${m[2]}`;
-  if (before.some((s) => s.name === name)) throw new InvalidArgumentError('this size was given before; add the numbers up');
-  return [...before, { name, width: Number(m[1]), height: Number(m[2]), ...(m[3] === undefined ? {} : { available: Number(m[3]) }) }];
+  if (before.some((s) => s.name === name))
+    throw new InvalidArgumentError('this size was given before; add the numbers up');
+  return [
+    ...before,
+    { name, width: Number(m[1]), height: Number(m[2]), ...(m[3] === undefined ? {} : { available: Number(m[3]) }) },
+  ];
 }
 
 function lengthOf(text: string): number {
   const n = Number(text);
-  if (text.trim() === '' || !(n >= 0 && Number.isFinite(n))) throw new InvalidArgumentError('give a length in mm, 0 or more');
+  if (text.trim() === '' || !(n >= 0 && Number.isFinite(n)))
+    throw new InvalidArgumentError('give a length in mm, 0 or more');
   return n;
 }
 

@@ -1,5 +1,5 @@
 import { costAt, fitsField, type Layout, put } from './layout.js';
-import type { Pose } from './pose.js';
+import type { Pose, Shape } from './pose.js';
 
 /**
  * Puts the pieces, in the order given, on the field, each as far left and then as far down as it goes (bottom left).
@@ -8,15 +8,24 @@ import type { Pose } from './pose.js';
  * are returned; they stay off the layout.
  */
 export function construct(layout: Layout, order: readonly number[], field: number): number[] {
-  return order.filter((i) => !placeOn(layout, i, field));
+  // Where one outline found no place, no equal one does once the field is fuller.
+  const refused = new Set<Shape>();
+  return order.filter((i) => {
+    const shape = layout.shapes[i]!;
+    if (!refused.has(shape) && placeOn(layout, i, field)) return false;
+    refused.add(shape);
+    return true;
+  });
 }
+
+/** Poses that filling tries of one outline: the search turns pieces further. */
+const FILL_POSES = 8;
 
 /** Puts piece i at its leftmost free place on the field; false: none. */
 export function placeOn(layout: Layout, i: number, field: number): boolean {
   const f = layout.fields[field]!;
   let best: { pose: Pose; x: number; y: number; key: number } | null = null;
-  for (const pose of layout.shapes[i]!.poses) {
-    if (!fitsField(f, pose, layout.tolerance)) continue;
+  for (const pose of layout.shapes[i]!.poses.filter((p) => fitsField(f, p, layout.tolerance)).slice(0, FILL_POSES)) {
     // By the right edge of the piece, then by its top: a turned piece is judged by what it takes up.
     const key = (x: number, y: number): number => x + pose.box[2] - f.x0 + (y + pose.box[3] - f.y0) * HEIGHT_SHARE;
     const at = lowestFree(layout, i, pose, field, key, best ? best.key : Infinity);
@@ -85,23 +94,36 @@ function lowestFree(
     const region = flip ? layout.store.region(pose, solid) : layout.store.region(solid, pose);
     add(region.edges, 0, 0, clear, flip ? -1 : 1);
   }
-  crossings(edges, lowX, lowY, highX, highY, offer);
+  // Nothing right of the best place so far can beat it.
+  const farX = Math.min(highX, bound - pose.box[2] + f.x0);
+  layout.budget.spent += crossings(edges, lowX, lowY, farX, highX, highY, offer);
   found.sort((a, b) => a.key - b.key);
   for (const c of found) if (costAt(layout, i, pose, c.x, c.y, field, Number.MIN_VALUE) === 0) return [c.x, c.y];
   return null;
 }
 
-/** Ends of the edges, their crossings with each other and with the rectangle. */
+/** Crossing tests that cost as much as one look at a pair. */
+const TESTS_A_LOOK = 8;
+
+/**
+ * Offers the ends of the edges, their crossings with each other and with the rectangle, where x <= farX; edges are swept
+ * from left to right. Returns the work done, in evaluations.
+ */
 function crossings(
   e: readonly number[],
   lowX: number,
   lowY: number,
+  farX: number,
   highX: number,
   highY: number,
   offer: (x: number, y: number) => void,
-): void {
+): number {
+  const order: number[] = [];
   for (let k = 0; k < e.length; k += 4) {
     const [ax, ay, bx, by] = [e[k]!, e[k + 1]!, e[k + 2]!, e[k + 3]!];
+    if (Math.max(ax, bx) < lowX || Math.min(ax, bx) > farX || Math.max(ay, by) < lowY || Math.min(ay, by) > highY)
+      continue;
+    order.push(k);
     offer(ax, ay);
     offer(bx, by);
     const [dx, dy] = [bx - ax, by - ay];
@@ -113,19 +135,37 @@ function crossings(
       const t = (y - ay) / dy;
       if (t >= 0 && t <= 1) offer(ax + t * dx, y);
     }
-    const [minX, maxX] = ax < bx ? [ax, bx] : [bx, ax];
+  }
+  const left = (k: number): number => Math.min(e[k]!, e[k + 2]!);
+  order.sort((a, b) => left(a) - left(b) || a - b);
+  const active: number[] = [];
+  let tests = 0;
+  for (const k of order) {
+    const [ax, ay, bx, by] = [e[k]!, e[k + 1]!, e[k + 2]!, e[k + 3]!];
+    const [dx, dy] = [bx - ax, by - ay];
+    const minX = Math.min(ax, bx);
     const [minY, maxY] = ay < by ? [ay, by] : [by, ay];
-    if (maxX < lowX || minX > highX || maxY < lowY || minY > highY) continue;
-    for (let m = 0; m < k; m += 4) {
-      const [cx, cy, ex, ey] = [e[m]!, e[m + 1]!, e[m + 2]!, e[m + 3]!];
-      if (Math.max(cx, ex) < minX || Math.min(cx, ex) > maxX || Math.max(cy, ey) < minY || Math.min(cy, ey) > maxY)
-        continue;
-      const [fx, fy] = [ex - cx, ey - cy];
+    let kept = 0;
+    for (let n = 0; n < active.length; n++) {
+      const m = active[n]!;
+      const cx = e[m]!;
+      const ex = e[m + 2]!;
+      if ((cx > ex ? cx : ex) < minX) continue;
+      active[kept++] = m;
+      const cy = e[m + 1]!;
+      const ey = e[m + 3]!;
+      tests++;
+      if ((cy > ey ? cy : ey) < minY || (cy < ey ? cy : ey) > maxY) continue;
+      const fx = ex - cx;
+      const fy = ey - cy;
       const det = dx * fy - dy * fx;
       if (det === 0) continue;
       const t = ((cx - ax) * fy - (cy - ay) * fx) / det;
       const s = ((cx - ax) * dy - (cy - ay) * dx) / det;
       if (t >= 0 && t <= 1 && s >= 0 && s <= 1) offer(ax + t * dx, ay + t * dy);
     }
+    active.length = kept;
+    active.push(k);
   }
+  return tests / TESTS_A_LOOK;
 }

@@ -139,7 +139,15 @@ export function costAt(
 const OBSTACLE_WEIGHT = 20;
 
 /** Other pieces on the field whose boxes come within `reach` and the spacing of the pose at (x, y). */
-export function within(layout: Layout, i: number, pose: Pose, x: number, y: number, field: number, reach: number): number[] {
+export function within(
+  layout: Layout,
+  i: number,
+  pose: Pose,
+  x: number,
+  y: number,
+  field: number,
+  reach: number,
+): number[] {
   const { box, spacing } = layout;
   const far = spacing + reach;
   const [x0, y0, x1, y1] = [pose.box[0] + x - far, pose.box[1] + y - far, pose.box[2] + x + far, pose.box[3] + y + far];

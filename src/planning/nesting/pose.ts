@@ -107,6 +107,7 @@ const FEW_ALIGNED = 8;
 
 /** Angles in degrees that lay an edge of the outline along a side of the sheet, longest edges first. */
 function alignedAngles(ring: Ring, most: number): number[] {
+  if (isRound(ring)) return [0];
   const n = ring.length;
   const edges: { angle: number; length: number }[] = [];
   for (let i = 0; i < n; i += 2) {
@@ -123,6 +124,15 @@ function alignedAngles(ring: Ring, most: number): number[] {
         angles.push(Math.abs(degrees - Math.round(degrees)) < 1e-9 ? Math.round(degrees) % 360 : degrees);
     }
   return angles;
+}
+
+/** Whether turning changes nothing: the widths in all directions agree to a hundredth. */
+function isRound(ring: Ring): boolean {
+  const widths = Array.from({ length: 12 }, (_, k) => {
+    const [x0, , x1] = boundsOf(movedRing(ring, (k * Math.PI) / 12, 0, 0));
+    return x1 - x0;
+  });
+  return ring.length >= 24 && Math.max(...widths) < 1.01 * Math.min(...widths);
 }
 
 /**

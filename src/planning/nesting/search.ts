@@ -12,11 +12,11 @@ export interface Place {
 }
 
 /** Samples drawn for one move; found by trial on the published strips. */
-const WIDE = 16;
-const CORNERS = 12;
+const WIDE = 8;
+const CORNERS = 6;
 const NEAR = 8;
 /** Places that are refined. */
-const KEPT = 3;
+const KEPT = 2;
 
 /**
  * The least weighted depth found for piece i: places drawn over its fields, at corners of no-fit regions and round

@@ -249,4 +249,4 @@ function shortenOne(layout: Layout, f: number, random: Random, budget: Budget): 
 }
 
 /** Share of the whole budget that shortening the last sheet may take. */
-const SHORTEN_SHARE = 0.25;
+const SHORTEN_SHARE = 0.6;

@@ -6,6 +6,18 @@ import { separate } from './separate.js';
 
 /** Share of the budget for bold shortening with exchanges; the rest squeezes the best layout in small steps. */
 const BOLD_SHARE = 0.75;
+/** Shares of the length that one bold step takes away, at first and at last; misses before a smaller one; near misses kept. */
+const FIRST_SHARE = 0.02;
+const LEAST_SHARE = 0.002;
+const MISSES = 5;
+const POOL = 8;
+/** Shares of the length that one small step takes away, at first and at last. */
+const FIRST_STEP = 0.001;
+const LAST_STEP = 1e-5;
+const BOLD_PATIENCE = { rounds: 60, strikes: 2 } as const;
+const SQUEEZE_PATIENCE = { rounds: 40, strikes: 1 } as const;
+/** A length this share above the area bound is the bound. */
+const CLOSED = 1e-9;
 
 /**
  * Shortens the used length of field f from the right, again and again, and leaves the shortest layout without
@@ -22,48 +34,52 @@ export function shorten(layout: Layout, f: number, random: Random, limit: number
   const area = layout.on[f]!.reduce((sum, i) => sum + layout.shapes[i]!.area, 0);
   const least = area / (field.y1 - field.y0);
   const widest = Math.max(0, ...layout.on[f]!.map((i) => width(narrowest(layout, i, field))));
-  let share = 0.02;
+  const done = (): boolean => length <= least * (1 + CLOSED) || length <= widest;
+  const aim = (share: number): number => Math.max(length * (1 - share), widest, least);
+
+  // Boldly: to a shorter length at once, and where that fails with pieces exchanged in one of the near misses.
+  let share = FIRST_SHARE;
+  let misses = 0;
   let pool: { shot: Snapshot; total: number }[] = [];
-  while (!isSpent(layout.budget, boldLimit) && length > least * (1 + 1e-9) && share > 1e-4) {
-    const target = Math.max(length * (1 - share), widest, least);
-    if (target >= length) break;
-    field.x1 = field.x0 + target;
-    pullIn(layout, f);
-    let done = separate(layout, fieldsOf, random, { rounds: 60, strikes: 2, limit: boldLimit });
-    pool = [];
-    for (let attempt = 0; !done && attempt < 6 && !isSpent(layout.budget, boldLimit); attempt++) {
-      pool.push({ shot: snapshot(layout), total: sumDepth(layout) });
-      pool.sort((a, b) => a.total - b.total);
-      // Mostly the best of the near misses, now and then another.
+  while (!isSpent(layout.budget, boldLimit) && !done()) {
+    field.x1 = field.x0 + aim(share);
+    if (pool.length === 0) pullIn(layout, f);
+    else {
       const pick = Math.min(pool.length - 1, Math.floor(Math.abs(random() + random() - 1) * pool.length));
       restore(layout, pool[pick]!.shot);
       exchange(layout, f, random);
-      done = separate(layout, fieldsOf, random, { rounds: 60, strikes: 2, limit: boldLimit });
     }
-    if (done) {
+    if (separate(layout, fieldsOf, random, { ...BOLD_PATIENCE, limit: boldLimit })) {
       best = snapshot(layout);
       length = usedLength(layout, f);
-    } else {
+      pool = [];
+      misses = 0;
+      continue;
+    }
+    pool.push({ shot: snapshot(layout), total: sumDepth(layout) });
+    pool.sort((p, q) => p.total - q.total);
+    pool.length = Math.min(pool.length, POOL);
+    if (++misses >= MISSES && share > LEAST_SHARE) {
+      // Near misses of a length that is out of reach are no good start for a longer one: begin from the best again.
+      share = Math.max(LEAST_SHARE, share / 2);
+      misses = 0;
+      pool = [];
       field.x1 = field.x0 + length;
       restore(layout, best);
-      share /= 2;
     }
   }
-  let step = 0.002;
-  let misses = 0;
-  while (!isSpent(layout.budget, limit) && length > least * (1 + 1e-9) && step > 1e-5) {
-    const target = Math.max(length * (1 - step), widest, least);
-    if (target >= length) break;
+
+  // Then in small steps from the best alone, smaller as the budget runs out.
+  const squeezeStart = layout.budget.spent;
+  while (!isSpent(layout.budget, limit) && !done()) {
+    const gone = (layout.budget.spent - squeezeStart) / Math.max(1, limit - squeezeStart);
+    const target = aim(FIRST_STEP * (LAST_STEP / FIRST_STEP) ** gone);
     field.x1 = field.x0 + target;
     restore(layout, best);
     squeeze(layout, f, length - target, random);
-    if (separate(layout, fieldsOf, random, { rounds: 40, strikes: 1, limit })) {
+    if (separate(layout, fieldsOf, random, { ...SQUEEZE_PATIENCE, limit })) {
       best = snapshot(layout);
       length = usedLength(layout, f);
-      misses = 0;
-    } else if (++misses >= 4) {
-      step /= 2;
-      misses = 0;
     }
   }
   field.x1 = full;

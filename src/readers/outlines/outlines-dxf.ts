@@ -8,6 +8,8 @@ import type { OutlinesReading } from './outline.js';
 /** mm in one unit of $INSUNITS; 0, unitless, counts as mm. */
 const UNITS: Readonly<Record<number, number>> = { 0: 1, 1: 25.4, 2: 304.8, 4: 1, 5: 10, 6: 1000 };
 const DEGREE = Math.PI / 180;
+/** What our own sheets mark as not to cut. */
+const KEEP_LAYER = 'DO-NOT-CUT';
 
 /**
  * Outlines of a DXF text file: closed LWPOLYLINE and POLYLINE with their bulges, CIRCLE, and LINE, ARC and open
@@ -37,12 +39,16 @@ export function readDxfOutlines(text: string, name: string): OutlinesReading {
       count(`${thing.type} in paper space`);
       continue;
     }
-    const drawn = contourOf(thing, vertices);
+    if (textOf(thing, 8) === KEEP_LAYER) {
+      count(`${thing.type} on ${KEEP_LAYER}`);
+      continue;
+    }
+    const drawn = contourOf(thing, vertices, scale);
     if (drawn === null) {
       if (thing.type !== '' && thing.type !== 'ENDSEC') count(thing.type);
       continue;
     }
-    const points = drawn.points.map(([x, y]): Point2 => [x * scale, y * scale]);
+    const { points } = drawn;
     if (!points.every((p) => Number.isFinite(p[0]) && Number.isFinite(p[1])))
       log.tell(thing.line, `${thing.type} has a coordinate that is not there or not finite`, 'export it again');
     else (drawn.closed ? closed : open).push(points);
@@ -62,30 +68,35 @@ function unitOf(header: readonly DxfThing[] | undefined): number | null {
   return UNITS[value] ?? null;
 }
 
-function contourOf(thing: DxfThing, vertices: readonly DxfThing[]): { points: Point2[]; closed: boolean } | null {
-  if (thing.type === 'LINE')
-    return {
-      closed: false,
-      points: [
-        [numberOf(thing, 10, NaN), numberOf(thing, 20, NaN)],
-        [numberOf(thing, 11, NaN), numberOf(thing, 21, NaN)],
-      ],
-    };
+/** The contour of an entity in mm: scaled before it is flattened, so that the chord error is in mm too; null: none. */
+function contourOf(
+  thing: DxfThing,
+  vertices: readonly DxfThing[],
+  scale: number,
+): { points: Point2[]; closed: boolean } | null {
+  const length = (of: DxfThing, code: number): number => numberOf(of, code, Number.NaN) * scale;
+  const point = (of: DxfThing, k: 0 | 1): Point2 => [length(of, 10 + k), length(of, 20 + k)];
+  const isClosed = (numberOf(thing, 70) & 1) === 1;
+  if (thing.type === 'LINE') return { closed: false, points: [point(thing, 0), point(thing, 1)] };
   if (thing.type === 'CIRCLE' || thing.type === 'ARC') {
-    const centre: Point2 = [numberOf(thing, 10, NaN), numberOf(thing, 20, NaN)];
-    const r = numberOf(thing, 40, NaN);
-    if (!(r > 0)) return { closed: true, points: [[NaN, NaN]] };
+    const centre = point(thing, 0);
+    const r = length(thing, 40);
+    if (!(r > 0)) return { closed: true, points: [[Number.NaN, Number.NaN]] };
     if (thing.type === 'CIRCLE') return { closed: true, points: arcPoints(centre, r, r, 0, 2 * Math.PI).slice(0, -1) };
-    const from = numberOf(thing, 50, NaN) * DEGREE;
-    const sweep =
-      (((numberOf(thing, 51, NaN) * DEGREE - from) % (2 * Math.PI)) + 2 * Math.PI) % (2 * Math.PI) || 2 * Math.PI;
+    const from = numberOf(thing, 50, Number.NaN) * DEGREE;
+    const to = numberOf(thing, 51, Number.NaN) * DEGREE;
+    const sweep = (((to - from) % (2 * Math.PI)) + 2 * Math.PI) % (2 * Math.PI) || 2 * Math.PI;
     return { closed: false, points: arcPoints(centre, r, r, from, sweep) };
   }
-  if (thing.type === 'LWPOLYLINE') return bulged(lightCorners(thing), (numberOf(thing, 70) & 1) === 1);
+  if (thing.type === 'LWPOLYLINE')
+    return bulged(
+      lightCorners(thing).map((c) => ({ at: [c.at[0] * scale, c.at[1] * scale], bulge: c.bulge })),
+      isClosed,
+    );
   if (thing.type === 'POLYLINE' && !(numberOf(thing, 70) & (16 | 64)))
     return bulged(
-      vertices.map((v) => ({ at: [numberOf(v, 10, NaN), numberOf(v, 20, NaN)] as Point2, bulge: numberOf(v, 42) })),
-      (numberOf(thing, 70) & 1) === 1,
+      vertices.map((v) => ({ at: point(v, 0), bulge: numberOf(v, 42) })),
+      isClosed,
     );
   return null;
 }

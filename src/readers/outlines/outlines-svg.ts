@@ -78,7 +78,7 @@ export function readSvgOutlines(text: string, name: string): OutlinesReading {
       log.tell(line, `transform of ${element} cannot be read`, 'apply transforms before exporting');
     const matrix = times(above?.matrix ?? root ?? [1, 0, 0, 1, 0, 0], turned ?? [1, 0, 0, 1, 0, 0]);
     const hidden = attributes.get('display') === 'none' || /display\s*:\s*none/.test(attributes.get('style') ?? '');
-    const seen = (above?.seen ?? true) && !UNSEEN.has(element) && !hidden;
+    const seen = (above?.seen ?? true) && !UNSEEN.has(element) && !hidden && attributes.get('id') !== 'DO-NOT-CUT';
     if (!tag[4]) stack.push({ name: element, matrix, seen });
     if (!seen || element === 'svg' || element === 'g' || element === 'a') continue;
     const drawn = shapeOf(element, attributes, scale * Math.hypot(matrix[0], matrix[1]));
