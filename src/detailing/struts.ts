@@ -77,8 +77,8 @@ function cutBetween(axis: number, from: Socket | null, to: Socket | null, job: J
   if (from?.setback == null || to?.setback == null)
     return { cut: null, floats: [null, null], problem: 'hub', least: 0 };
   const between = axis - from.setback - to.setback;
-  // A seated end bears on its stop: it gets no play but what the saw's step leaves over.
-  const floats = [from, to].map((s) => (s.joint === 'seated' ? 0 : job.saw.endFloat_mm));
+  // A seated end bears on its stop: it gets no play but what the saw's step leaves over. An end that slides in leaves its way free.
+  const floats = [from, to].map((s) => (s.joint === 'seated' ? 0 : job.saw.endFloat_mm) + (s.travel ?? 0));
   const least = floats[0]! + floats[1]!;
   const cut = roundDownToStep(between - least, job.saw.step_mm);
   const leastBetween = from.depth + to.depth;

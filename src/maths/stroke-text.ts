@@ -7,6 +7,9 @@ export type Stroke = readonly (readonly [number, number])[];
 export interface Glyph {
   /** Ink from x = 0 to this width. */
   readonly width: number;
+  /** Lowest and highest ink; the baseline is 0 and a capital's top 1. */
+  readonly low: number;
+  readonly high: number;
   readonly strokes: readonly Stroke[];
 }
 
@@ -72,14 +75,20 @@ export function strokeGlyph(character: string): Glyph {
 function makeGlyph(character: string): Glyph {
   const { segments } = jscadText.vectorChar({ height: 1 / CAPITAL, xOffset: 0, yOffset: 0 }, character);
   const raw = (segments as [number, number][][]).filter((s) => s.length > 1);
-  if (raw.length === 0) return { width: BLANK, strokes: [] };
+  if (raw.length === 0) return { width: BLANK, low: 0, high: 1, strokes: [] };
   const left = Math.min(...raw.flat().map((p) => p[0]));
   const width = Math.max(...raw.flat().map((p) => p[0])) - left;
   const moved: Stroke[] = raw.map((s) => s.map((p): [number, number] => [p[0] - left, p[1]]));
   const all = [...moved, ...(EXTRA[character]?.(width) ?? [])];
   const low = Math.min(0, ...all.flat().map((p) => p[0]));
   const high = Math.max(...all.flat().map((p) => p[0]));
-  return { width: high - low, strokes: all.map((s) => s.map((p): [number, number] => [p[0] - low, p[1]])) };
+  const heights = all.flat().map((p) => p[1]);
+  return {
+    width: high - low,
+    low: Math.min(...heights),
+    high: Math.max(...heights),
+    strokes: all.map((s) => s.map((p): [number, number] => [p[0] - low, p[1]])),
+  };
 }
 
 const BLANK = 0.4;

@@ -79,6 +79,8 @@ export interface Socket {
   readonly bolted?: BoltedEnd;
   /** How the hub holds the strut; absent: a sleeve round it. A spigot goes into a tube and a plate into a slot: `bore` is then their own size. */
   readonly form?: 'sleeve' | 'spigot' | 'plate';
+  /** How far the strut can slide in beyond its place, mm, where the detail is a slide; absent: 0. */
+  readonly travel?: number;
 }
 
 /** A node connector as numbers. Its solid is made from these alone. */

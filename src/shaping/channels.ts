@@ -53,8 +53,11 @@ const FLOOR_CLEAR = 0.05;
 export function pinOf(space: HubSpace, index: number, web: number): Channel | null {
   const s = space.sleeves[index]!;
   const radius = s.socket.pin / 2;
-  for (const share of PIN_AT) {
-    const centre = scale(s.socket.direction, s.stop + share * s.socket.depth);
+  const { depth, travel } = s.socket;
+  // The pin of a slide stands right behind the strut's end; another holds the strut by its middle.
+  const places = travel === undefined ? PIN_AT.map((share) => share * depth) : [travel - radius];
+  for (const place of places) {
+    const centre = scale(s.socket.direction, s.stop + place);
     const found = shortest(
       azimuths(s)
         .slice(0, AZIMUTHS / 2)

@@ -1,4 +1,4 @@
-import { layOutText } from '../maths/stroke-text.js';
+import { layOutText, strokeGlyph } from '../maths/stroke-text.js';
 import { glyphShape } from './glyph-solid.js';
 import type { Kernel } from './kernel.js';
 import type { MeshBuilder } from './mesh-builder.js';
@@ -12,14 +12,18 @@ export interface Lettering {
   readonly depth: number;
 }
 
-/** Ink below the baseline (the line under 6 and 9) is part of the height: text is centred between these, in capital heights. */
-const [LOWEST, HIGHEST] = [-0.3, 1] as const;
+/** Lowest and highest ink of a line in capital heights, a plain capital at least: it is centred between these. */
+function inkOf(text: string): readonly [number, number] {
+  const glyphs = [...text].map(strokeGlyph);
+  return [Math.min(0, ...glyphs.map((g) => g.low)), Math.max(1, ...glyphs.map((g) => g.high))];
+}
 
 /** Width and height of a line's ink with its strokes, mm. */
 export function textSize(text: string, lettering: Lettering): { readonly width: number; readonly height: number } {
+  const [low, high] = inkOf(text);
   return {
     width: layOutText(text, spacing(lettering)).width * lettering.capHeight + lettering.stroke,
-    height: (HIGHEST - (/[69]/.test(text) ? LOWEST : 0)) * lettering.capHeight + lettering.stroke,
+    height: (high - low) * lettering.capHeight + lettering.stroke,
   };
 }
 
@@ -36,10 +40,10 @@ export function addLettering(
 ): void {
   const { capHeight, stroke, depth } = lettering;
   const { width, places } = layOutText(text, spacing(lettering));
-  const low = /[69]/.test(text) ? LOWEST : 0;
+  const [low, high] = inkOf(text);
   for (const { character, x } of places) {
     const shape = glyphShape(kernel, character, capHeight, stroke);
-    const [dx, dy] = [(x - width / 2) * capHeight, -((HIGHEST + low) / 2) * capHeight];
+    const [dx, dy] = [(x - width / 2) * capHeight, -((high + low) / 2) * capHeight];
     const place = (p: readonly [number, number], h: number): number => mesh.point(...surface(p[0] + dx, p[1] + dy, h));
     const bottom = shape.points.map((p) => place(p, -depth));
     const top = shape.points.map((p) => place(p, OUT));

@@ -9,7 +9,7 @@ import { Bench, loadKernel, type Manifold } from './kernel.js';
 import { layDown } from './lay-down.js';
 import { letteringsFor } from './mark-places.js';
 import { MeshBuilder } from './mesh-builder.js';
-import { sidesFor } from './socket-solid.js';
+import { sidesFor } from './placed.js';
 
 /** Steps of the ladder of clearances about the job's own, mm. */
 const STEPS = [-0.2, -0.1, 0, 0.1, 0.2] as const;

@@ -53,6 +53,7 @@ const MOST_HALF_ANGLE = 1.35;
  * A free place on a sleeve for a line of text, the largest letters first: along the strut or round it, on the side that looks most
  * towards `towards`, clear of other pieces, of holes, and of the sides already `taken`. null where no legible size fits.
  *
+ * @param groove where a groove round the sleeve starts, along the strut
  * @param words the line as it reads along the strut, and as it reads round it
  */
 export function placeMark(
@@ -64,12 +65,13 @@ export function placeMark(
   towards: Vec3,
   taken: readonly { readonly side: number; readonly halfAngle: number }[],
   holes: readonly Channel[],
+  groove = Number.POSITIVE_INFINITY,
 ): MarkPlace | null {
   const s = space.sleeves[sleeve]!;
   const from = s.coneTop + MARGIN;
   const bolts = s.socket.bolted;
   // A plate is marked between the shoulder and its first bolt.
-  const to = bolts ? s.stop + bolts.endDistance - 1.5 * bolts.diameter : s.mouth - chamfer - MARGIN;
+  const to = bolts ? s.stop + bolts.endDistance - 1.5 * bolts.diameter : Math.min(s.mouth - chamfer, groove) - MARGIN;
   const middle = (from + to) / 2;
   for (const lettering of letterings)
     for (const turn of ['along', 'round'] as const) {

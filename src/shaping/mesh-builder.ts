@@ -16,12 +16,15 @@ export class MeshBuilder {
     return this.faces.length === 0;
   }
 
-  /** Adds a solid between rings of corners, each anticlockwise seen from the far end, closed by a fan at both ends. All rings have as many corners. */
-  loft(rings: readonly { readonly z: number; readonly outline: readonly (readonly [number, number])[] }[]): void {
+  /** Adds a solid between rings of corners, each anticlockwise seen from the far end, closed by a fan about `middle` at both ends. All rings have as many corners. */
+  loft(
+    rings: readonly { readonly z: number; readonly outline: readonly (readonly [number, number])[] }[],
+    middle: readonly [number, number] = [0, 0],
+  ): void {
     const n = rings[0]!.outline.length;
-    const bottom = this.point(0, 0, rings[0]!.z);
+    const bottom = this.point(...middle, rings[0]!.z);
     const starts = rings.map((ring) => ring.outline.map(([x, y]) => this.point(x, y, ring.z))[0]!);
-    const top = this.point(0, 0, rings[rings.length - 1]!.z);
+    const top = this.point(...middle, rings[rings.length - 1]!.z);
     for (let k = 0; k < n; k++) {
       const next = (k + 1) % n;
       this.face(bottom, starts[0]! + next, starts[0]! + k);

@@ -6,6 +6,7 @@ import type { Job } from '../model/job/index.js';
 import type { HubPart } from '../model/parts.js';
 import type { ShapedHub, ShapedPiece } from '../model/shaped.js';
 import { boltHolesOf, type Channel, pinOf, plateHolesOf, ventOf } from './channels.js';
+import { type Cradle, capSolid, cradleOf } from './cradle.js';
 import { HubSpace } from './hub-space.js';
 import { Bench, loadKernel, SolidFailed } from './kernel.js';
 import { layDown } from './lay-down.js';
@@ -26,17 +27,25 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
   try {
     const space = new HubSpace(hubShape(hub, job));
     const channels = channelsOf(hub, job, space, findings);
-    const marks = job.nodes.marks ? marksOf(hub, job, space, channels, findings) : [];
-    const solid = socketSolid(bench, space, { marks, channels, chamfer: job.nodes.chamfer_mm });
+    const cradles = cradlesOf(hub, job, space, findings);
+    const marks = job.nodes.marks ? marksOf(hub, job, space, channels, cradles, findings) : [];
+    const solid = socketSolid(bench, space, { marks, channels, cradles, chamfer: job.nodes.chamfer_mm });
     const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
     const lie = space.shape.base
       ? ON_PLATE
       : chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
-    const piece = layDown(bench, solid, lie, hub.at, '');
-    const faults = piece ? openEdges(piece.positions, piece.triangles) : 1;
-    if (piece) findings.push(...sizeFindings(hub, piece, job));
-    if (!piece || faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
-    return { mark: hub.mark, pieces: piece && faults === 0 ? [piece] : [], findings };
+    const laid = [layDown(bench, solid, lie, hub.at, '')];
+    for (const c of cradles) {
+      const cap = capSolid(bench, space, c);
+      laid.push(layDown(bench, cap, chooseLie(cap, [], ON_A_FACE), hub.at, `cap-${hub.sockets[c.sleeve]!.strut}`));
+    }
+    const pieces = laid.filter((p) => p !== null);
+    const faults = pieces
+      .map((p) => openEdges(p.positions, p.triangles))
+      .reduce((a, b) => a + b, laid.length - pieces.length);
+    for (const piece of pieces) findings.push(...sizeFindings(hub, piece, job));
+    if (faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
+    return { mark: hub.mark, pieces: faults === 0 ? pieces : [], findings };
   } catch (error) {
     if (!(error instanceof SolidFailed)) throw error;
     findings.push(finding('solid-failed', hub.mark, { about: { what: error.message } }));
@@ -48,6 +57,19 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
 
 /** A foot stands as it is used: its plate's underside must be flat. */
 const ON_PLATE: Lie = { up: [0, 0, 1], level: [1, 0, 0], contact: 0, stable: true };
+
+/** Caps lie by the least overhang alone. */
+const ON_A_FACE = { overhang: 1, height: 0.1, tension: 0 };
+
+function cradlesOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Cradle[] {
+  const leastWall = LEAST_WALL[job.nodes['process']];
+  return hub.sockets.flatMap((s, i) => {
+    if (s.detail !== 'drop-in' || !space.sleeves[i]!.hollow) return [];
+    const cradle = cradleOf(space, i, hub.outward, job.nodes.chamfer_mm, leastWall);
+    if (!cradle) findings.push(finding('drop-in-blocked', hub.mark, { about: { strut: s.strut } }));
+    return cradle ?? [];
+  });
+}
 
 /** Whether a printer's usable volume takes a box, upright or turned by a quarter. */
 function holds(printer: Job['printers'][number], [width, depth, height]: readonly [number, number, number]): boolean {
@@ -82,7 +104,7 @@ function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]
       else findings.push(finding('pin-meets-bore', hub.mark, { value: s.pin, about: { strut: s.strut } }));
     }
     channels.push(...boltHolesOf(space, i));
-    if (job.nodes.vent_mm > 0 && space.sleeves[i]!.hollow) {
+    if (job.nodes.vent_mm > 0 && space.sleeves[i]!.hollow && s.detail !== 'drop-in') {
       const vent = ventOf(space, i, job.nodes.vent_mm, web);
       if (vent) channels.push(vent);
       else findings.push(finding('vent-left-out', hub.mark, { about: { strut: s.strut } }));
@@ -96,10 +118,15 @@ function marksOf(
   job: Job,
   space: HubSpace,
   channels: readonly Channel[],
+  cradles: readonly Cradle[],
   findings: Finding[],
 ): MarkPlace[] {
   const places: MarkPlace[] = [];
-  const taken = hub.sockets.map((): MarkPlace[] => []);
+  const opening = (i: number): Cradle | undefined => cradles.find((c) => c.sleeve === i);
+  const taken = hub.sockets.map((_, i): { side: number; halfAngle: number }[] => {
+    const c = opening(i);
+    return c ? [{ side: c.angle, halfAngle: c.halfAngle }] : [];
+  });
   const leastWall = LEAST_WALL[job.nodes['process']];
   const place = (i: number, along: string, round: string, sense: 1 | -1): boolean => {
     const s = hub.sockets[i]!;
@@ -113,6 +140,7 @@ function marksOf(
       [sense * towards[0], sense * towards[1], sense * towards[2]],
       taken[i]!,
       channels,
+      opening(i)?.groove?.from,
     );
     if (!found) return false;
     places.push(found);

@@ -2,16 +2,19 @@ import { type BasePlate, INTO_PLATE, levelRing } from '../detailing/systems/base
 import { grow, type Half, largest, outlineOf, ringPoints, type Sleeve, smallest } from '../detailing/systems/sleeve.js';
 import type { Vec3 } from '../maths/vec3.js';
 import type { Channel } from './channels.js';
+import { type Cradle, cradleCutters } from './cradle.js';
 import { addLettering } from './engraving.js';
 import type { HubSpace } from './hub-space.js';
 import type { Bench, Manifold } from './kernel.js';
 import type { MarkPlace } from './mark-places.js';
 import { MeshBuilder } from './mesh-builder.js';
+import { placedAlong, sidesFor, transformed } from './placed.js';
 
 /** What is cut from a socket hub besides its bores. */
 export interface HubCuts {
   readonly marks: readonly MarkPlace[];
   readonly channels: readonly Channel[];
+  readonly cradles: readonly Cradle[];
   readonly chamfer: number;
 }
 
@@ -30,6 +33,7 @@ export function socketSolid(bench: Bench, space: HubSpace, cuts: HubCuts): Manif
   const paths = space.sleeves.map((s) => pathSolid(bench, s, cuts.chamfer, space.reach + 1));
   const last = [
     ...cuts.channels.map((c) => channelSolid(bench, c)),
+    ...cuts.cradles.flatMap((c) => cradleCutters(bench, space, c)),
     ...space.sleeves.flatMap((s, i) => letteringSolid(bench, s, i, cuts.marks) ?? []),
   ];
   const cores = space.sleeves.filter((s) => !s.hollow).map((s) => coreSolid(bench, s, cuts.chamfer));
@@ -70,7 +74,7 @@ function coreSolid(bench: Bench, s: Sleeve, chamfer: number): Manifold {
     ring(s.mouth - c, s.outer),
     ring(s.mouth, grow(s.outer, -c)),
   ]);
-  return placed(bench, mesh, s, `spigot ${s.socket.strut}`);
+  return placedAlong(bench, mesh, s, `spigot ${s.socket.strut}`);
 }
 
 /** Chamfer that leads a tube on, mm; common practice, no source. */
@@ -113,7 +117,7 @@ function pathSolid(bench: Bench, s: Sleeve, chamfer: number, to: number): Manifo
     ...(c > 0 ? [ring(s.mouth + PAST_MOUTH, grow(s.inner, c + PAST_MOUTH))] : []),
     ring(Math.max(to, s.mouth + 1), c > 0 ? grow(s.inner, c + PAST_MOUTH) : s.inner),
   ]);
-  return placed(bench, mesh, s, 'path');
+  return placedAlong(bench, mesh, s, 'path');
 }
 
 const PAST_MOUTH = 0.1;
@@ -129,7 +133,7 @@ function sleeveSolid(bench: Bench, s: Sleeve, chamfer: number): Manifold {
   if (!s.hollow) {
     // Past the stop, where the path is cut: the shoulder is a clean cut and no shared face.
     mesh.loft([ring(s.root, grow(s.rootHalf, ROOT_INSIDE)), ring(s.stop + 0.2, s.rootHalf)]);
-    return placed(bench, mesh, s, `shoulder ${s.socket.strut}`);
+    return placedAlong(bench, mesh, s, `shoulder ${s.socket.strut}`);
   }
   const c = chamferOf(s, chamfer);
   mesh.loft([
@@ -138,7 +142,7 @@ function sleeveSolid(bench: Bench, s: Sleeve, chamfer: number): Manifold {
     ...(s.coneTop > s.coneFoot ? [ring(s.coneTop, s.outer)] : []),
     ...(c > 0 ? [ring(s.mouth - c, s.outer), ring(s.mouth, grow(s.outer, -c))] : [ring(s.mouth, s.outer)]),
   ]);
-  return placed(bench, mesh, s, `sleeve ${s.socket.strut}`);
+  return placedAlong(bench, mesh, s, `sleeve ${s.socket.strut}`);
 }
 
 /** The root is drawn in a little, mm, so that its edge lies in no face of the body. */
@@ -172,28 +176,5 @@ function frameOf(d: Vec3): [Vec3, Vec3] {
 function letteringSolid(bench: Bench, s: Sleeve, i: number, marks: readonly MarkPlace[]): Manifold | null {
   const mesh = new MeshBuilder();
   for (const m of marks) if (m.sleeve === i) addLettering(mesh, bench.kernel, m.text, m.lettering, m.surface);
-  return mesh.empty ? null : placed(bench, mesh, s, 'marks');
+  return mesh.empty ? null : placedAlong(bench, mesh, s, 'marks');
 }
-
-const placed = (bench: Bench, mesh: MeshBuilder, s: Sleeve, what: string): Manifold =>
-  transformed(bench, mesh, s.socket.y, s.socket.z, s.socket.direction, [0, 0, 0], what);
-
-function transformed(bench: Bench, mesh: MeshBuilder, x: Vec3, y: Vec3, z: Vec3, at: Vec3, what: string): Manifold {
-  const { Manifold, Mesh } = bench.kernel;
-  const local = bench.hold(new Manifold(new Mesh(mesh.mesh())), what);
-  const solid = bench.hold(
-    local.transform([x[0], x[1], x[2], 0, y[0], y[1], y[2], 0, z[0], z[1], z[2], 0, at[0], at[1], at[2], 1]),
-    what,
-  );
-  bench.free(local);
-  return solid;
-}
-
-/** Sides of a circle of a radius: enough for a chord error of 0.03 mm, in fours, 20 to 64. */
-export function sidesFor(radius: number): number {
-  const sides = Math.PI / Math.acos(1 - CHORD / Math.max(radius, 1));
-  return Math.min(64, Math.max(20, 4 * Math.ceil(sides / 4)));
-}
-
-/** mm; a sixth of a layer. */
-const CHORD = 0.03;

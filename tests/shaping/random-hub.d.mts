@@ -8,7 +8,13 @@ export interface RandomHub {
 }
 export function randomHub(
   seed: number,
-  special?: { system?: string; count?: number; least?: number; nodes?: Readonly<Record<string, unknown>> },
+  special?: {
+    system?: string;
+    details?: readonly string[];
+    count?: number;
+    least?: number;
+    nodes?: Readonly<Record<string, unknown>>;
+  },
 ): RandomHub;
 export function checkHub(
   made: RandomHub,

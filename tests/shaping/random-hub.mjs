@@ -100,7 +100,15 @@ export function randomHub(seed, special = {}) {
     return { x, y, z: [x[1] * y[2] - x[2] * y[1], x[2] * y[0] - x[0] * y[2], x[0] * y[1] - x[1] * y[0]] };
   });
   const sections = directions.map(() => kinds[Math.floor(random() * kinds.length)]);
-  const { hubs } = detailHubs(topology, job, sections, axes);
+  const details = special.details ?? [];
+  const withDetails = {
+    ...job,
+    struts: {
+      ...job.struts,
+      ends: Object.fromEntries(details.map((d, i) => [`S${i * 7 + 3}@N${seed % 1000}`, d])),
+    },
+  };
+  const { hubs } = detailHubs(topology, withDetails, sections, axes);
   return { job, hub: hubs[0] };
 }
 
@@ -119,7 +127,13 @@ export async function checkHub({ job, hub }, { cross = false, samples = 24 } = {
   if (!(seen.volume > 0)) faults.push('inside out');
   if (seen.low[2] !== 0) faults.push(`lowest point ${seen.low[2]}`);
   const closedForm = (hub.mass * 1e9) / hub.material.density;
-  if (Math.abs(closedForm / seen.volume - 1) > 0.1) faults.push(`mass: ${closedForm} against ${seen.volume} mm3`);
+  const volume = shaped.pieces.reduce((sum, p) => sum + p.volume, 0);
+  if (Math.abs(closedForm / volume - 1) > 0.1) faults.push(`mass: ${closedForm} against ${volume} mm3`);
+  for (const other of shaped.pieces.slice(1)) {
+    const found = inspect(readStl(writeStl(other.positions, other.triangles, other.piece)));
+    if (found.open > 0 || found.shells !== 1 || found.degenerate > 0 || found.low[2] !== 0)
+      faults.push(`${other.piece}: ${JSON.stringify(found)}`);
+  }
   if (cross) {
     const found = crossings(stl);
     if (found > 0) faults.push(`${found} crossings`);
@@ -156,12 +170,12 @@ export async function checkHub({ job, hub }, { cross = false, samples = 24 } = {
         : [s.bore[0] / 2 + w, (s.bore[1] / 2) * (2 * random() - 1)];
       const p = [0, 1, 2].map((k) => s.direction[k] * tw + s.y[k] * wall[0] + s.z[k] * wall[1]);
       const inOther = hub.sockets.some((o) => o !== s && inPath(o, p));
-      if (!inOther && s.pin === 0 && !solid(spot(wall[0], wall[1], tw))) hollow++;
+      if (!inOther && s.pin === 0 && s.detail !== 'drop-in' && !solid(spot(wall[0], wall[1], tw))) hollow++;
     }
     if (full > 0) faults.push(`bore of ${s.strut} is blocked at ${full} of ${samples} points`);
     if (hollow > samples / 8) faults.push(`wall of ${s.strut} is missing at ${hollow} of ${samples} points`);
   }
-  return { faults, shaped, bytes, volume: seen.volume, closedForm, triangles: stl.count };
+  return { faults, shaped, bytes, volume, closedForm, triangles: stl.count };
 }
 
 /** A spigot is solid to its end but for its holes; round it the strut's own room is empty. */

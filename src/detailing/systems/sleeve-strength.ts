@@ -61,12 +61,24 @@ const minus = (a: Moments, b: Moments): Moments => ({
   torsion: a.torsion - b.torsion,
 });
 
+/** Section that a side opening as wide as the bore takes from a sleeve: of a ring, the integral of sqrt(R² - u²) over |u| < r, less half the bore. */
+function openingArea({ outer, inner }: Sleeve): number {
+  if (typeof outer === 'number' && typeof inner === 'number') {
+    const under = inner * Math.sqrt(outer ** 2 - inner ** 2) + outer ** 2 * Math.asin(inner / outer);
+    return under - (Math.PI * inner ** 2) / 2;
+  }
+  const [o, i] = [outer as readonly [number, number], inner as readonly [number, number]];
+  return 2 * Math.max(i[0] * (o[1] - i[1]), i[1] * (o[0] - i[0]));
+}
+
 /** Areas through which each socket passes force. */
 export function sleeveStrength(hub: HubPart, vent: number): SocketStrength[] {
   const { ft, ftZ } = hub.material.strength;
   const acrossLayers = ft !== undefined && ftZ !== undefined ? ftZ / ft : ACROSS_LAYERS;
   return sleevesOf(hub.sockets).map((s: Sleeve) => {
-    const { pin, wall, depth, strut } = s.socket;
+    const { pin, wall, strut, detail } = s.socket;
+    // What holds the strut when it is in its place.
+    const depth = s.socket.depth - (s.socket.travel ?? 0);
     const hole = (Math.PI * pin * pin) / 4;
     if (!s.hollow) {
       // A spigot or plate: its own section carries, glue holds its surface, and the strut stands on the shoulder round it.
@@ -82,11 +94,13 @@ export function sleeveStrength(hub: HubPart, vent: number): SocketStrength[] {
         acrossLayers,
       };
     }
+    // A cradle is open on a side: half of a round bore, one of four sides, is left to its cap, which is not counted on.
+    const open = detail === 'drop-in';
     return {
       strut,
-      wallArea: areaOf(s.outer) - areaOf(s.inner) - 2 * pin * wall,
+      wallArea: areaOf(s.outer) - areaOf(s.inner) - 2 * pin * wall - (open ? openingArea(s) : 0),
       wall,
-      bondArea: perimeterOf(s.inner) * depth - 2 * hole - vent * vent,
+      bondArea: perimeterOf(s.inner) * depth * (open ? 0.5 : 1) - 2 * hole - vent * vent,
       stopArea: areaOf(s.inner) - vent * vent,
       rootArea: areaOf(s.outer),
       pin: pin > 0 ? { diameter: pin, shearPlanes: 2, bearingArea: 2 * pin * wall } : null,

@@ -36,8 +36,25 @@ export const SOCKET_SYSTEM: NodeSystem = {
 
 const MM3_TO_M3 = 1e-9;
 
-/** Bore = largest measured strut + clearance (+ swelling of timber outdoors); depth = factor x size, of a rectangle's mean side. */
+/** Air behind the far end of a strut that has slid in, mm. */
+const SLIDE_OVER = 1;
+
+/**
+ * A socket with its closing detail. A slide is deeper by the engagement, so that the strut goes in beyond its place, over its far
+ * socket, and back; a pin behind its end then locks it.
+ */
 export function sizeSocket(bar: BarEnd, job: Job): Socket {
+  const plain = plainSocket(bar, job);
+  if (bar.detail !== 'slide') return plain;
+  const travel = plain.depth + SLIDE_OVER;
+  return { ...plain, depth: plain.depth + travel, travel, pin: Math.max(plain.pin, job.nodes.pin_mm, LEAST_LOCK) };
+}
+
+/** Least diameter of a locking pin, mm: a wire nail; common practice, no source. */
+const LEAST_LOCK = 1.5;
+
+/** Bore = largest measured strut + clearance (+ swelling of timber outdoors); depth = factor x size, of a rectangle's mean side. */
+function plainSocket(bar: BarEnd, job: Job): Socket {
   const { section } = bar;
   const { shape } = section;
   const size = measuredSize(section);

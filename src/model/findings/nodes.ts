@@ -88,4 +88,11 @@ export const NODE_FINDINGS = {
     (f) =>
       `${f.about?.['strut']} falls too steeply to leave over the base plate; give this node another system or raise it`,
   ),
+  'drop-in-blocked': entry(
+    'stop',
+    'node',
+    '',
+    (f) =>
+      `no side of the socket of ${f.about?.['strut']} is free for a strut to be laid in; use a slide there, or a drop-in at its other end`,
+  ),
 } as const;

@@ -30,7 +30,7 @@ export interface CanonicalHub {
  * this is what a part's digest and the memory of earlier runs are taken over.
  */
 export function canonicalHub(hub: HubPart, job: Job, tension: readonly number[]): CanonicalHub {
-  const [x, y, z] = frameOf(hub.sockets);
+  const [x, y, z] = hub.system === 'foot' ? uprightFrameOf(hub.sockets) : frameOf(hub.sockets);
   const turned = (v: Vec3): Vec3 => [dot(v, x), dot(v, y), dot(v, z)];
   const canonical: HubPart = {
     ...hub,
@@ -42,7 +42,7 @@ export function canonicalHub(hub: HubPart, job: Job, tension: readonly number[])
   return {
     input: {
       hub: canonical,
-      job: { ...REST, nodes: job.nodes },
+      job: { ...REST, nodes: job.nodes, printers: job.printers.map(sizeOnly) },
       tension: tension.map((n) => Number(n.toPrecision(TENSION_DIGITS))),
     },
     toTruss: frameToWorld(hub.at, x, y),
@@ -72,6 +72,24 @@ function frameOf(sockets: readonly Socket[]): readonly [Vec3, Vec3, Vec3] {
   const y = normalise(square(beside, x));
   return [x, y, cross(x, y)];
 }
+
+/** A foot stands upright: its frame turns about the upright alone, to its first strut that is not upright itself. */
+function uprightFrameOf(sockets: readonly Socket[]): readonly [Vec3, Vec3, Vec3] {
+  const leaning = sockets.find((s) => Math.hypot(s.direction[0], s.direction[1]) > ASKEW)?.direction;
+  if (!leaning) return [X, Y, Z];
+  const x = normalise([leaning[0], leaning[1], 0]);
+  return [x, cross(Z, x), Z];
+}
+
+/** Of a printer only its room says anything about a hub. */
+const sizeOnly = (p: Job['printers'][number]): Job['printers'][number] => ({
+  ...REST.printers[0]!,
+  bed: p.bed,
+  width_mm: p.width_mm,
+  depth_mm: p.depth_mm,
+  height_mm: p.height_mm,
+  margin_mm: p.margin_mm,
+});
 
 const X: Vec3 = [1, 0, 0];
 const Y: Vec3 = [0, 1, 0];

@@ -55,7 +55,9 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
         if (!keep) continue;
         const path = `nodes/stl/${hub.mark}${piece.piece ? `.${piece.piece}` : ''}.stl`;
         await writer.put(path, output.stl[i]!);
-        files.push(path);
+        if (piece.piece.startsWith('cap-'))
+          parts.push({ ...part, mark: `${hub.mark}.${piece.piece}`, kind: 'cap', files: [path] });
+        else files.push(path);
         printable.push({
           mark: hub.mark,
           piece: piece.piece,
