@@ -4,13 +4,16 @@ import { assess } from './assess.js';
 import { type Sizing, sizeSections } from './size.js';
 
 /** Sizes the struts of a job with the assessment that `check` makes. `file` is the truss as read; the job's scale is applied inside. */
-export const sizeJob = (file: Truss, job: Job, tell?: (round: number, heavier: number) => void): Promise<Sizing> =>
-  sizeSections(
+export function sizeJob(file: Truss, job: Job, tell?: (round: number, heavier: number) => void): Promise<Sizing> {
+  // Load factors of the whole change no utilisation; they are found when the sized truss is checked.
+  const quick = { ...job, analysis: { ...job.analysis, buckling: false } };
+  return sizeSections(
     file,
     job,
     async (truss) => {
-      const { parts, utilisations, forces, solution } = await assess(truss, job);
+      const { parts, utilisations, forces, solution } = await assess(truss, quick);
       return { parts, utilisations, loading: { forces: forces?.values ?? null, solution } };
     },
     tell,
   );
+}

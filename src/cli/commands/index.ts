@@ -1,4 +1,5 @@
 import { asBuilt } from './as-built.js';
+import { catalogue } from './catalogue.js';
 import { check } from './check.js';
 import type { CliCommand } from './command.js';
 import { compare } from './compare.js';
@@ -18,6 +19,7 @@ export const commands: readonly CliCommand[] = [
   check,
   nest,
   size,
+  catalogue,
   mend,
   compare,
   asBuilt,

@@ -1,13 +1,7 @@
-import { sizingReport } from '../../documents/sizing-json.js';
-import { withSections } from '../../documents/truss/with-sections.js';
 import { FileFault } from '../../machine/file-fault.js';
 import { readText, writeOne } from '../../machine/files.js';
 import { join } from '../../machine/paths.js';
-import { LIMITS } from '../../model/limits.js';
-import { loadJob } from '../../pipeline/load.js';
-import { sizeJob } from '../../pipeline/size-job.js';
 import { EXIT } from '../exit.js';
-import { saySizing } from '../terminal/say-sizing.js';
 import type { CliCommand } from './command.js';
 
 export const size: CliCommand = {
@@ -23,6 +17,17 @@ export const size: CliCommand = {
       .option('-o, --out <truss>', 'write the truss file with the chosen sections; an existing file is never replaced')
       .option('--json', 'print the choices as JSON on stdout'),
   async run({ arguments: [path], options, terminal }) {
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [{ sizingReport }, { withSections }, { LIMITS }, { loadJob }, { sizeJob }, { saySizing }] = await Promise.all(
+      [
+        import('../../documents/sizing-json.js'),
+        import('../../documents/truss/with-sections.js'),
+        import('../../model/limits.js'),
+        import('../../pipeline/load.js'),
+        import('../../pipeline/size-job.js'),
+        import('../terminal/say-sizing.js'),
+      ],
+    );
     const result = await loadJob(path!);
     if ('faults' in result) {
       for (const fault of result.faults) terminal.talk(`${fault}\n`);
