@@ -44,6 +44,20 @@ export async function writeOne(path: string, bytes: Uint8Array | string, replace
   }
 }
 
+/** Whether a path is a file that begins as a PDF does. */
+export async function isPdf(path: string): Promise<boolean> {
+  const file = await open(path, 'r').catch(() => null);
+  if (!file) return false;
+  try {
+    const { buffer } = await file.read(Buffer.alloc(5), 0, 5, 0);
+    return buffer.toString('latin1') === '%PDF-';
+  } catch {
+    return false;
+  } finally {
+    await file.close();
+  }
+}
+
 /** What stands at a path: a link is followed. Throws a FileFault where the system does not say. */
 export async function kindOf(path: string): Promise<'file' | 'folder' | 'other' | null> {
   try {

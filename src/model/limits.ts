@@ -9,7 +9,10 @@ export const LIMITS = {
   depth: 32,
   /** Largest magnitude of any number: its cube in other units is still far from what a double holds. */
   magnitude: 1e15,
+  /** Smallest magnitude but nought: its cube in other units is still far from where doubles end. */
+  leastMagnitude: 1e-100,
 } as const;
 
 /** Whether a number of an input file is one to reckon with. */
-export const isUsable = (value: number): boolean => Number.isFinite(value) && Math.abs(value) <= LIMITS.magnitude;
+export const isUsable = (value: number): boolean =>
+  value === 0 || (Math.abs(value) >= LIMITS.leastMagnitude && Math.abs(value) <= LIMITS.magnitude);

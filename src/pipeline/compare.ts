@@ -1,42 +1,10 @@
 import { parse } from 'csv-parse/sync';
-import type { PartKind } from './pack-writer.js';
+import type { ComparedPart, Comparison, Difference, Issued } from '../model/comparison.js';
+import { PART_KINDS, type PartKind } from '../model/part-kind.js';
 import type { ReadManifest, ReadPack } from './read-pack.js';
-
-/** One measure of a part that differs between two packs; null: not known there. */
-export interface Difference {
-  readonly name: string;
-  readonly from: number | string | null;
-  readonly to: number | string | null;
-}
-
-export interface ComparedPart {
-  readonly kind: PartKind;
-  readonly mark: string;
-}
-
-/** The object of `compare --json`, `strutwright-compare/1`. */
-export interface Comparison {
-  readonly format: 'strutwright-compare/1';
-  readonly from: Issue;
-  readonly to: Issue;
-  readonly unchanged: readonly ComparedPart[];
-  /** Cut and printed alike, with other letters on it; `was`: its mark before, where that differs. */
-  readonly relabelled: readonly (ComparedPart & { readonly was: string })[];
-  readonly changed: readonly (ComparedPart & { readonly what: readonly Difference[] })[];
-  readonly new: readonly ComparedPart[];
-  readonly withdrawn: readonly ComparedPart[];
-  readonly totals: Readonly<Record<string, Readonly<Record<PartKind, number>>>>;
-}
-
-interface Issue {
-  readonly title: string;
-  readonly revision: string;
-  readonly date: string | null;
-}
 
 type Part = ReadManifest['parts'][number];
 
-const KINDS: readonly PartKind[] = ['strut', 'node', 'panel', 'cap', 'guide', 'gauge'];
 const keyOf = (p: { readonly kind: string; readonly mark: string }): string => `${p.kind} ${p.mark}`;
 
 /**
@@ -84,10 +52,10 @@ export async function comparePacks(before: ReadPack, after: ReadPack): Promise<C
   };
 }
 
-const issueOf = ({ title, revision, date }: ReadManifest): Issue => ({ title, revision, date });
+const issueOf = ({ title, revision, date }: ReadManifest): Issued => ({ title, revision, date });
 
 const countKinds = (parts: readonly ComparedPart[]): Record<PartKind, number> =>
-  Object.fromEntries(KINDS.map((kind) => [kind, parts.filter((p) => p.kind === kind).length])) as Record<
+  Object.fromEntries(PART_KINDS.map((kind) => [kind, parts.filter((p) => p.kind === kind).length])) as Record<
     PartKind,
     number
   >;

@@ -1,12 +1,11 @@
 import { sha256 } from '../machine/hash.js';
+import type { PartKind } from '../model/part-kind.js';
 
 export interface PackFile {
   readonly path: string;
   readonly bytes: number;
   readonly sha256: string;
 }
-
-export type PartKind = 'strut' | 'node' | 'panel' | 'cap' | 'guide' | 'gauge';
 
 export interface PackPart {
   readonly mark: string;

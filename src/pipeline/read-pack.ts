@@ -6,8 +6,6 @@ import { sayFault } from '../readers/fault.js';
 import { parseJson } from '../readers/json-document.js';
 import { checkSchema } from '../readers/schema-faults.js';
 
-const KINDS = ['strut', 'node', 'panel', 'cap', 'guide', 'gauge'] as const;
-
 /** What later runs read of a manifest; what they do not know they pass over. */
 const manifestSchema = z.looseObject({
   format: z.literal('strutwright-pack/1'),
@@ -17,7 +15,7 @@ const manifestSchema = z.looseObject({
   parts: z.array(
     z.looseObject({
       mark: z.string(),
-      kind: z.enum(KINDS),
+      kind: z.enum(['strut', 'node', 'panel', 'cap', 'guide', 'gauge']),
       digest: z.string().nullable(),
       form: z.string().nullable().default(null),
       revision: z.string().default('A'),

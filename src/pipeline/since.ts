@@ -1,4 +1,5 @@
-import type { PackPart, PartKind } from './pack-writer.js';
+import type { PartKind } from '../model/part-kind.js';
+import type { PackPart } from './pack-writer.js';
 
 /** An earlier pack that this one follows: what is unchanged is not made again. */
 export interface Since {

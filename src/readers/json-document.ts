@@ -88,8 +88,14 @@ function endOfText(text: string, start: number): number {
 function plainValue(node: Node, report: (offset: number, what: string, mend: string) => void): unknown {
   if (node.type === 'array') return (node.children ?? []).map((child) => plainValue(child, report));
   if (node.type === 'number' && !isUsable(node.value)) {
-    const what = Number.isFinite(node.value) ? 'the number is too large' : 'the number is not finite';
-    report(node.offset, what, `write a number below ${LIMITS.magnitude}`);
+    const size = Math.abs(node.value);
+    if (size < 1) report(node.offset, 'the number is too small to reckon with', 'write 0');
+    else
+      report(
+        node.offset,
+        `the number is ${Number.isFinite(size) ? 'too large' : 'not finite'}`,
+        `write a number below ${LIMITS.magnitude}`,
+      );
     return 0;
   }
   if (node.type !== 'object') return node.value;

@@ -1,4 +1,5 @@
-import type { ComparedPart, Comparison, Difference } from '../../pipeline/compare.js';
+import type { ComparedPart, Comparison, Difference } from '../../model/comparison.js';
+import { PART_KINDS } from '../../model/part-kind.js';
 import type { Paint } from './paint.js';
 
 const GROUPS = [
@@ -8,13 +9,12 @@ const GROUPS = [
   ['new', 'new'],
   ['withdrawn', 'withdrawn'],
 ] as const;
-const KINDS = ['strut', 'node', 'panel', 'cap', 'guide', 'gauge'] as const;
 /** Differences that a line names; the rest are counted. */
 const NAMED = 4;
 
 /** What stands between two packs, counts first, then every part that is not unchanged, one a line. */
 export function sayComparison(c: Comparison, paint: Paint): string {
-  const kinds = KINDS.filter((kind) => GROUPS.some(([group]) => c.totals[group]![kind] > 0));
+  const kinds = PART_KINDS.filter((kind) => GROUPS.some(([group]) => c.totals[group]![kind] > 0));
   const width = Math.max(...GROUPS.map(([, words]) => words.length));
   const head = `${''.padEnd(width)} ${kinds.map((k) => `${k}s`.padStart(8)).join('')}`;
   const counts = GROUPS.map(

@@ -21,6 +21,7 @@ import { labelsPdf } from '../../documents/struts/labels.js';
 import { offcutsJson } from '../../documents/struts/offcuts.js';
 import { sawPlanPdf } from '../../documents/struts/saw-plan.js';
 import { stockPlanJson } from '../../documents/struts/stock-plan.js';
+import { writeTrussJson } from '../../documents/truss/truss-json.js';
 import type { Run } from '../../model/run.js';
 import type { PackWriter } from '../pack-writer.js';
 
@@ -49,6 +50,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['panels/outlines.json', outlinesJson],
   ['panels/nesting.json', nestingJson],
   ['panels/sheets.pdf', sheetsPdf],
+  ['truss/truss.json', (r) => new TextEncoder().encode(writeTrussJson(r.topology.truss))],
 ];
 
 export async function writeDocuments(records: PackRecords, fonts: Fonts, writer: PackWriter, run: Run): Promise<void> {

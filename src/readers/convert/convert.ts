@@ -4,6 +4,7 @@ import { distance, mean, type Vec3 } from '../../maths/vec3.js';
 import { markKey } from '../../model/marks.js';
 import { bareLine, type RawGeometry } from '../../model/raw-geometry.js';
 import type { Truss } from '../../model/truss.js';
+import { groupName } from '../geometry/text-lines.js';
 import { assignMarks } from './assign-marks.js';
 import type { MarkMemory } from './mark-memory.js';
 import { crossings, type Network, type NetworkEdge, networkOf, pairKey, splitNetwork } from './network.js';
@@ -28,7 +29,7 @@ const REACH = 0.25;
  */
 export function convertGeometry(raw: RawGeometry, options: ConvertOptions): Converted {
   const report = emptyReport();
-  report.leftOut = Object.fromEntries(raw.leftOut);
+  for (const [name, n] of raw.leftOut) report.leftOut[groupName(name) ?? '?'] = n;
   const network = networkOf(raw, options.unit, options.up, options.merge, report);
   if (network.edges.length === 0) strutsFromLoops(network, report);
   const within = report.mergeTolerance_mm;

@@ -23,7 +23,7 @@ export function readPly(bytes: Uint8Array, name: string): RawReading<Fault> {
   try {
     for (const element of header.elements) {
       if (element.count > LIMITS.members * 4)
-        throw new PlyFault(`has ${element.count} of ${element.name}`, 'read a smaller model');
+        throw new PlyFault(`has ${element.count} of ${quoted(element.name)}`, 'read a smaller model');
       if (element.name === 'vertex') readVertices(element, values, vertices);
       else if (element.name === 'edge' || element.name === 'face') {
         for (let i = 0; i < element.count; i++) {
@@ -69,7 +69,7 @@ function row(element: PlyElement, values: PlyValues): Row {
     }
     const count = values.next(property.count);
     if (!Number.isInteger(count) || count < 0 || count > MOST_IN_LIST)
-      throw new PlyFault(`a list of ${element.name} has ${count} entries`, 'export it again');
+      throw new PlyFault(`a list of ${quoted(element.name)} has ${count} entries`, 'export it again');
     out.set(
       property.name,
       Array.from({ length: count }, () => values.next(property.type)),

@@ -140,7 +140,7 @@ describe('PLY by its description', () => {
     [TEXT.replace('3 0 1 2', '2 0 1'), 'face 0 has fewer than 3 vertices'],
     [TEXT.replace('1 0 0', '1 x 0'), 'vertex 1 has no finite x, y and z'],
     [TEXT.replace('\n7\n', '\n'), 'ends before its last element'],
-    [TEXT.replace('element vertex 3', 'element vertex 999999999'), 'has 999999999 of vertex'],
+    [TEXT.replace('element vertex 3', 'element vertex 999999999'), 'has 999999999 of "vertex"'],
     [TEXT.replace('float x', 'complex x'), '"property complex x" is not understood'],
   ])('a fault %#', (text, what) => {
     const { geometry, faults } = readPly(bytes(text), 'a.ply');

@@ -55,6 +55,8 @@ export interface DrawnView {
   readonly factor: number;
   /** Marks of nodes and struts for which the sheet had no room. */
   readonly unplaced: readonly string[];
+  /** Where a point of the truss stands on the sheet, mm. */
+  readonly onSheet: (at: Vec3) => Point;
 }
 
 const EDGE = 9;
@@ -104,7 +106,7 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
     const place = struts.get(key);
     if (place) drawStrutMark(pen, place.box, { bold: arrow.label, plain: '' }, size);
   }
-  return { scale: name, factor, unplaced: marks.missing };
+  return { scale: name, factor, unplaced: marks.missing, onSheet: (p) => onSheet(project(view.camera, p)) };
 }
 
 interface DrawnArrow {
