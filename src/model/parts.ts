@@ -34,6 +34,8 @@ export interface StrutPart {
   readonly axes: { readonly x: Vec3; readonly y: Vec3; readonly z: Vec3 };
   /** kg; null where the cut length is unknown. */
   readonly mass: number | null;
+  /** What a shared stop setting adds to the length that the strut would have of its own, mm; absent: stops are not shared. */
+  readonly misfit?: number;
 }
 
 /** A slotted strut end bolted to a plate of the hub. Bolts stand in one row along the strut, in the middle of its depth; mm. */

@@ -13,6 +13,7 @@ import type { Input } from './load.js';
 import { type Manifest, manifestOf } from './manifest.js';
 import { packWriter, type WriteFile } from './pack-writer.js';
 import { settle } from './settle.js';
+import { withSharedStops } from './shared-stops.js';
 import { lineageOf, type Since } from './since.js';
 import { writeBeds } from './stages/beds.js';
 import { writeDocuments } from './stages/documents.js';
@@ -46,7 +47,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     each: options.each ?? runHere(TASKS),
   };
   const writer = packWriter(options.write);
-  const assessed = assess(truss, job);
+  const assessed = withSharedStops(assess(truss, job));
 
   const lineage = lineageOf(options.since ?? null, job.revision);
   const cut = cutParts(assessed.parts, lineage);

@@ -27,6 +27,9 @@ export function cutListCsv(records: PackRecords): Uint8Array {
       { name: 'force_N', decimals: DECIMALS.force, value: (r) => r.force },
       { name: 'utilisation', decimals: DECIMALS.ratio, value: (r) => r.worst?.utilisation ?? null },
       { name: 'bar', value: (r) => r.bar },
+      ...(records.job.struts.shareStops
+        ? [{ name: 'stop_misfit_mm', decimals: DECIMALS.length, value: (r: Row) => r.part.misfit ?? null }]
+        : []),
     ],
     memberRows(records).map((row) => ({ ...row, lengths: printedLengths(row.part) })),
     records.job.output.csv,

@@ -3,7 +3,7 @@ import { issueOf } from '../issue.js';
 import type { Fonts } from '../kit/fonts.js';
 import { Paper, type Written } from '../kit/paper.js';
 import { type Column, drawTable } from '../kit/table.js';
-import { unitsOf } from '../kit/units.js';
+import { type Units, unitsOf } from '../kit/units.js';
 import { byMark, largestForce, type MemberRow, memberRows } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
 
@@ -42,6 +42,13 @@ export async function cutListPdf(records: PackRecords, fonts: Fonts): Promise<Wr
     { head: 'End B', value: (r) => r.member.ends[1] },
   ];
   if (rows.some((r) => r.bar)) columns.push({ head: 'Bar', value: (r) => r.bar ?? '' });
+  if (rows.some((r) => r.part.misfit !== undefined))
+    columns.push({
+      head: `Shared stop\nadds${length}`,
+      align: 'right',
+      grey: true,
+      value: (r) => signedLength(r.part.misfit, units),
+    });
   columns.push(
     {
       head: `Setback A\n${units.lengthUnit}`,
@@ -64,6 +71,12 @@ export async function cutListPdf(records: PackRecords, fonts: Fonts): Promise<Wr
   );
   drawTable(paper, area.y, columns, runs, { group: (r) => heading.get(sectionOf(r))! });
   return paper.finish();
+}
+
+function signedLength(mm: number | undefined, units: Units): string {
+  if (mm === undefined) return '';
+  const text = units.length(Math.abs(mm));
+  return Number.parseFloat(text) === 0 ? '0' : `${mm < 0 ? '−' : '+'}${text}`;
 }
 
 const sectionOf = (row: MemberRow): string => row.part.section?.name ?? row.member.section ?? 'No section';
