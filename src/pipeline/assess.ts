@@ -5,11 +5,11 @@ import { scaleTruss } from '../model/scale-truss.js';
 import { sectionProperties } from '../model/section.js';
 import type { Solution } from '../model/solution.js';
 import { topologyOf } from '../model/topology.js';
-import type { Truss } from '../model/truss.js';
+import { GIVEN_CASE, type Truss } from '../model/truss.js';
 import { analyseTruss } from '../statics/analyse/analyse-truss.js';
 import { equilibriumOf } from '../statics/equilibrium.js';
 import { givenForces } from '../statics/given-forces.js';
-import { forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
+import { besideAnalysis, forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
 import { depthFindings, requiredDepths } from '../strength/depths.js';
 import { judge } from '../strength/judge.js';
 import { detail, layOut } from './detail.js';
@@ -26,15 +26,23 @@ export function assess(file: Truss, job: Job): Assessment {
   const radii = Float64Array.from(layout.sections, (s) => (s ? sectionProperties(s.shape).circumradius : 0));
 
   const given = givenForces(truss);
-  const reciprocal = reciprocalOf(topology, job);
-  const source = forceSource(topology, job);
-  const claimed = source === 'given' ? given.forces : source === 'reciprocal' ? reciprocal.forces : null;
+  let reciprocal = reciprocalOf(topology, job);
+  const wanted = forceSource(topology, job);
+  // Without a diagram the analysis takes over.
+  const source = wanted === 'reciprocal' && !reciprocal.forces ? 'analysis' : wanted;
+  let claimed = source === 'given' ? given.forces : source === 'reciprocal' ? reciprocal.forces : null;
 
   // Sockets are as deep as what they carry asks for, and what they carry depends on what the parts weigh: once round.
   const analyse = (made: ReturnType<typeof detail>, buckling: boolean) =>
     analyseTruss({ topology, job, parts: made.parts, forms: layout.forms, given: claimed, buckling });
   let made = detail(layout, new Map());
   const rough = analyse(made, false).solution;
+  const underGiven = analysedForces(rough);
+  if (source === 'reciprocal' && !given.forces && underGiven && (reciprocal.counts?.dimension ?? 0) > 1) {
+    // Several diagrams carry the loads: the one nearest to the analysed forces.
+    reciprocal = reciprocalOf(topology, job, underGiven);
+    claimed = reciprocal.forces;
+  } else if (underGiven) reciprocal = besideAnalysis(topology, job, reciprocal, underGiven);
   const depths = requiredDepths(truss, made.parts, { forces: claimed, solution: rough }, job);
   if (depths.size > 0) made = detail(layout, depths);
   const analysis = analyse(made, job.analysis.buckling);
@@ -50,7 +58,7 @@ export function assess(file: Truss, job: Job): Assessment {
     forces: shownForces(source, claimed, solution, truss.members.length),
     equilibrium,
     solution,
-    reciprocal: reciprocal.counts ? reciprocal : null,
+    reciprocal: reciprocal.counts || reciprocal.comparisons.length > 0 ? reciprocal : null,
     utilisations: judgement.utilisations,
     found: [
       // Analysis has a balance of its own; that forces are missing is no news where none were asked for.
@@ -75,6 +83,10 @@ export function assess(file: Truss, job: Job): Assessment {
     notChecked: [...(equilibrium ? [] : ['equilibrium']), ...solution.notChecked, ...judgement.notChecked],
   });
 }
+
+/** Forces of the analysis under the loads that given forces claim to balance; null without such loads. */
+const analysedForces = (solution: Solution): Float64Array | null =>
+  solution.cases.find((c) => c.name === GIVEN_CASE && c.kind !== 'given')?.forces ?? null;
 
 /** The member forces that papers show: of the job's source; from analysis the largest of all combinations, by member. */
 function shownForces(

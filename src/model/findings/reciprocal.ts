@@ -134,7 +134,8 @@ export const RECIPROCAL_FINDINGS = {
     'warn',
     'truss',
     '',
-    (f) => `no diagram of these cells carries the loads: the nearest misses by ${num(f.value, 5)} of the largest load`,
+    (f) =>
+      `no diagram of these cells carries the loads: the nearest misses by ${num(f.value, 5)} of the largest load; forces must come from elsewhere`,
   ),
   'pattern-not-kept': entry(
     'warn',

@@ -83,7 +83,7 @@ export function chooseDiagram(
     const other = fitDiagram(q, [...hard, ...soft], undefined);
     fit = other && { ...other, sign, forces: other.forces.map((t) => -t) };
   }
-  if (!fit) return 'no-reciprocal';
+  if (!fit) return balance.length > 0 ? 'reciprocal-misses-loads' : 'reciprocal-misses-forces';
 
   let pattern: ForceTerm[] = [];
   for (let round = 0; round < PATTERN_ROUNDS && q.size > 1; round++) {

@@ -53,14 +53,16 @@ export function compareForces(
   };
 }
 
-/** One finding for two sources that differ by more than the residual limit of the largest force; it names the worst strut. */
+/**
+ * One finding for two sources that differ by more than the residual limit of the largest force; it names the worst strut. An
+ * analysis has its own note for that: it knows no self-stress, and its joints may bend.
+ */
 export function comparisonFindings(topology: Topology, comparison: ForceComparison, limit: number): Finding[] {
-  if (comparison.relative <= limit) return [];
+  if (comparison.relative <= limit || comparison.second === 'analysis') return [];
   const worst = comparison.difference.reduce((w, d, m, all) => (Math.abs(d) > Math.abs(all[w]) ? m : w), 0);
   const size = largestOf(comparison.difference);
   return [
     finding('forces-differ', 'truss', {
-      level: comparison.second === 'analysis' || comparison.first === 'analysis' ? 'note' : 'warn',
       value: comparison.relative,
       limit,
       about: {

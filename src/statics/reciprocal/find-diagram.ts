@@ -1,6 +1,6 @@
 import { length, type Vec3 } from '../../maths/vec3.js';
 import type { Finding } from '../../model/finding.js';
-import { finding } from '../../model/findings/index.js';
+import { type FindingCode, finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { Topology } from '../../model/topology.js';
 import { GIVEN_CASE } from '../../model/truss.js';
@@ -56,24 +56,34 @@ export function findDiagram(
     return { ...NOTHING, counts, findings: [...twisted, noReciprocal(topology, space, counts)] };
   }
   if (typeof chosen === 'string') {
-    return { ...NOTHING, counts, findings: [...twisted, finding(chosen, 'truss', { value: space.dimension })] };
+    return { ...NOTHING, counts, findings: [...twisted, undecided(chosen, space.dimension, job)] };
   }
   const gradients = q.gradients(chosen.x);
   const vertices = complex.cells.map((_, c): Vec3 => [gradients[3 * c], gradients[3 * c + 1], gradients[3 * c + 2]]);
   const reading = readPolygons(topology, complex, vertices);
   const how = { source: 'found', sign: chosen.sign, newtonPerUnit: 1 } as const;
   const settled = settleDiagram(topology, job, complex, vertices, reading, how);
+  const { maxResidual } = settled.residuals;
+  if (loaded && maxResidual > job.fit.residualWarn * largestLoad) {
+    // Forces that do not carry the loads are of no use to anybody.
+    const value = maxResidual / largestLoad;
+    const missed = finding('reciprocal-misses-loads', 'truss', { value, limit: job.fit.residualWarn });
+    return { ...NOTHING, counts, findings: [...twisted, missed] };
+  }
   return {
     ...NOTHING,
     ...settled,
     counts,
     decidedBy: chosen.decidedBy,
-    findings: [
-      ...twisted,
-      ...settled.findings,
-      ...missFindings(topology, job, chosen, settled.forces, settled.residuals.maxResidual, largestLoad),
-    ],
+    findings: [...twisted, ...settled.findings, ...missFindings(topology, job, chosen, settled.forces)],
   };
+}
+
+/** Nothing picks a diagram; or none goes any way towards what is wanted, so that it misses all of it. */
+function undecided(code: FindingCode, dimension: number, job: Job): Finding {
+  return code === 'reciprocal-misses-loads' || code === 'reciprocal-misses-forces'
+    ? finding(code, 'truss', { value: 1, limit: job.fit.residualWarn })
+    : finding(code, 'truss', { value: dimension });
 }
 
 /** Why there is none: twisted faces, no self-stress at all, or self-stress that no plane-faced function has. */
@@ -95,20 +105,11 @@ function noReciprocal(topology: Topology, space: FunctionSpace, counts: DiagramC
   });
 }
 
-function missFindings(
-  topology: Topology,
-  job: Job,
-  chosen: ChosenDiagram,
-  forces: Float64Array,
-  maxResidual: number,
-  largestLoad: number,
-): Finding[] {
+function missFindings(topology: Topology, job: Job, chosen: ChosenDiagram, forces: Float64Array): Finding[] {
   const found: Finding[] = [];
   const { residualWarn } = job.fit;
   const largest = forces.reduce((most, t) => Math.max(most, Math.abs(t)), 0);
-  if (largestLoad > 0 && maxResidual > residualWarn * largestLoad) {
-    found.push(finding('reciprocal-misses-loads', 'truss', { value: maxResidual / largestLoad, limit: residualWarn }));
-  } else if (chosen.hardMiss > residualWarn * largest) {
+  if (chosen.hardMiss > residualWarn * largest) {
     found.push(finding('reciprocal-misses-forces', 'truss', { value: chosen.hardMiss / largest, limit: residualWarn }));
   }
   for (const [m, sign] of wantedSigns(topology, job)) {

@@ -28,22 +28,48 @@ export function reciprocalOf(
   const given = givenForces(topology.truss).forces;
   const source = forceSource(topology, job);
   const result = diagramOf(topology, job, source, given, analysedForces);
-  const sources = [
-    ...(given ? [{ source: 'given' as const, forces: given }] : []),
-    ...(result.forces ? [{ source: 'reciprocal' as const, forces: result.forces }] : []),
-    ...(analysedForces ? [{ source: 'analysis' as const, forces: analysedForces }] : []),
-  ];
-  const comparisons = result.forces
-    ? sources.flatMap((first, i) => sources.slice(i + 1).map((second) => compareForces(topology, first, second)))
-    : [];
-  const findings = [
-    ...result.findings,
-    ...comparisons.flatMap((c) => comparisonFindings(topology, c, job.fit.residualWarn)),
-  ];
+  const figure: ReciprocalResult = {
+    ...result,
+    findings: source === 'reciprocal' ? result.findings : result.findings.map(softened),
+  };
+  const beside = given && result.forces ? [[named('given', given), named('reciprocal', result.forces)] as const] : [];
+  const compared = withComparisons(topology, job, figure, beside);
+  return analysedForces ? besideAnalysis(topology, job, compared, analysedForces) : compared;
+}
+
+/** The result with the given and the reciprocal forces held against those of an analysis of the same loads, N by member index. */
+export function besideAnalysis(
+  topology: Topology,
+  job: Job,
+  result: ReciprocalResult,
+  analysed: Float64Array,
+): ReciprocalResult {
+  const given = givenForces(topology.truss).forces;
+  const second = named('analysis', analysed);
+  return withComparisons(topology, job, result, [
+    ...(given ? [[named('given', given), second] as const] : []),
+    ...(result.forces ? [[named('reciprocal', result.forces), second] as const] : []),
+  ]);
+}
+
+interface NamedForces {
+  readonly source: ForceSource;
+  readonly forces: Float64Array;
+}
+
+const named = (source: ForceSource, forces: Float64Array): NamedForces => ({ source, forces });
+
+function withComparisons(
+  topology: Topology,
+  job: Job,
+  result: ReciprocalResult,
+  pairs: readonly (readonly [NamedForces, NamedForces])[],
+): ReciprocalResult {
+  const made = pairs.map(([first, second]) => compareForces(topology, first, second));
   return {
     ...result,
-    comparisons,
-    findings: source === 'reciprocal' ? findings : findings.map(softened),
+    comparisons: [...result.comparisons, ...made],
+    findings: [...result.findings, ...made.flatMap((c) => comparisonFindings(topology, c, job.fit.residualWarn))],
   };
 }
 

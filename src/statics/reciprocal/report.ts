@@ -3,7 +3,7 @@ import type { ReciprocalResult } from './result.js';
 
 const DEGREES = 180 / Math.PI;
 
-/** What check.json says of the reciprocal figure, under its key `reciprocal`; null: there is no complex to speak of. */
+/** What check.json says of the reciprocal figure, under its key `reciprocal`; null: there is neither a complex nor a second source of forces. */
 export interface ReciprocalReport {
   /** `space`: forces are areas; `plane`: lengths. null where no diagram was settled. */
   readonly kind: 'space' | 'plane' | null;
@@ -12,7 +12,12 @@ export interface ReciprocalReport {
   readonly sign: 1 | -1 | null;
   readonly newtonPerUnit: number | null;
   /** V - E + F - C = 0, `cells` with the unbounded one or its open parts. */
-  readonly complex: { readonly nodes: number; readonly edges: number; readonly faces: number; readonly cells: number };
+  readonly complex: {
+    readonly nodes: number;
+    readonly edges: number;
+    readonly faces: number;
+    readonly cells: number;
+  } | null;
   /** Independent diagrams beside the states of self-stress, and how many of those the diagrams span. */
   readonly dimension: number | null;
   readonly selfStressStates: number | null;
@@ -51,7 +56,7 @@ export interface ReciprocalReport {
 }
 
 export function reciprocalReport(topology: Topology, result: ReciprocalResult | null): ReciprocalReport | null {
-  if (!result?.counts) return null;
+  if (!result || (!result.counts && result.comparisons.length === 0)) return null;
   const { counts, diagram, residuals } = result;
   const { members } = topology.truss;
   return {
@@ -60,11 +65,11 @@ export function reciprocalReport(topology: Topology, result: ReciprocalResult | 
     decidedBy: result.decidedBy,
     sign: diagram?.sign ?? null,
     newtonPerUnit: diagram?.newtonPerUnit ?? null,
-    complex: { nodes: counts.nodes, edges: counts.edges, faces: counts.faces, cells: counts.cells },
-    dimension: counts.dimension,
-    selfStressStates: counts.selfStressStates,
-    reached: counts.reached,
-    leastSingularValue: counts.leastSingular,
+    complex: counts && { nodes: counts.nodes, edges: counts.edges, faces: counts.faces, cells: counts.cells },
+    dimension: counts?.dimension ?? null,
+    selfStressStates: counts?.selfStressStates ?? null,
+    reached: counts?.reached ?? null,
+    leastSingularValue: counts?.leastSingular ?? null,
     maxAngle_deg: residuals && residuals.maxAngle * DEGREES,
     maxClosure_N: residuals && residuals.maxClosure,
     maxResidual_N: residuals && residuals.maxResidual,

@@ -86,16 +86,13 @@ export function planeReciprocal(
   const surface = combine(lifted.basis, chosen.x, 3 * count).map((v, i) => v + (base?.[i] ?? 0));
   const forces = foldForces(figure, regions, surface);
   const equilibrium = equilibriumOf(topology, forces, job.fit);
+  if (loaded && equilibrium.maxResidual > job.fit.residualWarn * largestLoad) {
+    const value = equilibrium.maxResidual / largestLoad;
+    const missed = finding('reciprocal-misses-loads', 'truss', { value, limit: job.fit.residualWarn });
+    return { ...NOTHING, counts, concurrency, findings: [...findings, missed] };
+  }
   const outer = outerForces(topology, equilibrium.reactions);
   const diagram = planeDiagram(topology, figure, regions, open?.sides ?? new Map(), surface, forces, outer);
-  if (loaded && equilibrium.maxResidual > job.fit.residualWarn * largestLoad) {
-    findings.push(
-      finding('reciprocal-misses-loads', 'truss', {
-        value: equilibrium.maxResidual / largestLoad,
-        limit: job.fit.residualWarn,
-      }),
-    );
-  }
   return {
     ...NOTHING,
     forces,
