@@ -47,20 +47,20 @@ export function* socketsWithCases(
   }
 }
 
-/** Systems whose struts stand in sleeves of their own; the others' hold them on plugs or in solid bodies. */
-const SLEEVES: readonly string[] = ['socket', 'foot', 'clamp'];
-
 /** What each socket of a hub passes force through, in the sockets' order; empty where the hub could not be made. */
 function passesOf(hub: HubPart, job: Job): readonly SocketPasses[] {
   if (hub.sockets.some((s) => s.setback === null)) return [];
-  const hollow = SLEEVES.includes(hub.system);
   const strengths = nodeSystem(hub.system)?.strength(hub, job) ?? [];
-  return strengths.map((s, k) => ({
-    wallArea: s.wallArea,
-    bondPerDepth: s.bondArea / hub.sockets[k]!.depth,
-    stopArea: s.stopArea,
-    hollow,
-  }));
+  return strengths.map((s, k) => {
+    const { depth, travel, pin, wall, form } = hub.sockets[k]!;
+    return {
+      // Gross: the paths take the pin's hole off themselves.
+      wallArea: s.wallArea + 2 * pin * wall,
+      bondPerDepth: s.bondArea / (depth - (travel ?? 0)),
+      stopArea: s.stopArea,
+      hollow: form === undefined || form === 'sleeve',
+    };
+  });
 }
 
 /** The actions as one end feels them: its own moments where they are known. */

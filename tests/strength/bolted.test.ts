@@ -77,3 +77,15 @@ it('no bolt, or a slot as wide as the strut, carries nothing', () => {
   expect(judgeSocket(socketCase(10, { bolts: 0 }))).toBeNull();
   expect(judgeSocket(socketCase(10, { slot: 70 }))).toBeNull();
 });
+
+it('a moment about the bolts turns the row across the grain, one about the other axis bends the plate', () => {
+  const two = { bolts: 2, spacing: 40 };
+  const moment = (momentY: number, momentZ: number): SocketCase => {
+    const c = socketCase(0, two);
+    return { ...c, actions: { ...c.actions, momentY, momentZ } };
+  };
+  // By hand: 40 000 N mm over 40 mm is 1000 N on each bolt, 14 x 60 x sqrt(95) = 8187 N split, x 0.8 / 1.3 = 5038 N.
+  expect(check(moment(40_000, 0), '8.1.4')).toBeCloseTo(1000 / 5038.3, 3);
+  // By hand: 6 M / ((95 - 9) x 10²) over a quarter of ftZ = 36 MPa.
+  expect(check(moment(0, 10_000), 'net section of the plate')).toBeCloseTo((6 * 10_000) / (86 * 100) / 9, 6);
+});

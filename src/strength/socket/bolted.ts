@@ -16,7 +16,7 @@ const HOLE_OVER = 1;
 /**
  * A slotted timber end bolted to a plate of the hub, in tension or compression: bolts in double shear EN 1995-1-1 8.2.3 (8.11) with
  * nef of 8.5.1.1 (8.34), the spacings of table 8.4, in tension the net section of 5.2 and the plate's own net section and tear-out;
- * shear across the grain by 8.1.4. The plate's moment is not passed on: the end turns about its bolts.
+ * shear across the grain and the turning of the row by 8.1.4; bending of the plate.
  */
 export const bolted: SocketPath = (c) => {
   const end = c.socket.bolted!;
@@ -27,12 +27,20 @@ export const bolted: SocketPath = (c) => {
   const timber = (through - end.slot) / 2;
   const force = Math.abs(actions.axial);
   if (end.bolts < 1 || end.diameter <= 0 || timber <= 0) return force === 0 ? [] : null;
-  const across = Math.abs(end.along === 'y' ? actions.shearZ : actions.shearY);
+  const alongY = end.along === 'y';
+  // About the bolts' own axis the row turns the strut by forces across the grain; about the other axis the plate bends.
+  const arm = (end.bolts - 1) * end.spacing;
+  const turning = alongY ? actions.momentY : actions.momentZ;
+  const turn = turning > 0 && arm > 0 ? turning / arm : 0;
+  const bending = alongY ? actions.momentZ : actions.momentY;
+  const across = Math.abs(alongY ? actions.shearZ : actions.shearY) + turn;
   const factor = kMod(rules.serviceClass, actions.duration) / GAMMA_M_CONNECTION;
   const checks: Verdict[] = [];
   const push = (utilisation: number, rule: string): void => void checks.push({ utilisation, rule });
 
-  push(force / (boltCapacity(c, end, timber) * factor), 'EN 1995-1-1 8.2.3 (8.11), bolts of the slotted end');
+  // As if every bolt had the largest share across the grain: exact for two, safe for more.
+  const pull = Math.hypot(force, end.bolts * across);
+  push(pull / (boltCapacity(c, end, timber) * factor), 'EN 1995-1-1 8.2.3 (8.11), bolts of the slotted end');
   if (across > 0)
     push(
       across / (factor * splittingCapacity(2 * timber, depth, depth / 2)),
@@ -44,13 +52,17 @@ export const bolted: SocketPath = (c) => {
   const least = leastDistances(end.diameter);
   if (end.bolts > 1 && force > 0) push(least.along / end.spacing, 'EN 1995-1-1 table 8.4, distance between bolts');
   if (force > 0) push(least.edge / (depth / 2), 'EN 1995-1-1 table 8.4, edge distance');
+  const tension = hubLimit(hub, 'ftZ', actions.duration, rules);
+  if (tension !== null) {
+    const net = (depth - hole) * end.plate;
+    const pulled = actions.axial > 0 ? force / net : 0;
+    push((pulled + (6 * bending) / (net * end.plate)) / tension, 'net section of the plate, across layers');
+  }
   if (actions.axial > 0) {
     push(least.end / end.endDistance, 'EN 1995-1-1 table 8.4, loaded end');
     const net = woodLimit(strut, 'ft', actions.duration, rules);
     const left = strutArea(c) - end.slot * depth - 2 * timber * hole;
     if (net !== null) push(force / (left * net), 'EN 1995-1-1 5.2, net section of the slotted end');
-    const pull = hubLimit(hub, 'ftZ', actions.duration, rules);
-    if (pull !== null) push(force / ((depth - hole) * end.plate * pull), 'net section of the plate, across layers');
     const shear = hubLimit(hub, 'fv', actions.duration, rules);
     if (shear !== null)
       push(force / (2 * end.bolts * end.plateEnd * end.plate * shear), 'tear-out of the plate behind its bolts');

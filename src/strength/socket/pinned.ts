@@ -5,7 +5,7 @@ import { embeddingStrength } from '../en1995/joint/embedding.js';
 import { hubLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
-import { acrossPin, engaged, sleeve, strutArea } from './geometry.js';
+import { acrossPin, engaged, pinHole, sleeve, strutArea } from './geometry.js';
 import { sleeveChecks } from './sleeve.js';
 
 /**
@@ -40,8 +40,15 @@ export const pinned: SocketPath = (c) => {
   if (actions.axial > 0) {
     const net = woodLimit(strut, 'ft', duration, rules) ?? metalLimit(c);
     if (net !== null)
-      push(force / ((strutArea(c) - d * t) * net), 'EN 1995-1-1 5.2, net section of the strut at the pin');
-    const end = engaged(c) - socket.depth / 2;
+      push(force / ((strutArea(c) - pinHole(c)) * net), 'EN 1995-1-1 5.2, net section of the strut at the pin');
+    const end = engaged(c) - (socket.depth - (socket.travel ?? 0)) / 2;
+    const fu = strut.strength['fu'];
+    if (fu !== undefined) {
+      // Two planes a wall as long as the end distance, EN 1993-1-8 3.10.2 in shear alone.
+      const torn =
+        2 * Math.max(0, end) * (shape.kind === 'tube' ? 2 * shape.wall : t) * (fu / (Math.sqrt(3) * PIN_FACTORS.m2));
+      push(torn > 0 ? force / torn : NO_END_DISTANCE, 'shear of the strut behind the pin');
+    }
     const plug = woodLimit(strut, 'fv', duration, rules);
     if (plug !== null)
       push(end > 0 ? force / (2 * end * t * plug) : NO_END_DISTANCE, 'plug shear of the strut behind the pin');
@@ -55,9 +62,15 @@ export const pinned: SocketPath = (c) => {
 const NO_END_DISTANCE = 1000;
 
 function pinChecks(c: SocketCase, force: number): Verdict[] {
-  const bore = typeof c.socket.bore === 'number' ? c.socket.bore : Math.min(...c.socket.bore);
-  const plates = { a: c.socket.wall, b: acrossPin(c), c: Math.max(0, (bore - acrossPin(c)) / 2) };
-  const { shear, combined } = pinUse(force, { d: c.socket.pin, ...PIN_STEEL }, plates);
+  const { bore, wall, pin, form, section } = c.socket;
+  const { shape } = section;
+  const inside = typeof bore === 'number' ? bore : Math.min(...bore);
+  // A spigot is the middle plate between the tube's walls; in a sleeve the strut is.
+  const plates =
+    form === 'spigot' && shape.kind === 'tube'
+      ? { a: shape.wall, b: inside, c: Math.max(0, (shape.diameter - 2 * shape.wall - inside) / 2) }
+      : { a: wall, b: acrossPin(c), c: Math.max(0, (inside - acrossPin(c)) / 2) };
+  const { shear, combined } = pinUse(force, { d: pin, ...PIN_STEEL }, plates);
   return [
     { utilisation: shear, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear' },
     { utilisation: combined, rule: 'EN 1993-1-8 3.13.2, table 3.10, pin in shear and bending' },
