@@ -4,11 +4,11 @@ import type { Area } from '../kit/geometry2.js';
 import { INK, SIZE } from '../kit/ink.js';
 import type { Paper } from '../kit/paper.js';
 import { fixed, type Units } from '../kit/units.js';
-import { type Camera, ISOMETRIC, PLAN } from '../kit/view/camera.js';
+import { type Camera, ISOMETRIC } from '../kit/view/camera.js';
+import { planeCamera } from '../kit/view/plane-camera.js';
 import { drawTrussView, type ViewStrut } from '../kit/view/truss-view.js';
 import type { MemberRow } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
-import { planeCamera } from './plane-camera.js';
 import { type Part, partsOf, type Scene } from './scene.js';
 
 /** Height of a picture's caption, mm. */
@@ -33,12 +33,12 @@ export function diagramSheets(
     const area = paper.addSheet({
       title: part.name === '' ? 'Form and forces' : `Form and forces: ${part.name}`,
       instruction: plane
-        ? 'Left or above the truss, beside it its force diagram. The line with a strut’s mark stands across that strut; its length is the force.'
+        ? 'The truss and its force diagram. The line with a strut’s mark stands square to that strut; its length is the force.'
         : 'The truss and its force diagram. The polygon with a strut’s mark stands square to that strut; its area is the force. Round marks of the diagram are cells of the truss.',
     });
     const [first, second] = halves(area);
     drawForm(paper, first, camera, scene, rows, part);
-    drawDiagram(paper, second, plane ? PLAN : camera, diagram, scene, rows, part);
+    drawDiagram(paper, second, camera, diagram, scene, rows, part);
     caption(paper, first, 'Truss');
     const unit = plane ? 'unit of length' : 'squared unit';
     const scale = `${fixed(diagram.newtonPerUnit, diagram.newtonPerUnit < 10 ? 3 : 1)} N for one ${unit} of the diagram`;

@@ -2,6 +2,7 @@ import { CAUTION } from '../cautions.js';
 import { issueOf } from '../issue.js';
 import { writeFitted } from '../kit/fit-text.js';
 import type { Fonts } from '../kit/fonts.js';
+import type { Area } from '../kit/geometry2.js';
 import { SIZE } from '../kit/ink.js';
 import { Paper, type Written } from '../kit/paper.js';
 import { type Units, unitsOf } from '../kit/units.js';
@@ -62,23 +63,26 @@ function pictures(
   units: Units,
 ): void {
   const parts = partsOf(camera, scene, rows);
-  const orientation = paper.orientationFor((room) => fillFactor(scene.nodes, camera, room));
   for (const part of parts) {
+    const touched = new Set(part.members.flatMap((i) => scene.ends[i]!));
+    const framed = part.enlarged ? scene.nodes.filter((_, i) => touched.has(i)) : scene.nodes;
     const area = paper.addSheet({
       title: part.name === '' ? camera.name : `${camera.name}: ${part.name}`,
       instruction: `Force in ${units.forceUnit} beside each strut: T pulls, C pushes. ${
         parts.length > 1 ? 'Thin lines: see the other sheets of this view. ' : ''
       }Not to scale.`,
-      orientation,
+      orientation: paper.orientationFor((room) => fillFactor(framed, camera, room)),
     });
     const shown = new Set(part.members);
-    const touched = new Set(part.members.flatMap((i) => scene.ends[i]!));
+    const footHeight = part.enlarged ? KEY.height : FORCE_LEGEND_HEIGHT;
+    const foot = area.y + area.height - footHeight;
     const drawn = drawTrussView(
       paper.pen,
-      { ...area, height: area.height - FORCE_LEGEND_HEIGHT - 6 },
+      { ...area, height: area.height - footHeight - 6 },
       {
         camera,
         scale: 'fill',
+        ...(part.enlarged ? { frame: touched } : {}),
         nodes: scene.nodes.map((n, i) => ({ ...n, show: touched.has(i) ? 'mark' : 'dot' })),
         arrows: scene.arrows.filter((a) => touched.has(a.node)),
         struts: rows.map((row, i) => {
@@ -92,7 +96,6 @@ function pictures(
         }),
       },
     );
-    const foot = area.y + area.height - FORCE_LEGEND_HEIGHT;
     if (drawn.unplaced.length > 0)
       writeFitted(
         paper.pen,
@@ -102,6 +105,31 @@ function pictures(
         area.width,
         { size: SIZE.note },
       );
-    drawForceLegend(paper.pen, area.x, foot, largest, units);
+    drawForceLegend(paper.pen, area.x, area.y + area.height - FORCE_LEGEND_HEIGHT, largest, units);
+    if (part.enlarged) drawKey(paper, camera, scene, rows, shown, area);
   }
+}
+
+/** Where an enlarged part lies in the whole: a small picture at the foot. */
+const KEY = { width: 46, height: 26 } as const;
+
+function drawKey(
+  paper: Paper,
+  camera: Camera,
+  scene: Scene,
+  rows: readonly MemberRow[],
+  shown: ReadonlySet<number>,
+  area: Area,
+): void {
+  const box = { x: area.x + area.width - KEY.width, y: area.y + area.height - KEY.height, ...KEY };
+  drawTrussView(paper.pen, box, {
+    camera,
+    scale: 'fill',
+    edge: 1,
+    nodes: scene.nodes.map((n) => ({ mark: n.mark, at: n.at, show: 'none' })),
+    struts: rows.map((row, i) => ({
+      ...scene.strut(row, i),
+      stroke: shown.has(i) ? { kind: 'plain', width: 0.3 } : { kind: 'faint' },
+    })),
+  });
 }

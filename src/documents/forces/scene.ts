@@ -55,15 +55,17 @@ export function sceneOf(records: PackRecords, rows: readonly MemberRow[], larges
 export interface Part {
   readonly name: string;
   readonly members: readonly number[];
+  /** Whether the sheet shows this part alone, enlarged. */
+  readonly enlarged: boolean;
 }
 
 /**
  * The struts of a view in parts whose labels stay legible: all in one where they can be, else by the truss's own groups
- * where each is small enough, else by depth, nearest first.
+ * where each is small enough, else cut in two across the longer side of the view until each is.
  */
 export function partsOf(camera: Camera, scene: Scene, rows: readonly MemberRow[]): Part[] {
   const all = rows.map((_, i) => i);
-  if (rows.length <= LABELLED) return [{ name: '', members: all }];
+  if (rows.length <= LABELLED) return [{ name: '', members: all, enlarged: false }];
   const groups = new Map<string, number[]>();
   rows.forEach((row, i) => {
     const key = row.member.group ?? 'other struts';
@@ -71,13 +73,22 @@ export function partsOf(camera: Camera, scene: Scene, rows: readonly MemberRow[]
   });
   const sheets = Math.ceil(rows.length / LABELLED);
   if (groups.size > 1 && groups.size <= 2 * sheets && [...groups.values()].every((g) => g.length <= LABELLED))
-    return [...groups].map(([name, members]) => ({ name, members }));
-  const depth = scene.ends.map(
-    ([a, b]) => project(camera, scene.nodes[a]!.at)[2] + project(camera, scene.nodes[b]!.at)[2],
-  );
-  const order = all.sort((a, b) => depth[b]! - depth[a]! || a - b);
-  return Array.from({ length: sheets }, (_, k) => ({
-    name: `layer ${k + 1} of ${sheets}${k === 0 ? ', nearest' : k === sheets - 1 ? ', farthest' : ''}`,
-    members: order.slice(Math.round((k * rows.length) / sheets), Math.round(((k + 1) * rows.length) / sheets)),
-  }));
+    return [...groups].map(([name, members]) => ({ name, members, enlarged: false }));
+  const at = scene.nodes.map((node) => project(camera, node.at));
+  const middle = scene.ends.map(([a, b]) => [at[a]![0] + at[b]![0], at[a]![1] + at[b]![1]] as const);
+  const parts = halved(all, middle);
+  return parts.map((members, k) => ({ name: `part ${k + 1} of ${parts.length}`, members, enlarged: true }));
+}
+
+/** Cuts a list of struts in two at the median of their middles, across the longer side, as often as it takes. */
+function halved(members: readonly number[], middle: readonly (readonly [number, number])[]): number[][] {
+  if (members.length <= LABELLED) return [[...members]];
+  const extent = ([0, 1] as const).map((axis) => {
+    const values = members.map((i) => middle[i]![axis]);
+    return Math.max(...values) - Math.min(...values);
+  });
+  const axis = extent[0]! >= extent[1]! ? 0 : 1;
+  const order = [...members].sort((a, b) => middle[a]![axis] - middle[b]![axis] || a - b);
+  const half = Math.ceil(order.length / 2);
+  return [...halved(order.slice(0, half), middle), ...halved(order.slice(half), middle)];
 }

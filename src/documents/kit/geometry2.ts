@@ -82,14 +82,6 @@ export function lengthInside(box: Box, p: Point, q: Point): number {
   return (high - low) * Math.hypot(b[0] - a[0], b[1] - a[1]);
 }
 
-/** Whether the whole box lies in the area. */
-export function inside(area: Area, box: Box): boolean {
-  const [w, h] = [reach(box, 1, 0), reach(box, 0, 1)];
-  return (
-    box.x - w >= area.x && box.x + w <= area.x + area.width && box.y - h >= area.y && box.y + h <= area.y + area.height
-  );
-}
-
 /** The area less `by` mm on every side. */
 export const shrink = (area: Area, by: number): Area => ({
   x: area.x + by,

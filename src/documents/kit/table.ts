@@ -131,12 +131,7 @@ function layOut<Row>(
   let size = wanted;
   let widths = measure(size);
   while (sum(widths) + gaps(GAP.least) > room && size > LEAST_SIZE) widths = measure((size -= 0.5));
-  const over = sum(widths) + gaps(GAP.least) - room;
-  // What is still too wide gives way at its widest column; cells are cut there.
-  if (over > 0) {
-    const widest = widths.indexOf(Math.max(...widths));
-    widths = widths.map((w, i) => (i === widest ? Math.max(12, w - over) : w));
-  }
+  widths = capped(widths, columns, room - gaps(GAP.least));
   const wraps = columns.findIndex((c) => c.wraps);
   const left = room - sum(widths) - gaps(GAP.least);
   const extra = columns.length > 1 ? Math.min(most - GAP.least, Math.max(0, left) / (columns.length - 1)) : 0;
@@ -152,6 +147,24 @@ function layOut<Row>(
     headLines,
   };
 }
+
+/** Widths that add up to no more than the room: the widest columns of text give way, numbers never; their cells are cut there. */
+function capped<Row>(widths: readonly number[], columns: readonly Column<Row>[], room: number): number[] {
+  const gives = columns.map((c) => (c.align ?? 'left') === 'left' && !c.tick);
+  const at = (cap: number): number[] => widths.map((w, i) => (gives[i] ? Math.min(w, cap) : w));
+  const total = (cap: number): number => at(cap).reduce((a, b) => a + b, 0);
+  let [low, high] = [NARROWEST, Math.max(NARROWEST, ...widths)];
+  if (total(high) <= room) return [...widths];
+  for (let i = 0; i < 40; i++) {
+    const middle = (low + high) / 2;
+    if (total(middle) <= room) low = middle;
+    else high = middle;
+  }
+  return at(low);
+}
+
+/** No column of text gets narrower than this, mm. */
+const NARROWEST = 6;
 
 function drawHead<Row>(pen: Pen, x: number, y: number, columns: readonly Column<Row>[], layout: Layout): number {
   let at = x;

@@ -170,7 +170,12 @@ function drawMarks(
       to: [b.x + c * half, b.y + s * half] as Point,
     };
   });
-  const placed = placeLabels(labels, area, outlines, [body, ...bodies]);
+  const placed = placeLabels(
+    labels,
+    area,
+    outlines,
+    [body, ...bodies].map((box) => ({ ...box, entered: true })),
+  );
   for (const [strut, place] of placed) {
     if (place.leader) pen.line([place.box.x, place.box.y], place.leader, { width: LINE.hair });
     pen.blot(place.box);

@@ -2,7 +2,8 @@ import { dot, mean, type Vec3 } from '../../maths/vec3.js';
 import type { ForceDiagram, NodePolyhedron } from '../../model/force-diagram.js';
 import type { Area } from '../kit/geometry2.js';
 import type { Pen } from '../kit/pen.js';
-import { type Camera, PLAN } from '../kit/view/camera.js';
+import type { Camera } from '../kit/view/camera.js';
+import { planeCamera } from '../kit/view/plane-camera.js';
 import type { Stroke } from '../kit/view/stroke.js';
 import { drawTrussView, type ViewStrut } from '../kit/view/truss-view.js';
 
@@ -37,7 +38,7 @@ export function drawForcePolyhedron(
   }
   const mark = (strut: string | null): { bold: string; plain: string } => ({ bold: strut ?? 'load', plain: '' });
   drawTrussView(pen, area, {
-    camera: diagram.kind === 'plane' ? PLAN : outside,
+    camera: diagram.kind === 'plane' ? planeCamera(diagram.vertices.map((v) => v.at)) : outside,
     scale: 'fill',
     edge: 5,
     nodes: used.map((vertex) => ({ mark: diagram.vertices[vertex]!.cell, at: at(vertex), show: 'none' })),

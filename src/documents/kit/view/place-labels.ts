@@ -1,4 +1,5 @@
-import { type Area, type Box, inside, lengthInside, overlap, type Point } from '../geometry2.js';
+import { type Area, type Box, lengthInside, overlap, type Point, reach } from '../geometry2.js';
+import { CellGrid } from './cell-grid.js';
 
 /** One place that a label may take. */
 export interface Place {
@@ -28,6 +29,12 @@ export interface DrawnLine {
   readonly to: Point;
 }
 
+/** What no label may touch. */
+export interface Obstacle extends Box {
+  /** Whether a leader may end inside it: a body whose label stands outside. */
+  readonly entered?: boolean;
+}
+
 /** Clear space between two labels, mm. */
 const CLEAR = 0.3;
 /** mm of displacement that one mm of covered line is worth: under a label on its own line, and under one beside. */
@@ -36,6 +43,8 @@ const COVER = { on: 1.5, beside: 2.5 } as const;
 const CROSSED = 15;
 /** Step of the search over rings round the anchor when every place is taken, mm. */
 const RING = 3;
+/** A leader longer than this is not followed by the eye, mm. */
+const FARTHEST = 70;
 
 /**
  * Places labels one after the other, each at its cheapest place that touches no other label, no obstacle and not the
@@ -46,52 +55,78 @@ export function placeLabels(
   labels: readonly Label[],
   area: Area,
   lines: readonly DrawnLine[],
-  obstacles: readonly Box[] = [],
+  obstacles: readonly Obstacle[] = [],
 ): Map<string, Place> {
   const placed = new Map<string, Place>();
-  const boxes: Box[] = [...obstacles];
-  const leaders: (readonly [Point, Point])[] = [];
+  const boxes = new CellGrid<Obstacle>();
+  const leaders = new CellGrid<readonly [Point, Point]>();
+  const drawn = new CellGrid<DrawnLine>();
+  for (const box of obstacles) boxes.addBox(box, box);
+  for (const line of lines) drawn.addSegment(line.from, line.to, line);
   const order = labels.map((label, i) => ({ label, i }));
   order.sort((a, b) => a.label.places.length - b.label.places.length || a.i - b.i);
 
-  /** Cost of a place, or infinity where it is taken or not below `bound`. */
-  const costOf = (place: Place, owner: string, bound: number): number => {
+  /** Cost of a place, or infinity where it is taken or not below `bound`; `hidden`: its leader may end under another label. */
+  const costOf = (place: Place, owner: string, bound: number, hidden: boolean): number => {
     const { box, leader } = place;
-    if (place.cost >= bound || !inside(area, box)) return Number.POSITIVE_INFINITY;
-    for (const other of boxes) if (overlap(box, other, -CLEAR)) return Number.POSITIVE_INFINITY;
-    for (const [p, q] of leaders) if (lengthInside(box, p, q) > 0) return Number.POSITIVE_INFINITY;
+    if (place.cost >= bound) return Number.POSITIVE_INFINITY;
+    const [w, h] = [reach(box, 1, 0), reach(box, 0, 1)];
+    const [x0, y0, x1, y1] = [box.x - w, box.y - h, box.x + w, box.y + h];
+    if (x0 < area.x || y0 < area.y || x1 > area.x + area.width || y1 > area.y + area.height)
+      return Number.POSITIVE_INFINITY;
+    if (boxes.some(x0 - CLEAR, y0 - CLEAR, x1 + CLEAR, y1 + CLEAR, (other) => overlap(box, other, -CLEAR)))
+      return Number.POSITIVE_INFINITY;
+    if (leaders.some(x0, y0, x1, y1, ([p, q]) => lengthInside(box, p, q) > 0)) return Number.POSITIVE_INFINITY;
     let cost = place.cost;
     if (leader) {
       const from: Point = [box.x, box.y];
-      for (const other of boxes)
-        if (lengthInside(other, from, leader) > 0 && !contains(other, leader)) return Number.POSITIVE_INFINITY;
-      for (const [p, q] of leaders) if (cross(from, leader, p, q)) cost += CROSSED;
+      const [l0, m0, l1, m1] = [
+        Math.min(box.x, leader[0]),
+        Math.min(box.y, leader[1]),
+        Math.max(box.x, leader[0]),
+        Math.max(box.y, leader[1]),
+      ];
+      if (
+        boxes.some(
+          l0,
+          m0,
+          l1,
+          m1,
+          (other) => lengthInside(other, from, leader) > 0 && !((hidden || other.entered) && contains(other, leader)),
+        )
+      )
+        return Number.POSITIVE_INFINITY;
+      leaders.some(l0, m0, l1, m1, ([p, q]) => {
+        if (cross(from, leader, p, q)) cost += CROSSED;
+        return false;
+      });
     }
     const weight = leader ? COVER.beside : COVER.on;
-    for (const line of lines) {
-      if (cost >= bound) return Number.POSITIVE_INFINITY;
+    const over = drawn.some(x0, y0, x1, y1, (line) => {
       if (leader || line.owner !== owner) cost += weight * lengthInside(box, line.from, line.to);
-    }
-    return cost;
+      return cost >= bound;
+    });
+    return over ? Number.POSITIVE_INFINITY : cost;
   };
 
   for (const { label } of order) {
     let best: Place | null = null;
     let least = Number.POSITIVE_INFINITY;
-    const consider = (place: Place): void => {
-      const cost = costOf(place, label.owner, least);
+    const consider = (place: Place, hidden: boolean): void => {
+      const cost = costOf(place, label.owner, least, hidden);
       if (cost < least) [best, least] = [place, cost];
     };
-    for (const place of label.places) consider(place);
-    const farthest = Math.hypot(area.width, area.height);
-    if (!best && !label.stays)
-      for (let radius = RING; radius < Math.min(farthest, least); radius += RING)
-        for (const anchor of label.anchors) for (const place of ring(label, anchor, radius)) consider(place);
+    for (const place of label.places) consider(place, false);
+    // What is covered itself, as a node behind another, can only be pointed at under its cover.
+    for (const hidden of [false, true])
+      if (!best && !label.stays)
+        for (let radius = RING; radius < Math.min(FARTHEST, least); radius += RING)
+          for (const anchor of label.anchors) for (const place of ring(label, anchor, radius)) consider(place, hidden);
     if (!best) continue;
     const { box, leader }: Place = best;
     placed.set(label.key, best);
-    boxes.push(box);
-    if (leader) leaders.push([[box.x, box.y], leader]);
+    boxes.addBox(box, box);
+    if (leader) leaders.addSegment([box.x, box.y], leader, [[box.x, box.y], leader]);
   }
   return placed;
 }

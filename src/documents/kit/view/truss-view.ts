@@ -44,6 +44,8 @@ export interface TrussView {
   readonly spots?: readonly { readonly mark: StrutMark; readonly at: Vec3 }[];
   /** iso: the largest scale of ISO 5455 that fits; fill: as large as the area allows, not to scale; or that scale. */
   readonly scale: 'iso' | 'fill' | { readonly factor: number; readonly name: string };
+  /** Nodes, by index, that the area is filled with; absent: all. Struts that leave the frame are not drawn. */
+  readonly frame?: ReadonlySet<number>;
   /** Room round the figure for marks that move outward, mm. */
   readonly edge?: number;
   /** own: a node's mark stands on its node or, where a nearer node's mark is in the way, not at all; all (usual): it moves aside. */
@@ -73,9 +75,11 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
   const at = flat.map(onSheet);
   const order = view.struts.map((strut, i) => ({ strut, i, depth: flat[strut.from]![2] + flat[strut.to]![2] }));
   order.sort((a, b) => faintFirst(a.strut) - faintFirst(b.strut) || a.depth - b.depth || a.i - b.i);
-  for (const { strut } of order) drawStrut(pen, at[strut.from]!, at[strut.to]!, strut.stroke);
+  const seen = (i: number): boolean => !view.frame || view.frame.has(i) || contains(area, at[i]!);
+  for (const { strut } of order)
+    if (seen(strut.from) && seen(strut.to)) drawStrut(pen, at[strut.from]!, at[strut.to]!, strut.stroke);
   view.nodes.forEach((node, i) => {
-    if (node.support) drawSupport(pen, at[i]!);
+    if (node.support && seen(i)) drawSupport(pen, at[i]!);
   });
   const clear = nodeMarkHeight(SIZES[0]) / 2 + 0.2;
   const arrows = (view.arrows ?? []).map((arrow, i) => ({
@@ -91,7 +95,8 @@ export function drawTrussView(pen: Pen, area: Area, view: TrussView): DrawnView 
   for (const place of [...nodes.values(), ...struts.values()]) drawLeader(pen, place);
   view.nodes.forEach((node, i) => {
     const place = nodes.get(node.mark);
-    if (node.show !== 'none' && (!place || place.leader)) pen.circle(at[i]![0], at[i]![1], 0.6, { fill: INK.black });
+    if (node.show !== 'none' && seen(i) && (!place || place.leader))
+      pen.circle(at[i]![0], at[i]![1], 0.6, { fill: INK.black });
   });
   for (const [mark, place] of nodes) drawNodeMark(pen, place.box, mark, size);
   view.struts.forEach((strut, i) => {
@@ -175,7 +180,11 @@ function marksAt(pen: Pen, area: Area, view: TrussView, drawn: Drawn, size: numb
 }
 
 /** How much of the sheet the figure would fill: mm on paper for one mm of it. */
-export function fillFactor(nodes: readonly ViewNode[], camera: Camera, room: Pick<Area, 'width' | 'height'>): number {
+export function fillFactor(
+  nodes: readonly Pick<ViewNode, 'at'>[],
+  camera: Camera,
+  room: Pick<Area, 'width' | 'height'>,
+): number {
   const [low, high] = bounds(nodes.map((n) => project(camera, n.at)));
   const fits = Math.min(
     ...([room.width, room.height] as const).map((r, i) => {
@@ -191,7 +200,7 @@ function fitted(
   area: Area,
   view: TrussView,
 ): { readonly factor: number; readonly name: string; readonly onSheet: (p: Vec3) => Point } {
-  const [low, high] = bounds(flat);
+  const [low, high] = bounds(view.frame ? flat.filter((_, i) => view.frame!.has(i)) : flat);
   const room = shrink(area, view.edge ?? EDGE);
   const size = [high[0] - low[0], high[1] - low[1]] as const;
   const fills = Math.min(...size.map((s, i) => (s > 0 ? [room.width, room.height][i]! / s : Number.POSITIVE_INFINITY)));
@@ -237,6 +246,9 @@ function typeSize(pen: Pen, view: TrussView, at: readonly Point[]): number {
     }).length;
   return SIZES.find((size) => fitting(size) >= MOST * labelled.length) ?? smallest;
 }
+
+const contains = (area: Area, [x, y]: Point): boolean =>
+  x >= area.x && x <= area.x + area.width && y >= area.y && y <= area.y + area.height;
 
 const faintFirst = (strut: ViewStrut): number => (strut.stroke.kind === 'faint' ? 0 : 1);
 

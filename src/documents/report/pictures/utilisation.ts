@@ -13,6 +13,8 @@ import { sceneOf } from './scene.js';
 const LEGEND = 9;
 /** Struts below 1 that are named all the same: the most used ones. */
 const NAMED = 12;
+/** Over-stressed struts that one picture names; the table has all. */
+const PENNANTS = 40;
 
 /** The truss with every strut as grey as it is used, and a black pennant on each that is over-stressed. */
 export function utilisationPicture(paper: Paper, flow: Flow, records: PackRecords): void {
@@ -21,8 +23,11 @@ export function utilisationPicture(paper: Paper, flow: Flow, records: PackRecord
   const { nodes, struts } = sceneOf(records);
   const used = rows.map((r) => r.worst?.utilisation ?? null);
   const order = [...used.keys()].sort((a, b) => (used[b] ?? -1) - (used[a] ?? -1) || a - b);
-  const named = new Set(order.filter((i, rank) => (used[i] ?? 0) > 1 || (rank < NAMED && used[i] !== null)));
+  const named = new Set(order.filter((i, rank) => used[i] !== null && rank < ((used[i] ?? 0) > 1 ? PENNANTS : NAMED)));
   flow.heading('Utilisation of the struts', 150);
+  const over = used.filter((u) => (u ?? 0) > 1).length;
+  if (over > PENNANTS)
+    flow.paragraph(`${over} struts are over-stressed; the ${PENNANTS} worst are named here, all in the table below.`);
   flow.picture(flow.left, (area) => {
     drawTrussView(
       paper.pen,

@@ -1,6 +1,6 @@
-import { fitPlane } from '../../maths/plane-fit.js';
-import { cross, dot, normalise, perpendicular, scale, type Vec3, Z_AXIS } from '../../maths/vec3.js';
-import { type Camera, PLAN } from '../kit/view/camera.js';
+import { fitPlane } from '../../../maths/plane-fit.js';
+import { cross, dot, normalise, perpendicular, scale, type Vec3, Z_AXIS } from '../../../maths/vec3.js';
+import { type Camera, PLAN } from './camera.js';
 
 /** The view square to the plane in which the points lie, z or else y upward on the sheet. */
 export function planeCamera(points: readonly Vec3[]): Camera {
