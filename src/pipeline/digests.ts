@@ -1,6 +1,6 @@
 import { sha256 } from '../machine/hash.js';
 import type { PanelPart, Parts, StrutPart } from '../model/parts.js';
-import type { PackPart } from './pack-writer.js';
+import type { PackFile, PackPart } from './pack-writer.js';
 import type { Lineage } from './since.js';
 
 /** SHA-256 of a record as JSON. */
@@ -46,3 +46,7 @@ export function cutParts(parts: Parts, lineage: Lineage): readonly PackPart[] {
     ...parts.panels.map((p) => entry('panel', p.mark, panelDigests(p))),
   ];
 }
+
+/** A short digest of what a pack holds: sets the ticks of one content apart from another's. */
+export const contentKey = (files: readonly PackFile[]): string =>
+  digestOf(files.map((f) => [f.path, f.sha256])).slice(0, 16);

@@ -1,5 +1,7 @@
+import { assemblyHtml } from '../documents/assembly/assembly-html.js';
 import type { PackRecords } from '../documents/records.js';
 import { loadFonts } from '../machine/fonts.js';
+import { loadPageCode } from '../machine/page-code.js';
 import { runHere } from '../machine/run-here.js';
 import type { Job } from '../model/job/index.js';
 import type { Run } from '../model/run.js';
@@ -8,7 +10,7 @@ import { planAssembly } from '../planning/assembly/plan-assembly.js';
 import { fitUpFindings } from '../planning/fit-up/findings.js';
 import { planFitUp } from '../planning/fit-up/plan-fit-up.js';
 import { assess } from './assess.js';
-import { cutParts } from './digests.js';
+import { contentKey, cutParts } from './digests.js';
 import type { Input } from './load.js';
 import { type Manifest, manifestOf } from './manifest.js';
 import { packWriter, type WriteFile } from './pack-writer.js';
@@ -94,6 +96,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
 
   const cutting = await writeSheetFiles(records, writer);
   await writeDocuments(records, await loadFonts(), writer, run);
+  await writer.put('assembly.html', assemblyHtml(records, await loadPageCode(), contentKey(writer.files())));
 
   const manifest = manifestOf(records, hubs.made, {
     inputs: options.inputs ?? [],

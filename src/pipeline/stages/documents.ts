@@ -1,4 +1,5 @@
 import { fitUpCsv, fitUpJson } from '../../documents/assembly/fit-up.js';
+import { packingListCsv } from '../../documents/assembly/packing-list.js';
 import { checkReport } from '../../documents/check-json.js';
 import { forceSheets } from '../../documents/forces/force-sheets.js';
 import { forcesCsv } from '../../documents/forces/forces-csv.js';
@@ -44,6 +45,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['nodes/bar-angles.csv', barAnglesCsv],
   ['nodes/placement.json', placementJson],
   ['nodes/node-sheets.pdf', nodeSheets],
+  ['assembly/packing-list.csv', packingListCsv],
   ['assembly/fit-up.csv', fitUpCsv],
   ['assembly/fit-up.json', fitUpJson],
   ['panels/panel-list.csv', panelListCsv],
