@@ -31,8 +31,16 @@ export function detailHubs(
 ): DetailedHubs {
   const findings: Finding[] = [];
   const middle = mean(topology.truss.nodes.map((n) => n.at));
-  const material = materialNamed(job, job.nodes.material);
-  if (!material) findings.push(finding('node-material-unknown', 'truss', { about: { material: job.nodes.material } }));
+  const materials = new Map<string, Material | null>();
+  const materialOf = (system: NodeSystem | null): Material | null => {
+    const name = system?.material?.(job) ?? job.nodes.material;
+    let found = materials.get(name);
+    if (found === undefined) {
+      materials.set(name, (found = materialNamed(job, name)));
+      if (!found) findings.push(finding('node-material-unknown', 'truss', { about: { material: name } }));
+    }
+    return found;
+  };
 
   const bored = sections.find((s) => s !== null);
   if (bored && !job.nodes.clearanceMeasured)
@@ -73,8 +81,15 @@ export function detailHubs(
       );
     for (const strut of found?.throughPlate ?? [])
       findings.push(finding('strut-through-plate', node.mark, { about: { strut } }));
+    for (const strut of found?.notRound ?? [])
+      findings.push(finding('bore-not-round', node.mark, { about: { strut } }));
+    if (found?.ballNeeds !== undefined)
+      findings.push(
+        finding('ball-too-small', node.mark, { value: job.nodes.ball.diameter_mm ?? null, limit: found.ballNeeds }),
+      );
     drafts.push({
       system,
+      material: materialOf(system),
       whole: sockets.length === bars.length,
       setbacks: found?.setbacks ?? [],
       hub: {
@@ -84,7 +99,7 @@ export function detailHubs(
         outward: outwardAt(node.at, middle),
         sockets,
         mass: null,
-        material: material ?? NO_MATERIAL,
+        material: materialOf(system) ?? NO_MATERIAL,
         makeable: false,
         revision: job.revision,
       },
@@ -92,7 +107,7 @@ export function detailHubs(
   });
 
   const everywhere = Math.max(0, ...drafts.flatMap((d) => d.setbacks.map((s) => s ?? 0)));
-  const hubs = drafts.map(({ hub, system, whole, setbacks }): HubPart => {
+  const hubs = drafts.map(({ hub, system, material, whole, setbacks }): HubPart => {
     const atNode = Math.max(0, ...setbacks.map((s) => s ?? 0));
     const rule = { least: null, 'equal-at-node': atNode, equal: everywhere }[job.nodes.setbacks];
     const sockets = hub.sockets.map(
@@ -108,6 +123,7 @@ export function detailHubs(
 interface Draft {
   readonly hub: HubPart;
   readonly system: NodeSystem | null;
+  readonly material: Material | null;
   /** Every strut at the node has a socket. */
   readonly whole: boolean;
   readonly setbacks: readonly (number | null)[];

@@ -7,6 +7,7 @@ import type { HubPart } from '../model/parts.js';
 import type { ShapedHub, ShapedPiece } from '../model/shaped.js';
 import { boltHolesOf, type Channel, pinOf, plateHolesOf, ventOf } from './channels.js';
 import { type Cradle, capSolid, cradleOf } from './cradle.js';
+import { bushingSleeves, bushings, guideHalves } from './drilling-guide.js';
 import { HubSpace } from './hub-space.js';
 import { Bench, loadKernel, SolidFailed } from './kernel.js';
 import { layDown } from './lay-down.js';
@@ -25,6 +26,7 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
   const bench = new Bench(await loadKernel());
   const findings: Finding[] = [];
   try {
+    if (hub.system === 'drilled-ball') return shapeGuide(bench, hub, job, findings);
     const space = new HubSpace(hubShape(hub, job));
     const channels = channelsOf(hub, job, space, findings);
     const cradles = cradlesOf(hub, job, space, findings);
@@ -39,13 +41,7 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
       const cap = capSolid(bench, space, c);
       laid.push(layDown(bench, cap, chooseLie(cap, [], ON_A_FACE), hub.at, `cap-${hub.sockets[c.sleeve]!.strut}`));
     }
-    const pieces = laid.filter((p) => p !== null);
-    const faults = pieces
-      .map((p) => openEdges(p.positions, p.triangles))
-      .reduce((a, b) => a + b, laid.length - pieces.length);
-    for (const piece of pieces) findings.push(...sizeFindings(hub, piece, job));
-    if (faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
-    return { mark: hub.mark, pieces: faults === 0 ? pieces : [], findings };
+    return finish(hub, job, laid, findings);
   } catch (error) {
     if (!(error instanceof SolidFailed)) throw error;
     findings.push(finding('solid-failed', hub.mark, { about: { what: error.message } }));
@@ -53,6 +49,29 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
   } finally {
     bench.clear();
   }
+}
+
+/** A drilled ball itself is not printed: its guide is, in two halves, each bushing with its marks. */
+function shapeGuide(bench: Bench, hub: HubPart, job: Job, findings: Finding[]): ShapedHub {
+  const guide = { ...hub, sockets: bushings(hub) };
+  const space = new HubSpace({ sleeves: guide.sockets.flatMap((s) => bushingSleeves(s, hub)), base: null });
+  const marks = job.nodes.marks ? marksOf(guide, job, space, [], [], findings) : [];
+  const marked = socketSolid(bench, space, { marks, channels: [], cradles: [], chamfer: 0 });
+  const laid = guideHalves(bench, space, hub, marked).map((half, i) =>
+    layDown(bench, half, chooseLie(half, [], ON_A_FACE), hub.at, i === 0 ? 'guide-A' : 'guide-B'),
+  );
+  return finish(hub, job, laid, findings);
+}
+
+/** Pieces that are closed, with what is to be said of their sizes. */
+function finish(hub: HubPart, job: Job, laid: readonly (ShapedPiece | null)[], findings: Finding[]): ShapedHub {
+  const pieces = laid.filter((p) => p !== null);
+  const faults = pieces
+    .map((p) => openEdges(p.positions, p.triangles))
+    .reduce((a, b) => a + b, laid.length - pieces.length);
+  for (const piece of pieces) findings.push(...sizeFindings(hub, piece, job));
+  if (faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
+  return { mark: hub.mark, pieces: faults === 0 ? pieces : [], findings };
 }
 
 /** A foot stands as it is used: its plate's underside must be flat. */

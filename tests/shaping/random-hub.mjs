@@ -67,7 +67,7 @@ export function randomHub(seed, special = {}) {
     },
   });
   const at = [100, -50, 30];
-  const pool = system === 'spigot' ? SPIGOT_SECTIONS : SECTIONS;
+  const pool = system === 'spigot' ? SPIGOT_SECTIONS : system === 'drilled-ball' ? [round(8), round(6)] : SECTIONS;
   const kinds = Array.from({ length: 1 + Math.floor(random() * 3) }, () => pool[Math.floor(random() * pool.length)]);
   const truss = {
     nodes: [

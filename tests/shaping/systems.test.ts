@@ -1,4 +1,6 @@
 import { expect, it } from 'vitest';
+import { writeStl } from '../../src/documents/formats/stl.js';
+import { inspect, makeProbe, readStl } from '../tools/mesh-check.mjs';
 import { checkHub, randomHub } from './random-hub.mjs';
 
 it('makes hubs of spigots for tubes and of bolted plates for sawn timber, solid to their ends and clear of the struts', async () => {
@@ -43,4 +45,38 @@ it('deepens the socket of a strut that slides in by its engagement, and pins it 
   expect(after.setback).toBe(before.setback);
   expect(after.pin).toBe(2);
   expect((await checkHub(made, { cross: true })).faults).toEqual([]);
+});
+
+it('guides the drill into a ball from outside, in two closed halves, each bushing open on the ball', async () => {
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  const made = randomHub(61, { system: 'drilled-ball', count: 5, least: 45 });
+  expect(made.hub.makeable).toBe(true);
+  const { pieces, findings } = await shapeHub(made.hub, made.job);
+  expect(findings.filter((f) => f.level === 'stop')).toEqual([]);
+  expect(pieces.map((p) => p.piece)).toEqual(['guide-A', 'guide-B']);
+  const socket = made.hub.sockets[0]!;
+  const radius = Math.hypot(socket.setback! + socket.depth, (socket.bore as number) / 2);
+  const probes = pieces.map((p) => {
+    const stl = readStl(writeStl(p.positions, p.triangles, p.piece));
+    expect(inspect(stl)).toMatchObject({ open: 0, degenerate: 0, shells: 1 });
+    const solid = makeProbe(stl);
+    const m = p.placement;
+    return (q: readonly number[]) => {
+      const d = [0, 1, 2].map((k) => q[k]! + made.hub.at[k]! - m[4 * k + 3]!);
+      return solid([0, 1, 2].map((k) => m[k]! * d[0]! + m[4 + k]! * d[1]! + m[8 + k]! * d[2]!));
+    };
+  });
+  const inAny = (q: readonly number[]): boolean => probes.some((probe) => probe(q));
+  for (const s of made.hub.sockets) {
+    // Every bore's rim lies on the ball, and the drill's way is free from the ball outwards.
+    expect(Math.hypot(s.setback! + s.depth, (s.bore as number) / 2)).toBeCloseTo(radius, 9);
+    for (let t = radius - 1; t < radius + 20; t += 0.5) expect(inAny(s.direction.map((v) => v * t))).toBe(false);
+    const r = (s.bore as number) / 2 + 1.2;
+    let walled = 0;
+    for (let k = 0; k < 12; k++) {
+      const [a, b] = [r * Math.cos(k), r * Math.sin(k)];
+      if (inAny([0, 1, 2].map((i) => s.direction[i]! * (radius + 6) + s.y[i]! * a + s.z[i]! * b))) walled++;
+    }
+    expect(walled).toBeGreaterThan(8);
+  }
 });

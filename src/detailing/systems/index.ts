@@ -1,10 +1,11 @@
+import { DRILLED_BALL_SYSTEM } from './drilled-ball.js';
 import { FOOT_SYSTEM } from './foot.js';
 import { SOCKET_SYSTEM } from './socket.js';
 import { SPIGOT_SYSTEM } from './spigot.js';
 import type { NodeSystem } from './system.js';
 
 /** Node systems by name. A new one is a file and a line here. */
-const SYSTEMS: readonly NodeSystem[] = [SOCKET_SYSTEM, SPIGOT_SYSTEM, FOOT_SYSTEM];
+const SYSTEMS: readonly NodeSystem[] = [SOCKET_SYSTEM, SPIGOT_SYSTEM, FOOT_SYSTEM, DRILLED_BALL_SYSTEM];
 
 const BY_NAME: ReadonlyMap<string, NodeSystem> = new Map(SYSTEMS.map((s) => [s.name, s]));
 

@@ -31,6 +31,10 @@ export interface Setbacks {
   readonly tooClose: readonly ClosePair[];
   /** Struts that would run through a foot's base plate. */
   readonly throughPlate?: readonly string[];
+  /** Struts whose section this system has no hole for. */
+  readonly notRound?: readonly string[];
+  /** Diameter that a drilled ball needs where the job's is too small, mm. */
+  readonly ballNeeds?: number;
 }
 
 /** Material between two parallel planes: points origin + x X + y Y + z (X cross Y) with from <= z <= to, mm. */
@@ -86,6 +90,8 @@ export interface NodeSystem {
   readonly name: string;
   /** In plain words, for papers. */
   readonly title: string;
+  /** Name of what its hubs are made from; absent: the job's node material. */
+  material?(job: Job): string;
   /** Bore, wall, depth and pin of one strut's socket; its setback is still null. */
   socket(bar: BarEnd, job: Job): Socket;
   /** The setbacks that keep every pair of struts at a node apart by the web wanted. */

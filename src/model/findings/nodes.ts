@@ -95,4 +95,16 @@ export const NODE_FINDINGS = {
     (f) =>
       `no side of the socket of ${f.about?.['strut']} is free for a strut to be laid in; use a slide there, or a drop-in at its other end`,
   ),
+  'bore-not-round': entry(
+    'stop',
+    'node',
+    '',
+    (f) => `${f.about?.['strut']} is not round and cannot go into a drilled hole; give this node another system`,
+  ),
+  'ball-too-small': entry(
+    'stop',
+    'node',
+    'mm',
+    (f) => `a ball of ${num(f.value, 1)} mm does not hold its bores; it needs ${num(f.limit, 1)} mm`,
+  ),
 } as const;

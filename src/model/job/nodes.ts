@@ -67,7 +67,7 @@ export const nodesSchema = z
     ball: z
       .strictObject({
         diameter_mm: z.number().positive().optional().describe('Absent: the least that holds every bore.'),
-        material: z.string().default('beech'),
+        material: z.string().default('beech-dowel'),
       })
       .prefault({}),
     orientation: z

@@ -7,6 +7,7 @@ import { writeJson } from '../../documents/formats/json.js';
 import type { Fonts } from '../../documents/kit/fonts.js';
 import { barAnglesCsv } from '../../documents/nodes/bar-angles.js';
 import { barDirectionsCsv } from '../../documents/nodes/bar-directions.js';
+import { drillingCsv } from '../../documents/nodes/drilling.js';
 import { nodeSheets } from '../../documents/nodes/node-sheets.js';
 import { placementJson } from '../../documents/nodes/placement.js';
 import { nestingJson } from '../../documents/panels/nesting-json.js';
@@ -26,7 +27,7 @@ import { writeTrussJson } from '../../documents/truss/truss-json.js';
 import type { Run } from '../../model/run.js';
 import type { PackWriter } from '../pack-writer.js';
 
-type Make = (records: PackRecords, fonts: Fonts) => Uint8Array | Promise<{ readonly bytes: Uint8Array }>;
+type Make = (records: PackRecords, fonts: Fonts) => Uint8Array | null | Promise<{ readonly bytes: Uint8Array }>;
 
 /** Every paper and table of a pack, in the order of writing. A new one is a file in documents and a line here. */
 const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
@@ -43,6 +44,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['struts/offcuts.json', offcutsJson],
   ['nodes/bar-directions.csv', barDirectionsCsv],
   ['nodes/bar-angles.csv', barAnglesCsv],
+  ['nodes/drilling.csv', drillingCsv],
   ['nodes/placement.json', placementJson],
   ['nodes/node-sheets.pdf', nodeSheets],
   ['assembly/packing-list.csv', packingListCsv],
@@ -58,7 +60,8 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
 export async function writeDocuments(records: PackRecords, fonts: Fonts, writer: PackWriter, run: Run): Promise<void> {
   for (const [i, [path, make]] of DOCUMENTS.entries()) {
     const made = await make(records, fonts);
-    await writer.put(path, made instanceof Uint8Array ? made : made.bytes);
+    // null: nothing in this pack calls for the paper.
+    if (made) await writer.put(path, made instanceof Uint8Array ? made : made.bytes);
     run.tell({ stage: 'Papers', done: i + 1, total: DOCUMENTS.length });
   }
 }

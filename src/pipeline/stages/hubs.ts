@@ -1,4 +1,5 @@
 import type { Assessment, MadeHub } from '../../documents/records.js';
+import { materialNamed } from '../../model/catalogue/resolve.js';
 import type { Finding } from '../../model/finding.js';
 import { isWithheld, settleFindings } from '../../model/hold.js';
 import type { Job } from '../../model/job/index.js';
@@ -30,6 +31,8 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
   const withheld: string[] = [];
   const printable: PrintablePiece[] = [];
   const tension = tensionOf(a);
+  // Guides of wooden balls are printed too.
+  const density = materialNamed(a.job, a.job.nodes.material)?.density ?? 0;
   const drafts = a.parts.hubs.map((hub, i) => ({
     ...draftOf(
       hub,
@@ -55,15 +58,15 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
         if (!keep) continue;
         const path = `nodes/stl/${hub.mark}${piece.piece ? `.${piece.piece}` : ''}.stl`;
         await writer.put(path, output.stl[i]!);
-        if (piece.piece.startsWith('cap-'))
-          parts.push({ ...part, mark: `${hub.mark}.${piece.piece}`, kind: 'cap', files: [path] });
+        const kind = accessory(piece.piece);
+        if (kind) parts.push({ ...part, mark: `${hub.mark}.${piece.piece}`, kind, files: [path] });
         else files.push(path);
         printable.push({
           mark: hub.mark,
           piece: piece.piece,
           box: piece.box,
           volume: piece.volume,
-          mass: piece.volume * MM3_TO_M3 * hub.material.density,
+          mass: piece.volume * MM3_TO_M3 * density,
           object: output.objects[i]!,
         });
       }
@@ -75,6 +78,12 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
   );
   const hubs = drafts.map(({ hub, part }) => ({ ...hub, revision: part.revision }));
   return { hubs, made, findings, parts, withheld, printable };
+}
+
+/** What a piece beside the node itself is; null: the node's own. */
+function accessory(piece: string): 'cap' | 'guide' | null {
+  if (piece.startsWith('cap-')) return 'cap';
+  return piece.startsWith('guide-') ? 'guide' : null;
 }
 
 interface Draft extends CanonicalHub {
