@@ -1,4 +1,5 @@
 import { crossingFindings } from '../detailing/crossings.js';
+import { nameFindings } from '../detailing/names.js';
 import type { Assessment } from '../documents/records.js';
 import type { Job } from '../model/job/index.js';
 import { scaleTruss } from '../model/scale-truss.js';
@@ -66,6 +67,7 @@ export function assess(file: Truss, job: Job): Assessment {
       ...reciprocal.findings,
       ...(equilibrium?.findings ?? []),
       ...layout.findings,
+      ...nameFindings(truss, job),
       ...crossingFindings(topology, radii),
       ...made.findings,
       ...analysis.findings,
