@@ -15,8 +15,10 @@ import type { Model } from './model.js';
 import { axialForces, PER_MEMBER, type Response } from './response.js';
 import { type SecondOrderActions, secondOrderActions } from './second-order-actions.js';
 
-/** Elements a strut: one overestimates a pin-ended strut by 21.6 %, four by 0.05 %. */
+/** Elements a strut: one overestimates a pin-ended strut by 21.6 %, two by 0.75 %, four by 0.05 %. Large trusses take two. */
 const ELEMENTS = 4;
+const ELEMENTS_OF_LARGE = 2;
+const LARGE = 1500;
 /** Combinations that are looked at: those that compress the struts most against Euler's load. */
 const TRIED = 12;
 /** EN 1993-1-1 5.2.1 (3): second-order effects may be left out from here on; below 3 an approximate method is not allowed (5.2.2 (5)). */
@@ -48,7 +50,7 @@ export function stabilityOf(
   let worst: { readonly factor: number; readonly combination: string; readonly shape: Float64Array } | null = null;
   let cut: { readonly sub: Subdivided; readonly prepared: Extract<PreparedFrame, { state: 'stiff' }> } | null = null;
   if (model.kind === 'frame') {
-    const sub = subdivide(model.prepared.frame, ELEMENTS);
+    const sub = subdivide(model.prepared.frame, topology.truss.members.length > LARGE ? ELEMENTS_OF_LARGE : ELEMENTS);
     const prepared = prepareFrame(sub.frame);
     if (prepared.state !== 'stiff') return { buckling, findings, lowest: null, secondOrder: null };
     cut = { sub, prepared };
