@@ -1,6 +1,7 @@
 import type { Analysis } from './analyse.js';
 import type { SparseMatrix } from './csc.js';
 import { eliminateFront, OVERSHOOT } from './front-kernel.js';
+import { frontWorkspace } from './front-workspace.js';
 
 /** L and D of P A Pᵀ = L D Lᵀ, with what the pivots say about A. */
 export interface Factor {
@@ -25,10 +26,7 @@ export function factorise(analysis: Analysis, lower: SparseMatrix): Factor {
   if (lower.columns !== analysis.size || lower.values.length !== entry.length)
     throw new RangeError('another pattern was analysed');
   const side = analysis.largestFront + OVERSHOOT;
-  const front = {
-    values: new Float64Array(side * side),
-    scaled: new Float64Array(side * Math.max(1, analysis.largestWidth)),
-  };
+  const front = frontWorkspace(side * side, side * Math.max(1, analysis.largestWidth));
   const values = new Float64Array(factorStarts[count]);
   const stack = new Float64Array(analysis.stackSize);
   const pending: number[] = []; // supernodes whose updates wait on the stack, in order

@@ -1,5 +1,7 @@
+import type { FastUpdate } from './front-workspace.js';
+
 /** Columns of a front that are eliminated together; a multiple of the tile's side. */
-export const PANEL = 8;
+export const PANEL = 4;
 const TILE = 4;
 /** Blocks of the update, sized so that a block of rows stays in the second-level cache. */
 const DEPTH = 256;
@@ -8,8 +10,10 @@ const STRIP = 64;
 /** A dense front: lower triangle by rows, `stride` numbers a row; spare rows and columns take the tiles' overshoot. */
 export interface Front {
   readonly values: Float64Array;
-  /** L D by rows, `stride` numbers a row, as wide as the pivots. */
+  /** L D by rows, as wide as the pivots. */
   readonly scaled: Float64Array;
+  /** The compiled update on the memory that holds both; null: none. */
+  readonly fast: FastUpdate | null;
 }
 
 /** Spare rows and columns that a front's buffer needs beyond its height. */
@@ -77,6 +81,23 @@ function update(
   depthTo: number,
   exact: boolean,
 ): void {
+  if (f.fast) {
+    const whole = exact ? columnTo - ((columnTo - columnFrom) & 1) : columnTo;
+    f.fast(
+      f.values.byteOffset,
+      f.scaled.byteOffset,
+      8 * stride,
+      8 * wide,
+      rowFrom,
+      rowTo,
+      columnFrom,
+      whole,
+      depthFrom,
+      depthTo,
+    );
+    if (whole < columnTo) narrow(f, stride, wide, rowFrom, rowTo, whole, columnTo, depthFrom, depthTo);
+    return;
+  }
   const a = f.values;
   const b = f.scaled;
   for (let j = columnFrom; j < columnTo; j += TILE) {
