@@ -4,6 +4,7 @@ import type { Topology } from '../../model/topology.js';
 import { OUTSIDE_CELL } from '../../model/truss.js';
 import { type EdgeLoop, edgeLoops } from './edge-loops.js';
 import { type EdgeTable, edgeTable } from './edges.js';
+import { openEdgesOf } from './open-edges.js';
 import { orientCells } from './orient.js';
 import { shapeFaults } from './shape-faults.js';
 
@@ -50,15 +51,18 @@ export const givenCells = (topology: Topology): CellList => ({
 /**
  * The complex of a truss and a list of cells, or the faults that keep it from being one: an open cell, a face in no
  * cell or in three, cells that cannot be oriented alike, struts whose cells do not go round them once, and Euler's
- * relation V - E + F - C = 0. The unbounded cell may be left out; then it is made of the faces that one cell has.
+ * relation V - E + F - C = 0. The unbounded cell may be left out; then it is made of the faces that one cell has. Where loads act
+ * it may be given in parts: cells that are open along edges between loaded or supported nodes.
  */
 export function complexOf(
   topology: Topology,
   list: CellList,
 ): { readonly complex: CellComplex | null; readonly findings: readonly Finding[] } {
   const table = edgeTable(topology);
-  const cells = withOutside(list);
-  const faults = own(shapeFaults(topology, table, cells), list);
+  const all = withOutside(list);
+  const open = openEdgesOf(topology, table, all);
+  const cells = all.map((cell) => (isOpen(table, cell, open) ? { ...cell, outer: true } : cell));
+  const faults = own(shapeFaults(topology, table, cells, open), list);
   if (faults.some((f) => f.level === 'stop')) return { complex: null, findings: faults };
 
   const { plus, minus, twisted } = orientCells(topology, table, cells);
@@ -66,7 +70,7 @@ export function complexOf(
     return { complex: null, findings: [...faults, finding('cells-not-orientable', cells[twisted].mark)] };
   }
   const used = topology.truss.faces.flatMap((_, f) => (plus[f] >= 0 ? [f] : []));
-  const { loops, broken } = edgeLoops(table, plus, minus);
+  const { loops, broken } = edgeLoops(table, plus, minus, open);
   if (broken.length > 0) {
     return { complex: null, findings: [...faults, ...broken.map((e) => notSurrounded(topology, table, e))] };
   }
@@ -75,7 +79,8 @@ export function complexOf(
     V: nodes.size,
     E: loops.filter((loop) => loop.cells.length > 0).length,
     F: used.length,
-    C: cells.length,
+    // Open cells are parts of one unbounded cell.
+    C: cells.filter((c) => !c.outer).length + (cells.some((c) => c.outer) ? 1 : 0),
   };
   const sum = euler.V - euler.E + euler.F - euler.C;
   if (sum !== 0) {
@@ -84,8 +89,14 @@ export function complexOf(
       findings: [...faults, finding('euler-not-zero', 'truss', { value: sum, limit: 0, about: { ...euler } })],
     };
   }
-  return { complex: { ...table, used, plus, minus, cells, loops, openEdges: [], euler }, findings: faults };
+  return { complex: { ...table, used, plus, minus, cells, loops, openEdges: [...open], euler }, findings: faults };
 }
+
+const isOpen = (table: EdgeTable, cell: ComplexCell, open: ReadonlySet<number>): boolean => {
+  const count = new Map<number, number>();
+  for (const f of cell.faces) for (const e of table.faceEdges[f]) count.set(e, (count.get(e) ?? 0) + 1);
+  return [...count].some(([e, n]) => n === 1 && open.has(e));
+};
 
 /** Without the faults of an unbounded cell that was only made from what the faulty others left over. */
 function own(faults: readonly Finding[], list: CellList): readonly Finding[] {
@@ -101,7 +112,8 @@ function withOutside(list: CellList): ComplexCell[] {
   const count = new Map<number, number>();
   for (const cell of cells) for (const f of new Set(cell.faces)) count.set(f, (count.get(f) ?? 0) + 1);
   const faces = [...count].flatMap(([f, n]) => (n === 1 ? [f] : [])).sort((a, b) => a - b);
-  return [...cells, { mark: OUTSIDE_CELL, faces, outer: true }];
+  // Open cells of the file may share out the whole outside among them.
+  return faces.length > 0 ? [...cells, { mark: OUTSIDE_CELL, faces, outer: true }] : cells;
 }
 
 function notSurrounded(topology: Topology, table: EdgeTable, edge: number): Finding {

@@ -33,8 +33,14 @@ export function countSpace(
   };
 }
 
-/** The same for a complex as it stands, without loads. */
+/** The same for a complex as it stands. */
 export function countDiagrams(topology: Topology, complex: CellComplex): DiagramCounts {
   const space = functionSpace(topology, complex);
-  return countSpace(topology, complex, space, quadraticForces(topology, complex, space.basis), false);
+  return countSpace(
+    topology,
+    complex,
+    space,
+    quadraticForces(topology, complex, space.basis),
+    complex.openEdges.length > 0,
+  );
 }

@@ -17,10 +17,16 @@ export interface OpenComplex {
  * External loads and reactions as cells open to the outside: the unbounded cell falls into one region of the hull for
  * every part that the edges between loaded or supported nodes cut off (Bow's notation in space). The face between two open
  * cells would hold the edge and the lines of action at its two ends; a support that is held in every direction leaves its line free.
- * A complex without such edges comes back as it was.
+ * A complex without such edges, or one that the file gives with open cells, comes back as it was.
  */
 export function openOutside(topology: Topology, complex: CellComplex, loads: readonly Vec3[]): OpenComplex {
   const action = actions(topology, loads);
+  if (complex.openEdges.length > 0) {
+    return {
+      complex,
+      lines: new Map(complex.openEdges.map((e) => [e, linesAt(topology, complex, e, action)] as const)),
+    };
+  }
   const hull = complex.used.filter(
     (f) => complex.cells[complex.plus[f]].outer || complex.cells[complex.minus[f]].outer,
   );

@@ -81,6 +81,8 @@ function orientSurface(table: EdgeTable, faces: readonly number[]): Map<number, 
   for (let f = queue.pop(); f !== undefined; f = queue.pop()) {
     for (let k = 0; k < table.faceEdges[f].length; k++) {
       const [a, b] = byEdge.get(table.faceEdges[f][k])!;
+      // The rim of an open cell.
+      if (b === undefined) continue;
       const other = a.face === f ? b : a;
       const wanted = -sense.get(f)! * table.along[f][k] * other.along;
       const known = sense.get(other.face);

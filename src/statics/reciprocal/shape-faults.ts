@@ -9,9 +9,14 @@ const NAMED = 4;
 
 /**
  * What keeps a list of cells from being closed surfaces with every face between exactly two of them. A face that no
- * cell has is a warning: it takes no part.
+ * cell has is a warning: it takes no part. Cells may be open along `openEdges`.
  */
-export function shapeFaults(topology: Topology, table: EdgeTable, cells: readonly ComplexCell[]): Finding[] {
+export function shapeFaults(
+  topology: Topology,
+  table: EdgeTable,
+  cells: readonly ComplexCell[],
+  openEdges: ReadonlySet<number>,
+): Finding[] {
   const { truss } = topology;
   const faults: Finding[] = [];
   const cellsOf: number[][] = truss.faces.map(() => []);
@@ -30,7 +35,7 @@ export function shapeFaults(topology: Topology, table: EdgeTable, cells: readonl
   for (const cell of cells) {
     const count = new Map<number, number>();
     for (const f of new Set(cell.faces)) for (const e of table.faceEdges[f]) count.set(e, (count.get(e) ?? 0) + 1);
-    const open = [...count].flatMap(([e, n]) => (n === 1 ? [e] : []));
+    const open = [...count].flatMap(([e, n]) => (n === 1 && !openEdges.has(e) ? [e] : []));
     const pinched = [...count].flatMap(([e, n]) => (n > 2 ? [e] : []));
     if (cell.faces.length === 0) faults.push(finding('cell-empty', cell.mark));
     else if (open.length > 0)
