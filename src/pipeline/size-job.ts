@@ -12,7 +12,9 @@ export function sizeJob(file: Truss, job: Job, tell?: (round: number, heavier: n
     job,
     async (truss) => {
       const { parts, utilisations, forces, solution } = await assess(truss, quick);
-      return { parts, utilisations, loading: { forces: forces?.values ?? null, solution } };
+      // Forces that the analysis found stand in the solution already.
+      const claimed = forces && forces.source !== 'analysis' ? forces.values : null;
+      return { parts, utilisations, loading: { forces: claimed, solution } };
     },
     tell,
   );

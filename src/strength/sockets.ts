@@ -106,8 +106,19 @@ const noPath = (hub: HubPart, c: SocketCase): Finding =>
       joint: c.socket.joint,
       sign: c.actions.axial > 0 ? 'tension' : 'compression',
       combination: c.actions.combination,
+      why: whyNoPath(c),
     },
   });
+
+/** What keeps a joint from carrying a force, in words. */
+function whyNoPath(c: SocketCase): string {
+  const { joint, bolted, pin } = c.socket;
+  if (bolted) return 'its slotted end has no room for bolts; choose a larger section';
+  if (joint === 'glued')
+    return 'the strut ends before its socket begins; make nodes.depth_mm larger than saw.endFloat_mm';
+  if (joint === 'pinned' && pin <= 0) return 'it has no pin; give nodes.pin_mm';
+  return 'glue or pin it';
+}
 
 function overStressed(hub: HubPart, c: SocketCase, verdict: Verdict): Finding {
   const depth = requiredDepth(c);

@@ -193,6 +193,16 @@ describe('sockets', () => {
     }
   });
 
+  it('a glued one that the strut does not reach says why', () => {
+    const job = defaultJob();
+    const { truss, parts } = oneStrut(job, 100);
+    const hubs = parts.hubs.map((h) => ({ ...h, sockets: h.sockets.map((s) => ({ ...s, depth: 0.5 })) }));
+    const { findings } = judge(truss, { ...parts, hubs }, FORCES_OF_FILE, job);
+    const stuck = findings.filter((f) => f.code === 'socket-no-path');
+    expect(stuck.length).toBe(2);
+    expect(stuck[0]!.about!['why']).toContain('ends before its socket begins');
+  });
+
   it('a pinned one governs by its weakest part in tension', () => {
     const job = defaultJob();
     const { truss, parts } = oneStrut(job, 60, { joint: 'pinned' });

@@ -22,7 +22,7 @@ export const STRENGTH_FINDINGS = {
     'node',
     'N',
     (f) =>
-      `the socket of ${f.about?.['strut']} is ${f.about?.['joint']}, which holds no ${f.about?.['sign']}, and the strut carries ${num(f.value, 1)} N (${f.about?.['combination']}); glue or pin it`,
+      `the socket of ${f.about?.['strut']} is ${f.about?.['joint']} and holds no ${f.about?.['sign']}, but the strut carries ${num(f.value, 1)} N (${f.about?.['combination']}): ${f.about?.['why']}`,
     { withholds: true },
   ),
   'sockets-deepened': entry(
