@@ -28,7 +28,11 @@ export function forceTable(paper: Paper, records: PackRecords, rows: readonly Me
   if (judged)
     columns.push(
       { head: 'Utilisation', align: 'right', bold: true, value: (r) => fixed(r.worst?.utilisation, 2) },
-      { head: 'Governing', wraps: true, value: (r) => r.worst?.combination ?? '' },
+      {
+        head: 'Governing',
+        wraps: rows.some((r) => (r.worst?.combination.length ?? 0) > SHORT),
+        value: (r) => r.worst?.combination ?? '',
+      },
     );
   if (!judged)
     columns.push({
@@ -63,3 +67,6 @@ const SOURCE_WORDS = {
   analysis: 'from the analysis',
   none: 'not known',
 } as const;
+
+/** Names of combinations no longer than this keep to one line. */
+const SHORT = 24;

@@ -34,9 +34,15 @@ export function drawTable<Row>(
   const { pen } = paper;
   const layout = layOut(pen, paper.room.width, columns, rows, options.size ?? SIZE.body);
   const foot = (): number => paper.room.y + paper.room.height;
-  let at = y;
-  if (at + layout.headHeight + 3 * layout.rowHeight > foot()) at = paper.continueSheet().y;
-  at = drawHead(pen, paper.room.x, at, columns, layout);
+  // A narrow table stands side by side on a sheet that is wide enough.
+  const across = columns.some((c) => c.wraps)
+    ? 1
+    : Math.max(1, Math.floor((paper.room.width + BESIDE) / (layout.total + BESIDE)));
+  let top = y;
+  if (top + layout.headHeight + 3 * layout.rowHeight > foot()) top = paper.continueSheet().y;
+  let [strip, deepest] = [0, top];
+  const left = (): number => paper.room.x + strip * (layout.total + BESIDE);
+  let at = drawHead(pen, left(), top, columns, layout);
   let group: string | undefined;
   let inGroup = 0;
   for (const row of rows) {
@@ -45,21 +51,24 @@ export function drawTable<Row>(
     const heading = options.group?.(row);
     const starts = heading !== undefined && heading !== group;
     if (at + height + (starts ? GROUP + layout.rowHeight : 0) > foot()) {
-      at = drawHead(pen, paper.room.x, paper.continueSheet().y, columns, layout);
-      if (heading !== undefined && !starts) at = drawGroup(pen, paper, at, `${heading}, continued`);
+      strip = (strip + 1) % across;
+      if (strip === 0) deepest = top = paper.continueSheet().y;
+      at = drawHead(pen, left(), top, columns, layout);
+      if (heading !== undefined && !starts) at = drawGroup(pen, left(), layout.total, at, `${heading}, continued`);
       inGroup = 0;
     }
     if (starts) {
       group = heading;
-      at = drawGroup(pen, paper, at, heading);
+      at = drawGroup(pen, left(), across > 1 ? layout.total : paper.room.width, at, heading);
       inGroup = 0;
     }
-    drawRow(pen, paper.room.x, at, columns, cells, layout);
+    drawRow(pen, left(), at, columns, cells, layout);
     at += height;
+    deepest = Math.max(deepest, at);
     if (++inGroup % 5 === 0)
-      pen.line([paper.room.x, at], [paper.room.x + layout.total, at], { width: LINE.hair, colour: INK.grey });
+      pen.line([left(), at], [left() + layout.total, at], { width: LINE.hair, colour: INK.grey });
   }
-  return at + 3;
+  return Math.max(deepest, at) + 3;
 }
 
 /** Draws a table that stays on its sheet, no wider than `width`; returns where the next thing may start. */
@@ -99,6 +108,8 @@ interface Layout {
 }
 
 const GROUP = 8;
+/** Between two strips of one table that stand side by side, mm. */
+const BESIDE = 14;
 /** Between columns, mm: least and most. */
 const GAP = { least: 2.5, most: 9, close: 5 } as const;
 /** Added to a line of text, mm. */
@@ -187,9 +198,9 @@ function drawHead<Row>(pen: Pen, x: number, y: number, columns: readonly Column<
   return rule + 0.6;
 }
 
-function drawGroup(pen: Pen, paper: Paper, y: number, heading: string): number {
-  const fitted = fitText(pen, heading, paper.room.width, { size: SIZE.body + 1, bold: true }, SIZE.note);
-  pen.text(fitted.text, paper.room.x, y + 5.5, { size: fitted.size, bold: true });
+function drawGroup(pen: Pen, x: number, width: number, y: number, heading: string): number {
+  const fitted = fitText(pen, heading, width, { size: SIZE.body + 1, bold: true }, SIZE.note);
+  pen.text(fitted.text, x, y + 5.5, { size: fitted.size, bold: true });
   return y + GROUP;
 }
 

@@ -67,6 +67,10 @@ function runsOf(findings: readonly Finding[]): Run[] {
 function sayRun({ first, others }: Run): string {
   if (others.length === 0) return sayFinding(first);
   const unit = first.unit === '' ? '' : ` ${first.unit}`;
+  if (first.subject === 'truss') {
+    const values = others.filter((f) => f.value !== null).map((f) => `${Number(f.value!.toPrecision(3))}${unit}`);
+    return `${sayFinding(first)}\nThe same ${others.length} times more${values.length > 0 ? `, with ${values.join(', ')}` : ''}`;
+  }
   const said = others.map((f) =>
     f.value === null ? f.subject : `${f.subject} (${Number(f.value.toPrecision(3))}${unit})`,
   );
