@@ -39,12 +39,14 @@ const cell = z.strictObject({
 const reciprocal = z.strictObject({
   newtonPerArea: z.number().positive().describe('N for one squared unit of this file of force face.'),
   vertices: z
-    .array(z.strictObject({ cell: z.string(), at: triple }))
+    .array(
+      z.strictObject({ cell: z.string().describe('Mark of its cell.'), at: triple.describe('x, y, z in `units`.') }),
+    )
     .describe('The force diagram: one vertex a cell, in `units`.'),
 });
 
 const support = z.strictObject({
-  node: z.string(),
+  node: z.string().describe('Mark of the node.'),
   fixed: z
     .string()
     .regex(/^[xyz]{1,3}$/)
@@ -53,21 +55,25 @@ const support = z.strictObject({
 
 const load = z.strictObject({
   case: z.string().meta({ minLength: 1, maxLength: 40, description: 'Name of the load case.' }),
-  node: z.string(),
+  node: z.string().describe('Mark of the node.'),
   force: triple.describe('N, in the axes of the truss.'),
 });
 
 /** The truss file, `strutwright-truss/1`, as it is written: lengths in its own unit, degrees, optional lists left out. */
 export const trussFileSchema = z.strictObject({
-  $schema: z.string().optional(),
+  $schema: z.string().optional().describe('Where an editor finds the JSON Schema of this file.'),
   format: z.literal('strutwright-truss/1').describe('Names this file format and its version.'),
   units: z.enum(LENGTH_UNITS).describe('Unit of every length in this file.'),
-  nodes: z.array(node).max(LIMITS.nodes),
+  nodes: z.array(node).max(LIMITS.nodes).describe('Where struts meet.'),
   members: z.array(member).max(LIMITS.members).describe('The struts.'),
-  faces: z.array(face).max(LIMITS.faces).optional(),
-  cells: z.array(cell).max(LIMITS.faces).optional(),
-  reciprocal: reciprocal.optional(),
-  supports: z.array(support).optional(),
+  faces: z.array(face).max(LIMITS.faces).optional().describe('Plane loops of nodes; a panel may be made for each.'),
+  cells: z
+    .array(cell)
+    .max(LIMITS.faces)
+    .optional()
+    .describe('Closed by faces: what the force diagram has its vertices for.'),
+  reciprocal: reciprocal.optional().describe('A force diagram: the area of its faces is force.'),
+  supports: z.array(support).optional().describe('Nodes that are held, and how.'),
   loads: z.array(load).optional().describe('Loads on nodes, by case; "given" is what the given forces balance.'),
 });
 

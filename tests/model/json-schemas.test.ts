@@ -11,3 +11,19 @@ it('a point has exactly three numbers', () => {
   const text = JSON.stringify(jsonSchemas()['truss.schema.json']);
   expect(text).toContain('"minItems":3,"maxItems":3');
 });
+
+it('explains every key, for editors', () => {
+  const bare: string[] = [];
+  const walk = (schema: Record<string, unknown>, path: string): void => {
+    for (const [key, value] of Object.entries(
+      (schema['properties'] ?? {}) as Record<string, Record<string, unknown>>,
+    )) {
+      if (!value['description']) bare.push(`${path}.${key}`);
+      walk(value, `${path}.${key}`);
+    }
+    for (const inner of [schema['items'], schema['additionalProperties'], ...((schema['anyOf'] as unknown[]) ?? [])])
+      if (inner && typeof inner === 'object') walk(inner as Record<string, unknown>, `${path}[]`);
+  };
+  for (const [name, schema] of Object.entries(jsonSchemas())) walk(schema as Record<string, unknown>, name);
+  expect(bare).toEqual([]);
+});

@@ -39,4 +39,5 @@ export const analysisSchema = z
       .default(1000)
       .describe('A person at any node in turn, N, where the use asks for it.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('How the structure is analysed.');

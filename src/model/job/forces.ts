@@ -13,7 +13,12 @@ export const forcesSchema = z
       .describe('Sign of a reciprocal diagram that nothing else signs.'),
     largest_N: z.number().positive().optional().describe('Largest member force that a found diagram is scaled to, N.'),
     fix: z
-      .array(z.strictObject({ strut: z.string(), force_N: z.number() }))
+      .array(
+        z.strictObject({
+          strut: z.string().describe('Mark of the strut.'),
+          force_N: z.number().describe('Its force, N, tension positive.'),
+        }),
+      )
       .default([])
       .describe('Forces of some struts, N, that pick one diagram out of several.'),
     pattern: z
@@ -21,4 +26,5 @@ export const forcesSchema = z
       .default({})
       .describe('Sign wanted in a group of struts, by group.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('Where the member forces come from.');

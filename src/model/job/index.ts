@@ -14,7 +14,7 @@ import { sawSchema, stockSchema, strutsSchema } from './struts.js';
 
 /** The job: every key with its default, a section a file. */
 export const jobSchema = z.strictObject({
-  $schema: z.string().optional(),
+  $schema: z.string().optional().describe('Where an editor finds the JSON Schema of this file.'),
   ...identityShape,
   forces: forcesSchema,
   analysis: analysisSchema,

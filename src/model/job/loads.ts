@@ -29,21 +29,32 @@ export const loadsSchema = z
             .optional()
             .describe('Groups of faces that the pressure acts on. Absent: every panel.'),
           nodes: z
-            .array(z.strictObject({ node: z.string(), force_N: triple }))
+            .array(
+              z.strictObject({
+                node: z.string().describe('Mark of the node.'),
+                force_N: triple.describe('x, y, z in N.'),
+              }),
+            )
             .default([])
             .describe('Loads on nodes, N, in the axes of the truss.'),
           temperature_K: z.number().optional().describe('Change of temperature of every strut, K.'),
           misfit: z
-            .array(z.strictObject({ strut: z.string(), longer_mm: z.number() }))
+            .array(
+              z.strictObject({
+                strut: z.string().describe('Mark of the strut.'),
+                longer_mm: z.number().describe('Too long: positive; too short: negative, mm.'),
+              }),
+            )
             .default([])
             .describe('Struts cut too long (positive) or too short, mm.'),
         }),
       )
-      .default([]),
+      .default([])
+      .describe('Load cases beyond the self-weight.'),
     combinations: z
       .array(
         z.strictObject({
-          name: z.string().min(1).max(60),
+          name: z.string().min(1).max(60).describe('Name of the combination, printed.'),
           factors: z.record(z.string(), z.number()).describe('Factor by case name; self-weight is "self-weight".'),
         }),
       )
@@ -53,16 +64,17 @@ export const loadsSchema = z
       .enum(['A', 'B', 'C', 'D', 'H'])
       .default('A')
       .describe('Category of imposed load, for psi (EN 1990 table A1.1).'),
-    gammaG: z.number().positive().default(1.35),
+    gammaG: z.number().positive().default(1.35).describe('Partial factor of permanent load that harms (EN 1990 A1.2).'),
     gammaGfavourable: z.number().positive().default(0.9).describe('Permanent load where it helps (EQU).'),
-    gammaQ: z.number().positive().default(1.5),
+    gammaQ: z.number().positive().default(1.5).describe('Partial factor of the other loads (EN 1990 A1.2).'),
     indoors: z.boolean().optional().describe('true says that no wind or snow can reach it; absent: decided by `use`.'),
     anchorage: z
       .strictObject({
-        kind: z.enum(['anchors', 'ballast', 'ground-contact']),
+        kind: z.enum(['anchors', 'ballast', 'ground-contact']).describe('How uplift is held.'),
         capacity_N: z.number().nonnegative().optional().describe('Uplift that one anchor holds, N.'),
       })
       .optional()
       .describe('What holds the supports down. Outdoors its absence is a stop.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('Load cases and how they are combined.');

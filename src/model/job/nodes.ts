@@ -44,7 +44,11 @@ export const nodesSchema = z
       .nonnegative()
       .default(1.2)
       .describe('Diameter of the vent at the socket floor, for glue and air; 0: none.'),
-    chamfer_mm: z.number().nonnegative().default(0.5),
+    chamfer_mm: z
+      .number()
+      .nonnegative()
+      .default(0.5)
+      .describe('Chamfer at socket mouths and bed edges, against the squeezed first layer.'),
     mergeBelow_deg: z
       .number()
       .nonnegative()
@@ -52,48 +56,63 @@ export const nodesSchema = z
       .describe('Sleeves nearer than this are merged, their bores kept apart.'),
     leastAngle_deg: z.number().positive().default(12).describe('Bars nearer than this cannot be made.'),
     marks: z.boolean().default(true).describe('Whether marks are engraved.'),
-    markDepth_mm: z.number().positive().optional(),
-    markHeight_mm: z.number().positive().optional(),
+    markDepth_mm: z
+      .number()
+      .positive()
+      .optional()
+      .describe('Depth of engraved letters; absent: what the way of printing allows.'),
+    markHeight_mm: z
+      .number()
+      .positive()
+      .optional()
+      .describe('Height of engraved capitals; absent: what the way of printing allows.'),
     bondStrength_MPa: z.number().positive().optional().describe('Shear strength of the glue line from your own test.'),
     foot: z
       .strictObject({
         plate_mm: z.number().positive().default(60).describe('Diameter of the base plate.'),
-        thickness_mm: z.number().positive().default(6),
-        anchors: z.int().nonnegative().default(3),
-        anchor_mm: z.number().positive().default(5),
+        thickness_mm: z.number().positive().default(6).describe('Thickness of the base plate.'),
+        anchors: z.int().nonnegative().default(3).describe('Holes for anchors in the base plate.'),
+        anchor_mm: z.number().positive().default(5).describe('Diameter of an anchor.'),
         levelling_mm: z.number().nonnegative().default(0).describe('Diameter of a levelling screw; 0: none.'),
       })
-      .prefault({}),
+      .prefault({})
+      .describe('The base plate of the system `foot`.'),
     ball: z
       .strictObject({
         diameter_mm: z.number().positive().optional().describe('Absent: the least that holds every bore.'),
-        material: z.string().default('beech-dowel'),
+        material: z.string().default('beech-dowel').describe('What balls are turned from.'),
       })
-      .prefault({}),
+      .prefault({})
+      .describe('The ball of the system `drilled-ball`.'),
     orientation: z
       .strictObject({
-        overhang: z.number().nonnegative().default(1),
-        height: z.number().nonnegative().default(0.3),
+        overhang: z.number().nonnegative().default(1).describe('Weight of overhangs.'),
+        height: z.number().nonnegative().default(0.3).describe('Weight of height.'),
         tension: z.number().nonnegative().default(1).describe('Weight of tension across layers.'),
       })
       .prefault({})
       .describe('Weights of the print orientation.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('Node connectors.');
 
 export const printersSchema = z
   .array(
     z.strictObject({
-      name: z.string().default('printer'),
-      bed: z.enum(['rectangle', 'circle']).default('rectangle'),
+      name: z.string().default('printer').describe('What the printer is called on the sheets.'),
+      bed: z.enum(['rectangle', 'circle']).default('rectangle').describe('Shape of the bed.'),
       width_mm: z.number().positive().default(210).describe('Usable width, or diameter of a round bed.'),
-      depth_mm: z.number().positive().default(210),
-      height_mm: z.number().positive().default(240),
-      margin_mm: z.number().nonnegative().default(2),
-      spacing_mm: z.number().nonnegative().default(4),
-      layer_mm: z.number().positive().default(0.2),
+      depth_mm: z.number().positive().default(210).describe('Usable depth.'),
+      height_mm: z.number().positive().default(240).describe('Usable height.'),
+      margin_mm: z.number().nonnegative().default(2).describe('Kept free along the edge of the bed.'),
+      spacing_mm: z.number().nonnegative().default(4).describe('Between two pieces on the bed.'),
+      layer_mm: z.number().positive().default(0.2).describe('Height of one layer.'),
       flow_mm3_per_s: z.number().positive().default(8).describe('Plastic laid per second, averaged.'),
-      layerChange_s: z.number().nonnegative().default(4),
+      layerChange_s: z
+        .number()
+        .nonnegative()
+        .default(4)
+        .describe('Time between two layers, for the estimate of the time.'),
     }),
   )
   .min(1)

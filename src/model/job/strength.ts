@@ -18,4 +18,5 @@ export const strengthSchema = z
       .describe('Load duration of the given forces, for kmod.'),
     effectiveLength: z.number().positive().default(1).describe('Effective length over node-to-node length.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('Which rules judge the parts.');

@@ -23,7 +23,8 @@ export const strutsSchema = z
       .default([])
       .describe('Sections that `strutwright size` may choose from, lightest first decided by mass.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('Sections of the struts.');
 
 export const sawSchema = z
   .strictObject({
@@ -45,18 +46,19 @@ export const sawSchema = z
       .default(150)
       .describe('Pieces shorter than this are clamped, never hand-held.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('The saw.');
 
 export const stockSchema = z
   .strictObject({
     bars: z
       .array(
         z.strictObject({
-          section: z.string(),
-          length_mm: z.number().positive(),
-          price: z.number().positive().default(1),
+          section: z.string().describe('Name of a section, from the catalogue or `sections`.'),
+          length_mm: z.number().positive().describe('Length of one bar, mm.'),
+          price: z.number().positive().default(1).describe('Price of one bar.'),
           available: z.int().nonnegative().optional().describe('Absent: as many as needed.'),
-          name: z.string().optional(),
+          name: z.string().optional().describe('What the shop calls it; absent: section and length.'),
         }),
       )
       .default([])
@@ -64,9 +66,9 @@ export const stockSchema = z
     rack: z
       .array(
         z.strictObject({
-          section: z.string(),
-          length_mm: z.number().positive(),
-          mark: z.string().optional(),
+          section: z.string().describe('Name of a section, from the catalogue or `sections`.'),
+          length_mm: z.number().positive().describe('Length of one bar, mm.'),
+          mark: z.string().optional().describe('Mark that stands on the offcut.'),
         }),
       )
       .default([])
@@ -80,4 +82,5 @@ export const stockSchema = z
       .describe('Value of a kept offcut as a share of the price per length.'),
     currency: z.string().max(8).default('').describe('Printed beside prices.'),
   })
-  .prefault({});
+  .prefault({})
+  .describe('What the struts are cut from.');
