@@ -64,6 +64,8 @@ export interface BucklingResult {
   readonly factors: readonly number[];
   /** Shape of the lowest, 3 a node, largest component 1. */
   readonly shape: Float64Array | null;
+  /** Mark of the strut that bows most between its nodes in the lowest shape; null where the nodes move most. */
+  readonly strut: string | null;
 }
 
 /** All that statics finds out. A null field was not computed; the reason stands in `notChecked`. */

@@ -28,11 +28,9 @@ export function factorise(analysis: Analysis, lower: SparseMatrix): Factor {
   const side = analysis.largestFront + OVERSHOOT;
   const front = frontWorkspace(side * side, side * Math.max(1, analysis.largestWidth));
   const values = new Float64Array(factorStarts[count]);
-  const stack = new Float64Array(analysis.stackSize);
+  const { stack, local, map } = scratchOf(analysis);
   const pending: number[] = []; // supernodes whose updates wait on the stack, in order
   let top = 0;
-  const local = new Int32Array(analysis.size);
-  const map = new Int32Array(analysis.largestFront);
   const diagonal = diagonalOf(lower);
   let negative = 0;
   let pivotRatio = Infinity;
@@ -94,6 +92,26 @@ export function factorise(analysis: Analysis, lower: SparseMatrix): Factor {
     }
   }
   return { analysis, state: 'factorised', stoppedAt: -1, values, negative, pivotRatio: count === 0 ? 1 : pivotRatio };
+}
+
+/** Room that every factor of one analysis needs and none keeps. */
+interface Scratch {
+  readonly stack: Float64Array;
+  readonly local: Int32Array;
+  readonly map: Int32Array;
+}
+const scratches = new WeakMap<Analysis, Scratch>();
+
+function scratchOf(analysis: Analysis): Scratch {
+  const known = scratches.get(analysis);
+  if (known) return known;
+  const made = {
+    stack: new Float64Array(analysis.stackSize),
+    local: new Int32Array(analysis.size),
+    map: new Int32Array(analysis.largestFront),
+  };
+  scratches.set(analysis, made);
+  return made;
 }
 
 /** The diagonal of a lower triangle. */

@@ -41,7 +41,7 @@ export const STATICS_FINDINGS = {
     'truss',
     '',
     (f) =>
-      `buckles at ${num(f.value, 2)} times ${f.about?.['combination']} with design stiffness, less than ${num(f.limit, 0)}; use stiffer struts or shorter ones`,
+      `buckles at ${num(f.value, 2)} times ${f.about?.['combination']} with design stiffness, less than ${num(f.limit, 0)} (${f.about?.['first']}); use stiffer struts or shorter ones`,
     { waivable: false },
   ),
   'second-order': entry(
@@ -49,7 +49,7 @@ export const STATICS_FINDINGS = {
     'truss',
     '',
     (f) =>
-      `buckles at ${num(f.value, 2)} times ${f.about?.['combination']} with design stiffness, less than ${num(f.limit, 0)}: second-order effects are not small (EN 1993-1-1 5.2.1)${f.about?.['made'] === 'yes' ? '; they were analysed with imperfections and stand in the combinations' : '; ask for analysis.secondOrder'}`,
+      `buckles at ${num(f.value, 2)} times ${f.about?.['combination']} with design stiffness, less than ${num(f.limit, 0)} (${f.about?.['first']}): second-order effects are not small (EN 1993-1-1 5.2.1)${f.about?.['made'] === 'yes' ? '; they were analysed with imperfections and stand in the combinations' : '; ask for analysis.secondOrder'}`,
   ),
   'buckling-unsettled': entry(
     'warn',

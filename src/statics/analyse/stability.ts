@@ -47,7 +47,12 @@ export function stabilityOf(
   const chosen = mostCompressed(topology, parts, responses).slice(0, TRIED);
   const buckling: BucklingResult[] = [];
   const findings: Finding[] = [];
-  let worst: { readonly factor: number; readonly combination: string; readonly shape: Float64Array } | null = null;
+  let worst: {
+    readonly factor: number;
+    readonly combination: string;
+    readonly shape: Float64Array;
+    readonly strut: string | null;
+  } | null = null;
   let cut: { readonly sub: Subdivided; readonly prepared: Extract<PreparedFrame, { state: 'stiff' }> } | null = null;
   if (model.kind === 'frame') {
     const sub = subdivide(model.prepared.frame, topology.truss.members.length > LARGE ? ELEMENTS_OF_LARGE : ELEMENTS);
@@ -72,6 +77,7 @@ export function stabilityOf(
     buckling.push({
       combination: name,
       factors: found.factors,
+      strut: shape && cut ? bowingStrut(topology, cut.sub, shape) : null,
       shape: shape
         ? Float64Array.from(
             { length: 3 * topology.truss.nodes.length },
@@ -83,7 +89,8 @@ export function stabilityOf(
       findings.push(finding('buckling-unsettled', 'truss', { about: { combination: name } }));
     if (found.factors.length === 0) continue;
     const factor = found.factors[0]! * softer;
-    if (worst === null || factor < worst.factor) worst = { factor, combination: name, shape: shape! };
+    if (worst === null || factor < worst.factor)
+      worst = { factor, combination: name, shape: shape!, strut: buckling[buckling.length - 1]!.strut };
   }
   if (!worst || worst.factor >= SECOND_ORDER)
     return { buckling, findings, lowest: worst?.factor ?? null, secondOrder: null };
@@ -110,10 +117,24 @@ export function stabilityOf(
       ...(stands ? { level: 'note' as const } : {}),
       value: factor,
       limit: low ? LEAST : SECOND_ORDER,
-      about: { combination, made: stands ? 'yes' : 'no' },
+      about: {
+        combination,
+        made: stands ? 'yes' : 'no',
+        first: worst.strut ? `${worst.strut} bows` : 'the nodes sway',
+      },
     }),
   );
   return { buckling, findings, lowest: factor, secondOrder };
+}
+
+/** The strut with the largest displacement of the shape inside it; null where that is at a node. */
+function bowingStrut(topology: Topology, sub: Subdivided, shape: Float64Array): string | null {
+  let most = 0;
+  for (let i = 0; i < shape.length; i++) if (i % 6 < 3 && Math.abs(shape[i]!) > Math.abs(shape[most]!)) most = i;
+  const node = Math.floor(most / 6);
+  if (node < topology.truss.nodes.length) return null;
+  const element = sub.frame.members.findIndex((m) => m.ends[1] === node);
+  return topology.truss.members[sub.memberOf[element]!]!.mark;
 }
 
 /** Combinations by the largest compression over Euler's load of any strut, worst first; those without compression are left out. */
