@@ -14,6 +14,10 @@ export const strutsSchema = z
       .default({})
       .describe('Closing detail of a strut end, by "strut@node".'),
     pinDrill: z.boolean().default(false).describe('Whether strut ends are drilled for the cross pins before assembly.'),
+    faceJoints: z
+      .boolean()
+      .default(false)
+      .describe('Whether rectangular struts meet face to face without sockets: lists their mitre and bevel angles.'),
     shareStops: z
       .boolean()
       .default(false)

@@ -19,6 +19,7 @@ import { report } from '../../documents/report/report.js';
 import { buyingListCsv } from '../../documents/struts/buying-list.js';
 import { cutListCsv } from '../../documents/struts/cut-list-csv.js';
 import { cutListPdf } from '../../documents/struts/cut-list-pdf.js';
+import { drillListCsv, endWorkPdf, sawAnglesCsv } from '../../documents/struts/end-work.js';
 import { labelsPdf } from '../../documents/struts/labels.js';
 import { offcutsJson } from '../../documents/struts/offcuts.js';
 import { sawPlanPdf } from '../../documents/struts/saw-plan.js';
@@ -42,6 +43,9 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['struts/labels.pdf', labelsPdf],
   ['struts/buying-list.csv', buyingListCsv],
   ['struts/offcuts.json', offcutsJson],
+  ['struts/end-work.pdf', (r, f) => (r.job.struts.pinDrill || r.job.struts.faceJoints ? endWorkPdf(r, f) : null)],
+  ['struts/drill-list.csv', (r) => (r.job.struts.pinDrill ? drillListCsv(r) : null)],
+  ['struts/saw-angles.csv', (r) => (r.job.struts.faceJoints ? sawAnglesCsv(r) : null)],
   ['nodes/bar-directions.csv', barDirectionsCsv],
   ['nodes/bar-angles.csv', barAnglesCsv],
   ['nodes/drilling.csv', drillingCsv],
