@@ -83,7 +83,8 @@ export function bestPlace(layout: Layout, i: number, fields: readonly number[], 
   for (const place of best) slide(layout, i, place, 0.25 * size, 0.02 * size, random);
   best.sort((a, b) => a.cost - b.cost);
   const winner = best[0]!;
-  slide(layout, i, winner, 0.01 * size, 2e-5 * size, random);
+  // Down to below what counts as overlap: a coarser end would leave traces that never go.
+  slide(layout, i, winner, 0.01 * size, Math.min(2e-5 * size, layout.tolerance / 2), random);
   return winner;
 }
 
