@@ -50,9 +50,14 @@ function writeUpright(rings: readonly Ring[], words: PanelWords, height: number)
     if (h === 0) break;
     const block = wordsBlock(words, h);
     const [w, tall] = block.size;
-    const [x, y] = poleOfInaccessibility(rings, 0.5, Math.max(0.2, w / tall));
-    const placed = block.strokes.map((line) => line.map(([px, py]): Point2 => [px + x - w / 2, py + y - tall / 2]));
-    if (!inside(placed, rings, h * MARGIN_SHARE)) continue;
+    // Holes stand along the edges: mostly the widest room of the outline alone is clear of them, and found much faster.
+    const placeIn = (room: readonly Ring[]): Polyline2[] | null => {
+      const [x, y] = poleOfInaccessibility(room, 0.1 * h, Math.max(0.2, w / tall));
+      const strokes = block.strokes.map((line) => line.map(([px, py]): Point2 => [px + x - w / 2, py + y - tall / 2]));
+      return inside(strokes, rings, h * MARGIN_SHARE) ? strokes : null;
+    };
+    const placed = placeIn(rings.slice(0, 1)) ?? placeIn(rings);
+    if (!placed) continue;
     const strut = words.strut ? alongEdge(rings, words.strut, h, placed) : [];
     return { strokes: [...placed, ...strut], height: h };
   }

@@ -78,4 +78,30 @@ export const PANEL_FINDINGS = {
     'mm',
     () => 'has no room for its mark; stick a label on its outer side before it leaves the machine',
   ),
+  'panel-split': entry(
+    'note',
+    'panel',
+    'mm',
+    (f) => `its face is out of flat by ${num(f.value)} mm, so it is made in parts: ${f.about?.['parts']}`,
+  ),
+  'panel-folded': entry(
+    'note',
+    'panel',
+    'mm',
+    (f) => `its face is out of flat by ${num(f.value)} mm, so it is scored and folded along the engraved line`,
+  ),
+  'panel-bent': entry(
+    'note',
+    'panel',
+    'MPa',
+    (f) => `is bent cold onto its face; the sheet bears ${num(f.value, 1)} of ${num(f.limit, 1)} MPa for good`,
+  ),
+  'panel-bends-too-much': entry(
+    'stop',
+    'panel',
+    'MPa',
+    (f) =>
+      `bent cold onto its face the sheet would bear ${num(f.value, 1)} MPa, more than ${num(f.limit, 1)}; use a thinner sheet or split it`,
+    { withholds: true },
+  ),
 } as const;
