@@ -69,7 +69,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     job,
   );
 
-  const assembly = planAssembly(assessed);
+  const assembly = planAssembly({ ...assessed, bars: bars.plan.bars });
   const fitUp = planFitUp(assessed.topology, assessed.parts, job);
 
   const settled = settle({

@@ -1,3 +1,4 @@
+import { assemblyPdf } from '../../documents/assembly/assembly-pdf.js';
 import { fitUpCsv, fitUpJson } from '../../documents/assembly/fit-up.js';
 import { packingListCsv } from '../../documents/assembly/packing-list.js';
 import { checkReport } from '../../documents/check-json.js';
@@ -51,6 +52,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['nodes/drilling.csv', drillingCsv],
   ['nodes/placement.json', placementJson],
   ['nodes/node-sheets.pdf', nodeSheets],
+  ['assembly.pdf', assemblyPdf],
   ['assembly/packing-list.csv', packingListCsv],
   ['assembly/fit-up.csv', fitUpCsv],
   ['assembly/fit-up.json', fitUpJson],

@@ -1,4 +1,5 @@
 import type { AssemblyPlan, AssemblyStep, Bag } from '../../model/assembly.js';
+import type { PlannedBar } from '../../model/plan.js';
 import type { AssemblySetting } from './setting.js';
 
 /** Hubs that go into one bag: what an hour's work uses up. Common practice, no source. */
@@ -34,14 +35,13 @@ function bagOf(name: string, steps: readonly AssemblyStep[]): Bag {
   };
 }
 
-/** Spare parts: a share of each kind, at least one: struts by section and cut length, hubs by number of sockets. */
-export function sparesOf(setting: AssemblySetting): AssemblyPlan['spares'] {
+/** Spare parts: a share of each kind, at least one: bars by what they were bought as, hubs by number of sockets. */
+export function sparesOf(setting: AssemblySetting, bars: readonly PlannedBar[]): AssemblyPlan['spares'] {
   const share = setting.job.assembly.spares;
   if (share === 0) return [];
   const count = new Map<string, number>();
   const add = (what: string): void => void count.set(what, (count.get(what) ?? 0) + 1);
-  for (const s of setting.parts.struts)
-    if (s.section && s.cutLength !== null) add(`strut ${s.section.name}, ${s.cutLength} mm`);
+  for (const b of bars) if (!b.fromRack) add(`bar ${b.stock}`);
   for (const h of setting.parts.hubs) if (h.makeable) add(`hub of ${h.sockets.length} sockets`);
   return [...count].map(([what, n]) => ({ what, count: Math.max(1, Math.ceil(n * share)) }));
 }

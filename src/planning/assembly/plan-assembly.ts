@@ -4,6 +4,7 @@ import type { Finding } from '../../model/finding.js';
 import { finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { Parts } from '../../model/parts.js';
+import type { PlannedBar } from '../../model/plan.js';
 import type { Topology } from '../../model/topology.js';
 import { piecesOf } from '../../statics/analyse/figure.js';
 import { hasAccess } from './access.js';
@@ -26,6 +27,8 @@ export interface AssemblyInput {
   readonly job: Job;
   /** By face index. */
   readonly forms: readonly FaceForm[];
+  /** The bars bought, for the spares. */
+  readonly bars?: readonly PlannedBar[];
 }
 
 /** Deflections are computed at most this many times in an order, evenly spread, so that time stays in bounds. */
@@ -63,7 +66,7 @@ export function planAssembly(input: AssemblyInput): {
       units: benchUnits(setting, input.forms, input.job.fit.flatnessWarn_mm),
       closing,
       bags: packBags(steps),
-      spares: sparesOf(setting),
+      spares: sparesOf(setting, input.bars ?? []),
     },
     findings,
   };

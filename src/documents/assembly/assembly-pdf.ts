@@ -1,0 +1,139 @@
+import type { AssemblyStep } from '../../model/assembly.js';
+import { CAUTION } from '../cautions.js';
+import { issueOf } from '../issue.js';
+import { wrapText, writeFitted } from '../kit/fit-text.js';
+import type { Fonts } from '../kit/fonts.js';
+import type { Area } from '../kit/geometry2.js';
+import { INK, LINE, SIZE } from '../kit/ink.js';
+import { Paper, type Written } from '../kit/paper.js';
+import { type Units, unitsOf } from '../kit/units.js';
+import { ISOMETRIC } from '../kit/view/camera.js';
+import { drawTrussView, type ViewNode, type ViewStrut } from '../kit/view/truss-view.js';
+import type { PackRecords } from '../records.js';
+import { packingSections } from './packing-sections.js';
+import { howItEnters, sayStep, stepNotes } from './step-words.js';
+
+/** Steps on an upright sheet, so that marks stay legible at arm's length. */
+const STEPS_A_SHEET = 3;
+const GAP = 4;
+const NEW_STROKE = 0.9;
+/** Share of a block's width that the words take. */
+const WORDS = 0.42;
+
+/** assembly.pdf: the steps in order, three on a sheet, new parts strong and what stands faint; then panels, bags, spares and what to mind. */
+export async function assemblyPdf(records: PackRecords, fonts: Fonts): Promise<Written> {
+  const units = unitsOf(records.job, 0);
+  const paper = new Paper(issueOf(records, fonts), 'Order of building', CAUTION, units.words);
+  const steps = records.assembly?.steps ?? [];
+  const building = steps.filter((s) => s.kind !== 'panel');
+  let area = paper.addSheet({
+    title: 'Order of building',
+    instruction:
+      'One step after the other: strong lines are new in the step, faint ones stand already. A triangle is a prop. Tick a step when it holds.',
+  });
+  const height = (area.height - (STEPS_A_SHEET - 1) * GAP) / STEPS_A_SHEET;
+  const seen = new Seen(records);
+  building.forEach((step, i) => {
+    if (i > 0 && i % STEPS_A_SHEET === 0) area = paper.continueSheet();
+    const y = area.y + (i % STEPS_A_SHEET) * (height + GAP);
+    drawStep(paper, { x: area.x, y, width: area.width, height }, records, step, seen, units);
+  });
+  packingSections(paper, records, units);
+  return paper.finish();
+}
+
+/** What stands and what is propped, as the steps go by. */
+class Seen {
+  readonly nodes = new Set<string>();
+  readonly struts = new Set<string>();
+  readonly propped = new Set<string>();
+  constructor(readonly records: PackRecords) {}
+
+  add(step: AssemblyStep): void {
+    for (const n of step.hubs) this.nodes.add(n);
+    for (const s of step.struts) this.struts.add(s.strut);
+    for (const n of step.release) this.propped.delete(n);
+    for (const n of step.props) this.propped.add(n);
+  }
+}
+
+function drawStep(paper: Paper, area: Area, records: PackRecords, step: AssemblyStep, seen: Seen, units: Units): void {
+  const { pen } = paper;
+  const before = { nodes: new Set(seen.nodes), struts: new Set(seen.struts) };
+  seen.add(step);
+  const words = area.width * WORDS;
+  pen.line([area.x, area.y], [area.x + area.width, area.y], { width: LINE.hair, colour: INK.grey });
+  pen.rectangle(area.x, area.y + 3, 4.5, 4.5, { width: LINE.normal });
+  writeFitted(
+    pen,
+    `Step ${step.number}`,
+    area.x + 7,
+    area.y + 7.2,
+    words - 7,
+    { size: SIZE.head, bold: true },
+    SIZE.body,
+  );
+  let y = area.y + 13;
+  const bottom = area.y + area.height - 1;
+  const line = (text: string, bold = false, indent = 0): void => {
+    for (const part of wrapText(pen, text, words - 4 - indent, { size: SIZE.body, bold })) {
+      if (y > bottom) return;
+      pen.text(part, area.x + indent, y, { size: SIZE.body, bold });
+      y += 4.3;
+    }
+  };
+  line(sayStep(step), true);
+  y += 1;
+  const cut = new Map(records.parts.struts.map((s) => [s.mark, s]));
+  for (const entry of step.struts) {
+    const strut = cut.get(entry.strut)!;
+    const how = howItEnters(entry);
+    const size = strut.cutLength === null ? 'no length' : `${units.length(strut.cutLength)} ${units.lengthUnit}`;
+    line(`${entry.strut}  ${strut.ends[0].node}–${strut.ends[1].node}  ${size}${how ? `: ${how}` : ''}`, false, 2);
+  }
+  y += 1;
+  for (const note of stepNotes(step, units)) line(note);
+  drawPicture(
+    paper,
+    { x: area.x + words, y: area.y + 1.5, width: area.width - words, height: area.height - 3 },
+    records,
+    before,
+    seen,
+  );
+}
+
+function drawPicture(
+  paper: Paper,
+  area: Area,
+  records: PackRecords,
+  before: { readonly nodes: ReadonlySet<string>; readonly struts: ReadonlySet<string> },
+  seen: Seen,
+): void {
+  const { truss } = records.topology;
+  const fresh = (mark: string): boolean => !before.nodes.has(mark) && seen.nodes.has(mark);
+  const newStruts = truss.members.filter((m) => seen.struts.has(m.mark) && !before.struts.has(m.mark));
+  const touched = new Set(newStruts.flatMap((m) => m.ends));
+  const nodes = truss.nodes.map(
+    (n): ViewNode => ({
+      mark: n.mark,
+      at: n.at,
+      show: fresh(n.mark) || touched.has(n.mark) ? 'mark' : 'none',
+      support: seen.propped.has(n.mark),
+    }),
+  );
+  const struts = truss.members.flatMap((m): ViewStrut[] => {
+    if (!seen.struts.has(m.mark)) return [];
+    const isNew = !before.struts.has(m.mark);
+    const [from, to] = m.ends.map((e) => records.topology.nodeIndex.get(e)!) as [number, number];
+    return [
+      {
+        mark: m.mark,
+        from,
+        to,
+        stroke: isNew ? { kind: 'plain', width: NEW_STROKE } : { kind: 'none' },
+        label: isNew ? { bold: m.mark, plain: '' } : null,
+      },
+    ];
+  });
+  drawTrussView(paper.pen, area, { camera: ISOMETRIC, nodes, struts, scale: 'fill', edge: 7 });
+}
