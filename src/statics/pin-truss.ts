@@ -90,6 +90,7 @@ export function solvePinTruss(truss: PinTruss, cases: readonly PinLoads[]): PinS
       const axial = strained(truss, units, k, displacements, c);
       const left = c.forces.slice();
       addBarForces(left, truss, units, axial, 1);
+      if (truss.prestress) addSidePulls(left, truss, units, lengths, truss.prestress, displacements);
       return {
         axial,
         displacements,
@@ -137,6 +138,26 @@ export function pinStiffness(
 
 const factorPin = (figure: PinFigure, freedoms: Freedoms, k: SparseMatrix): Factor =>
   factorise(analyse(k, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, figure.nodes) }), k);
+
+/** Adds what prestressed bars pull sideways once their ends have moved: t/L times the relative displacement square to the bar. */
+function addSidePulls(
+  p: Float64Array,
+  figure: PinFigure,
+  units: Float64Array,
+  lengths: Float64Array,
+  prestress: ArrayLike<number>,
+  d: Float64Array,
+): void {
+  for (let e = 0; e < lengths.length; e++) {
+    const [a, b] = [3 * figure.ends[2 * e], 3 * figure.ends[2 * e + 1]];
+    const along = elongation(figure, units, d, e);
+    for (let i = 0; i < 3; i++) {
+      const pull = (prestress[e] / lengths[e]) * (d[b + i] - d[a + i] - along * units[3 * e + i]);
+      p[a + i] += pull;
+      p[b + i] -= pull;
+    }
+  }
+}
 
 /** p + A (EA/L) e0 over all nodes. */
 function rightSide(truss: PinTruss, c: PinLoads, k: Float64Array, units: Float64Array): Float64Array {

@@ -263,6 +263,68 @@ describe('what cannot stand', () => {
   });
 });
 
+describe('the twisted prism of three sides (Tibert and Pellegrino 2003), joints as pins', () => {
+  const corner = (i: number, top: number): number[] => {
+    const a = (2 * Math.PI * i) / 3 + top * (Math.PI / 6);
+    return [200 * Math.cos(a), 200 * Math.sin(a), 300 * top];
+  };
+  const prism = trussOf({
+    nodes: [0, 1].flatMap((top) => [0, 1, 2].map((i) => corner(i, top))),
+    // Horizontals, verticals, then the three that are pressed.
+    edges: [
+      [0, 1],
+      [1, 2],
+      [2, 0],
+      [3, 4],
+      [4, 5],
+      [5, 3],
+      [0, 3],
+      [1, 4],
+      [2, 5],
+      [0, 4],
+      [1, 5],
+      [2, 3],
+    ],
+    supports: [
+      [0, 'xyz'],
+      [1, 'yz'],
+      [2, 'z'],
+    ],
+    loads: [[3, [0, 0, -2]]],
+  });
+  const change = (by_mm: number | null) =>
+    ({
+      nodes: { leastAngle_deg: 1 },
+      analysis: {
+        joints: 'pinned',
+        selfWeight: false,
+        ...(by_mm === null ? {} : { selfStress: { device: 'turnbuckle', strut: 'S6', by_mm } }),
+      },
+    }) as never;
+
+  it('is a stop without self-stress', () => {
+    const r = run(prism, change(null));
+    expect(r.solution.counts).toMatchObject({ selfStressStates: 1, mechanisms: 1, rigidBody: 0 });
+    expect(codes(r)).toContain('truss-mechanism');
+  });
+
+  it('is held by a turnbuckle that shortens a vertical, with the stiffness that says so', () => {
+    const r = run(prism, change(0.5));
+    expect(codes(r)).not.toContain('truss-mechanism');
+    const note = r.findings.find((f) => f.code === 'mechanism-held')!;
+    expect(note.value).toBeGreaterThan(0);
+    const stress = r.solution.cases.find((c) => c.name === 'self-stress')!.forces!;
+    for (const e of [0, 1, 2, 3, 4, 5, 6, 7, 8]) expect(stress[e]).toBeGreaterThan(0);
+    for (const e of [9, 10, 11]) expect(stress[e]).toBeLessThan(0);
+    const given = r.solution.cases.find((c) => c.name === 'given')!;
+    expect(given.reactions.reduce((sum, s) => sum + s.force[2], 0)).toBeCloseTo(2, 6);
+  });
+
+  it('is not held by one that lengthens it', () => {
+    expect(codes(run(prism, change(-0.5)))).toContain('truss-mechanism');
+  });
+});
+
 describe('supports', () => {
   it('that are lifted say how much anchor and ballast they need', () => {
     const push = tripod([60, 0, -10]);
