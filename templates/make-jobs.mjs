@@ -1,0 +1,190 @@
+// Writes the jobs of the templates, each a full job with every key explained, from the built program: npm run build first.
+// What stands here is what a template sets otherwise than the program; the rest are the program's own values.
+import { readFileSync, writeFileSync } from 'node:fs';
+import { jobSchema } from '../dist/model/job/index.js';
+import { jsonSchemas } from '../dist/model/json-schemas.js';
+
+const SCHEMA = jsonSchemas()['job.schema.json'];
+
+const TEMPLATES = {
+  'table-model': {
+    about: [
+      'A model for a table, of beech dowels, printed hubs and clear acrylic.',
+      'Any truss file of yours may stand under "truss". Print nodes/gauge.stl first, then enter the clearance that fits.',
+    ],
+    job: {
+      title: 'Table model',
+      date: '2026-12-01',
+      use: 'table',
+      struts: { section: 'beech-8' },
+      saw: { step_mm: 0.5, endFloat_mm: 0.75, kerf_mm: 2.4, endTrim_mm: 5 },
+      stock: {
+        bars: [{ section: 'beech-8', length_mm: 1000, price: 2.2 }],
+        leastOffcut_mm: 150,
+        currency: 'EUR',
+      },
+      printers: [{ name: 'desk printer', width_mm: 210, depth_mm: 210, height_mm: 210 }],
+      sheets: [{ name: 'acrylic 1000 x 600', width_mm: 1000, height_mm: 600 }],
+    },
+  },
+  'table-model-us': {
+    about: [
+      'A model for a table, of birch dowels from an American shop, printed hubs and clear acrylic.',
+      'Any truss file of yours may stand under "truss". Papers are in inches; keys say their own unit.',
+    ],
+    job: {
+      title: 'Table model',
+      date: '2026-12-01',
+      use: 'table',
+      struts: { section: 'birch-5/16in' },
+      saw: { step_mm: 0.79375, endFloat_mm: 0.75, kerf_mm: 2.4, endTrim_mm: 6.35 },
+      stock: {
+        bars: [
+          { section: 'birch-5/16in', length_mm: 914.4, price: 1.5, name: '5/16 x 36 in' },
+          { section: 'birch-5/16in', length_mm: 1219.2, price: 1.9, name: '5/16 x 48 in' },
+        ],
+        leastOffcut_mm: 152.4,
+        currency: 'USD',
+      },
+      printers: [{ name: 'desk printer', width_mm: 210, depth_mm: 210, height_mm: 210 }],
+      sheets: [
+        { name: 'acrylic 24 x 48 in', width_mm: 1219.2, height_mm: 609.6, price: 45 },
+        { name: 'acrylic 12 x 24 in', width_mm: 609.6, height_mm: 304.8, price: 14 },
+      ],
+      output: { paper: 'Letter', units: 'US', fractions: true, projection: 'third-angle', labels: 'Letter-3x10' },
+    },
+  },
+  'garden-pavilion': {
+    about: [
+      'A pavilion for a garden, of glued timber with bolted spigots and panels that may move outdoors.',
+      'It is a beginning, not a design: loads, anchorage and materials are those of your place, and a licensed engineer decides.',
+      'It stays on hold until you have tested a printed connector and entered its strength under "materials".',
+    ],
+    job: {
+      title: 'Garden pavilion',
+      date: '2026-12-01',
+      use: 'outdoor',
+      forces: { source: 'analysis' },
+      loads: {
+        cases: [
+          { name: 'snow', kind: 'snow', pressure_kN_per_m2: 0.5 },
+          { name: 'wind pressure', kind: 'wind', pressure_kN_per_m2: 0.4, direction: 'normal' },
+          { name: 'wind suction', kind: 'wind', pressure_kN_per_m2: -0.4, direction: 'normal' },
+        ],
+        category: 'H',
+        anchorage: { kind: 'anchors', capacity_N: 2000 },
+      },
+      analysis: { secondOrder: true },
+      strength: { serviceClass: 3 },
+      struts: { section: 'GL24h-60x60' },
+      saw: { step_mm: 1, endFloat_mm: 1, kerf_mm: 3.2, endTrim_mm: 20 },
+      stock: { bars: [{ section: 'GL24h-60x60', length_mm: 4000, price: 24 }], leastOffcut_mm: 400, currency: 'EUR' },
+      nodes: { system: 'spigot', systems: FEET(), process: 'powder', material: 'PA12-powder', joint: 'pinned', pin_mm: 12 },
+      printers: [{ name: 'powder bed', width_mm: 300, depth_mm: 300, height_mm: 300 }],
+      panels: { seating: 'over', thickness_mm: 6, holdBy: 'clips', corner: 'round', notFlat: 'flag' },
+      sheets: [{ name: 'acrylic 3050 x 2030', width_mm: 3050, height_mm: 2030, price: 240 }],
+      cutter: { kind: 'router', kerf_mm: 6, tool_mm: 6, spacing_mm: 10, margin_mm: 20 },
+    },
+  },
+};
+
+/** The pavilion stands on its six lowest nodes. */
+function FEET() {
+  return Object.fromEntries(['A1', 'A2', 'A3', 'A4', 'A5', 'A6'].map((mark) => [mark, 'foot']));
+}
+
+for (const [name, { about, job }] of Object.entries(TEMPLATES)) {
+  const given = { format: 'strutwright-job/1', truss: 'truss.json', ...job };
+  const whole = jobSchema.parse(given);
+  const text = `${about.map((line) => `// ${line}`).join('\n')}\n${write(whole, SCHEMA, '')}\n`;
+  writeFileSync(new URL(`${name}/job.json`, import.meta.url), text);
+}
+writeFileSync(new URL('table-model-us/truss.json', import.meta.url), inInches('table-model/truss.json'));
+writeFileSync(new URL('garden-pavilion/truss.json', import.meta.url), pavilion());
+
+/** A value with each key of an object under its explanation; keys that are left out stand there as comments. */
+function write(value, schema, indent) {
+  if (Array.isArray(value)) {
+    if (value.every((v) => v === null || typeof v !== 'object')) return `[${value.map((v) => JSON.stringify(v)).join(', ')}]`;
+    const deeper = `${indent}  `;
+    return `[\n${value.map((v) => deeper + write(v, schema.items ?? {}, deeper)).join(',\n')}\n${indent}]`;
+  }
+  if (value === null || typeof value !== 'object') return JSON.stringify(value);
+  const deeper = `${indent}  `;
+  const known = schema.properties ?? {};
+  const keys = Object.keys(known).length > 0 ? Object.keys(known) : Object.keys(value);
+  const lines = [];
+  const present = keys.filter((key) => value[key] !== undefined);
+  for (const key of keys) {
+    if (key === '$schema') continue;
+    const words = known[key]?.description;
+    if (words) lines.push(...wrap(words, deeper));
+    if (value[key] === undefined) lines.push(`${deeper}// "${key}": absent here`);
+    else {
+      const inner = known[key] ?? (typeof schema.additionalProperties === 'object' ? schema.additionalProperties : {});
+      const comma = key === present.at(-1) ? '' : ',';
+      lines.push(`${deeper}${JSON.stringify(key)}: ${write(value[key], inner, deeper)}${comma}`);
+    }
+  }
+  return lines.length === 0 ? '{}' : `{\n${lines.join('\n')}\n${indent}}`;
+}
+
+function wrap(words, indent) {
+  const lines = [];
+  let line = '';
+  for (const word of words.split(' ')) {
+    if (indent.length + line.length + word.length > 112) {
+      lines.push(line);
+      line = '';
+    }
+    line += line === '' ? word : ` ${word}`;
+  }
+  return [...lines, line].map((text) => `${indent}// ${text}`);
+}
+
+/** The same truss in inches, to a millionth; a force face of one squared inch is 645.16 of one squared millimetre. */
+function inInches(path) {
+  const text = readFileSync(new URL(path, import.meta.url), 'utf8');
+  const inches = (v) => Number((Number(v) / 25.4).toFixed(6));
+  return text
+    .replace(/"units": *"mm"/, '"units": "in"')
+    .replace(/"newtonPerArea": *([^,}]*)/, (_, n) => `"newtonPerArea": ${Number(n) * 25.4 ** 2}`)
+    .replace(/"at": *\[([^\]]*)\]/g, (_, list) => `"at": [${list.split(',').map(inches).join(', ')}]`);
+}
+
+/** Six posts, a ring of eaves, rafters to a crown, a brace in each wall and each roof bay; metres; invented. */
+function pavilion() {
+  const ring = (row, radius, height) =>
+    [0, 1, 2, 3, 4, 5].map((k) => {
+      const angle = (Math.PI * k) / 3;
+      return [`${row}${k + 1}`, [radius * Math.cos(angle), radius * Math.sin(angle), height].map((v) => Number(v.toFixed(6)) + 0)];
+    });
+  const nodes = [...ring('A', 1.5, 0), ...ring('B', 1.5, 2.1), ...ring('C', 0.6, 2.7)];
+  const next = (k) => (k % 6) + 1;
+  const members = [];
+  const add = (a, b, group) => members.push({ id: `S${String(members.length + 1).padStart(2, '0')}`, ends: [a, b], group });
+  for (let k = 1; k <= 6; k++) add(`A${k}`, `B${k}`, 'posts');
+  for (let k = 1; k <= 6; k++) add(`A${k}`, `B${next(k)}`, 'wall braces');
+  for (let k = 1; k <= 6; k++) add(`B${k}`, `B${next(k)}`, 'eaves');
+  for (let k = 1; k <= 6; k++) add(`B${k}`, `C${k}`, 'rafters');
+  for (let k = 1; k <= 6; k++) add(`B${k}`, `C${next(k)}`, 'roof braces');
+  for (let k = 1; k <= 6; k++) add(`C${k}`, `C${next(k)}`, 'crown');
+  const faces = [];
+  for (let k = 1; k <= 6; k++)
+    faces.push({ id: `P${k}`, nodes: [`B${k}`, `B${next(k)}`, `C${next(k)}`, `C${k}`], panel: true, group: 'roof' });
+  faces.push({ id: 'P7', nodes: ['C1', 'C2', 'C3', 'C4', 'C5', 'C6'], panel: true, group: 'crown' });
+  const row = (item) => `    ${JSON.stringify(item).replace(/([:,])(?=["[\d-])/g, '$1 ')}`;
+  const list = (name, items) => `  "${name}": [\n${items.map(row).join(',\n')}\n  ]`;
+  return `// An invented pavilion of 3 m across: six posts, eaves, a crown, a brace in every bay.\n{\n  "format": "strutwright-truss/1",\n  "units": "m",\n${[
+    list(
+      'nodes',
+      nodes.map(([id, at]) => ({ id, at })),
+    ),
+    list('members', members),
+    list('faces', faces),
+    list(
+      'supports',
+      [1, 2, 3, 4, 5, 6].map((k) => ({ node: `A${k}`, fixed: 'xyz' })),
+    ),
+  ].join(',\n')}\n}\n`;
+}
