@@ -14,6 +14,7 @@ import { cutListPdf } from '../../src/documents/struts/cut-list-pdf.js';
 import { loadFonts } from '../../src/machine/fonts.js';
 import { add, cross, scale, type Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob } from '../../src/model/job/index.js';
+import { inventedTruss } from './invented.js';
 import { exampleRecords, packRecords, planeTruss } from './pack-records.js';
 import { checkPdf, outside, overlaps, textOf } from './pdf.js';
 
@@ -44,6 +45,33 @@ describe('papers of a pack', () => {
   });
   it('node sheets name every node and strut', async () => {
     says(holds(await nodeSheets(records, fonts)), [...struts, ...nodes]);
+  });
+  it.each([
+    ['drilled-ball', { kind: 'round', diameter_mm: 8 }, 'Jig'],
+    ['socket', { kind: 'rectangle', width_mm: 8, height_mm: 14 }, 'Setback'],
+    ['spigot', { kind: 'tube', diameter_mm: 10, wall_mm: 1 }, 'Setback'],
+  ] as const)('node sheets of the system %s', async (system, shape, word) => {
+    const base = defaultJob();
+    const other = packRecords({
+      nodes: { ...base.nodes, system },
+      struts: { ...base.struts, section: 'own' },
+      sections: { own: { shape, material: 'beech-dowel' } },
+    });
+    const text = holds(await nodeSheets(other, fonts));
+    says(text, nodes);
+    expect(text).toContain(word);
+  });
+  it('every paper keeps its rules with marks as long as they may be', async () => {
+    const long = (mark: string): string => `Mark-of_${mark}_`.padEnd(24, 'W');
+    const plain = inventedTruss();
+    const truss = {
+      ...plain,
+      faces: [],
+      nodes: plain.nodes.map((n) => ({ ...n, mark: long(n.mark) })),
+      members: plain.members.map((m) => ({ ...m, mark: long(m.mark), ends: m.ends.map(long) as [string, string] })),
+    };
+    const records = packRecords({}, truss);
+    for (const write of [forceSheets, cutListPdf, nodeSheets, report]) holds(await write(records, fonts));
   });
   it('the report says every finding', async () => {
     const text = holds(await report(records, fonts));

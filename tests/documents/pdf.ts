@@ -73,10 +73,10 @@ export function overlaps(placed: readonly PlacedText[]): string[] {
   return found;
 }
 
-/** Words that leave their page or its free edge of 5 mm. */
+/** Words that leave their page or its free edge of 10 mm, with half a millimetre for what a font reaches over. */
 export function outside(bytes: Uint8Array): string[] {
   const { words, pages } = wordsOf(bytes);
-  const edge = (5 * 72) / 25.4;
+  const edge = (9.5 * 72) / 25.4;
   return words
     .filter((w) => {
       const page = pages[w.page]!;

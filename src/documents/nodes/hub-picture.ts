@@ -1,4 +1,5 @@
-import { dot, type Vec3 } from '../../maths/vec3.js';
+import { convexHull2 } from '../../maths/convex-hull2.js';
+import { addScaled, dot, scale, type Vec3 } from '../../maths/vec3.js';
 import type { HubPart, Socket } from '../../model/parts.js';
 import { drawingScale } from '../kit/drawing-scale.js';
 import type { Area, Box, Point } from '../kit/geometry2.js';
@@ -11,27 +12,55 @@ import { type Label, type Place, placeLabels } from '../kit/view/place-labels.js
 const ROUND = 28;
 /** Room for the marks round the picture, mm. */
 const EDGE = 6.5;
+const BORE = '#d9d9d9';
+/** Share of a mouth that must be seen before its bore is drawn. */
+const OPEN = 0.08;
 
 /** A hub in one view, measured before it is drawn: mm at full size, from the node. */
 export interface HubPicture {
-  readonly sleeves: readonly Sleeve[];
+  readonly arms: readonly Arm[];
+  /** Radius of the round middle; of a drilled ball: the ball. */
   readonly body: number;
+  /** The arms are bores in the body, not sleeves round it. */
+  readonly bored: boolean;
   readonly low: Point;
   readonly high: Point;
 }
 
-/** The picture of a hub as its sleeves in an orthographic view. */
+/** What holds one strut, as it is seen. */
+interface Arm {
+  readonly strut: string;
+  /** Middle of the mouth. */
+  readonly tip: Point;
+  /** Unit direction on the sheet; any where the arm points at the viewer. */
+  readonly along: Point;
+  /** Silhouette, rim of the mouth, rim of the bore (empty where nothing goes in). */
+  readonly silhouette: readonly Point[];
+  readonly mouth: readonly Point[];
+  readonly bore: readonly Point[];
+  /** Half the width across, for the room that the marks must leave. */
+  readonly radius: number;
+  /** Share of the mouth that is seen: 1 end on, 0 from the side; negative where it points away. */
+  readonly open: number;
+  readonly depth: number;
+}
+
+/** The picture of a hub as its sleeves, spigots or bores in an orthographic view. */
 export function hubPicture(hub: HubPart, camera: Camera): HubPicture {
-  const sleeves = hub.sockets.map((socket) => sleeveOf(socket, camera));
-  const body = Math.max(1, ...sleeves.map((s) => s.radius)) * 1.15;
+  const bored = hub.system === 'drilled-ball';
+  const arms = hub.sockets.map((socket) => armOf(socket, camera));
+  const body = bored
+    ? Math.max(1, ...hub.sockets.map((s) => Math.hypot((s.setback ?? 0) + s.depth, Math.max(...boreHalf(s)))))
+    : Math.max(1, ...arms.map((s) => s.radius)) * 1.15;
   const low: [number, number] = [-body, -body];
   const high: [number, number] = [body, body];
-  for (const { tip, radius } of sleeves)
-    for (const axis of [0, 1] as const) {
-      low[axis] = Math.min(low[axis], tip[axis] - radius);
-      high[axis] = Math.max(high[axis], tip[axis] + radius);
-    }
-  return { sleeves, body, low, high };
+  for (const arm of arms)
+    for (const p of arm.silhouette)
+      for (const axis of [0, 1] as const) {
+        low[axis] = Math.min(low[axis], p[axis]);
+        high[axis] = Math.max(high[axis], p[axis]);
+      }
+  return { arms, body, bored, low, high };
 }
 
 /** The scale of ISO 5455, 1:1 at most, at which the picture and its marks fit into a box. */
@@ -49,29 +78,29 @@ export const hubPictureHeight = (picture: HubPicture, factor: number): number =>
   (picture.high[1] - picture.low[1]) * factor + 2 * EDGE;
 
 /**
- * Draws a hub into the area: farthest sleeve first, each a band with its round mouth, the body a ball between those that
- * point away and those that point to the viewer; each strut's mark beside its mouth.
+ * Draws a hub into the area: farthest arm first, the body a ball between those that point away and those that point to
+ * the viewer; each strut's mark beside its mouth.
  */
 export function drawHubPicture(pen: Pen, area: Area, picture: HubPicture, factor: number): void {
-  const { sleeves, body, low, high } = picture;
+  const { arms, body, bored, low, high } = picture;
   const middle: Point = [(low[0] + high[0]) / 2, (low[1] + high[1]) / 2];
   const centre: Point = [area.x + area.width / 2, area.y + area.height / 2];
   const at = ([x, y]: Point): Point => [centre[0] + factor * (x - middle[0]), centre[1] - factor * (y - middle[1])];
-  const order = sleeves
-    .map((sleeve, i) => ({ sleeve, i }))
-    .sort((a, b) => a.sleeve.depth - b.sleeve.depth || a.i - b.i);
+  const order = arms.map((arm, i) => ({ arm, i })).sort((a, b) => a.arm.depth - b.arm.depth || a.i - b.i);
   const [nx, ny] = at([0, 0]);
   const drawBody = (): void => pen.circle(nx, ny, body * factor, { fill: INK.white, width: LINE.normal });
   let bodyDrawn = false;
-  for (const { sleeve } of order) {
-    if (sleeve.depth > 0 && !bodyDrawn) {
+  for (const { arm } of order) {
+    if (arm.depth > 0 && !bodyDrawn) {
       drawBody();
       bodyDrawn = true;
     }
-    drawSleeve(pen, sleeve, at);
+    if (!bored) pen.polygon(arm.silhouette.map(at), INK.white, { width: LINE.normal });
+    if (arm.open >= 0 && !bored) pen.polygon(arm.mouth.map(at), INK.white, { width: LINE.normal });
+    if (arm.open > OPEN && arm.bore.length > 0) pen.polygon(arm.bore.map(at), BORE, { width: LINE.thin });
   }
   if (!bodyDrawn) drawBody();
-  drawMarks(pen, area, sleeves, at, factor, {
+  drawMarks(pen, area, arms, at, factor, {
     x: nx,
     y: ny,
     width: 2 * body * factor,
@@ -80,86 +109,76 @@ export function drawHubPicture(pen: Pen, area: Area, picture: HubPicture, factor
   });
 }
 
-export interface Sleeve {
-  readonly strut: string;
-  /** Middle of the mouth, mm from the node on the view's axes. */
-  readonly tip: Point;
-  /** Unit direction on the sheet; any where the sleeve points at the viewer. */
-  readonly along: Point;
-  readonly radius: number;
-  readonly bore: number;
-  /** Share of the round mouth that is seen: 1 end on, 0 from the side; negative where it points away. */
-  readonly open: number;
-  readonly depth: number;
-}
+/** Half the clear size of a bore along its own y and z, mm. */
+const boreHalf = ({ bore }: Socket): readonly [number, number] =>
+  typeof bore === 'number' ? [bore / 2, bore / 2] : [bore[0] / 2, bore[1] / 2];
 
-function sleeveOf(socket: Socket, camera: Camera): Sleeve {
+function armOf(socket: Socket, camera: Camera): Arm {
   const [u, v, w] = project(camera, socket.direction);
   const length = (socket.setback ?? 0) + socket.depth;
   const flat = Math.hypot(u, v);
-  const bore = typeof socket.bore === 'number' ? socket.bore / 2 : Math.hypot(...socket.bore) / 2;
+  const sleeve = (socket.form ?? 'sleeve') === 'sleeve';
+  const clear = boreHalf(socket);
+  const outer = sleeve ? ([clear[0] + socket.wall, clear[1] + socket.wall] as const) : clear;
+  const ring = (half: readonly [number, number], along: number): Point[] =>
+    rim(socket, half, along).map((p) => {
+      const [x, y] = project(camera, p);
+      return [x, y];
+    });
+  const mouth = ring(outer, length);
   return {
     strut: socket.strut,
     tip: [u * length, v * length],
     along: flat > 1e-9 ? [u / flat, v / flat] : [1, 0],
-    radius: bore + socket.wall,
-    bore,
+    silhouette: convexHull2([...mouth, ...ring(outer, 0)]),
+    mouth,
+    bore: sleeve ? ring(clear, length) : [],
+    radius: Math.max(...outer),
     open: w,
     depth: w * length,
   };
 }
 
-function drawSleeve(pen: Pen, sleeve: Sleeve, at: (p: Point) => Point): void {
-  const { tip, along, radius } = sleeve;
-  const across: Point = [-along[1], along[0]];
-  const put = (base: Point, u: number, v: number): Point =>
-    at([base[0] + u * along[0] + v * across[0], base[1] + u * along[1] + v * across[1]]);
-  const band = [put([0, 0], 0, -radius), put(tip, 0, -radius), put(tip, 0, radius), put([0, 0], 0, radius)];
-  const end = (r: number): Point[] =>
-    Array.from({ length: ROUND }, (_, k) => {
-      const angle = (2 * Math.PI * k) / ROUND;
-      return put(tip, r * Math.abs(sleeve.open) * Math.cos(angle), r * Math.sin(angle));
-    });
-  if (sleeve.open < 0) pen.polygon(end(radius), INK.white, { width: LINE.normal });
-  pen.polygon(band, INK.white);
-  pen.line(band[0]!, band[1]!, { width: LINE.normal });
-  pen.line(band[2]!, band[3]!, { width: LINE.normal });
-  if (sleeve.open >= 0) {
-    pen.polygon(end(radius), INK.white, { width: LINE.normal });
-    if (sleeve.open > 0.08) pen.polygon(end(sleeve.bore), '#d9d9d9', { width: LINE.thin });
-  }
+/** Points of a socket's outline, half as large as `half` along its y and z, at a distance along it from the node. */
+function rim(socket: Socket, half: readonly [number, number], along: number): Vec3[] {
+  const at = (a: number, b: number): Vec3 =>
+    addScaled(addScaled(scale(socket.direction, along), socket.y, a * half[0]), socket.z, b * half[1]);
+  if (typeof socket.bore !== 'number') return [at(-1, -1), at(1, -1), at(1, 1), at(-1, 1)];
+  return Array.from({ length: ROUND }, (_, k) =>
+    at(Math.cos((2 * Math.PI * k) / ROUND), Math.sin((2 * Math.PI * k) / ROUND)),
+  );
 }
 
 function drawMarks(
   pen: Pen,
   area: Area,
-  sleeves: readonly Sleeve[],
+  arms: readonly Arm[],
   at: (p: Point) => Point,
   factor: number,
   body: Box,
 ): void {
   const style = { size: SIZE.note, bold: true };
-  const bodies: Box[] = sleeves.map((s) => {
+  const bodies: Box[] = arms.map((s) => {
     const [x, y] = at([s.tip[0] / 2, s.tip[1] / 2]);
     const length = Math.hypot(...s.tip) * factor + 2 * s.radius * Math.abs(s.open) * factor;
     return { x, y, width: length, height: 2 * s.radius * factor, angle: Math.atan2(-s.along[1], s.along[0]) };
   });
-  const labels = sleeves.map((sleeve, i): Label => {
-    const width = pen.widthOf(sleeve.strut, style) + 1;
-    const [x, y] = at(sleeve.tip);
+  const labels = arms.map((arm, i): Label => {
+    const width = pen.widthOf(arm.strut, style) + 1;
+    const [x, y] = at(arm.tip);
     const places: Place[] = [];
     for (const off of [2.2, 4, 6, 9, 13])
       for (const turn of [0, 0.3, -0.3, 0.6, -0.6, 1, -1, 1.5, -1.5]) {
-        const angle = Math.atan2(-sleeve.along[1], sleeve.along[0]) + turn;
+        const angle = Math.atan2(-arm.along[1], arm.along[0]) + turn;
         const [c, s] = [Math.cos(angle), Math.sin(angle)];
-        const past = sleeve.radius * Math.abs(sleeve.open) * factor;
+        const past = arm.radius * Math.abs(arm.open) * factor;
         places.push({
           box: { x: x + c * (past + off + width / 2), y: y + s * (past + off + 1), width, height: 2.8, angle: 0 },
           leader: off > 4 ? [x, y] : null,
           cost: off + 3 * Math.abs(turn),
         });
       }
-    return { key: sleeve.strut, owner: `${i}`, width, height: 2.8, anchors: [[x, y]], places };
+    return { key: arm.strut, owner: `${i}`, width, height: 2.8, anchors: [[x, y]], places };
   });
   const outlines = bodies.map((b, i) => {
     const [c, s] = [Math.cos(b.angle), Math.sin(b.angle)];

@@ -8,6 +8,7 @@ import { type Column, drawSmallTable, smallTableHeight } from '../kit/table.js';
 import { fixed, type Units } from '../kit/units.js';
 import { PLAN } from '../kit/view/camera.js';
 import { angleTableHeight, drawAngleTable, TEXT } from './angle-table.js';
+import { jigSetting } from './drilling.js';
 import {
   drawHubPicture,
   type HubPicture,
@@ -22,6 +23,8 @@ import { drawForcePolyhedron } from './polyhedron-picture.js';
 const PICTURE = 52;
 /** Width of the tables beside two and beside three pictures, mm. */
 const TABLES = { two: 84, three: 77 } as const;
+/** What the jig's settings of a drilled ball take besides, mm. */
+const JIG = 21;
 /** Head of a block: the node's mark, read across a bench. */
 const HEAD = 10;
 /** A mark wider than this does not fit into the tables beside the pictures, mm. */
@@ -46,7 +49,11 @@ export interface Block {
 
 /** Measures the block of a node in `width` mm on a sheet with `room` mm of height. */
 export function blockOf(pen: Pen, hub: HubPart, polyhedron: NodePolyhedron | null, width: number, room: number): Block {
-  const pictureWidth = Math.min(PICTURE, polyhedron ? (width - TABLES.three) / 3 : (width - TABLES.two) / 2);
+  const jig = hub.system === 'drilled-ball' ? JIG : 0;
+  const pictureWidth = Math.min(
+    PICTURE,
+    polyhedron ? (width - TABLES.three - jig) / 3 : (width - TABLES.two - jig) / 2,
+  );
   const pictures = [outsideCamera(hub.outward), { ...PLAN, name: 'From above' }].map((camera) => ({
     name: camera.name,
     picture: hubPicture(hub, camera),
@@ -130,12 +137,12 @@ export function drawBlock(
   const left = block.stacked ? x : x + (block.polyhedron ? 3 : 2) * (pictureWidth + 1) + 1;
   const down = block.stacked ? top + pictureHeight + 6 : top - 2;
   const room = x + width - left;
-  const end = drawSmallTable(pen, left, down, room, socketColumns(cuts, units), hub.sockets, TEXT);
+  const end = drawSmallTable(pen, left, down, room, socketColumns(hub, cuts, units), hub.sockets, TEXT);
   if (!block.angles) pen.text('Angles: see bar-angles.csv', left, end + 3.5, { size: SIZE.note, colour: INK.grey });
   else if (hub.sockets.length > 1) drawAngleTable(pen, left, end + 2, room, hub.sockets);
 }
 
-function socketColumns(cuts: ReadonlyMap<string, number | null>, units: Units): Column<Socket>[] {
+function socketColumns(hub: HubPart, cuts: ReadonlyMap<string, number | null>, units: Units): Column<Socket>[] {
   const degrees = (rad: number): string => fixed((rad * 180) / Math.PI, 1);
   return [
     { head: 'Strut', bold: true, value: (s) => s.strut },
@@ -146,6 +153,12 @@ function socketColumns(cuts: ReadonlyMap<string, number | null>, units: Units): 
       align: 'right',
       value: (s) => degrees(Math.atan2(s.direction[2], Math.hypot(s.direction[0], s.direction[1]))),
     },
+    ...(hub.system === 'drilled-ball' && hub.sockets.length > 0
+      ? [
+          { head: 'Jig tilt\n°', align: 'right' as const, value: (s: Socket) => fixed(jigSetting(hub, s).tilt, 1) },
+          { head: 'Jig turn\n°', align: 'right' as const, value: (s: Socket) => fixed(jigSetting(hub, s).turn, 1) },
+        ]
+      : []),
     { head: `Setback\n${units.lengthUnit}`, align: 'right', value: (s) => units.length(s.setback) },
     { head: `Depth\n${units.lengthUnit}`, align: 'right', value: (s) => units.length(s.depth) },
     {
