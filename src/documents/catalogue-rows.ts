@@ -67,7 +67,8 @@ const FIELDS = [
   ['thickest', 'mm'],
 ] as const satisfies readonly (readonly [keyof Material, string])[];
 
-function materialRow(material: Material): MaterialRow {
+/** A material with its values, each with its source. */
+export function materialRow(material: Material): MaterialRow {
   const row = (value: string, amount: number | string, unit: string): ValueRow => {
     const { text, mark, verified } = sourceOf(material, value);
     return { value, amount, unit, source: text, mark, verified };

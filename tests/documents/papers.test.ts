@@ -80,6 +80,7 @@ describe('papers of a pack', () => {
       records.findings.map((f) => f.subject).filter((s) => s !== 'truss'),
     );
     expect(text).toContain('On hold');
+    expect(text).toContain('half the clear-wood means of European beech');
   });
   it('the report draws deflection, buckling and mechanisms where there are any', async () => {
     const standing = holds(await report(exampleRecords('canopy'), fonts));

@@ -9,6 +9,7 @@ import type { PackRecords } from '../records.js';
 import { checksSection } from './checks-section.js';
 import { comparisonSection } from './comparison-section.js';
 import { findingsSection } from './findings-section.js';
+import { materialsSection } from './materials-section.js';
 import { picturesSection } from './pictures/index.js';
 import { totalsSection } from './totals-section.js';
 import { utilisationSection } from './utilisation-section.js';
@@ -31,5 +32,6 @@ export async function report(records: PackRecords, fonts: Fonts): Promise<Writte
   picturesSection(paper, flow, records, units);
   comparisonSection(paper, flow, records, units);
   utilisationSection(flow, records, units);
+  materialsSection(flow, records);
   return paper.finish();
 }
