@@ -12,6 +12,7 @@ import { HubSpace } from './hub-space.js';
 import { Bench, loadKernel, SolidFailed } from './kernel.js';
 import { layDown } from './lay-down.js';
 import { letteringsFor, type MarkPlace, placeMark, sideTowards } from './mark-places.js';
+import { type MeasuredWall, measureWalls } from './measure-walls.js';
 import { openEdges } from './open-edges.js';
 import { chooseLie, type Lie } from './orientation.js';
 import { socketSolid } from './socket-solid.js';
@@ -41,6 +42,8 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
       const cap = capSolid(bench, space, c);
       laid.push(layDown(bench, cap, chooseLie(cap, [], ON_A_FACE), hub.at, `cap-${hub.sockets[c.sleeve]!.strut}`));
     }
+    const main = laid[0];
+    if (main) findings.push(...wallFindings(hub, main, space, job));
     return finish(hub, job, laid, findings);
   } catch (error) {
     if (!(error instanceof SolidFailed)) throw error;
@@ -72,6 +75,19 @@ function finish(hub: HubPart, job: Job, laid: readonly (ShapedPiece | null)[], f
   for (const piece of pieces) findings.push(...sizeFindings(hub, piece, job));
   if (faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
   return { mark: hub.mark, pieces: faults === 0 ? pieces : [], findings };
+}
+
+/** What a wall may fall short of the process's least by, mm: chords of polygons. */
+const WALL_SLACK = 0.05;
+
+/** The thinnest wall of the hub as it was made, where it is less than the process prints. */
+function wallFindings(hub: HubPart, piece: ShapedPiece, space: HubSpace, job: Job): Finding[] {
+  const limit = LEAST_WALL[job.nodes['process']];
+  const walls = measureWalls(piece, space.sleeves, hub.at);
+  const thinnest = walls.reduce<MeasuredWall | null>((a, b) => (a && a.thickness <= b.thickness ? a : b), null);
+  if (!thinnest || thinnest.thickness >= limit - WALL_SLACK) return [];
+  const where = `the socket of ${thinnest.strut}, ${thinnest.along.toFixed(1)} mm from its stop`;
+  return [finding('wall-thin', hub.mark, { value: thinnest.thickness, limit, about: { where } })];
 }
 
 /** A foot stands as it is used: its plate's underside must be flat. */
@@ -113,8 +129,11 @@ function sizeFindings(hub: HubPart, piece: ShapedPiece, job: Job): Finding[] {
   return findings;
 }
 
+/** Corners of the polygons that bores and holes are made as, mm. */
+const CHORDS = 0.1;
+
 function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Channel[] {
-  const web = LEAST_WALL[job.nodes['process']];
+  const web = LEAST_WALL[job.nodes['process']] + CHORDS;
   const channels: Channel[] = plateHolesOf(space, web);
   hub.sockets.forEach((s, i) => {
     if (s.pin > 0) {

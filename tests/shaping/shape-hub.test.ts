@@ -104,3 +104,39 @@ it('keeps the strut in tension nearer the layers than when another is in tension
   }
   expect(gained).toBeGreaterThan(0.5);
 });
+
+it('finds a wall that is too thin to print where it is, by measuring the mesh', async () => {
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  const thin = randomHub(71, { system: 'socket', count: 4, least: 50, nodes: { process: 'filament', wall_mm: 0.6 } });
+  const { findings } = await shapeHub(thin.hub, thin.job);
+  const found = findings.find((f) => f.code === 'wall-thin')!;
+  expect(found.level).toBe('stop');
+  expect(found.value).toBeCloseTo(0.6, 1);
+  expect(found.limit).toBe(0.8);
+  // Two bores that leave half a millimetre between them, in walls that are thick enough.
+  const close = randomHub(72, {
+    system: 'socket',
+    count: 4,
+    least: 30,
+    nodes: { process: 'filament', wall_mm: 2, gap_mm: 0.4 },
+  });
+  const web = (await shapeHub(close.hub, close.job)).findings.find((f) => f.code === 'wall-thin');
+  expect(web?.value ?? 2).toBeGreaterThan(0.3);
+});
+
+it('measures the wall it was given on sound hubs of every section', async () => {
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  const { measureWalls } = await import('../../dist/shaping/measure-walls.js');
+  const { sleevesOf } = await import('../../dist/detailing/systems/sleeve.js');
+  for (const seed of [81, 82, 83, 84]) {
+    const made = randomHub(seed, { system: 'socket', count: 5, least: 30, nodes: { marks: false, vent_mm: 0, joint: 'glued' } });
+    const { pieces, findings } = await shapeHub(made.hub, made.job);
+    expect(findings.filter((f) => f.code === 'wall-thin')).toEqual([]);
+    const walls = measureWalls(pieces[0]!, sleevesOf(made.hub.sockets), made.hub.at);
+    expect(walls.length).toBe(made.hub.sockets.length);
+    walls.forEach((w, i) => {
+      expect(w.thickness).toBeGreaterThan(made.hub.sockets[i]!.wall * 0.95);
+      expect(w.thickness).toBeLessThan(made.hub.sockets[i]!.wall * 1.1 + 0.1);
+    });
+  }
+});

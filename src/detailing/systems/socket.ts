@@ -115,11 +115,14 @@ export function socketSetbacks(sockets: readonly Socket[], job: Job): Setbacks {
   return { setbacks, tooClose };
 }
 
+/** Corners of the polygons that two bores are made as stand this much into the web between them, mm. */
+const CHORDS = 0.1;
+
 function pairRule(sockets: readonly Socket[], job: Job): Parameters<typeof leastSetbacks>[0] {
   const n = sockets.length;
   const web = (i: number, j: number, angle: number): number =>
     angle < job.nodes.mergeBelow_deg * DEGREE
-      ? LEAST_WALL[job.nodes['process']]
+      ? LEAST_WALL[job.nodes['process']] + CHORDS
       : (job.nodes.gap_mm ?? Math.max(sockets[i]!.wall, sockets[j]!.wall));
   const angles = sockets.map((a) => sockets.map((b) => angleBetween(a.direction, b.direction)));
   const prisms = sockets.map((s): BarPrism => ({ d: s.direction, u: s.y, v: s.z, half: pathHalf(s) }));

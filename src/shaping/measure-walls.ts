@@ -1,0 +1,120 @@
+import { largest, type Sleeve } from '../detailing/systems/sleeve.js';
+import { add, addScaled, dot, scale, type Vec3 } from '../maths/vec3.js';
+import type { ShapedPiece } from '../model/shaped.js';
+
+/** The thinnest wall found round one socket. */
+export interface MeasuredWall {
+  readonly strut: string;
+  /** mm, along a ray square to the bore. */
+  readonly thickness: number;
+  /** Distance from the stop, mm. */
+  readonly along: number;
+}
+
+const AZIMUTHS = 12;
+/** Where rays are sent from, as shares of the depth from the stop: clear of the floor's vent and the mouth's chamfer. */
+const SHARES = [0.2, 0.45, 0.7, 0.85] as const;
+/** A ray starts this far outside the bore's nominal surface, mm: past the corners of its polygon. */
+const START = 0.06;
+
+/**
+ * Walls measured on the made mesh: from each bore, rays square to it through the wall to the first surface beyond. A ray that
+ * starts in a hole, a groove or an opening finds no wall and is left out. One entry a hollow sleeve that has a wall anywhere.
+ *
+ * @param at the node; the piece's placement says where its mesh lies about it
+ */
+export function measureWalls(piece: ShapedPiece, sleeves: readonly Sleeve[], at: Vec3): MeasuredWall[] {
+  const { positions, triangles, placement: m } = piece;
+  // Into the print's axes: the transpose of the placement's rotation.
+  const turn = (d: Vec3): Vec3 => [
+    m[0]! * d[0] + m[4]! * d[1] + m[8]! * d[2],
+    m[1]! * d[0] + m[5]! * d[1] + m[9]! * d[2],
+    m[2]! * d[0] + m[6]! * d[1] + m[10]! * d[2],
+  ];
+  const node = turn([at[0] - m[3]!, at[1] - m[7]!, at[2] - m[11]!]);
+  const found: MeasuredWall[] = [];
+  for (const s of sleeves) {
+    if (!s.hollow) continue;
+    const [d, y, z] = [turn(s.socket.direction), turn(s.socket.y), turn(s.socket.z)];
+    const near = trianglesNear(positions, triangles, node, d, s.stop, s.mouth, 2 * largest(s.outer) + s.socket.wall);
+    let best: MeasuredWall | null = null;
+    for (const share of SHARES) {
+      const along = share * s.socket.depth;
+      for (let k = 0; k < AZIMUTHS; k++) {
+        const [start, out] = rayFrom(s, k, addScaled(node, d, s.stop + along), y, z);
+        const thickness = firstExit(positions, triangles, near, start, out);
+        if (thickness === null) continue;
+        if (!best || thickness + START < best.thickness)
+          best = { strut: s.socket.strut, thickness: thickness + START, along };
+      }
+    }
+    if (best) found.push(best);
+  }
+  return found;
+}
+
+/** A start on the bore's surface and the direction out of it; of a rectangle, three rays a side. */
+function rayFrom(s: Sleeve, k: number, centre: Vec3, y: Vec3, z: Vec3): readonly [Vec3, Vec3] {
+  if (typeof s.inner === 'number') {
+    const angle = (2 * Math.PI * (k + 0.37)) / AZIMUTHS;
+    const out = add(scale(y, Math.cos(angle)), scale(z, Math.sin(angle)));
+    return [addScaled(centre, out, s.inner + START), out];
+  }
+  const side = k % 4;
+  const share = (Math.floor(k / 4) - 1) * 0.7;
+  const [out, across] = side % 2 === 0 ? [y, z] : [z, y];
+  const sense = side < 2 ? 1 : -1;
+  const [half, other] = side % 2 === 0 ? [s.inner[0], s.inner[1]] : [s.inner[1], s.inner[0]];
+  return [addScaled(addScaled(centre, across, share * other), out, sense * (half + START)), scale(out, sense)];
+}
+
+/** Triangles with a corner within `radius` of a stretch of a line, or long enough to reach it. */
+function trianglesNear(
+  p: Float32Array,
+  t: Uint32Array,
+  node: Vec3,
+  d: Vec3,
+  from: number,
+  to: number,
+  radius: number,
+): Uint32Array {
+  const near: number[] = [];
+  const middle = addScaled(node, d, (from + to) / 2);
+  for (let i = 0; i < t.length; i += 3) {
+    let least = Number.POSITIVE_INFINITY;
+    let longest = 0;
+    for (let k = 0; k < 3; k++) {
+      const [a, b] = [3 * t[i + k]!, 3 * t[i + ((k + 1) % 3)]!];
+      least = Math.min(least, Math.hypot(p[a]! - middle[0], p[a + 1]! - middle[1], p[a + 2]! - middle[2]));
+      longest = Math.max(longest, Math.hypot(p[a]! - p[b]!, p[a + 1]! - p[b + 1]!, p[a + 2]! - p[b + 2]!));
+    }
+    if (least <= radius + (to - from) / 2 + longest) near.push(i);
+  }
+  return Uint32Array.from(near);
+}
+
+/** Distance along a ray to where it leaves the solid; null where it starts outside or never leaves. Möller and Trumbore 1997. */
+function firstExit(p: Float32Array, t: Uint32Array, near: Uint32Array, start: Vec3, out: Vec3): number | null {
+  let best = Number.POSITIVE_INFINITY;
+  let leaves = false;
+  for (const i of near) {
+    const [a, b, c] = [3 * t[i]!, 3 * t[i + 1]!, 3 * t[i + 2]!];
+    const [ex, ey, ez] = [p[b]! - p[a]!, p[b + 1]! - p[a + 1]!, p[b + 2]! - p[a + 2]!];
+    const [fx, fy, fz] = [p[c]! - p[a]!, p[c + 1]! - p[a + 1]!, p[c + 2]! - p[a + 2]!];
+    const [hx, hy, hz] = [out[1] * fz - out[2] * fy, out[2] * fx - out[0] * fz, out[0] * fy - out[1] * fx];
+    const det = ex * hx + ey * hy + ez * hz;
+    if (Math.abs(det) < 1e-12) continue;
+    const [sx, sy, sz] = [start[0] - p[a]!, start[1] - p[a + 1]!, start[2] - p[a + 2]!];
+    const u = (sx * hx + sy * hy + sz * hz) / det;
+    if (u < 0 || u > 1) continue;
+    const [qx, qy, qz] = [sy * ez - sz * ey, sz * ex - sx * ez, sx * ey - sy * ex];
+    const v = (out[0] * qx + out[1] * qy + out[2] * qz) / det;
+    if (v < 0 || u + v > 1) continue;
+    const distance = (fx * qx + fy * qy + fz * qz) / det;
+    if (distance <= 0 || distance >= best) continue;
+    best = distance;
+    // The triangle's outward normal e x f runs with the ray where it leaves: det = e · (out x f) = -out · (e x f).
+    leaves = dot(out, [ey * fz - ez * fy, ez * fx - ex * fz, ex * fy - ey * fx]) > 0;
+  }
+  return leaves ? best : null;
+}
