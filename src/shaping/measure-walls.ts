@@ -1,6 +1,7 @@
 import { largest, type Sleeve } from '../detailing/systems/sleeve.js';
-import { add, addScaled, dot, scale, type Vec3 } from '../maths/vec3.js';
+import { add, addScaled, dot, length, scale, subtract, type Vec3 } from '../maths/vec3.js';
 import type { ShapedPiece } from '../model/shaped.js';
+import type { Channel } from './channels.js';
 
 /** The thinnest wall found round one socket. */
 export interface MeasuredWall {
@@ -21,9 +22,15 @@ const START = 0.06;
  * Walls measured on the made mesh: from each bore, rays square to it through the wall to the first surface beyond. A ray that
  * starts in a hole, a groove or an opening finds no wall and is left out. One entry a hollow sleeve that has a wall anywhere.
  *
+ * @param channels vents and pins: their own sleeve's wall runs out to an edge at them, which is no thin wall
  * @param at the node; the piece's placement says where its mesh lies about it
  */
-export function measureWalls(piece: ShapedPiece, sleeves: readonly Sleeve[], at: Vec3): MeasuredWall[] {
+export function measureWalls(
+  piece: ShapedPiece,
+  sleeves: readonly Sleeve[],
+  channels: readonly Channel[],
+  at: Vec3,
+): MeasuredWall[] {
   const { positions, triangles, placement: m } = piece;
   // Into the print's axes: the transpose of the placement's rotation.
   const turn = (d: Vec3): Vec3 => [
@@ -33,8 +40,11 @@ export function measureWalls(piece: ShapedPiece, sleeves: readonly Sleeve[], at:
   ];
   const node = turn([at[0] - m[3]!, at[1] - m[7]!, at[2] - m[11]!]);
   const found: MeasuredWall[] = [];
-  for (const s of sleeves) {
+  for (const [index, s] of sleeves.entries()) {
     if (!s.hollow) continue;
+    const own = channels
+      .filter((c) => c.sleeve === index)
+      .map((c) => ({ from: add(node, turn(c.from)), direction: turn(c.direction), radius: c.radius }));
     const [d, y, z] = [turn(s.socket.direction), turn(s.socket.y), turn(s.socket.z)];
     const near = trianglesNear(positions, triangles, node, d, s.stop, s.mouth, 2 * largest(s.outer) + s.socket.wall);
     let best: MeasuredWall | null = null;
@@ -43,7 +53,7 @@ export function measureWalls(piece: ShapedPiece, sleeves: readonly Sleeve[], at:
       for (let k = 0; k < AZIMUTHS; k++) {
         const [start, out] = rayFrom(s, k, addScaled(node, d, s.stop + along), y, z);
         const thickness = firstExit(positions, triangles, near, start, out);
-        if (thickness === null) continue;
+        if (thickness === null || own.some((c) => onChannel(c, addScaled(start, out, thickness)))) continue;
         if (!best || thickness + START < best.thickness)
           best = { strut: s.socket.strut, thickness: thickness + START, along };
       }
@@ -52,6 +62,14 @@ export function measureWalls(piece: ShapedPiece, sleeves: readonly Sleeve[], at:
   }
   return found;
 }
+
+function onChannel(c: Pick<Channel, 'from' | 'direction' | 'radius'>, p: Vec3): boolean {
+  const away = subtract(p, c.from);
+  return length(addScaled(away, c.direction, -dot(away, c.direction))) < c.radius + ON_CHANNEL;
+}
+
+/** mm; corners of the channel's polygon. */
+const ON_CHANNEL = 0.1;
 
 /** A start on the bore's surface and the direction out of it; of a rectangle, three rays a side. */
 function rayFrom(s: Sleeve, k: number, centre: Vec3, y: Vec3, z: Vec3): readonly [Vec3, Vec3] {

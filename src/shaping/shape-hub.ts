@@ -43,7 +43,7 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
       laid.push(layDown(bench, cap, chooseLie(cap, [], ON_A_FACE), hub.at, `cap-${hub.sockets[c.sleeve]!.strut}`));
     }
     const main = laid[0];
-    if (main) findings.push(...wallFindings(hub, main, space, job));
+    if (main) findings.push(...wallFindings(hub, main, space, channels, job));
     return finish(hub, job, laid, findings);
   } catch (error) {
     if (!(error instanceof SolidFailed)) throw error;
@@ -81,9 +81,15 @@ function finish(hub: HubPart, job: Job, laid: readonly (ShapedPiece | null)[], f
 const WALL_SLACK = 0.05;
 
 /** The thinnest wall of the hub as it was made, where it is less than the process prints. */
-function wallFindings(hub: HubPart, piece: ShapedPiece, space: HubSpace, job: Job): Finding[] {
+function wallFindings(
+  hub: HubPart,
+  piece: ShapedPiece,
+  space: HubSpace,
+  channels: readonly Channel[],
+  job: Job,
+): Finding[] {
   const limit = LEAST_WALL[job.nodes['process']];
-  const walls = measureWalls(piece, space.sleeves, hub.at);
+  const walls = measureWalls(piece, space.sleeves, channels, hub.at);
   const thinnest = walls.reduce<MeasuredWall | null>((a, b) => (a && a.thickness <= b.thickness ? a : b), null);
   if (!thinnest || thinnest.thickness >= limit - WALL_SLACK) return [];
   const where = `the socket of ${thinnest.strut}, ${thinnest.along.toFixed(1)} mm from its stop`;

@@ -115,7 +115,9 @@ function pathSolid(bench: Bench, s: Sleeve, chamfer: number, to: number): Manifo
     ring(s.mouth - c, s.inner),
     // The slope runs on past the mouth, so that its rim is cut and not shared.
     ...(c > 0 ? [ring(s.mouth + PAST_MOUTH, grow(s.inner, c + PAST_MOUTH))] : []),
-    ring(Math.max(to, s.mouth + 1), c > 0 ? grow(s.inner, c + PAST_MOUTH) : s.inner),
+    // Beyond its own rim the path is no wider than the strut needs: it may run through a neighbour's wall there.
+    ...(c > 0 ? [ring(s.mouth + 2 * PAST_MOUTH, s.inner)] : []),
+    ring(Math.max(to, s.mouth + 1), s.inner),
   ]);
   return placedAlong(bench, mesh, s, 'path');
 }

@@ -129,10 +129,15 @@ it('measures the wall it was given on sound hubs of every section', async () => 
   const { measureWalls } = await import('../../dist/shaping/measure-walls.js');
   const { sleevesOf } = await import('../../dist/detailing/systems/sleeve.js');
   for (const seed of [81, 82, 83, 84]) {
-    const made = randomHub(seed, { system: 'socket', count: 5, least: 30, nodes: { marks: false, vent_mm: 0, joint: 'glued' } });
+    const made = randomHub(seed, {
+      system: 'socket',
+      count: 5,
+      least: 30,
+      nodes: { marks: false, vent_mm: 0, joint: 'glued' },
+    });
     const { pieces, findings } = await shapeHub(made.hub, made.job);
     expect(findings.filter((f) => f.code === 'wall-thin')).toEqual([]);
-    const walls = measureWalls(pieces[0]!, sleevesOf(made.hub.sockets), made.hub.at);
+    const walls = measureWalls(pieces[0]!, sleevesOf(made.hub.sockets), [], made.hub.at);
     expect(walls.length).toBe(made.hub.sockets.length);
     walls.forEach((w, i) => {
       expect(w.thickness).toBeGreaterThan(made.hub.sockets[i]!.wall * 0.95);
