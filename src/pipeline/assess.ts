@@ -13,6 +13,7 @@ import { givenForces } from '../statics/given-forces.js';
 import { besideAnalysis, forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
 import { depthFindings, requiredDepths } from '../strength/depths.js';
 import { judge } from '../strength/judge.js';
+import { giveClosingDetails } from './closing.js';
 import { detail, layOut } from './detail.js';
 import { settle } from './settle.js';
 
@@ -21,6 +22,10 @@ import { settle } from './settle.js';
  * `file` is the truss as read, in mm and N; the job's scale is applied here, once.
  */
 export function assess(file: Truss, job: Job): Assessment {
+  return giveClosingDetails(assessOnce(file, job), (next) => assessOnce(file, next));
+}
+
+function assessOnce(file: Truss, job: Job): Assessment {
   const truss = scaleTruss(file, job);
   const topology = topologyOf(truss);
   const layout = layOut(topology, job);

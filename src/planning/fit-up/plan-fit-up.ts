@@ -26,7 +26,11 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
   if (struts.length === 0 || struts.some((s) => s.cutLength === null || !s.material || !s.section)) return null;
   const figure = figureOf(topology);
   const loops = loopsOf(countStates(figure, ROUNDED));
-  const play = Float64Array.from(struts, (s) => (s.ends[0].float ?? 0) + (s.ends[1].float ?? 0));
+  const links = assemblySetting(topology, parts, job).links;
+  // The way that a closing end slides is no play: its pin takes it up.
+  const play = Float64Array.from(struts, (s, i) =>
+    s.ends.reduce((sum, e, k) => sum + Math.max(0, (e.float ?? 0) - (links[i]!.sockets[k]?.travel ?? 0)), 0),
+  );
   const errors = strutErrors(struts, job);
   const deviation = Float64Array.from(errors.cut, (c, i) => Math.hypot(c, errors.other[i]!));
   const closes = closer(loops, play);
@@ -37,7 +41,6 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
   const chanceBound = Math.max(0, 1 - ratios.reduce((sum, r) => sum + outside(1 / Math.max(r, 1e-12)), 0));
   const shares = sharesOf(loops, ratios, struts.length);
   const shape = shapes(figure, parts, topology, deviation, job);
-  const links = assemblySetting(topology, parts, job).links;
   const angle =
     ((job.fit.socketAngle_deg * Math.PI) / 180) * (job.fit.distribution === 'normal' ? 0.5 : 1 / Math.sqrt(3));
 
