@@ -64,7 +64,12 @@ function fetchTable(flow: Flow, lines: readonly BuyingLine[], cost: number, curr
     { head: `Price${money}`, align: 'right', value: (l) => (l.fromRack ? '' : fixed(l.price, 2)) },
   ];
   flow.table(columns, lines);
-  flow.paragraph(`In all ${fixed(cost, 2)}${currency === '' ? '' : ` ${currency}`} for bars from the shop.`);
+  const unit = currency === '' ? '' : ` ${currency}`;
+  const price = lines.reduce((sum, l) => sum + l.price, 0);
+  const credit = price - cost;
+  flow.paragraph(
+    `In all ${fixed(price, 2)}${unit} for bars from the shop${credit > 0.005 ? `; the offcuts kept are worth ${fixed(credit, 2)}${unit} of that` : ''}.`,
+  );
 }
 
 const headingOf = (s: SectionPlan): string => `${s.section}: ${s.bars} ${s.bars === 1 ? 'bar' : 'bars'}`;

@@ -52,6 +52,7 @@ export async function planGroups(groups: readonly PieceGroup[], job: Job): Promi
         kerf: job.saw.kerf_mm,
         endTrim: job.saw.endTrim_mm,
         trimmedEnds: job.saw.trimEnds,
+        offcuts: { least: job.stock.leastOffcut_mm, share: job.stock.offcutValue },
         seed: job.seed,
       },
       NO_CLOCK,

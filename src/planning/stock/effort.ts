@@ -17,6 +17,11 @@ export class Effort {
     this.spent += units;
   }
 
+  /** Allows `units` more than were spent so far. */
+  extend(units: number): void {
+    this.limit = this.spent + units;
+  }
+
   get used(): number {
     return this.spent;
   }

@@ -20,6 +20,11 @@ export function requestFaults(request: StockRequest): StockFault[] {
     say('effort', `is ${request.effort}`, 'give a number above 0, or leave it out');
   if (request.timeLimitMs !== undefined && !(number(request.timeLimitMs) && request.timeLimitMs >= 0))
     say('timeLimitMs', `is ${request.timeLimitMs}`, 'give milliseconds, 0 or more, or leave it out');
+  const { offcuts } = request;
+  if (offcuts && !(number(offcuts.least) && offcuts.least >= 0))
+    say('offcuts', `has least ${offcuts.least}`, 'give a length in mm, 0 or more');
+  if (offcuts && !(number(offcuts.share) && offcuts.share >= 0 && offcuts.share <= 1))
+    say('offcuts', `has share ${offcuts.share}`, 'give a number from 0 to 1');
   request.stock.forEach((s, i) => {
     const place = `stock[${i}] ${s.name}`;
     if (!(number(s.length) && s.length > 0)) say(place, `has length ${s.length}`, 'give a length in mm above 0');

@@ -1,8 +1,9 @@
 import { seededRandom } from '../../maths/random.js';
+import { creditedBound, creditedProblem, creditOf } from './credit.js';
 import { Effort } from './effort.js';
 import { requestFaults } from './faults.js';
 import { layOut } from './layOut.js';
-import type { Bin, CuttingProblem } from './problem.js';
+import { type Bin, type CuttingProblem, type Pattern, patternLoad, type Run } from './problem.js';
 import { recover } from './recover.js';
 import { refine } from './refine.js';
 import type { StockAnswer, StockKind, StockPiece, StockRequest, UncutPiece } from './request.js';
@@ -33,7 +34,7 @@ const gcd = (a: number, b: number): number => (b === 0 ? a : gcd(b, a % b));
  */
 export async function planStock(request: StockRequest, clock?: () => number): Promise<StockAnswer> {
   const faults = requestFaults(request);
-  const nothing = { bars: [], cost: 0, lowerBound: 0, proven: false, uncut: [] };
+  const nothing = { bars: [], cost: 0, lowerBound: 0, credit: 0, proven: false, uncut: [] };
   if (faults.some((f) => !f.place.startsWith('pieces['))) return { ...nothing, faults };
   const bad = new Set(faults.map((f) => f.place));
   const end = request.timeLimitMs !== undefined && clock ? clock() + request.timeLimitMs : undefined;
@@ -64,8 +65,10 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
   if (weights.length === 0) return { ...nothing, uncut, faults, proven: uncut.length === 0 && faults.length === 0 };
 
   const { whole, perUnit, exact } = wholePrices(kinds.map(({ kind }) => kind.price ?? 1));
+  const divisor = weights.reduce(gcd, 0);
   const problem = shrink(
     weights,
+    divisor,
     weights.map((w) => byWeight.get(w)!.reduce((sum, p) => sum + p.quantity, 0)),
     kinds.map(({ kind, room }, k) => ({
       capacity: room + kerf,
@@ -80,12 +83,35 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
   const effort = new Effort(usual * (request.effort ?? 1), expired);
   const highs = await linearSolver();
   const seed = request.seed ?? 1;
-  const solved = solveCutting(highs, withSubstitute(problem), seed, effort);
-  const runs = recover(problem, solved.runs);
-  const complete = runs.every((r) => r.pattern.bin < real);
-  const chosen = complete
-    ? refine(problem, runs, seededRandom(seed), new Effort(REFINE_EFFORT * (request.effort ?? 1), expired))
-    : runs;
+  const solve = (of: CuttingProblem) => {
+    const solved = solveCutting(highs, withSubstitute(of), seed, effort);
+    const runs = recover(of, solved.runs);
+    const complete = runs.every((r) => r.pattern.bin < real);
+    const spare = new Effort(REFINE_EFFORT * (request.effort ?? 1), expired);
+    return { ...solved, complete, runs: complete ? refine(of, runs, seededRandom(seed), spare) : runs };
+  };
+  const cheapest = solve(problem);
+  const bought = kinds.map(({ kind }) => ({
+    price: kind.price ?? 1,
+    length: kind.length,
+    available: kind.available ?? Infinity,
+  }));
+  const worth = { least: request.offcuts?.least ?? 0, share: request.offcuts?.share ?? 0 };
+  const priced = (runs: readonly Run[]): number =>
+    exact
+      ? runs.reduce((sum, r) => sum + whole[r.pattern.bin]! * r.times, 0) / perUnit
+      : runs.reduce((sum, r) => sum + bought[r.pattern.bin]!.price * r.times, 0);
+  // Bars lost what is less than the weights' divisor; their offcuts have it.
+  const offcutOf = (p: Pattern): number =>
+    Math.max(0, kinds[p.bin]!.room - patternLoad(problem.weights, p) * divisor) / STEPS_PER_MM;
+  const credit = (runs: readonly Run[]): number => creditOf(runs, bought, offcutOf, worth);
+  let chosen = cheapest.runs;
+  if (worth.share > 0 && cheapest.complete && !effort.stopped) {
+    effort.extend(usual * (request.effort ?? 1));
+    const other = solve(creditedProblem(problem, bought, worth));
+    const net = (runs: readonly Run[]): number => priced(runs) - credit(runs);
+    if (other.complete && net(other.runs) < net(chosen)) chosen = other.runs;
+  }
   const laid = layOut(
     chosen,
     weights.map((w) => ({ steps: w - kerf, pieces: byWeight.get(w)! })),
@@ -97,15 +123,22 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
     uncut.push({ mark: piece.mark, length: piece.length, quantity, reason: 'no-stock-left', longest });
   }
   const bars = laid.bars.map(({ bin, cuts, offcut }) => ({ stock: kinds[bin]!.kind.name, cuts, offcut }));
-  const cost = exact
-    ? laid.bars.reduce((sum, b) => sum + whole[b.bin]!, 0) / perUnit
-    : laid.bars.reduce((sum, b) => sum + (kinds[b.bin]!.kind.price ?? 1), 0);
   const claimed = laid.left.length === 0;
-  const proven = claimed && solved.cost <= solved.lowerBound;
+  const existing = chosen.filter((r) => r.pattern.bin < real);
+  const saved = worth.share > 0 ? credit(existing) : 0;
+  const cost = priced(existing) - saved;
+  const least = cheapest.cost <= cheapest.lowerBound ? priced(cheapest.runs) : cheapest.lowerBound / perUnit;
+  const bound = !claimed
+    ? 0
+    : worth.share > 0
+      ? Math.min(cost, creditedBound(least, sumOfLengths(byWeight), bought, worth))
+      : least;
+  const proven = claimed && cost - bound <= 1e-9 * Math.max(1, cost);
   return {
     bars,
     cost,
-    lowerBound: claimed ? (proven ? cost : solved.lowerBound / perUnit) : 0,
+    lowerBound: proven ? cost : bound,
+    credit: saved,
     proven: proven && uncut.length === 0 && faults.length === 0,
     uncut,
     faults,
@@ -113,9 +146,13 @@ export async function planStock(request: StockRequest, clock?: () => number): Pr
   };
 }
 
-/** Divides all weights by their common divisor; bars lose what is less than one. */
-function shrink(weights: readonly number[], demand: readonly number[], bins: readonly Bin[]): CuttingProblem {
-  const divisor = weights.reduce(gcd, 0);
+/** Divides all weights by a common divisor; bars lose what is less than one. */
+function shrink(
+  weights: readonly number[],
+  divisor: number,
+  demand: readonly number[],
+  bins: readonly Bin[],
+): CuttingProblem {
   return {
     weights: Int32Array.from(weights, (w) => w / divisor),
     demand: Int32Array.from(demand),
@@ -138,3 +175,9 @@ function withSubstitute(problem: CuttingProblem): CuttingProblem {
     bins: [...problem.bins, { capacity: longest.capacity, cost: dearest * (pieces + 1), available: Infinity }],
   };
 }
+
+const sumOfLengths = (groups: ReadonlyMap<number, readonly StockPiece[]>): number => {
+  let sum = 0;
+  for (const pieces of groups.values()) for (const p of pieces) sum += p.length * p.quantity;
+  return sum;
+};

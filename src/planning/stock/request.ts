@@ -8,6 +8,11 @@ export interface StockRequest {
   readonly endTrim?: number;
   /** How many ends of a bar are trimmed so; default 1. */
   readonly trimmedEnds?: 0 | 1 | 2;
+  /**
+   * Worth of what is left: an offcut of at least `least` mm counts as `share` (0 to 1) of its bar's price for its length. Absent:
+   * offcuts are worth nothing.
+   */
+  readonly offcuts?: { readonly least: number; readonly share: number };
   /** Whole number; another seed, another search. Default 1. */
   readonly seed?: number;
   /** Net for callers, ms; absent: the answer depends on the input and the seed alone. */
@@ -36,10 +41,12 @@ export interface StockKind {
 export interface StockAnswer {
   /** Equal bars stand together; in each bar the cuts are in sawing order, longest first. */
   readonly bars: readonly CutBar[];
-  /** Price of all bars. */
+  /** Price of all bars, less what their kept offcuts are worth. */
   readonly cost: number;
   /** No plan of these pieces costs less. Nought when pieces are left uncut: nothing is claimed then. */
   readonly lowerBound: number;
+  /** What the kept offcuts are worth, in price. */
+  readonly credit: number;
   /** cost = lowerBound: no plan costs less. */
   readonly proven: boolean;
   /** Pieces that no bar holds, never dropped in silence. */

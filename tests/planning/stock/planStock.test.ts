@@ -131,7 +131,7 @@ it('reports every fault at once, with its place, and cuts the pieces that have n
 
 it('has nothing to cut: no bars, and that is proven', async () => {
   const answer = await plan({ pieces: [{ mark: 'a', length: 10, quantity: 0 }], stock: [bar(100)], kerf: 1 });
-  expect(answer).toEqual({ bars: [], cost: 0, lowerBound: 0, proven: true, uncut: [], faults: [] });
+  expect(answer).toEqual({ bars: [], cost: 0, lowerBound: 0, credit: 0, proven: true, uncut: [], faults: [] });
 });
 
 it('keeps prices exact: cents, thirds, nought', async () => {

@@ -18,6 +18,7 @@ export function planFaults(request: StockRequest, answer: StockAnswer): string[]
   const kinds = new Map(request.stock.map((s) => [s.name, s]));
   const used = new Map<string, number>();
   let price = 0;
+  let credit = 0;
   answer.bars.forEach((bar, i) => {
     const kind = kinds.get(bar.stock);
     if (!kind) {
@@ -38,6 +39,8 @@ export function planFaults(request: StockRequest, answer: StockAnswer): string[]
     });
     if (room < 0) wrong.push(`bar ${i}: over-full by ${-room / 10} mm`);
     const offcut = Math.max(0, room - up(request.kerf)) / 10;
+    const { least, share } = request.offcuts ?? { least: 0, share: 0 };
+    if (offcut >= least) credit += (share * (kind.price ?? 1) * offcut) / kind.length;
     if (Math.abs(offcut - bar.offcut) > 1e-9) wrong.push(`bar ${i}: offcut ${bar.offcut}, should be ${offcut}`);
   });
   for (const u of answer.uncut) add(key(u.mark, u.length), -u.quantity);
@@ -46,6 +49,9 @@ export function planFaults(request: StockRequest, answer: StockAnswer): string[]
     const available = kinds.get(name)!.available ?? Infinity;
     if (n > available) wrong.push(`${name}: ${n} used, ${available} there`);
   }
+  if (Math.abs(credit - answer.credit) > 1e-6 * Math.max(1, price))
+    wrong.push(`credit ${answer.credit}, not ${credit}`);
+  price -= credit;
   if (Math.abs(price - answer.cost) > 1e-6 * Math.max(1, price)) wrong.push(`cost ${answer.cost}, should be ${price}`);
   if (answer.lowerBound > answer.cost * (1 + 1e-9) + 1e-9) wrong.push(`bound ${answer.lowerBound} > ${answer.cost}`);
   if (answer.proven && Math.abs(answer.lowerBound - answer.cost) > 1e-6) wrong.push('proven, but the bound is lower');
@@ -66,18 +72,26 @@ export function leastPrice(request: StockRequest): number {
   );
   const left = request.stock.map((s) => s.available ?? Infinity);
   let best = Infinity;
+  const { least, share } = request.offcuts ?? { least: 0, share: 0 };
   const open: number[] = [];
+  const kindOf: number[] = [];
+  const credit = (): number =>
+    open.reduce((sum, room, b) => {
+      const { price = 1, length } = request.stock[kindOf[b]!]!;
+      return room / 10 >= least ? sum + (share * price * room) / 10 / length : sum;
+    }, 0);
   const place = (i: number, price: number): void => {
-    if (price >= best) return;
+    if ((1 - share) * price >= best) return;
     if (i === lengths.length) {
-      best = price;
+      best = Math.min(best, price - credit());
       return;
     }
     const need = lengths[i]! + kerf;
-    const tried = new Set<number>();
+    const tried = new Set<string>();
     for (let b = 0; b < open.length; b++) {
-      if (open[b]! < need || tried.has(open[b]!)) continue;
-      tried.add(open[b]!);
+      const like = `${kindOf[b]} ${open[b]}`;
+      if (open[b]! < need || tried.has(like)) continue;
+      tried.add(like);
       open[b]! -= need;
       place(i + 1, price);
       open[b]! += need;
@@ -86,8 +100,10 @@ export function leastPrice(request: StockRequest): number {
       if (left[k]! <= 0 || rooms[k]! < need) continue;
       left[k]!--;
       open.push(rooms[k]! - need);
+      kindOf.push(k);
       place(i + 1, price + (request.stock[k]!.price ?? 1));
       open.pop();
+      kindOf.pop();
       left[k]!++;
     }
   };
