@@ -6,7 +6,7 @@ import type { Rules } from './standard.js';
 type Duration = MemberActions['duration'];
 
 /** Share of its short-term strength that a plastic may carry for long: 20 to 30 %, a judgement from memory. */
-export const SUSTAINED_SHARE = 0.25;
+const SUSTAINED_SHARE = 0.25;
 
 const standing = (duration: Duration): boolean => duration !== 'short' && duration !== 'instantaneous';
 

@@ -19,7 +19,7 @@ const C_FACTOR = { rectangle: 0.8, round: 0.85 } as const;
 const INCH = 25.4;
 
 /** Size factor CF of dimension lumber by its nominal depth, NDS Supplement table 4A (from memory): bending and tension, then compression. Depth in mm. */
-export function sizeFactor(depth: number): { readonly bending: number; readonly compression: number } {
+function sizeFactor(depth: number): { readonly bending: number; readonly compression: number } {
   const inches = depth / INCH;
   if (inches <= 3.5) return { bending: 1.5, compression: 1.15 };
   if (inches <= 4.5) return { bending: 1.4, compression: 1.1 };

@@ -5,7 +5,7 @@ import { isTested, type Material } from '../model/material.js';
 import type { Parts } from '../model/parts.js';
 
 /** Least softening point of a plastic in the sun, °C. */
-export const LEAST_SOFTENING = 80;
+const LEAST_SOFTENING = 80;
 
 /** Plastics that the thing is made of, each once, in the order of the parts: hubs, then panels. */
 function plastics(parts: Parts): readonly Material[] {

@@ -1,7 +1,7 @@
 import { jobSchema } from '../../dist/model/job/index.js';
 import { assess } from '../../dist/pipeline/assess.js';
 import { judge } from '../../dist/strength/judge.js';
-import { bendPlate } from '../../dist/strength/panel/plate.js';
+import { plateOf } from '../../dist/strength/panel/plate.js';
 
 export const title = 'Strength: members, sockets and panels of a double-layer grid under its combinations';
 
@@ -104,7 +104,7 @@ export async function run(print) {
     [0, 900],
   ];
   const [ms] = time(() => {
-    for (let k = 0; k < 50; k++) bendPlate(square, 0.37, { edges: [0, 1, 2, 3], points: [] });
+    for (let k = 0; k < 50; k++) plateOf(square, 0.37).bend({ edges: [0, 1, 2, 3], points: [] });
   });
   print(`one plate of four corners: ${(ms / 50).toFixed(1)} ms`);
 }

@@ -1,6 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import type { Point2 } from '../../src/model/parts.js';
-import { bendPlate, type PlateSupports } from '../../src/strength/panel/plate.js';
+import { type PlateSupports, plateOf } from '../../src/strength/panel/plate.js';
+
+const bendPlate = (outline: readonly Point2[], poisson: number, supports: PlateSupports) =>
+  plateOf(outline, poisson)?.bend(supports) ?? null;
 
 const rectangle = (a: number, b: number): readonly Point2[] => [
   [0, 0],

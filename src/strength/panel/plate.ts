@@ -88,10 +88,6 @@ export function plateOf(outline: readonly Point2[], nu: number): Plate | null {
   };
 }
 
-/** One plate held one way; null where it has no area or is loose. */
-export const bendPlate = (outline: readonly Point2[], nu: number, supports: PlateSupports): PlateResponse | null =>
-  plateOf(outline, nu)?.bend(supports) ?? null;
-
 /** Points and weights of the integral over the outline: a fan of signed triangles from its first corner, each by Duffy's map of the square. */
 function areaPoints(outline: readonly Point2[], { size }: Box): { points: number[]; weights: number[] } {
   const points: number[] = [];

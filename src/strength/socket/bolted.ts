@@ -2,7 +2,7 @@ import { PIN_STEEL } from '../../model/catalogue/pin.js';
 import { GAMMA_M_CONNECTION, kMod } from '../../model/catalogue/timber-factors.js';
 import type { BoltedEnd } from '../../model/parts.js';
 import { plateInTheMiddle, yieldMoment } from '../en1995/joint/double-shear.js';
-import { embeddingStrength } from '../en1995/joint/embedding.js';
+import { embeddingAtAngle, embeddingStrength } from '../en1995/joint/embedding.js';
 import { effectiveNumber, leastDistances } from '../en1995/joint/row.js';
 import { splittingCapacity } from '../en1995/joint/splitting.js';
 import { hubLimit, woodLimit } from '../limits.js';
@@ -40,7 +40,10 @@ export const bolted: SocketPath = (c) => {
 
   // As if every bolt had the largest share across the grain: exact for two, safe for more.
   const pull = Math.hypot(force, end.bolts * across);
-  push(pull / (boltCapacity(c, end, timber) * factor), 'EN 1995-1-1 8.2.3 (8.11), bolts of the slotted end');
+  push(
+    pull / (boltCapacity(c, end, timber, Math.atan2(end.bolts * across, force)) * factor),
+    'EN 1995-1-1 8.2.3 (8.11), bolts of the slotted end',
+  );
   if (across > 0)
     push(
       across / (factor * splittingCapacity(2 * timber, depth, depth / 2)),
@@ -70,11 +73,11 @@ export const bolted: SocketPath = (c) => {
   return checks;
 };
 
-/** Characteristic capacity of the row, N: two planes a bolt, nef bolts. */
-function boltCapacity(c: SocketCase, end: BoltedEnd, timber: number): number {
+/** Characteristic capacity of the row under a force at an angle to the grain, N: two planes a bolt, nef bolts. */
+function boltCapacity(c: SocketCase, end: BoltedEnd, timber: number, angle: number): number {
   const density = c.strut.densityK ?? 0.9 * c.strut.density;
   const joint = plateInTheMiddle(
-    embeddingStrength(end.diameter, density),
+    embeddingAtAngle(embeddingStrength(end.diameter, density), end.diameter, angle),
     end.diameter,
     timber,
     yieldMoment(end.diameter, PIN_STEEL.fu),

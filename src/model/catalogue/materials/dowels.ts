@@ -2,7 +2,7 @@ import type { Material, Source } from '../../material.js';
 import { remembered } from './source.js';
 
 /** What a 5 % fractile with defects keeps of a clear-wood mean: from memory, a judgement; slope of grain is the usual culprit. */
-export const CLEAR_WOOD_SHARE = 0.5;
+const CLEAR_WOOD_SHARE = 0.5;
 /** ft over fm, as EN 384 has it for softwood: from memory. Clear wood does better; a dowel with sloping grain does not. */
 const TENSION_SHARE = 0.6;
 
