@@ -4,6 +4,7 @@ import type { Job } from '../../model/job/index.js';
 import type { PanelPart, Point2 } from '../../model/parts.js';
 import type { PlannedSheet } from '../../model/plan.js';
 import { type Drawing, type DrawingLine, straightLine } from '../kit/drawing.js';
+import { sharedCuts, withLeadIn, withTabs } from './cut-lines.js';
 import { cutterPath, kerfOffset } from './kerf.js';
 
 /** Chords within this of one circle are drawn as its arc, mm: twice the chord error that arcs are made with. */
@@ -42,6 +43,15 @@ export function sheetDrawing(
     if (path) outside.push({ corners: withArcs(path, ARC_FIT), closed: true });
   }
   const { layers } = cutter;
+  const lead = cutter.kind === 'router' ? cutter.leadIn_mm : 0;
+  const begun = (lines: DrawingLine[], side: 'outside' | 'inside'): DrawingLine[] =>
+    lead > 0 ? lines.map((line) => withLeadIn(line, lead, side)) : lines;
+  // Shared sides, tabs and lead-ins each open the contour, so a sheet has one of them: the first that the job asks for.
+  const outsideCuts = cutter.sharedCuts
+    ? sharedCuts(outside)
+    : cutter.tabs_mm > 0
+      ? outside.flatMap((line) => withTabs(line, cutter.tabs_mm))
+      : begun(outside, 'outside');
   const edge: readonly Point2[] = size.outline ?? [
     [0, 0],
     [size.width, 0],
@@ -66,8 +76,8 @@ export function sheetDrawing(
         lines: [straightLine(edge, true), ...(side === CHECK_SIDE ? [checkSquare(square)] : [])],
       },
       { ...layers.engrave, purpose: 'engrave', lines: engrave },
-      { ...layers.inside, purpose: 'inside', lines: inside },
-      { ...layers.outside, purpose: 'outside', lines: outside },
+      { ...layers.inside, purpose: 'inside', lines: begun(inside, 'inside') },
+      { ...layers.outside, purpose: 'outside', lines: outsideCuts },
     ],
   };
 }

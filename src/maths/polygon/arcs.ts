@@ -10,6 +10,8 @@ export interface BulgedCorner {
 /** Fewest chords that make an arc, and the largest angle that one of them may span, rad. */
 const LEAST_CHORDS = 3;
 const LARGEST_CHORD = Math.PI / 5;
+/** Half a turn with the round-off of its chords. */
+const HALF_TURN = Math.PI * (1 + 1e-9);
 
 /**
  * The ring with runs of chords of one circle drawn together to arcs: every corner of a run within `tolerance` of the
@@ -30,13 +32,15 @@ export function withArcs(ring: Ring, tolerance: number): BulgedCorner[] {
       { x: b[0], y: b[1], bulge: Math.tan(rest / 4) },
     ];
   }
-  // Begin where no arc can run across: at the sharpest corner.
+  // Begin where no arc can run across: at a corner too sharp for one, or where a long side meets a short chord.
   let start = 0;
-  let sharpest = -1;
+  let clearest = -1;
   for (let i = 0; i < n; i++) {
     const t = Math.abs(turnAt(p, i));
-    if (t > sharpest) {
-      sharpest = t;
+    const [before, after] = [sideLength(p, i - 1), sideLength(p, i)];
+    const clear = t > LARGEST_CHORD ? 10 + t : Math.abs(Math.log(before / after));
+    if (clear > clearest) {
+      clearest = clear;
       start = i;
     }
   }
@@ -46,7 +50,7 @@ export function withArcs(ring: Ring, tolerance: number): BulgedCorner[] {
     let found: Circle | null = null;
     for (let k = LEAST_CHORDS; k <= n - i; k++) {
       const c = circleThrough(p(start + i), p(start + i + Math.floor(k / 2)), p(start + i + k));
-      if (!c || !isRun(p, start + i, k, c, tolerance) || Math.abs(sweep(p, start + i, k, c)) > Math.PI) break;
+      if (!c || !isRun(p, start + i, k, c, tolerance) || Math.abs(sweep(p, start + i, k, c)) > HALF_TURN) break;
       length = k;
       found = c;
     }
@@ -98,6 +102,8 @@ function sweep(p: At, first: number, chords: number, c: Circle): number {
   for (let k = 0; k < chords; k++) sum += chordAngle(p(first + k), p(first + k + 1), c);
   return sum;
 }
+
+const sideLength = (p: At, i: number): number => Math.hypot(p(i + 1)[0] - p(i)[0], p(i + 1)[1] - p(i)[1]);
 
 function turnAt(p: At, i: number): number {
   const [a, b, c] = [p(i - 1), p(i), p(i + 1)];

@@ -13,8 +13,8 @@ import { planSheets } from './sheets.js';
 
 /** Evaluations that the usual search may spend: about a second on one core for a dozen panels, ten for two hundred. */
 const LEAST_EVALUATIONS = 1e6;
-const EVALUATIONS_A_PANEL = 2.5e5;
-const MOST_EVALUATIONS = 40e6;
+const EVALUATIONS_A_PANEL = 4e5;
+const MOST_EVALUATIONS = 20e6;
 
 /**
  * Lays panels on sheets: as few sheets as it finds, then the last one filled from its left, so that one offcut

@@ -163,7 +163,10 @@ function emptiest(layout: Layout, kinds: readonly SheetKind[]): number {
   return best;
 }
 
-/** Takes away the emptiest sheet while the rest can take its pieces without overlap. */
+/**
+ * Takes away a sheet while the rest can take its pieces without overlap: the emptiest first, and after a failure another
+ * try from the same plan or from a near miss, until the budget or the patience is spent.
+ */
 function reduceSheets(
   start: Layout,
   kinds: readonly SheetKind[],
@@ -173,30 +176,71 @@ function reduceSheets(
 ): Layout {
   let layout = start;
   const limit = budget.spent + 0.7 * (budget.limit - budget.spent);
+  let tries = 0;
+  let near: Layout | null = null;
   while (
     layout.fields.length > Math.max(1, lowerBound) &&
     layout.field.every((f) => f >= 0) &&
+    tries < MOST_TRIES &&
     !isSpent(budget, limit)
   ) {
-    const drop = emptiest(layout, kinds);
-    const fields = layout.fields.filter((_, f) => f !== drop);
-    const trial = newLayout(layout.store, layout.shapes, fields, layout.spacing, layout.tolerance, budget);
-    const homeless: number[] = [];
-    layout.shapes.forEach((_, i) => {
-      const f = layout.field[i]!;
-      if (f === drop) homeless.push(i);
-      else put(trial, i, layout.pose[i]!, layout.x[i]!, layout.y[i]!, f > drop ? f - 1 : f);
-    });
+    // From a near miss with some of its worst pieces thrown about, or anew without another sheet.
+    const trial: Layout | null =
+      near && tries % 3 !== 0
+        ? near
+        : without(
+            layout,
+            tries === 0 ? emptiest(layout, kinds) : Math.floor(random() * layout.fields.length),
+            random,
+            budget,
+          );
+    if (!trial) break;
     const fieldsOf = fieldsByPiece(trial);
-    if (homeless.some((i) => fieldsOf(i).length === 0)) break;
-    const room = fields.reduce((s, f) => s + (f.x1 - f.x0 + trial.spacing) * (f.y1 - f.y0 + trial.spacing), 0);
-    const need = trial.shapes.reduce((s, p) => s + p.area, 0);
-    if (need > room) break;
-    for (const i of homeless) spread(trial, i, fieldsOf(i), random);
-    if (!separate(trial, fieldsOf, random, { rounds: 100, strikes: 4, limit })) break;
-    layout = trial;
+    if (trial === near) throwAbout(trial, fieldsOf, random);
+    if (separate(trial, fieldsOf, random, { rounds: 100, strikes: 2, limit })) {
+      layout = trial;
+      near = null;
+      tries = 0;
+    } else {
+      near = trial;
+      tries++;
+    }
   }
   return layout;
+}
+
+/** Tries at one number of sheets. */
+const MOST_TRIES = 40;
+
+/** The layout without one of its sheets, whose pieces lie anywhere on the others; null: they cannot. */
+function without(layout: Layout, drop: number, random: Random, budget: Budget): Layout | null {
+  const fields = layout.fields.filter((_, f) => f !== drop);
+  const trial = newLayout(layout.store, layout.shapes, fields, layout.spacing, layout.tolerance, budget);
+  const homeless: number[] = [];
+  layout.shapes.forEach((_, i) => {
+    const f = layout.field[i]!;
+    if (f === drop) homeless.push(i);
+    else put(trial, i, layout.pose[i]!, layout.x[i]!, layout.y[i]!, f > drop ? f - 1 : f);
+  });
+  const fieldsOf = fieldsByPiece(trial);
+  if (homeless.some((i) => fieldsOf(i).length === 0)) return null;
+  const room = fields.reduce((s, f) => s + (f.x1 - f.x0 + trial.spacing) * (f.y1 - f.y0 + trial.spacing), 0);
+  if (trial.shapes.reduce((s, p) => s + p.area, 0) > room * (1 + 1e-9)) return null;
+  for (const i of homeless) spread(trial, i, fieldsOf(i), random);
+  return trial;
+}
+
+/** Pieces that overlap, and as many that do not, go anywhere. */
+function throwAbout(layout: Layout, fieldsOf: (i: number) => readonly number[], random: Random): void {
+  const n = layout.shapes.length;
+  const deep = layout.shapes
+    .map((_, i) => i)
+    .filter((i) => layout.depth.subarray(i * n, (i + 1) * n).some((d) => d > 0));
+  for (const i of deep) {
+    spread(layout, i, fieldsOf(i), random);
+    const other = Math.floor(random() * n);
+    spread(layout, other, fieldsOf(other), random);
+  }
 }
 
 /** The fields that a piece fits, worked out once. */
