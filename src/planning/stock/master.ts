@@ -1,6 +1,7 @@
 import type { Highs, Model } from 'highs';
 import type { Meter } from './effort.js';
 import { type CuttingProblem, type Pattern, patternKey } from './problem.js';
+import { SolverFailed } from './solver.js';
 
 export interface MasterSolution {
   readonly objective: number;
@@ -113,8 +114,12 @@ export class Master {
     this.model.changeRowsBounds({ kind: 'range', from: 0, to: this.m + this.k - 1 }, lower, upper);
   }
 
+  /** Throws SolverFailed where the solver gives no optimum: the programme always has one. */
   solve(meter: Meter): MasterSolution {
     this.model.run();
+    const status = this.model.getModelStatus();
+    if (status !== this.highs.constants.modelStatus.optimal)
+      throw new SolverFailed(`linear programme: status ${status}`);
     const { colValue, rowDual } = this.model.getSolution();
     const iterations = Number(this.model.info.get('simplex_iteration_count'));
     meter.spend(300 + Math.max(iterations, 1) * (8 + 0.35 * this.m) + 0.5 * this.patterns.length);

@@ -9,6 +9,7 @@ import { Packer } from './pack.js';
 import { Pricer } from './pricer.js';
 import { type CuttingProblem, type Pattern, type Run, runsCost } from './problem.js';
 import { materialRequirement, requirementFrom } from './requirement.js';
+import { SolverFailed } from './solver.js';
 
 export interface CuttingSolution {
   readonly runs: readonly Run[];
@@ -23,6 +24,8 @@ const QUICK_ROUNDS = 12;
 /** Dives a mix in the first round, and dead ends from which each goes back. */
 const FIRST_DIVES = 1;
 const BACKTRACKS = 12;
+/** Work of a turn apart from what it calls. */
+const TURN = 1e3;
 /** First growth of the spare room after a mix that could not be packed. */
 const FIRST_STRIDE = 0.05;
 
@@ -66,97 +69,106 @@ export function solveCutting(highs: Highs, problem: CuttingProblem, seed: number
   }
   const answer = (): CuttingSolution => ({ runs: best ?? [], cost, lowerBound: Math.min(lowerBound, cost) });
   if (done()) return answer();
-
-  const costs = bins.map((b) => b.cost);
-  const largest = Math.max(1, ...costs);
-  const penalty = Float64Array.from(problem.weights, () => largest * 10);
-  const master = new Master(
-    highs,
-    problem,
-    'cost',
-    penalty,
-    bins.map((b) => b.available),
-  );
   try {
-    master.add(pool);
-    const root = generate(
-      master,
-      pricer,
-      problem,
-      problem.demand,
-      bins.map((b) => b.available),
-      {
-        lagrangian: (worth, carry) => relaxedMix(problem, worth, carry),
-        reached: (objective, lower) => Math.ceil(lower / unit - 1e-7) >= Math.ceil(objective / unit - 1e-7),
-        refuted: () => false,
-        scale: largest,
-      },
-      costs,
-      effort,
-    );
-    requirements.push(requirementFrom(problem, root.boundDuals, pricer, effort));
-    requirements.push(requirementFrom(problem, root.solution.duals, pricer, effort));
-    bound = mixBound(highs, problem, requirements, unit, effort);
-    lowerBound = Math.max(lowerBound, bound.cost);
-    pool.length = 0;
-    pool.push(...master.patterns);
-  } finally {
-    master.dispose();
+    search();
+  } catch (error) {
+    if (!(error instanceof SolverFailed)) throw error;
   }
+  return answer();
 
-  // Each round packs the cheapest mix, then mixes with more and more room, each with a few dives; a plan found sends the
-  // search back half-way to the last mix that failed. Later rounds dive more often.
-  for (let dives = FIRST_DIVES; !done(); dives *= 2) {
-    let spare = 0;
-    let failed = 0;
-    let stride = FIRST_STRIDE;
-    while (!done()) {
-      const ceiling = cost - unit;
-      const cheapest = mixBound(highs, problem, requirements, unit, effort, { spare, ceiling });
-      if (spare === 0) lowerBound = Math.max(lowerBound, Math.min(cheapest.cost, cost));
-      if (!cheapest.mix || done()) break;
-      const mixCost = costOf(problem, cheapest.mix);
-      if (mixCost >= cost) break;
-      // Of the mixes at that cost, the one with most room is the easiest to pack.
-      const roomiest =
-        bins.length > 1 &&
-        mixBound(highs, problem, requirements, unit, effort, { spare, ceiling: mixCost, roomiest: true }).mix;
-      const mix = roomiest || cheapest.mix;
-      const room = slack(problem, mix);
-      const packer = new Packer(highs, problem, pricer, mix, pool);
-      try {
-        const relaxed = packer.relax(effort);
-        if (relaxed.state === 'exhausted') break;
-        if (relaxed.state !== 'reached') {
-          const duals = relaxed.state === 'refuted' ? relaxed.boundDuals : relaxed.solution.duals;
-          const reason = requirementFrom(problem, duals, pricer, effort);
-          const held = reason.carry.reduce((sum, v, b) => sum + (mix[b]! > 0 ? v * mix[b]! : 0), 0);
-          if (held < reason.worth) requirements.push(reason);
-          // Whole numbers blurred the reason: ask for a little more room instead.
-          else spare = Math.max(room, spare) + 1;
-          continue;
+  function search(): void {
+    const costs = bins.map((b) => b.cost);
+    const largest = Math.max(1, ...costs);
+    const penalty = Float64Array.from(problem.weights, () => largest * 10);
+    const master = new Master(
+      highs,
+      problem,
+      'cost',
+      penalty,
+      bins.map((b) => b.available),
+    );
+    try {
+      master.add(pool);
+      const root = generate(
+        master,
+        pricer,
+        problem,
+        problem.demand,
+        bins.map((b) => b.available),
+        {
+          lagrangian: (worth, carry) => relaxedMix(problem, worth, carry),
+          reached: (objective, lower) => Math.ceil(lower / unit - 1e-7) >= Math.ceil(objective / unit - 1e-7),
+          refuted: () => false,
+          scale: largest,
+        },
+        costs,
+        effort,
+      );
+      requirements.push(requirementFrom(problem, root.boundDuals, pricer, effort));
+      requirements.push(requirementFrom(problem, root.solution.duals, pricer, effort));
+      bound = mixBound(highs, problem, requirements, unit, effort);
+      lowerBound = Math.max(lowerBound, bound.cost);
+      pool.length = 0;
+      pool.push(...master.patterns);
+    } finally {
+      master.dispose();
+    }
+
+    // Each round packs the cheapest mix, then mixes with more and more room, each with a few dives; a plan found sends the
+    // search back half-way to the last mix that failed. Later rounds dive more often.
+    for (let dives = FIRST_DIVES; !done(); dives *= 2) {
+      let spare = 0;
+      let failed = 0;
+      let stride = FIRST_STRIDE;
+      while (!done()) {
+        // A turn that finds nothing to do must still come to an end.
+        effort.spend(TURN);
+        const ceiling = cost - unit;
+        const cheapest = mixBound(highs, problem, requirements, unit, effort, { spare, ceiling });
+        if (spare === 0) lowerBound = Math.max(lowerBound, Math.min(cheapest.cost, cost));
+        if (!cheapest.mix || done()) break;
+        const mixCost = costOf(problem, cheapest.mix);
+        if (mixCost >= cost) break;
+        // Of the mixes at that cost, the one with most room is the easiest to pack.
+        const roomiest =
+          bins.length > 1 &&
+          mixBound(highs, problem, requirements, unit, effort, { spare, ceiling: mixCost, roomiest: true }).mix;
+        const mix = roomiest || cheapest.mix;
+        const room = slack(problem, mix);
+        const packer = new Packer(highs, problem, pricer, mix, pool);
+        try {
+          const relaxed = packer.relax(effort);
+          if (relaxed.state === 'exhausted') break;
+          if (relaxed.state !== 'reached') {
+            const duals = relaxed.state === 'refuted' ? relaxed.boundDuals : relaxed.solution.duals;
+            const reason = requirementFrom(problem, duals, pricer, effort);
+            const held = reason.carry.reduce((sum, v, b) => sum + (mix[b]! > 0 ? v * mix[b]! : 0), 0);
+            if (held < reason.worth) requirements.push(reason);
+            // Whole numbers blurred the reason: ask for a little more room instead.
+            else spare = Math.max(room, spare) + 1;
+            continue;
+          }
+          let runs: Run[] | undefined;
+          for (let dive = 0; dive < dives && !runs && !effort.exhausted; dive++) {
+            runs = packer.dive(random, dive === 0, BACKTRACKS, effort);
+          }
+          if (runs) {
+            offer({ runs, complete: true });
+            spare = Math.max(failed + 1, Math.floor((failed + room) / 2));
+            if (room <= failed + 1) break;
+          } else {
+            failed = Math.max(failed, room);
+            spare = room + 1 + Math.floor(room * stride);
+            stride *= 1.6;
+          }
+        } finally {
+          pool.length = 0;
+          pool.push(...packer.patterns);
+          packer.dispose();
         }
-        let runs: Run[] | undefined;
-        for (let dive = 0; dive < dives && !runs && !effort.exhausted; dive++) {
-          runs = packer.dive(random, dive === 0, BACKTRACKS, effort);
-        }
-        if (runs) {
-          offer({ runs, complete: true });
-          spare = Math.max(failed + 1, Math.floor((failed + room) / 2));
-          if (room <= failed + 1) break;
-        } else {
-          failed = Math.max(failed, room);
-          spare = room + 1 + Math.floor(room * stride);
-          stride *= 1.6;
-        }
-      } finally {
-        pool.length = 0;
-        pool.push(...packer.patterns);
-        packer.dispose();
       }
     }
   }
-  return answer();
 }
 
 const costOf = (problem: CuttingProblem, mix: readonly number[]): number =>

@@ -7,3 +7,6 @@ export function linearSolver(): Promise<Highs> {
   loaded ??= loadHighs();
   return loaded;
 }
+
+/** The solver ended without an answer: round-off that it could not master. What was found before still stands. */
+export class SolverFailed extends Error {}

@@ -129,6 +129,13 @@ it('reports every fault at once, with its place, and cuts the pieces that have n
   expect((await planStock({ pieces: [], stock: [], kerf: 0 })).faults.map((f) => f.place)).toEqual(['stock']);
 });
 
+it('refuses what would not end: a million pieces and more, bars of a kilometre and more', async () => {
+  const many = await planStock({ pieces: [{ mark: 'a', length: 1, quantity: 2e6 }], stock: [bar(1000)], kerf: 0 });
+  expect(many.faults.map((f) => f.place)).toEqual(['pieces']);
+  const long = await planStock({ pieces: [{ mark: 'a', length: 1, quantity: 1 }], stock: [bar(1e9)], kerf: 0 });
+  expect(long.faults.map((f) => f.place)).toEqual(['stock[0] 1000000000']);
+});
+
 it('has nothing to cut: no bars, and that is proven', async () => {
   const answer = await plan({ pieces: [{ mark: 'a', length: 10, quantity: 0 }], stock: [bar(100)], kerf: 1 });
   expect(answer).toEqual({ bars: [], cost: 0, lowerBound: 0, credit: 0, proven: true, uncut: [], faults: [] });
