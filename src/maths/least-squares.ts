@@ -25,6 +25,7 @@ export function leastSquares(
   b: Float64Array,
   damping = 0,
   mostSteps = 4 * map.columns + 50,
+  converged = CONVERGED,
 ): LeastSquares {
   const x = new Float64Array(map.columns);
   const r = Float64Array.from(b);
@@ -33,7 +34,7 @@ export function leastSquares(
   const first = dotOf(s, s);
   let gamma = first;
   let steps = 0;
-  while (steps < mostSteps && gamma > CONVERGED * CONVERGED * first && gamma > 0) {
+  while (steps < mostSteps && gamma > converged * converged * first && gamma > 0) {
     const q = map.forward(p);
     const delta = dotOf(q, q) + damping * dotOf(p, p);
     if (!(delta > 0)) break;

@@ -1,3 +1,4 @@
+import { dampedStep } from '../../maths/damped-step.js';
 import { extremeEigen } from '../../maths/extreme-eigen.js';
 import { dotOf, leastSquares } from '../../maths/least-squares.js';
 import { applyTerms, type ForceTerm, residualOf, spreadTerms } from './force-terms.js';
@@ -15,7 +16,13 @@ export interface DiagramFit {
 
 const ITERATIONS = 80;
 /** A step that betters the misfit by less than this share has converged. */
-const CONVERGED = 1e-15;
+const CONVERGED = 1e-13;
+/** A search that meets its wishes to this share ends the search from other starts. */
+const WELL_MET = 1e-9;
+/** Wishes met to this share of their size are met. */
+const MET = 1e-14;
+/** Above this many coefficients steps come from normal equations, below from conjugate gradients, which need no rank. */
+const DENSE_FROM = 16;
 /** How many eigenvectors of either sign start a search: the misfit is of fourth order in x and may have several valleys. */
 const STARTS = 3;
 
@@ -46,6 +53,8 @@ export function fitDiagram(
       vector.map((v) => v * Math.sqrt(Math.abs(scale))),
     );
     if (!best || found.misfit < best.misfit * (1 - 1e-9)) best = found;
+    // No other valley can be lower than one that meets the wishes.
+    if (best.misfit <= WELL_MET * normOfTargets(terms)) break;
   }
   return best;
 }
@@ -64,31 +73,17 @@ export function refineDiagram(
   let r = residualOf(terms, forces);
   let misfit = dotOf(r, r);
   let damping = 0;
-  for (let step = 0; step < ITERATIONS && misfit > 0; step++) {
-    const here = a;
-    const jacobian = {
-      rows: terms.length,
-      columns: q.size,
-      forward: (d: Float64Array) =>
-        applyTerms(
-          terms,
-          q.polarised(here, q.gradients(d)).map((t) => 2 * sign * t),
-        ),
-      back: (v: Float64Array) => q.pullBack(here, spreadTerms(terms, v, q.edges)).map((g) => 2 * sign * g),
-    };
-    const d = leastSquares(
-      jacobian,
-      r.map((v) => -v),
-      damping,
-    ).x;
+  let curvature = 0;
+  const enough = (MET * normOfTargets(terms)) ** 2;
+  for (let step = 0; step < ITERATIONS && misfit > enough; step++) {
+    const d = stepOf(q, terms, sign, a, r, damping);
     const tried = x.map((v, m) => v + d[m]);
     const triedA = q.gradients(tried);
     const triedForces = forcesAt(triedA);
     const triedR = residualOf(terms, triedForces);
     const next = dotOf(triedR, triedR);
     if (!(next < misfit)) {
-      const column = jacobian.back(jacobian.forward(d));
-      const curvature = dotOf(column, d) / Math.max(dotOf(d, d), Number.MIN_VALUE);
+      if (step === 0 || damping === 0) curvature = curvatureOf(q, terms, a);
       damping = damping > 0 ? damping * 8 : 1e-3 * curvature;
       if (damping > 1e12 * curvature || !(curvature > 0)) break;
       continue;
@@ -100,3 +95,48 @@ export function refineDiagram(
   }
   return { x, sign, forces, misfit: Math.sqrt(misfit) };
 }
+
+/** The step of least |w (L s t + J d - g)|² + damping |d|². */
+function stepOf(
+  q: QuadraticForces,
+  terms: readonly ForceTerm[],
+  sign: 1 | -1,
+  a: Float64Array,
+  r: Float64Array,
+  damping: number,
+): Float64Array {
+  const forward = (b: Float64Array): Float64Array =>
+    applyTerms(
+      terms,
+      q.polarised(a, b).map((t) => 2 * sign * t),
+    );
+  const wanted = r.map((v) => -v);
+  if (q.size > DENSE_FROM) {
+    const unit = (m: number): Float64Array => Float64Array.from({ length: q.size }, (_, i) => (i === m ? 1 : 0));
+    return dampedStep(
+      Array.from({ length: q.size }, (_, m) => forward(q.gradients(unit(m)))),
+      wanted,
+      damping,
+    );
+  }
+  const map = {
+    rows: terms.length,
+    columns: q.size,
+    forward: (d: Float64Array) => forward(q.gradients(d)),
+    back: (v: Float64Array) => q.pullBack(a, spreadTerms(terms, v, q.edges)).map((g) => 2 * sign * g),
+  };
+  return leastSquares(map, wanted, damping).x;
+}
+
+/** |J v|² / |v|² along one direction: the scale that damping is measured by. */
+function curvatureOf(q: QuadraticForces, terms: readonly ForceTerm[], a: Float64Array): number {
+  const v = new Float64Array(q.size).fill(1 / Math.sqrt(q.size));
+  const moved = applyTerms(
+    terms,
+    q.polarised(a, q.gradients(v)).map((t) => 2 * t),
+  );
+  return dotOf(moved, moved);
+}
+
+const normOfTargets = (terms: readonly ForceTerm[]): number =>
+  Math.sqrt(terms.reduce((sum, term) => sum + (term.weight * term.target) ** 2, 0));
