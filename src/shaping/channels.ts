@@ -1,3 +1,4 @@
+import { SCREW } from '../detailing/systems/clamp-parts.js';
 import { largest, type Sleeve } from '../detailing/systems/sleeve.js';
 import { add, addScaled, scale, type Vec3 } from '../maths/vec3.js';
 import { BODY, type HubSpace } from './hub-space.js';
@@ -121,6 +122,27 @@ export function plateHolesOf(space: HubSpace, web: number): Channel[] {
     holes.push(up(0, 0, under - PAST, top, base.levelling / 2));
   }
   return holes;
+}
+
+/** A clamp's screw holes: clear in the half that the normal points to, for the thread in the other. */
+export function screwHolesOf(space: HubSpace): Channel[] {
+  const { clamp } = space.shape;
+  if (!clamp) return [];
+  return clamp.screws.flatMap((at) =>
+    (
+      [
+        [1, SCREW.clear],
+        [-1, SCREW.thread],
+      ] as const
+    ).map(([side, diameter]) => ({
+      from: at,
+      direction: scale(clamp.normal, side),
+      length: clamp.half + PAST,
+      radius: diameter / 2,
+      sleeve: BODY,
+      meets: [BODY],
+    })),
+  );
 }
 
 /** No sleeve is left out of a search. */

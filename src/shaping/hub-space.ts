@@ -39,8 +39,10 @@ export class HubSpace {
     return !this.sleeves.some((s, i) => i !== except && insideSleeve(s, p, margin));
   }
 
+  /** In what is beside body and sleeves: a foot's plate, a clamp's arms. */
   private inPlate(p: Vec3, margin: number): boolean {
-    const { base } = this.shape;
+    const { base, clamp } = this.shape;
+    if (clamp?.arms.some((arm) => insidePlanes(arm.planes, p, margin))) return true;
     if (!base || p[2] > base.top + margin || p[2] < base.top - base.thickness - margin) return false;
     return Math.hypot(p[0], p[1]) < base.radius + margin;
   }

@@ -1,15 +1,17 @@
+import { type ClampParts, IN_PLANE, PARTING } from '../detailing/systems/clamp-parts.js';
 import { hubShape } from '../detailing/systems/hub-shape.js';
 import { LEAST_WALL } from '../detailing/systems/printing.js';
+import { dot } from '../maths/vec3.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
 import type { HubPart } from '../model/parts.js';
 import type { ShapedHub, ShapedPiece } from '../model/shaped.js';
-import { boltHolesOf, type Channel, pinOf, plateHolesOf, ventOf } from './channels.js';
+import { boltHolesOf, type Channel, pinOf, plateHolesOf, screwHolesOf, ventOf } from './channels.js';
 import { type Cradle, capSolid, cradleOf } from './cradle.js';
 import { bushingSleeves, bushings, guideHalves } from './drilling-guide.js';
 import { HubSpace } from './hub-space.js';
-import { Bench, loadKernel, SolidFailed } from './kernel.js';
+import { Bench, loadKernel, type Manifold, SolidFailed } from './kernel.js';
 import { layDown } from './lay-down.js';
 import { letteringsFor, type MarkPlace, placeMark, sideTowards } from './mark-places.js';
 import { type MeasuredWall, measureWalls } from './measure-walls.js';
@@ -34,6 +36,7 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
     const marks = job.nodes.marks ? marksOf(hub, job, space, channels, cradles, findings) : [];
     const solid = socketSolid(bench, space, { marks, channels, cradles, chamfer: job.nodes.chamfer_mm });
     const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
+    if (space.shape.clamp) return shapeHalves(bench, hub, job, solid, space.shape.clamp, findings);
     const lie = space.shape.base
       ? ON_PLATE
       : chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
@@ -54,10 +57,36 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
   }
 }
 
+/** Fewer screws than this do not close a clamp. */
+const LEAST_SCREWS = 2;
+
+/** The halves of a clamp, each by itself on the bed. */
+function shapeHalves(
+  bench: Bench,
+  hub: HubPart,
+  job: Job,
+  solid: Manifold,
+  clamp: ClampParts,
+  findings: Finding[],
+): ShapedHub {
+  if (clamp.screws.length < LEAST_SCREWS)
+    findings.push(finding('clamp-not-screwed', hub.mark, { value: clamp.screws.length, limit: LEAST_SCREWS }));
+  const [x, y, z] = clamp.normal;
+  const laid = [1, -1].map((side, i) => {
+    const half = bench.hold(solid.trimByPlane([side * x, side * y, side * z], PARTING / 2), 'half');
+    return layDown(bench, half, chooseLie(half, [], ON_A_FACE), hub.at, i === 0 ? 'A' : 'B');
+  });
+  return finish(hub, job, laid, findings);
+}
+
 /** A drilled ball itself is not printed: its guide is, in two halves, each bushing with its marks. */
 function shapeGuide(bench: Bench, hub: HubPart, job: Job, findings: Finding[]): ShapedHub {
   const guide = { ...hub, sockets: bushings(hub) };
-  const space = new HubSpace({ sleeves: guide.sockets.flatMap((s) => bushingSleeves(s, hub)), base: null });
+  const space = new HubSpace({
+    sleeves: guide.sockets.flatMap((s) => bushingSleeves(s, hub)),
+    base: null,
+    clamp: null,
+  });
   const marks = job.nodes.marks ? marksOf(guide, job, space, [], [], findings) : [];
   const marked = socketSolid(bench, space, { marks, channels: [], cradles: [], chamfer: 0 });
   const laid = guideHalves(bench, space, hub, marked).map((half, i) =>
@@ -140,7 +169,7 @@ const CHORDS = 0.1;
 
 function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Channel[] {
   const web = LEAST_WALL[job.nodes['process']] + CHORDS;
-  const channels: Channel[] = plateHolesOf(space, web);
+  const channels: Channel[] = [...plateHolesOf(space, web), ...screwHolesOf(space)];
   hub.sockets.forEach((s, i) => {
     if (s.pin > 0) {
       const pin = pinOf(space, i, web);
@@ -169,7 +198,7 @@ function marksOf(
   const opening = (i: number): Cradle | undefined => cradles.find((c) => c.sleeve === i);
   const taken = hub.sockets.map((_, i): { side: number; halfAngle: number }[] => {
     const c = opening(i);
-    return c ? [{ side: c.angle, halfAngle: c.halfAngle }] : [];
+    return [...(c ? [{ side: c.angle, halfAngle: c.halfAngle }] : []), ...partingSides(space, i)];
   });
   const leastWall = LEAST_WALL[job.nodes['process']];
   const place = (i: number, along: string, round: string, sense: 1 | -1): boolean => {
@@ -205,6 +234,15 @@ function marksOf(
   if (missing.length > 0)
     findings.push(finding('mark-left-out', hub.mark, { value: missing.length, about: { marks: missing.join(', ') } }));
   return places;
+}
+
+/** The two sides of a sleeve that a clamp's parting plane cuts, so that no mark crosses the cut. */
+function partingSides(space: HubSpace, i: number): { side: number; halfAngle: number }[] {
+  const { clamp, sleeves } = space.shape;
+  const s = sleeves[i]!.socket;
+  if (!clamp || Math.abs(dot(clamp.normal, s.direction)) > IN_PLANE) return [];
+  const side = Math.atan2(dot(clamp.normal, s.z), dot(clamp.normal, s.y)) + Math.PI / 2;
+  return [side, side + Math.PI].map((at) => ({ side: at, halfAngle: 0.1 }));
 }
 
 function size(space: HubSpace, i: number): number {

@@ -29,6 +29,8 @@ export function socketSolid(bench: Bench, space: HubSpace, cuts: HubCuts): Manif
   const body = bodySolid(bench, space);
   if (body) pieces.push(body);
   if (space.shape.base) pieces.push(plateSolid(bench, space.shape.base, cuts.chamfer));
+  for (const arm of space.shape.clamp?.arms ?? [])
+    pieces.push(bench.hold(kernel.Manifold.hull(arm.points.map((p) => [p[0], p[1], p[2]])), 'arm'));
   const outside = bench.hold(kernel.Manifold.union(pieces), 'outside');
   const paths = space.sleeves.map((s) => pathSolid(bench, s, cuts.chamfer, space.reach + 1));
   const last = [

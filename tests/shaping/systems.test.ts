@@ -80,3 +80,26 @@ it('guides the drill into a ball from outside, in two closed halves, each bushin
     expect(walled).toBeGreaterThan(8);
   }
 });
+
+it('parts a clamp along the plane of most struts, in two closed halves that screws hold', async () => {
+  const { shapeHub } = await import('../../dist/shaping/shape-hub.js');
+  const { hubShape } = await import('../../dist/detailing/systems/hub-shape.js');
+  const made = randomHub(91, { system: 'clamp', count: 4, least: 55, nodes: { process: 'filament', joint: 'glued' } });
+  const { pieces, findings } = await shapeHub(made.hub, made.job);
+  expect(findings.filter((f) => f.level === 'stop')).toEqual([]);
+  expect(pieces.map((p) => p.piece)).toEqual(['A', 'B']);
+  for (const p of pieces) {
+    const stl = readStl(writeStl(p.positions, p.triangles, p.piece));
+    expect(inspect(stl)).toMatchObject({ open: 0, degenerate: 0, shells: 1 });
+  }
+  const volume = pieces.reduce((sum, p) => sum + p.volume, 0);
+  expect((made.hub.mass! * 1e9) / made.hub.material.density / volume).toBeGreaterThan(0.9);
+  expect((made.hub.mass! * 1e9) / made.hub.material.density / volume).toBeLessThan(1.1);
+  const { clamp } = hubShape(made.hub, made.job);
+  // At least two struts lie in the plane, and at least two screws hold the halves.
+  const inPlane = made.hub.sockets.filter(
+    (s) => Math.abs([0, 1, 2].reduce((sum, k) => sum + s.direction[k]! * clamp!.normal[k]!, 0)) < 0.035,
+  );
+  expect(inPlane.length).toBeGreaterThanOrEqual(2);
+  expect(clamp!.screws.length).toBeGreaterThanOrEqual(2);
+});

@@ -19,10 +19,11 @@ export const bodyHull = ({ sleeves, base }: HubShape, sides: number = COVER_SIDE
 
 /** The body and, for each sleeve, its cone and its tube, as convex pieces. */
 export function sleeveCover(shape: HubShape): ConvexPiece[] {
-  const { sleeves, base } = shape;
+  const { sleeves, base, clamp } = shape;
   const pieces: ConvexPiece[] = [];
   const body = bodyHull(shape);
   if (body) pieces.push({ points: body.points, edges: edgesOf(body) });
+  for (const arm of clamp?.arms ?? []) pieces.push({ points: arm.points, edges: edgesOf(arm) });
   if (base)
     pieces.push(
       between(

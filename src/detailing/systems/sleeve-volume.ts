@@ -1,9 +1,10 @@
-import { addScaled, scale } from '../../maths/vec3.js';
+import { addScaled, scale, type Vec3 } from '../../maths/vec3.js';
 import { plateVolume } from './base-plate.js';
+import { type ClampParts, SCREW } from './clamp-parts.js';
 import type { HubShape } from './hub-shape.js';
 import { areaOf, type Half, largest, type Sleeve } from './sleeve.js';
 import { bodyHull } from './sleeve-cover.js';
-import { between, insidePlanes, insideSleeve } from './sleeve-inside.js';
+import { between, insidePath, insidePlanes, insideSleeve } from './sleeve-inside.js';
 
 /**
  * Volume of a hub's plastic, mm³: the body's hull, plus each sleeve where it stands out of the hull, shared evenly where sleeves
@@ -11,7 +12,7 @@ import { between, insidePlanes, insideSleeve } from './sleeve-inside.js';
  * tube, 12 round, 3 across; within 2 % of the solid on hubs of 2 to 12 sleeves.
  */
 export function sleeveVolume(shape: HubShape): number {
-  const { sleeves, base } = shape;
+  const { sleeves, base, clamp } = shape;
   const hull = bodyHull(shape, 12);
   const planes = hull?.planes ?? new Float64Array(0);
   // A 12-gon that contains its circle is too large by this share of the area.
@@ -38,7 +39,38 @@ export function sleeveVolume(shape: HubShape): number {
     const across = s.hollow ? 2 * wall : 2 * largest(s.outer);
     volume -= ((Math.PI * pin * pin) / 4) * across;
   }
+  if (clamp) volume += armsVolume(clamp, sleeves, planes);
   return Math.max(volume, 0);
+}
+
+/** Points a side of the grid that an arm is summed over. */
+const GRID = 16;
+
+/** mm³ of a clamp's arms outside body, sleeves, paths and one another, less the screws' holes. */
+function armsVolume(clamp: ClampParts, sleeves: readonly Sleeve[], planes: Float64Array): number {
+  let volume = 0;
+  clamp.arms.forEach((arm, index) => {
+    const [low, high] = [0, 1].map((side) =>
+      [0, 1, 2].map((k) => (side === 0 ? Math.min : Math.max)(...arm.points.map((p) => p[k]!))),
+    ) as [number[], number[]];
+    const step = [0, 1, 2].map((k) => (high[k]! - low[k]!) / GRID);
+    const cell = step[0]! * step[1]! * step[2]!;
+    for (let i = 0; i < GRID; i++)
+      for (let j = 0; j < GRID; j++)
+        for (let k = 0; k < GRID; k++) {
+          const p: Vec3 = [
+            low[0]! + (i + 0.5) * step[0]!,
+            low[1]! + (j + 0.5) * step[1]!,
+            low[2]! + (k + 0.5) * step[2]!,
+          ];
+          if (!insidePlanes(arm.planes, p) || insidePlanes(planes, p)) continue;
+          if (clamp.arms.some((other, o) => o < index && insidePlanes(other.planes, p))) continue;
+          if (sleeves.some((s) => insideSleeve(s, p) || insidePath(s, p))) continue;
+          volume += cell;
+        }
+  });
+  const hole = (Math.PI / 4) * ((SCREW.clear ** 2 + SCREW.thread ** 2) / 2) * 2 * clamp.half;
+  return volume - hole * clamp.screws.length;
 }
 
 const ALONG = 8;

@@ -107,4 +107,12 @@ export const NODE_FINDINGS = {
     'mm',
     (f) => `a ball of ${num(f.value, 1)} mm does not hold its bores; it needs ${num(f.limit, 1)} mm`,
   ),
+  'clamp-not-screwed': entry(
+    'stop',
+    'node',
+    '',
+    (f) =>
+      `room for ${num(f.value, 0)} screws between its struts, and a clamp needs ${num(f.limit, 0)}; give this node another system`,
+    { withholds: true },
+  ),
 } as const;
