@@ -98,6 +98,51 @@ function timed(work) {
 
 const round = (x) => Math.round(x * 1000) / 1000;
 
+/** A cube of n³ cells in six tetrahedra each: a function for every inner node, so many of them. */
+function tetrahedra(n) {
+  const id = (p) => (p[0] * (n + 1) + p[1]) * (n + 1) + p[2];
+  const truss = { nodes: [], members: [], faces: [], cells: [], supports: [], loads: [], reciprocal: null };
+  const span = [...Array(n + 1).keys()];
+  for (const i of span)
+    for (const j of span)
+      for (const k of span) {
+        const bend = [i, j, k].every((v) => v > 0 && v < n) ? 0.2 : 0;
+        const at = [i, j, k].map((v, a) => 100 * (v + bend * Math.sin(7 * i + 11 * j + 13 * k + a)));
+        truss.nodes.push({ mark: `N${id([i, j, k])}`, at });
+      }
+  const seen = new Map();
+  const once = (list, corners, make) => {
+    const key = [...corners].sort((a, b) => a - b).join(' ');
+    if (!seen.has(key)) {
+      seen.set(key, `M${seen.size}`);
+      list.push({ mark: seen.get(key), ...make(corners.map((c) => `N${c}`)) });
+    }
+    return seen.get(key);
+  };
+  const blank = { force: null, section: null, area: null, modulus: null, roll: null, group: null };
+  const member = (ends) => ({ ends, ...blank });
+  const face = (nodes) => ({ nodes, panel: false, group: null });
+  for (let c = 0; c < n ** 3; c++)
+    for (const order of ['012', '021', '102', '120', '201', '210']) {
+      const at = [Math.floor(c / n / n), Math.floor(c / n) % n, c % n];
+      const t = [id(at)];
+      for (const axis of order) {
+        at[axis]++;
+        t.push(id(at));
+      }
+      for (let a = 0; a < 4; a++) for (let b = a + 1; b < 4; b++) once(truss.members, [t[a], t[b]], member);
+      const faces = t.map((_, out) =>
+        once(
+          truss.faces,
+          t.filter((_, k) => k !== out),
+          face,
+        ),
+      );
+      truss.cells.push({ mark: `C${truss.cells.length}`, faces });
+    }
+  return truss;
+}
+
 export async function run(print) {
   const job = { ...defaultJob(), forces: { ...defaultJob().forces, sign: 1 } };
   print(
@@ -130,5 +175,14 @@ export async function run(print) {
     print(
       `${counts.join(' ')} |${built.time}${read.time}   ${residuals.maxRelative.toExponential(1)} |   ${traced.time} |${space.time} ${String(space.value.dimension).padStart(4)} |   ${whole.time} |${mended.time}${mended.value.done ? '' : ` ${mended.value.findings.map((f) => `${f.code} ${f.value}`)}`}`,
     );
+  }
+  print('tetrahedra: struts  nodes  faces  cells |    space  dim');
+  for (const n of [3, 5, 7]) {
+    const truss = tetrahedra(n);
+    const topology = topologyOf(truss);
+    const { complex } = complexOf(topology, givenCells(topology));
+    const space = timed(() => functionSpace(topology, complex));
+    const counts = [truss.members, truss.nodes, truss.faces, complex.cells].map((l) => String(l.length).padStart(6));
+    print(`            ${counts.join(' ')} |${space.time} ${String(space.value.dimension).padStart(4)}`);
   }
 }

@@ -123,6 +123,12 @@ export const RECIPROCAL_FINDINGS = {
     (f) =>
       `has a family of ${num(f.value)} independent diagrams and nothing picks one; fix forces of some struts in "forces.fix" or give forces`,
   ),
+  'fixed-force-unknown': entry(
+    'stop',
+    'strut',
+    '',
+    () => 'has its force fixed in "forces.fix" but is no strut of the truss; correct the mark',
+  ),
   'reciprocal-misses-forces': entry(
     'warn',
     'truss',

@@ -1,4 +1,5 @@
 import type { Finding } from '../../model/finding.js';
+import { finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { Topology } from '../../model/topology.js';
 import { givenForces } from '../given-forces.js';
@@ -28,9 +29,11 @@ export function reciprocalOf(
   const given = givenForces(topology.truss).forces;
   const source = forceSource(topology, job);
   const result = diagramOf(topology, job, source, given, analysedForces);
+  const unknown = job.forces.fix.filter(({ strut }) => !topology.memberIndex.has(strut));
+  const found = [...unknown.map(({ strut }) => finding('fixed-force-unknown', strut)), ...result.findings];
   const figure: ReciprocalResult = {
     ...result,
-    findings: source === 'reciprocal' ? result.findings : result.findings.map(softened),
+    findings: source === 'reciprocal' ? found : found.map(softened),
   };
   const beside = given && result.forces ? [[named('given', given), named('reciprocal', result.forces)] as const] : [];
   const compared = withComparisons(topology, job, figure, beside);

@@ -198,3 +198,9 @@ it('a diagram of another form is named once, not strut by strut', () => {
   const { findings } = reciprocalOf(topologyOf(squeezed), { ...JOB, forces: { ...JOB.forces, sign: 1 } });
   expect(findings.map((f) => f.code)).toEqual(['diagram-of-another-form']);
 });
+
+it('a fixed force of a strut that is not there is named', () => {
+  const job = { ...JOB, forces: { ...JOB.forces, source: 'reciprocal' as const, fix: [{ strut: 'S99', force_N: 1 }] } };
+  const { findings } = reciprocalOf(topologyOf({ ...withDiagram(MARKS), reciprocal: null }), job);
+  expect(findings[0]).toMatchObject({ code: 'fixed-force-unknown', subject: 'S99', level: 'stop' });
+});
