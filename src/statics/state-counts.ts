@@ -20,7 +20,7 @@ const ARBITER_VECTORS = 120;
 export const NEAR_MECHANISM = 1e-3;
 
 /** One way in which the figure can move without straining a bar, at first order. */
-export interface Mechanism {
+interface Mechanism {
   /** Displacements over all nodes, three a node, largest component 1. */
   readonly shape: Float64Array;
   /** |Aᵀ z| / |z|: 0 to round-off for a mechanism, small for a near-mechanism. */

@@ -46,25 +46,3 @@ export function blockGraph(lower: SparseMatrix, blockStarts: Int32Array): BlockG
   }
   return { count, starts: degree, neighbours, weights };
 }
-
-/** Connected pieces: the piece of each block, numbered in the order of their first block. */
-export function pieces(graph: BlockGraph): { readonly of: Int32Array; readonly count: number } {
-  const of = new Int32Array(graph.count).fill(-1);
-  let count = 0;
-  const stack: number[] = [];
-  for (let first = 0; first < graph.count; first++) {
-    if (of[first] >= 0) continue;
-    of[first] = count;
-    stack.push(first);
-    for (let b = stack.pop(); b !== undefined; b = stack.pop())
-      for (let p = graph.starts[b]; p < graph.starts[b + 1]; p++) {
-        const c = graph.neighbours[p];
-        if (of[c] < 0) {
-          of[c] = count;
-          stack.push(c);
-        }
-      }
-    count++;
-  }
-  return { of, count };
-}

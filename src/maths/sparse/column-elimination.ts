@@ -1,7 +1,7 @@
 import type { SparseMatrix } from './csc.js';
 
 /** A pivot below this share of its column's norm is zero: held on 3,000 random structures against dense singular values. */
-export const PIVOT_CUT = 1e-9;
+const PIVOT_CUT = 1e-9;
 /** A row may be pivot when it is at least this share of the largest candidate: bounds growth, leaves room to keep fill low. */
 const THRESHOLD = 0.1;
 

@@ -1,7 +1,7 @@
 import type { FastUpdate } from './front-workspace.js';
 
 /** Columns of a front that are eliminated together; a multiple of the tile's side. */
-export const PANEL = 4;
+const PANEL = 4;
 const TILE = 4;
 /** Blocks of the update, sized so that a block of rows stays in the second-level cache. */
 const DEPTH = 256;

@@ -8,8 +8,6 @@ export interface MemberLoad {
   readonly freeElongation: number;
 }
 
-export const NO_LOAD: MemberLoad = { line: [0, 0, 0], freeElongation: 0 };
-
 /** Flexibility at the second node with the first one held: N, T and the two planes of bending, [force force, force moment, moment moment]. */
 interface Flexibility {
   readonly axial: number;
