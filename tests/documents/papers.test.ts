@@ -14,6 +14,7 @@ import { cutListPdf } from '../../src/documents/struts/cut-list-pdf.js';
 import { loadFonts } from '../../src/machine/fonts.js';
 import { add, cross, scale, type Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob } from '../../src/model/job/index.js';
+import type { Truss } from '../../src/model/truss.js';
 import { inventedTruss } from './invented.js';
 import { exampleRecords, packRecords, planeTruss } from './pack-records.js';
 import { checkPdf, outside, overlaps, textOf } from './pdf.js';
@@ -72,6 +73,26 @@ describe('papers of a pack', () => {
     };
     const records = packRecords({}, truss);
     for (const write of [forceSheets, cutListPdf, nodeSheets, report]) holds(await write(records, fonts));
+  });
+  it.each([
+    ['no forces', (t: Truss): Truss => ({ ...t, members: t.members.map((m) => ({ ...m, force: null })) })],
+    ['forces of nought', (t: Truss): Truss => ({ ...t, members: t.members.map((m) => ({ ...m, force: 0 })) })],
+    [
+      'one strut',
+      (t: Truss): Truss => ({ ...t, faces: [], nodes: t.nodes.slice(0, 9), members: t.members.slice(0, 1) }),
+    ],
+    [
+      'sections that nobody knows',
+      (t: Truss): Truss => ({ ...t, members: t.members.map((m) => ({ ...m, section: 'unknown' })) }),
+    ],
+  ])('every paper stands with %s', async (_, change) => {
+    const bare = packRecords({}, change(inventedTruss()));
+    for (const write of [forceSheets, cutListPdf, nodeSheets, report]) {
+      const text = holds(await write(bare, fonts));
+      expect(text).not.toMatch(/NaN|undefined|null|Infinity/);
+    }
+    for (const table of [forcesCsv, cutListCsv])
+      expect(rowsOf(table(bare)).length).toBe(bare.topology.truss.members.length);
   });
   it('the report says every finding', async () => {
     const text = holds(await report(records, fonts));
