@@ -5,6 +5,8 @@ export const LIMITS = {
   nodes: 50_000,
   members: 200_000,
   faces: 100_000,
+  /** Corners of one face: whether it crosses itself takes the square of them. */
+  corners: 1000,
   /** Nesting of brackets in a JSON file: the deepest key of a job stands at 6. */
   depth: 32,
   /** Largest magnitude of any number: its cube in other units is still far from what a double holds. */

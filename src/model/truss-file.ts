@@ -26,7 +26,10 @@ const member = z.strictObject({
 
 const face = z.strictObject({
   id: mark('Mark of the face, and of its panel.'),
-  nodes: z.array(z.string()).describe('Marks of the nodes round the face, in order, the first not repeated.'),
+  nodes: z
+    .array(z.string())
+    .max(LIMITS.corners)
+    .describe('Marks of the nodes round the face, in order, the first not repeated.'),
   panel: z.boolean().optional().describe('Whether a panel is made for it; absent: no.'),
   group: name.optional().describe('Faces of a group share what the job says of the group.'),
 });

@@ -6,11 +6,15 @@ import { items, textOf } from './loose.js';
 
 type Tell = (path: Path, what: string, mend: string) => void;
 
+/** The nearest mark is looked for this often: in a file where no name fits, it would take longer than all the rest. */
+const SUGGESTIONS = 50;
+
 /** The marks of one list of a truss file: checked when made, asked afterwards whether a name leads anywhere. */
 export class MarkList {
   readonly #marks = new Set<string>();
   readonly #byKey = new Map<string, string>();
   readonly #names: (string | null)[];
+  #suggested = 0;
 
   /** `always`: marks that exist without standing in the list. */
   constructor(
@@ -49,7 +53,8 @@ export class MarkList {
   mustHold(mark: string | null | undefined, path: Path, who: string): boolean {
     if (typeof mark !== 'string') return false;
     if (this.#marks.has(mark)) return true;
-    const near = this.#byKey.get(markKey(mark)) ?? nearest(mark, this.#marks);
+    const near =
+      this.#byKey.get(markKey(mark)) ?? (this.#suggested++ < SUGGESTIONS ? nearest(mark, this.#marks) : null);
     this.tell(
       path,
       `${who} names ${this.kind} ${quoted(mark)}, which the file does not have`,

@@ -1,6 +1,7 @@
 import { closePairs } from '../maths/close-pairs.js';
 import { loopFailure } from '../maths/loop-crossing.js';
 import { distance, isFinite3, type Vec3 } from '../maths/vec3.js';
+import { LIMITS } from '../model/limits.js';
 import { caseNameProblem } from '../model/marks.js';
 import { ROUND_OFF } from '../model/tolerance.js';
 import { OUTSIDE_CELL } from '../model/truss.js';
@@ -149,7 +150,8 @@ function checkFaces(
       seen.add(mark);
     });
     const points = loop.map((mark) => (typeof mark === 'string' ? at.get(mark)?.at : undefined));
-    if (repeated || loop.length < 3 || !known.every(Boolean) || points.some((p) => !p)) return;
+    if (repeated || loop.length < 3 || loop.length > LIMITS.corners || !known.every(Boolean) || points.some((p) => !p))
+      return;
     const failure = loopFailure(points as Vec3[]);
     if (failure === 'straight') tell(path, `the nodes of ${who} lie on one line`, 'name nodes that span a plane');
     if (failure === 'crossing') tell(path, `${who} crosses itself`, 'name its nodes in order round the face');

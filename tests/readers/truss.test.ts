@@ -162,3 +162,13 @@ it('a fault stays one line of visible characters whatever the mark holds', () =>
   expect(said).toHaveLength(1);
   expect(said[0]).toContain('"a\\u{202e}\\u{a}b<script>\\u{d800}"');
 });
+
+it('a large file in which no name fits is told in a moment', () => {
+  const nodes = Array.from({ length: 5000 }, (_, i) => `{ "id": "N${i}", "at": [${i}, ${i % 7}, 0] }`);
+  const members = Array.from({ length: 10_000 }, (_, i) => `{ "id": "S${i}", "ends": ["M${i % 5000}", "K${i}"] }`);
+  const faults = faultsOf(
+    `{ "format": "strutwright-truss/1", "units": "mm", "nodes": [${nodes.join(',\n')}], "members": [${members.join(',\n')}] }`,
+  );
+  expect(faults).toHaveLength(20_000);
+  expect(faults[0]).toMatch(/names node "M0", which the file does not have: write "N0", or add the node/);
+});

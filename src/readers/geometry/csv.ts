@@ -21,6 +21,9 @@ const endAxis = (name: string, end: 1 | 2): string[] => [
   end === 1 ? `from ${name}` : `to ${name}`,
 ];
 
+/** The nearest name is looked for this often: in a table where none fits, it would take longer than all the rest. */
+const SUGGESTIONS = 50;
+
 /** A force that a table gives to the strut between two nodes, N, tension positive. */
 export interface PairForce {
   readonly nodes: readonly [string, string];
@@ -163,10 +166,13 @@ function linesByNodes(table: Table, nodes: readonly RawPoint[], log: LineFaults)
       const mark = cellOf(row, column);
       const node = byName.get(markKey(mark));
       if (!node) {
-        const near = nearest(
-          mark,
-          nodes.map((n) => n.mark ?? ''),
-        );
+        const near =
+          log.faults.length < SUGGESTIONS
+            ? nearest(
+                mark,
+                nodes.map((n) => n.mark ?? ''),
+              )
+            : null;
         log.tell(
           row.line,
           `names node ${quoted(mark)}, which the nodes do not have`,
