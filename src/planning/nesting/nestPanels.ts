@@ -44,6 +44,7 @@ export async function nestPanels(request: NestingRequest, clock?: () => number):
     for (let k = 0; k < panel.quantity; k++) pieces.push({ mark: panel.mark, shape });
   });
 
+  const exactly = new Map<Shape, Shape>();
   const { margin, spacing } = request;
   const kinds = request.sheets.map((s, kind) => {
     const outline: Ring | null = s.outline ? tidyRing(toRing(s.outline), OUTLINE_ROUND_OFF) : null;
@@ -60,8 +61,17 @@ export async function nestPanels(request: NestingRequest, clock?: () => number):
     };
   });
 
+  // A cover must not keep a panel off a sheet that the panel itself fits.
+  for (const piece of pieces) {
+    const { shape } = piece;
+    const fits = (s: Shape): boolean => kinds.some(({ field }) => s.poses.some((p) => fitsField(field, p, 0)));
+    if (shape.exact === null || fits(shape)) continue;
+    const exact = exactly.get(shape) ?? maker.shape(shape.exact, shape.rotations, true);
+    exactly.set(shape, exact);
+    if (fits(exact)) piece.shape = exact;
+  }
   // A long panel may fit a sheet across its diagonal alone.
-  for (const shape of byOutline.values())
+  for (const shape of new Set(pieces.map((p) => p.shape)))
     if (shape.rotations === null)
       for (const { field } of kinds) {
         if (shape.poses.some((p) => fitsField(field, p, 0))) continue;
@@ -82,7 +92,7 @@ export async function nestPanels(request: NestingRequest, clock?: () => number):
     seededRandom(request.seed ?? 1),
     (shapes) =>
       sheetBound(
-        shapes.map((s) => grownArea(s.ring, spacing)),
+        shapes.map((s) => grownArea(s.exact ?? s.ring, spacing)),
         kinds.map((k) => ({ area: k.bound, available: k.available })),
       ),
   );

@@ -17,7 +17,10 @@ export interface Pose {
 export interface Shape {
   /** What is kept clear: the outline, or a cover of it with fewer corners. */
   readonly ring: Ring;
+  /** The outline itself where `ring` is a cover; else null. */
+  readonly exact: Ring | null;
   readonly parts: readonly Ring[];
+  /** Of the outline itself, mm². */
   readonly area: number;
   /** Degrees; null: any. */
   readonly rotations: readonly number[] | null;
@@ -27,7 +30,8 @@ export interface Shape {
 
 /** Makes poses and gives each its number; a pose asked for twice is the same object. */
 export interface PoseMaker {
-  shape(ring: Ring, rotations: readonly number[] | null): Shape;
+  /** `exact`: the outline itself is kept clear, however many corners it has. */
+  shape(ring: Ring, rotations: readonly number[] | null, exact?: boolean): Shape;
   pose(shape: Shape, degrees: number): Pose;
 }
 
@@ -56,10 +60,17 @@ export function poseMaker(): PoseMaker {
     ofShape.set(angle, made);
     return made;
   };
-  const shape = (ring: Ring, rotations: readonly number[] | null): Shape => {
-    const cover = coverOf(ring);
+  const shape = (ring: Ring, rotations: readonly number[] | null, exact = false): Shape => {
+    const cover = exact ? ring : coverOf(ring);
     const parts = convexParts(cover);
-    const made: Shape = { ring: cover, parts, area: signedArea(ring), rotations, poses: [] };
+    const made: Shape = {
+      ring: cover,
+      exact: cover === ring ? null : ring,
+      parts,
+      area: signedArea(ring),
+      rotations,
+      poses: [],
+    };
     for (const degrees of rotations ?? alignedAngles(cover, parts.length > 1 ? FEW_ALIGNED : MOST_ALIGNED)) {
       const p = pose(made, degrees);
       if (!made.poses.includes(p)) made.poses.push(p);

@@ -130,6 +130,20 @@ describe('panels on sheets', () => {
     expect(answer.unplaced).toEqual([]);
   });
 
+  it('puts a round panel of many corners on the sheet that it just fits', async () => {
+    const disc = Array.from(
+      { length: 128 },
+      (_, k): P => [195 * Math.cos((k * Math.PI) / 64), 195 * Math.sin((k * Math.PI) / 64)],
+    );
+    const answer = await checked({
+      panels: [{ mark: 'D', outline: disc, quantity: 1 }],
+      sheets: [{ name: 'S', width: 400, height: 400 }],
+      spacing: 2,
+      margin: 5,
+    });
+    expect(answer.unplaced).toEqual([]);
+  });
+
   it('names a panel larger than every sheet and places the rest', async () => {
     const answer = await checked({
       panels: [
