@@ -12,6 +12,9 @@ const ROUND_OFF = 1e-7;
 /** Ballast counts as favourable permanent load: EN 1990 table A1.2(A), 0.9 (from memory). */
 const BALLAST_FACTOR = 0.9;
 
+/** A model on a table may be fixed to it in any way; what stands outdoors or hangs over people must say how. */
+const peopleNear = (job: Job): boolean => job.use === 'outdoor' || job.use === 'overhead';
+
 /** Worst uplift of each support that stands on the ground (held in z), with its shear and what it needs. */
 export function upliftFindings(
   topology: Topology,
@@ -37,7 +40,14 @@ export function upliftFindings(
     const holds = anchorage?.kind === 'ground-contact' ? 0 : anchorage?.capacity_N;
     if (holds !== undefined && uplift > holds)
       found.push(finding('support-uplift', node, { value: uplift, limit: holds, about }));
-    else found.push(finding('support-anchor', node, { level: anchorage ? 'note' : 'warn', value: uplift, about }));
+    else
+      found.push(
+        finding('support-anchor', node, {
+          level: anchorage || !peopleNear(job) ? 'note' : 'warn',
+          value: uplift,
+          about,
+        }),
+      );
   }
   return found;
 }
@@ -77,7 +87,7 @@ export function overturningFindings(
   const { ratio, edge, combination } = worst as { ratio: number; edge: string; combination: string };
   return [
     finding('truss-overturns', 'truss', {
-      level: job.use === 'outdoor' || job.use === 'overhead' ? 'stop' : 'warn',
+      level: peopleNear(job) ? 'stop' : 'note',
       value: ratio,
       limit: 1,
       about: { edge, combination },
