@@ -19,7 +19,7 @@ export function nearestOn(
   equations: RowList,
   x: Float64Array,
   before: Analysis | null,
-): { readonly x: Float64Array; readonly analysis: Analysis } {
+): { readonly x: Float64Array; readonly analysis: Analysis | null } {
   const count = equations.values.length;
   const jacobian = fromTriplets(count, x.length, equations.rows, equations.columns, equations.entries);
   const right = multiply(jacobian, x);
@@ -35,6 +35,8 @@ export function nearestOn(
       if (gram.indices[p] === j) diagonal = Math.max(diagonal, gram.values[p]);
     }
   }
+  // Nothing that may change appears in the equations.
+  if (diagonal === 0) return { x, analysis: before };
   const shifted = addToDiagonal(gram, Math.max(LEAST_DAMPING, size * size) * diagonal);
   const analysis = before && before.entry.length === shifted.values.length ? before : analyse(shifted);
   const factor = factorise(analysis, shifted);

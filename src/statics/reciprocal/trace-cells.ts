@@ -31,7 +31,7 @@ export function traceCells(topology: Topology): {
 
   const dangling: number[] = [];
   let active = truss.faces.map((_, f) => f);
-  for (;;) {
+  while (active.length > 0) {
     const joined = joinSides(topology, table, active, normals as Vec3[]);
     if (joined.overlap !== null) {
       const mark = truss.faces[joined.overlap].mark;
@@ -42,8 +42,8 @@ export function traceCells(topology: Topology): {
     dangling.push(...same);
     const drop = new Set(same);
     active = active.filter((f) => !drop.has(f));
-    if (active.length === 0) return { list: null, findings: [finding('cells-not-found', 'truss', { value: 0 })] };
   }
+  return { list: null, findings: [finding('cells-not-found', 'truss', { value: 0 })] };
 }
 
 /** Sides of faces: 2 f is the side that its normal points to, 2 f + 1 the one behind. */

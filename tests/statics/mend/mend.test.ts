@@ -195,3 +195,21 @@ it('the force diagram of the file follows: its polygons are square to the mended
   const result = mend(truss);
   expect(angle(result.truss)).toBeLessThan(1e-9);
 });
+
+it('with every node kept and forces kept there is nothing to change: not reached, said so', () => {
+  const { rounded } = exported(NESTED_CUBES, 1);
+  const result = mend(rounded, { keep: rounded.nodes.map((n) => n.mark), forceChange: 'keep' });
+  expect(result.done).toBe(false);
+  expect(result.findings).toMatchObject([{ code: 'mend-not-reached' }]);
+  // A strut whose force is nought and an outer force that nothing takes: the equations hold no unknown with a coefficient.
+  const lone = trussOf({
+    nodes: [
+      [0, 0, 0],
+      [10, 0, 0],
+    ],
+    edges: [[0, 1]],
+    forces: [0],
+    loads: [[0, [0, 0, 1]]],
+  });
+  expect(mend(lone, { forceChange: 'keep' }).findings).toMatchObject([{ code: 'mend-not-reached' }]);
+});

@@ -204,3 +204,12 @@ it('a fixed force of a strut that is not there is named', () => {
   const { findings } = reciprocalOf(topologyOf({ ...withDiagram(MARKS), reciprocal: null }), job);
   expect(findings[0]).toMatchObject({ code: 'fixed-force-unknown', subject: 'S99', level: 'stop' });
 });
+
+it('faces that enclose nothing, or none at all, are no cells', () => {
+  const job = { ...JOB, forces: { ...JOB.forces, source: 'reciprocal' as const } };
+  for (const faces of [[], bounded(K5).faces.slice(0, 2)]) {
+    const { findings, forces } = reciprocalOf(topologyOf({ ...bounded(K5), faces, cells: [] }), job);
+    expect(forces).toBeNull();
+    expect(findings).toMatchObject([{ code: 'cells-not-found', level: 'stop', value: 0 }]);
+  }
+});
