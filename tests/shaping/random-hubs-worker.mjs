@@ -10,8 +10,8 @@ for (let k = from; k < to; k++) {
     faults.push(`${seed + k}: not makeable`);
     continue;
   }
-  // Crossings take as long as the solid: every eighth hub.
-  const result = await checkHub(random, { cross: k % 8 === 0, samples: 12 });
+  // Crossings take longer than the solid: every sixteenth hub.
+  const result = await checkHub(random, { cross: k % 16 === 0, samples: 12 });
   made++;
   triangles += result.triangles ?? 0;
   worst = Math.max(worst, Math.abs((result.closedForm ?? 0) / (result.volume ?? 1) - 1));

@@ -14,7 +14,7 @@ interface Report {
 }
 
 it(`makes ${HUBS} random hubs that are closed, in one piece, bored and walled (seed ${SEED})`, {
-  timeout: 900_000,
+  timeout: 1_800_000,
 }, async () => {
   const share = Math.ceil(HUBS / WORKERS);
   const reports = await Promise.all(
