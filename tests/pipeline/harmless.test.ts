@@ -5,7 +5,7 @@ import { join } from 'node:path';
 import { parse } from 'csv-parse/sync';
 import { unzipSync } from 'fflate';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { makePack } from '../../src/pipeline/make.js';
+import { makePack } from '../../dist/pipeline/make.js';
 import { readJob } from '../../src/readers/job.js';
 import { readTruss } from '../../src/readers/truss.js';
 

@@ -1,10 +1,10 @@
 import { createHash } from 'node:crypto';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { makePack } from '../../dist/pipeline/make.js';
 import type { Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob, type Job } from '../../src/model/job/index.js';
 import type { Truss } from '../../src/model/truss.js';
 import { comparePacks } from '../../src/pipeline/compare.js';
-import { makePack } from '../../src/pipeline/make.js';
 import type { Manifest } from '../../src/pipeline/manifest.js';
 import type { ReadPack } from '../../src/pipeline/read-pack.js';
 import { readTruss } from '../../src/readers/truss.js';
