@@ -7,7 +7,7 @@ import { separate } from './separate.js';
 /** Share of the budget for bold shortening with exchanges; the rest squeezes the best layout in small steps. */
 const BOLD_SHARE = 0.6;
 /** Shares of the length that one bold step takes away, at first and at last; misses before a smaller one; near misses kept. */
-const FIRST_SHARE = 0.01;
+const FIRST_SHARE = 0.03;
 const LEAST_SHARE = 0.0005;
 const MISSES = 3;
 const POOL = 8;
