@@ -37,15 +37,43 @@ const CLOSED = 1e-3;
 /** Tells whether errors e can be taken up: some p with |p_i| <= play_i and S' (e + p) = 0. */
 export function closer(loops: readonly Loop[], play: Float64Array): (e: Float64Array) => boolean {
   const capacities = loops.map((l) => capacity(l, play));
-  if (loops.length <= 1) return (e) => loops.every((l, k) => Math.abs(miss(l, e)) <= capacities[k]!);
-  const gram = Matrix.zeros(loops.length, loops.length);
+  const correct = projector(loops, play.length);
+  const p = new Float64Array(play.length);
+  const misses = new Float64Array(loops.length);
+  return (e) => {
+    // Sufficient: each strut's play takes up its own error. Settles nearly every sample that closes.
+    if (e.every((v, i) => Math.abs(v) <= play[i]!)) return true;
+    // Necessary, loop by loop, and for a single loop sufficient: settles nearly every sample that does not close.
+    if (loops.some((l, k) => Math.abs(miss(l, e)) > capacities[k]!)) return false;
+    if (loops.length <= 1) return true;
+    // Projecting in turn on S' (e + p) = 0 and on the box (von Neumann's alternating projections): both are convex, so they meet where the sets do.
+    for (let i = 0; i < p.length; i++) p[i] = Math.min(play[i]!, Math.max(-play[i]!, -e[i]!));
+    for (let round = 0; round < ROUNDS; round++) {
+      let open = false;
+      loops.forEach((l, k) => {
+        misses[k] = miss(l, e) + miss(l, p);
+        if (Math.abs(misses[k]!) > CLOSED * capacities[k]!) open = true;
+      });
+      if (!open) return true;
+      correct(misses, p);
+      for (let i = 0; i < p.length; i++) p[i] = Math.min(play[i]!, Math.max(-play[i]!, p[i]!));
+    }
+    return false;
+  };
+}
+
+/** p -= S (S' S)^-1 misses: the least change of p that meets every loop's condition. */
+function projector(loops: readonly Loop[], struts: number): (misses: Float64Array, p: Float64Array) => void {
+  const s = loops.length;
+  if (s <= 1) return () => {};
   const dense = loops.map((l) => {
-    const v = new Float64Array(play.length);
-    l.indices.forEach((i, p) => {
-      v[i] = l.values[p]!;
+    const v = new Float64Array(struts);
+    l.indices.forEach((i, q) => {
+      v[i] = l.values[q]!;
     });
     return v;
   });
+  const gram = Matrix.zeros(s, s);
   loops.forEach((a, i) => {
     for (let j = 0; j <= i; j++) {
       const v = miss(a, dense[j]!);
@@ -53,24 +81,12 @@ export function closer(loops: readonly Loop[], play: Float64Array): (e: Float64A
       gram.set(j, i, v);
     }
   });
-  const cholesky = new CholeskyDecomposition(gram);
-  const p = new Float64Array(play.length);
-  return (e) => {
-    // Necessary, loop by loop: settles nearly every sample that does not close.
-    if (loops.some((l, k) => Math.abs(miss(l, e)) > capacities[k]!)) return false;
-    // Sufficient: project in turn on S' (e + p) = 0 and on the box (von Neumann's alternating projections); convex, so they meet where the two sets do.
-    p.fill(0);
-    for (let round = 0; round < ROUNDS; round++) {
-      const right = Matrix.columnVector(loops.map((l) => miss(l, e) + miss(l, p)));
-      const open = loops.some((_, k) => Math.abs(right.get(k, 0)) > CLOSED * capacities[k]!);
-      if (!open) return true;
-      const y = cholesky.solve(right);
-      loops.forEach((l, k) => {
-        const t = y.get(k, 0);
-        for (let q = 0; q < l.indices.length; q++) p[l.indices[q]!]! -= l.values[q]! * t;
-      });
-      for (let i = 0; i < p.length; i++) p[i] = Math.min(play[i]!, Math.max(-play[i]!, p[i]!));
-    }
-    return false;
+  const inverse = Float64Array.from(new CholeskyDecomposition(gram).solve(Matrix.eye(s)).to1DArray());
+  return (misses, p) => {
+    loops.forEach((l, k) => {
+      let t = 0;
+      for (let j = 0; j < s; j++) t += inverse[k * s + j]! * misses[j]!;
+      for (let q = 0; q < l.indices.length; q++) p[l.indices[q]!]! -= l.values[q]! * t;
+    });
   };
 }
