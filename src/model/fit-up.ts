@@ -10,7 +10,7 @@ export interface FitUp {
   /** 1 - sum over loops of the chance that it does not close: no lower than this whatever the loops share. */
   readonly chanceBound: number;
   readonly wanted: number;
-  /** Spread of the cut length with which the wanted chance is just reached, mm; null: not even with perfect cuts. */
+  /** Tolerance of the cut length with which the bound just reaches the wanted chance, mm: safe, never too wide; null: not even with perfect cuts. */
   readonly cutNeeded_mm: number | null;
   /** Node that the errors move most: standard deviation, mm. */
   readonly movedMost: { readonly node: string; readonly deviation_mm: number } | null;

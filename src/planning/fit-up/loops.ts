@@ -30,7 +30,7 @@ export function capacity(loop: Loop, play: ArrayLike<number>): number {
 }
 
 /** Rounds of projecting between the loops' conditions and the play's box; past these the sample counts as not closed. */
-const ROUNDS = 60;
+const ROUNDS = 12;
 /** A loop counts as closed when its miss is below this share of what its play makes up. */
 const CLOSED = 1e-3;
 

@@ -14,8 +14,7 @@ import { capacity, closer, type Loop, loopsOf } from './loops.js';
 
 /** Samples for the spread of movements and locked-in forces: a standard deviation to 5 %. */
 const SHAPES = 200;
-/** Samples and halvings of the search for the saw's tolerance; both only move its last digit. */
-const SEARCH_SAMPLES = 2000;
+/** Halvings of the search for the saw's tolerance: to a five-thousandth of its widest. */
 const SEARCH_STEPS = 12;
 /** The search goes up to this multiple of the job's tolerance of the cut. */
 const WIDEST = 20;
@@ -32,13 +31,13 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
     s.ends.reduce((sum, e, k) => sum + Math.max(0, (e.float ?? 0) - (links[i]!.sockets[k]?.travel ?? 0)), 0),
   );
   const errors = strutErrors(struts, job);
-  const deviation = Float64Array.from(errors.cut, (c, i) => Math.hypot(c, errors.other[i]!));
+  const deviation = deviationsOf(errors, 1);
   const closes = closer(loops, play);
-  const chanceFor = (cutFactor: number, samples: number): number =>
-    sampleChance(errors, cutFactor, samples, closes, job);
-
-  const ratios = loops.map((l) => loopDeviation(l, deviation) / Math.max(capacity(l, play), 1e-12));
-  const chanceBound = Math.max(0, 1 - ratios.reduce((sum, r) => sum + outside(1 / Math.max(r, 1e-12)), 0));
+  const capacities = loops.map((l) => Math.max(capacity(l, play), 1e-12));
+  const ratiosFor = (cutFactor: number): number[] =>
+    loops.map((l, k) => loopDeviation(l, deviationsOf(errors, cutFactor)) / capacities[k]!);
+  const boundFor = (cutFactor: number): number => closingBound(ratiosFor(cutFactor));
+  const ratios = ratiosFor(1);
   const shares = sharesOf(loops, ratios, struts.length);
   const shape = shapes(figure, parts, topology, deviation, job);
   const angle =
@@ -60,29 +59,32 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
       .map((l, k): LoopFit => ({ struts: [...l.indices].map((i) => struts[i]!.mark), ratio: ratios[k]! }))
       .sort((a, b) => b.ratio - a.ratio),
     samples: job.fit.samples,
-    chance: chanceFor(1, job.fit.samples),
-    chanceBound,
+    chance: sampleChance(errors, job.fit.samples, closes, job),
+    chanceBound: closingBound(ratios),
     wanted: job.fit.chance,
-    cutNeeded_mm: cutNeeded(job, (factor) => chanceFor(factor, Math.min(SEARCH_SAMPLES, job.fit.samples))),
+    cutNeeded_mm: cutNeeded(job, boundFor),
     movedMost: shape.movedMost,
   };
 }
 
-/** Share of samples that close; the same numbers are drawn for every factor, so that chances can be compared. */
-function sampleChance(
-  errors: StrutErrors,
-  cutFactor: number,
-  samples: number,
-  closes: (e: Float64Array) => boolean,
-  job: Job,
-): number {
+/** Standard deviation of each strut's length where the saw errs `cutFactor` times as much. */
+const deviationsOf = (errors: StrutErrors, cutFactor: number): Float64Array =>
+  Float64Array.from(errors.cut, (c, i) => Math.hypot(cutFactor * c, errors.other[i]!));
+
+/** 1 - sum of P(a loop does not close), from each loop's deviation over what its play makes up (Boole's inequality). */
+const closingBound = (ratios: readonly number[]): number =>
+  Math.max(0, 1 - ratios.reduce((sum, r) => sum + outside(1 / Math.max(r, 1e-12)), 0));
+
+/** Share of seeded samples that close. */
+function sampleChance(errors: StrutErrors, samples: number, closes: (e: Float64Array) => boolean, job: Job): number {
   const random = seededRandom(job.seed);
   const unit = new Float64Array(errors.cut.length);
   const e = new Float64Array(errors.cut.length);
+  const deviation = deviationsOf(errors, 1);
   let closed = 0;
   for (let s = 0; s < samples; s++) {
     drawUnit(unit, random, job.fit.distribution);
-    for (let i = 0; i < e.length; i++) e[i] = unit[i]! * Math.hypot(cutFactor * errors.cut[i]!, errors.other[i]!);
+    for (let i = 0; i < e.length; i++) e[i] = unit[i]! * deviation[i]!;
     if (closes(e)) closed += 1;
   }
   return closed / samples;
