@@ -1,7 +1,7 @@
 /** The library: the same functions that the commands use, without the file system. */
-import { nestPanels as nest } from './planning/nesting/nestPanels.js';
+import { nestPanels as nest } from './planning/nesting/nest-panels.js';
 import type { NestingAnswer, NestingRequest } from './planning/nesting/request.js';
-import { planStock as plan } from './planning/stock/planStock.js';
+import { planStock as plan } from './planning/stock/plan-stock.js';
 import type { StockAnswer, StockRequest } from './planning/stock/request.js';
 
 export type { CheckReport } from './documents/check-json.js';
@@ -14,8 +14,8 @@ export type { Fault } from './readers/fault.js';
 export { readJob } from './readers/job.js';
 export { readTruss } from './readers/truss.js';
 
-/** Panels on sheets, with the caller's clock for `timeLimitMs`; see src/planning/nesting/nestPanels.ts. */
+/** Panels on sheets, with the caller's clock for `timeLimitMs`; see src/planning/nesting/nest-panels.ts. */
 export const nestPanels = (request: NestingRequest): Promise<NestingAnswer> => nest(request, () => performance.now());
 
-/** Pieces cut from bars, with the caller's clock for `timeLimitMs`; see src/planning/stock/planStock.ts. */
+/** Pieces cut from bars, with the caller's clock for `timeLimitMs`; see src/planning/stock/plan-stock.ts. */
 export const planStock = (request: StockRequest): Promise<StockAnswer> => plan(request, () => performance.now());

@@ -10,7 +10,7 @@ import type { Job } from '../model/job/index.js';
 import { LIMITS } from '../model/limits.js';
 import type { PanelPart } from '../model/parts.js';
 import { VERSION } from '../model/version.js';
-import { nestPanels } from '../planning/nesting/nestPanels.js';
+import { nestPanels } from '../planning/nesting/nest-panels.js';
 import type { NestingAnswer, NestingSheet } from '../planning/nesting/request.js';
 import { sayFault } from '../readers/fault.js';
 import type { OutlinesReading } from '../readers/outlines/outline.js';

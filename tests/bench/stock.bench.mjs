@@ -1,6 +1,6 @@
 import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { planStock } from '../../dist/planning/stock/planStock.js';
+import { planStock } from '../../dist/planning/stock/plan-stock.js';
 
 export const title = 'Struts on stock';
 

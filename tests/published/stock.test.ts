@@ -1,7 +1,7 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, it } from 'vitest';
-import { planStock } from '../../src/planning/stock/planStock.js';
+import { planStock } from '../../src/planning/stock/plan-stock.js';
 import type { StockRequest } from '../../src/planning/stock/request.js';
 import { planFaults } from '../planning/stock/verify.js';
 

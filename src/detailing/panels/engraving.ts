@@ -1,5 +1,5 @@
 import { clearanceAt } from '../../maths/polygon/clearance.js';
-import { poleOfInaccessibility } from '../../maths/polygon/poleOfInaccessibility.js';
+import { poleOfInaccessibility } from '../../maths/polygon/pole-of-inaccessibility.js';
 import { type Ring, toPoints, toRing } from '../../maths/polygon/ring.js';
 import { layOutText, strokeText } from '../../maths/stroke-text.js';
 import type { Point2, Polyline2 } from '../../model/parts.js';

@@ -1,4 +1,4 @@
-import { poleOfInaccessibility } from '../../maths/polygon/poleOfInaccessibility.js';
+import { poleOfInaccessibility } from '../../maths/polygon/pole-of-inaccessibility.js';
 import type { Ring } from '../../maths/polygon/ring.js';
 
 /** Width of a mark over its height, at least: two characters and the rule under them. */

@@ -3,7 +3,7 @@ import { finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { PanelPart } from '../../model/parts.js';
 import type { NestingPlan, PlannedSheet } from '../../model/plan.js';
-import { nestPanels } from '../../planning/nesting/nestPanels.js';
+import { nestPanels } from '../../planning/nesting/nest-panels.js';
 
 const NO_CLOCK = (): number => 0;
 

@@ -4,7 +4,7 @@ import type { Job } from '../../model/job/index.js';
 import type { StrutPart } from '../../model/parts.js';
 import type { PlannedBar, SectionPlan, StockPlan } from '../../model/plan.js';
 import type { Section } from '../../model/section.js';
-import { planStock } from '../../planning/stock/planStock.js';
+import { planStock } from '../../planning/stock/plan-stock.js';
 import type { StockKind, StockPiece } from '../../planning/stock/request.js';
 
 /** Bars that dowels are sold in: common practice, no source. */

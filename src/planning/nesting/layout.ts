@@ -1,6 +1,6 @@
 import { depthIn } from '../../maths/polygon/depth.js';
 import type { Budget } from './budget.js';
-import type { NoFitStore } from './noFit.js';
+import type { NoFitStore } from './no-fit.js';
 import type { Pose, Shape } from './pose.js';
 
 /** The part of a sheet that panels may cover, in the one plane in which all sheets lie side by side. */

@@ -1,4 +1,4 @@
-import { convexParts } from '../../maths/polygon/convexParts.js';
+import { convexParts } from '../../maths/polygon/convex-parts.js';
 import { coverRing } from '../../maths/polygon/cover.js';
 import { boundsOf, movedRing, type Ring, signedArea } from '../../maths/polygon/ring.js';
 

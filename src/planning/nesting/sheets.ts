@@ -2,7 +2,7 @@ import type { Random } from '../../maths/random.js';
 import { type Budget, isSpent } from './budget.js';
 import { construct } from './construct.js';
 import { type Field, fitsField, type Layout, newLayout, put, restore, snapshot } from './layout.js';
-import type { NoFitStore } from './noFit.js';
+import type { NoFitStore } from './no-fit.js';
 import type { Pose, Shape } from './pose.js';
 import { separate } from './separate.js';
 import { shorten } from './strip.js';

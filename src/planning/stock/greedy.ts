@@ -1,6 +1,6 @@
 import type { Random } from '../../maths/random.js';
 import type { Meter } from './effort.js';
-import { branchKnapsack, rankItems } from './knapsackBranch.js';
+import { branchKnapsack, rankItems } from './knapsack-branch.js';
 import { type CuttingProblem, type Pattern, patternLoad, patternOf, type Run } from './problem.js';
 
 /** Chooses what to cut from a bar of `bin` out of what is left; undefined when nothing fits. */

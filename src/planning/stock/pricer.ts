@@ -1,6 +1,6 @@
 import type { Meter } from './effort.js';
-import { branchKnapsack, rankItems } from './knapsackBranch.js';
-import { KnapsackTable } from './knapsackTable.js';
+import { branchKnapsack, rankItems } from './knapsack-branch.js';
+import { KnapsackTable } from './knapsack-table.js';
 
 export interface Priced {
   /** Profit of `counts`. */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { areaOf, differenceOf, intersectionOf, offsetRings, unionOf } from '../../../src/maths/polygon/boolean.js';
 import { convexHull, isConvex } from '../../../src/maths/polygon/convex.js';
-import { convexParts } from '../../../src/maths/polygon/convexParts.js';
+import { convexParts } from '../../../src/maths/polygon/convex-parts.js';
 import { depthIn, regionOf } from '../../../src/maths/polygon/depth.js';
 import { convexNoFit } from '../../../src/maths/polygon/minkowski.js';
 import {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { expect, it } from 'vitest';
-import { planStock } from '../../../src/planning/stock/planStock.js';
+import { planStock } from '../../../src/planning/stock/plan-stock.js';
 import type { StockRequest } from '../../../src/planning/stock/request.js';
 import { leastPrice, planFaults } from './verify.js';
 

@@ -1,5 +1,5 @@
 import { expect, it } from 'vitest';
-import { planStock } from '../../../src/planning/stock/planStock.js';
+import { planStock } from '../../../src/planning/stock/plan-stock.js';
 import type { StockAnswer } from '../../../src/planning/stock/request.js';
 import { planFaults } from './verify.js';
 

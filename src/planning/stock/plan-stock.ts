@@ -2,7 +2,7 @@ import { seededRandom } from '../../maths/random.js';
 import { creditedBound, creditedProblem, creditOf } from './credit.js';
 import { Effort } from './effort.js';
 import { requestFaults } from './faults.js';
-import { layOut } from './layOut.js';
+import { layOut } from './lay-out.js';
 import { type Prepared, prepare } from './prepare.js';
 import { type CuttingProblem, type Pattern, patternLoad, type Run } from './problem.js';
 import { recover } from './recover.js';

@@ -5,7 +5,7 @@ import { grownArea, sheetBound } from './bound.js';
 import { budgetOf } from './budget.js';
 import { OUTLINE_ROUND_OFF, requestFaults } from './faults.js';
 import { type Field, fitsField } from './layout.js';
-import { noFitStore } from './noFit.js';
+import { noFitStore } from './no-fit.js';
 import { obstaclesOf } from './offcut.js';
 import { angleThatFits, poseMaker, type Shape } from './pose.js';
 import type { NestingAnswer, NestingRequest } from './request.js';
