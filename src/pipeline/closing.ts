@@ -1,29 +1,36 @@
-import type { Assessment } from '../documents/records.js';
 import type { Job } from '../model/job/index.js';
+import type { Topology } from '../model/topology.js';
 import { blockedStruts } from '../planning/assembly/blocked.js';
+import type { Fixings } from './detail.js';
 
 /** Rounds of giving details and looking again: a detail changes lengths a little, and with them what can be spread. */
 const ROUNDS = 4;
 
 /**
- * The assessment with a closing detail at one end of every strut that could not get in otherwise, where the job asks for that
+ * The job's fixings with a closing detail at one end of every strut that could not get in otherwise, where it asks for that
  * (`assembly.closing: "give"`): the end slides into a deeper socket and back, at the hub with fewer sockets. The job's own details stay.
+ *
+ * @param again hubs and struts as a job with more closing details makes them
  */
-export function giveClosingDetails(first: Assessment, assessAgain: (job: Job) => Assessment): Assessment {
+export function giveClosingDetails<T extends { readonly job: Job; readonly fixings: Fixings }>(
+  topology: Topology,
+  first: T,
+  again: (job: Job) => T,
+): T {
   let found = first;
   if (first.job.assembly.closing !== 'give') return found;
   for (let round = 0; round < ROUNDS; round++) {
-    const blocked = blockedStruts(found.topology, found.parts, found.job);
+    const { job, fixings } = found;
+    const blocked = blockedStruts(topology, { ...fixings, panels: [] }, job);
     if (blocked.length === 0) break;
-    const sockets = new Map(found.parts.hubs.map((h) => [h.mark, h.sockets.length]));
-    const ends = { ...found.job.struts.ends };
+    const sockets = new Map(fixings.hubs.map((h) => [h.mark, h.sockets.length]));
+    const ends = { ...job.struts.ends };
     for (const strut of blocked) {
-      const member = found.topology.truss.members[found.topology.memberIndex.get(strut)!]!;
-      const [a, b] = member.ends;
+      const [a, b] = topology.truss.members[topology.memberIndex.get(strut)!]!.ends;
       const node = (sockets.get(b) ?? 0) < (sockets.get(a) ?? 0) ? b : a;
       ends[`${strut}@${node}`] = 'slide';
     }
-    found = assessAgain({ ...found.job, struts: { ...found.job.struts, ends } });
+    found = again({ ...job, struts: { ...job.struts, ends } });
   }
   return found;
 }

@@ -1,7 +1,7 @@
 import { axesOfStruts } from '../detailing/axes.js';
 import { deepenSockets } from '../detailing/deepen.js';
 import { type FaceForm, faceForms } from '../detailing/faces.js';
-import { detailHubs } from '../detailing/hubs.js';
+import { type DetailedHubs, detailHubs } from '../detailing/hubs.js';
 import { detailPanels } from '../detailing/panels/detail-panels.js';
 import { sectionsOf } from '../detailing/sections.js';
 import { detailStruts } from '../detailing/struts.js';
@@ -38,15 +38,34 @@ export function layOut(topology: Topology, job: Job): Layout {
   };
 }
 
-/** Hubs, struts and panels as numbers; `depths` asks sockets to be deeper than the job's, in mm by the key of `requiredDepths`. */
-export function detail(
-  layout: Layout,
+/** Hubs and the struts that end in them. */
+export interface Fixings extends Pick<Parts, 'hubs' | 'struts'> {
+  readonly findings: readonly Finding[];
+}
+
+/** Hubs with sockets as deep as the job's; it may differ from the layout's in the details of strut ends, which change neither sections nor axes. */
+export const shallowHubs = ({ topology, sections, axes }: Layout, job: Job): DetailedHubs =>
+  detailHubs(topology, job, sections, axes);
+
+/** Hubs and struts as numbers; `depths` asks sockets to be deeper than the job's, in mm by the key of `requiredDepths`. */
+export function fix(
+  { topology, sections, axes }: Layout,
+  shallow: DetailedHubs,
   depths: Parameters<typeof deepenSockets>[1],
-): { readonly parts: Parts; readonly findings: readonly Finding[] } {
-  const { topology, job, sections, forms, axes } = layout;
-  const shallow = detailHubs(topology, job, sections, axes);
+  job: Job,
+): Fixings {
   const hubs = deepenSockets(shallow.hubs, depths, job);
   const struts = detailStruts(topology, job, sections, axes, hubs);
+  return { hubs, struts: struts.struts, findings: [...shallow.findings, ...struts.findings] };
+}
+
+/** The same with the panels between those hubs. */
+export function withPanels(
+  layout: Layout,
+  fixings: Fixings,
+): { readonly parts: Parts; readonly findings: readonly Finding[] } {
+  const { topology, job, sections, forms, axes } = layout;
+  const { hubs, struts } = fixings;
   const panels = detailPanels({
     topology,
     job,
@@ -56,8 +75,5 @@ export function detail(
     hubs,
     hubOutline: (hub, slab) => nodeSystem(hub.system)?.outline(hub, slab, job) ?? [],
   });
-  return {
-    parts: { struts: struts.struts, hubs, panels: panels.panels },
-    findings: [...shallow.findings, ...struts.findings, ...panels.findings],
-  };
+  return { parts: { struts, hubs, panels: panels.panels }, findings: [...fixings.findings, ...panels.findings] };
 }

@@ -1,9 +1,4 @@
-import { mendReport } from '../../documents/mend-json.js';
-import { FileFault } from '../../machine/file-fault.js';
-import { writeOne } from '../../machine/files.js';
-import { mendFile } from '../../pipeline/mend.js';
 import { EXIT } from '../exit.js';
-import { sayMending } from '../terminal/say-mending.js';
 import type { CliCommand } from './command.js';
 
 export const mend: CliCommand = {
@@ -33,6 +28,14 @@ export const mend: CliCommand = {
       for (const line of wrong) terminal.talk(`strutwright: ${line}\n`);
       return EXIT.refused;
     }
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [{ mendReport }, { FileFault }, { writeOne }, { mendFile }, { sayMending }] = await Promise.all([
+      import('../../documents/mend-json.js'),
+      import('../../machine/file-fault.js'),
+      import('../../machine/files.js'),
+      import('../../pipeline/mend.js'),
+      import('../terminal/say-mending.js'),
+    ]);
     const number = (key: string): number | undefined => (options[key] === undefined ? undefined : Number(options[key]));
     const [bound, forceBound] = [number('bound'), number('forceBound')];
     const outcome = await mendFile(path!, {
