@@ -27,7 +27,7 @@ export function sleeveVolume(shape: HubShape): number {
         const centre = scale(s.socket.direction, from + t * (to - from));
         for (const [a, b] of gridOf(half)) {
           const p = addScaled(addScaled(centre, s.socket.y, a), s.socket.z, b);
-          if (insidePlanes(planes, p)) continue;
+          if (insidePlanes(planes, p) || sleeves.some((o) => o !== s && insidePath(o, p))) continue;
           let share = 1;
           for (const other of sleeves) if (other !== s && insideSleeve(other, p)) share++;
           volume += slice / share;
@@ -35,6 +35,7 @@ export function sleeveVolume(shape: HubShape): number {
       }
     }
     if (s.hollow) volume -= areaOf(s.inner) * (s.mouth - s.stop);
+    volume -= pathThroughBody(s, planes, s.hollow ? s.mouth : s.stop);
     const { pin, wall } = s.socket;
     const across = s.hollow ? 2 * wall : 2 * largest(s.outer);
     volume -= ((Math.PI * pin * pin) / 4) * across;
@@ -72,6 +73,22 @@ function armsVolume(clamp: ClampParts, sleeves: readonly Sleeve[], planes: Float
   const hole = (Math.PI / 4) * ((SCREW.clear ** 2 + SCREW.thread ** 2) / 2) * 2 * clamp.half;
   return volume - hole * clamp.screws.length;
 }
+
+/** mm³ of the body that a strut's path takes beyond its own sleeve. */
+function pathThroughBody(s: Sleeve, planes: Float64Array, from: number): number {
+  let volume = 0;
+  for (let at = from + STEP / 2; ; at += STEP) {
+    const centre = scale(s.socket.direction, at);
+    let hits = 0;
+    for (const [a, b] of gridOf(s.inner))
+      if (insidePlanes(planes, addScaled(addScaled(centre, s.socket.y, a), s.socket.z, b))) hits++;
+    if (hits === 0) return volume;
+    volume += (areaOf(s.inner) * STEP * hits) / (ROUND * ACROSS);
+  }
+}
+
+/** mm along a path. */
+const STEP = 1;
 
 const ALONG = 8;
 const ROUND = 12;
