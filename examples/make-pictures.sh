@@ -6,5 +6,5 @@ pack=$(mktemp -d)/pack
 node bin/strutwright.js make examples/lantern -o "$pack" >/dev/null || true
 mkdir -p examples/pictures
 pdftoppm -r 60 -png -f 2 -l 2 -singlefile "$pack/forces/force-sheets.pdf" examples/pictures/force-sheet
-pdftoppm -r 60 -png -f 1 -l 1 -singlefile "$pack/nodes/node-sheets.pdf" examples/pictures/node-sheet
+node tests/tools/render-mesh.mjs examples/pictures/node.png "$pack/nodes/stl/A02.stl" "$pack/nodes/stl/B03.stl"
 pdftoppm -r 60 -png -f 1 -l 1 -singlefile "$pack/panels/sheets.pdf" examples/pictures/sheet
