@@ -33,13 +33,31 @@ export async function assemblyPdf(records: PackRecords, fonts: Fonts): Promise<W
   });
   const height = (area.height - (STEPS_A_SHEET - 1) * GAP) / STEPS_A_SHEET;
   const seen = new Seen(records);
-  building.forEach((step, i) => {
-    if (i > 0 && i % STEPS_A_SHEET === 0) area = paper.continueSheet();
-    const y = area.y + (i % STEPS_A_SHEET) * (height + GAP);
-    drawStep(paper, { x: area.x, y, width: area.width, height }, records, step, seen, units);
-  });
+  let slot = 0;
+  for (const step of building) {
+    const lines = linesOf(paper, records, step, units, area.width * WORDS);
+    // A step with many words takes the room of two or three: none of its words may be lost.
+    const slots = Math.min(STEPS_A_SHEET, Math.ceil((wordsHeight(lines.length) + GAP) / (height + GAP)));
+    if (slot + slots > STEPS_A_SHEET) {
+      area = paper.continueSheet();
+      slot = 0;
+    }
+    const block = { x: area.x, y: area.y + slot * (height + GAP), width: area.width };
+    drawStep(paper, { ...block, height: slots * (height + GAP) - GAP }, records, step, seen, lines);
+    slot += slots;
+  }
   packingSections(paper, records, units);
   return paper.finish();
+}
+
+/** Above the first line of a step, for its number; between two lines, mm. */
+const HEAD = 13;
+const LINE_PITCH = 4.3;
+
+interface StepLine {
+  readonly text: string;
+  readonly bold: boolean;
+  readonly indent: number;
 }
 
 /** What stands and what is propped, as the steps go by. */
@@ -57,7 +75,14 @@ class Seen {
   }
 }
 
-function drawStep(paper: Paper, area: Area, records: PackRecords, step: AssemblyStep, seen: Seen, units: Units): void {
+function drawStep(
+  paper: Paper,
+  area: Area,
+  records: PackRecords,
+  step: AssemblyStep,
+  seen: Seen,
+  lines: readonly StepLine[],
+): void {
   const { pen } = paper;
   const before = { nodes: new Set(seen.nodes), struts: new Set(seen.struts) };
   seen.add(step);
@@ -73,26 +98,12 @@ function drawStep(paper: Paper, area: Area, records: PackRecords, step: Assembly
     { size: SIZE.head, bold: true },
     SIZE.body,
   );
-  let y = area.y + 13;
-  const bottom = area.y + area.height - 1;
-  const line = (text: string, bold = false, indent = 0): void => {
-    for (const part of wrapText(pen, text, words - 4 - indent, { size: SIZE.body, bold })) {
-      if (y > bottom) return;
-      pen.text(part, area.x + indent, y, { size: SIZE.body, bold });
-      y += 4.3;
-    }
-  };
-  line(sayStep(step), true);
-  y += 1;
-  const cut = new Map(records.parts.struts.map((s) => [s.mark, s]));
-  for (const entry of step.struts) {
-    const strut = cut.get(entry.strut)!;
-    const how = howItEnters(entry);
-    const size = strut.cutLength === null ? 'no length' : `${units.length(strut.cutLength)} ${units.lengthUnit}`;
-    line(`${entry.strut}  ${strut.ends[0].node}–${strut.ends[1].node}  ${size}${how ? `: ${how}` : ''}`, false, 2);
-  }
-  y += 1;
-  for (const note of stepNotes(step, units)) line(note);
+  // Only a step that fills a sheet by itself is ever pressed closer.
+  const pitch = Math.min(LINE_PITCH, (area.height - HEAD) / Math.max(1, lines.length));
+  const size = SIZE.body * Math.min(1, pitch / LINE_PITCH);
+  lines.forEach(({ text, bold, indent }, i) => {
+    pen.text(text, area.x + indent, area.y + HEAD + i * pitch, { size, bold });
+  });
   drawPicture(
     paper,
     { x: area.x + words, y: area.y + 1.5, width: area.width - words, height: area.height - 3 },
@@ -101,6 +112,31 @@ function drawStep(paper: Paper, area: Area, records: PackRecords, step: Assembly
     seen,
   );
 }
+
+/** The words of a step, broken to their column. */
+function linesOf(paper: Paper, records: PackRecords, step: AssemblyStep, units: Units, width: number): StepLine[] {
+  const lines: StepLine[] = [];
+  const add = (text: string, bold = false, indent = 0): void => {
+    for (const part of wrapText(paper.pen, text, width - 4 - indent, { size: SIZE.body, bold }))
+      lines.push({ text: part, bold, indent });
+  };
+  add(sayStep(step), true);
+  const cut = new Map(records.parts.struts.map((s) => [s.mark, s]));
+  const ways = new Set(step.struts.map(howItEnters));
+  const [common] = step.struts.length > 1 && ways.size === 1 ? ways : [''];
+  for (const entry of step.struts) {
+    const strut = cut.get(entry.strut)!;
+    const how = common ? '' : howItEnters(entry);
+    const size = strut.cutLength === null ? 'no length' : `${units.length(strut.cutLength)} ${units.lengthUnit}`;
+    add(`${entry.strut}  ${strut.ends[0].node}–${strut.ends[1].node}  ${size}${how ? `: ${how}` : ''}`, false, 2);
+  }
+  if (common) add(`All of them: ${common}.`);
+  for (const note of stepNotes(step, units)) add(note);
+  return lines;
+}
+
+/** Height that so many lines of a step take under its number, mm. */
+const wordsHeight = (lines: number): number => HEAD + lines * LINE_PITCH;
 
 function drawPicture(
   paper: Paper,

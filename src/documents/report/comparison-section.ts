@@ -28,6 +28,10 @@ export function comparisonSection(paper: Paper, flow: Flow, records: PackRecords
       flow.paragraph('The two agree to the last digit that a file carries.');
       continue;
     }
+    if (units.force(comparison.largest) === units.force(0)) {
+      flow.paragraph('The two differ by less than the last digit printed here; check.json has the rest.');
+      continue;
+    }
     flow.paragraph(
       `The largest difference is ${units.force(comparison.largest).replace('+', '')} ${units.forceUnit}, ${fixed(100 * comparison.relative, 2)} % of the largest force. It is split into a part that loads nothing (self-stress) and a remainder.`,
     );
