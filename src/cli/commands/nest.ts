@@ -22,7 +22,11 @@ export const nest: CliCommand = {
   define: (command) =>
     command
       .option('-o, --out <folder>', 'where the sheets go; an earlier result there is replaced whole')
-      .option('--sheet <size>', 'width x height in mm, "*n" where there are only n; may be repeated', sheetOf, [])
+      .option(
+        '--sheet <size>',
+        'width x height in mm, "*n" where there are only n; may be repeated (default: 600x400)',
+        sheetOf,
+      )
       .option('--spacing <mm>', 'least distance between panels', lengthOf)
       .option('--margin <mm>', 'least distance from the edge of the sheet', lengthOf)
       .option('--kerf <mm>', 'full width of the cut; 0 leaves it to the shop', lengthOf)
@@ -38,7 +42,7 @@ export const nest: CliCommand = {
     }
     const usual = cutterSchema.parse(undefined);
     const kerf = options['kerf'] as number | undefined;
-    const sheets = options['sheet'] as NestingSheet[];
+    const sheets = (options['sheet'] as NestingSheet[] | undefined) ?? [];
     const limit = options['timeLimit'] as number | undefined;
     const call: NestCall = {
       file: file!,
@@ -101,7 +105,7 @@ export const nest: CliCommand = {
   },
 };
 
-function sheetOf(text: string, before: NestingSheet[]): NestingSheet[] {
+function sheetOf(text: string, before: NestingSheet[] = []): NestingSheet[] {
   const m = /^\s*(\d+(?:\.\d+)?)\s*[x×]\s*(\d+(?:\.\d+)?)\s*(?:\*\s*(\d+))?\s*$/i.exec(text);
   if (!m || !(Number(m[1]) > 0 && Number(m[2]) > 0))
     throw new InvalidArgumentError('give width x height in mm, as 600x400 or 600x400*3');

@@ -35,7 +35,7 @@ main{position:relative;flex:1 1 auto;min-height:420px;overflow:hidden}
 .tick span{color:var(--grey);font-size:15px}
 .mark{font-size:19px;font-variant-numeric:tabular-nums}.mark.node{border:1.5px solid;border-radius:99px;padding:1px 9px}.mark.panel{text-decoration:underline;text-underline-offset:3px}
 .small{padding:4px 12px}
-.go{display:flex;gap:10px;margin-top:auto;position:sticky;bottom:0;background:var(--card);padding:8px 0}.go button{flex:1;min-height:60px;font-size:21px;font-weight:700;border-color:var(--ink)}
+.go{display:flex;gap:10px;margin-top:auto;position:sticky;bottom:0;background:var(--card);padding:8px 0;box-shadow:0 18px 0 var(--card)}.go button{flex:1;min-height:60px;font-size:21px;font-weight:700;border-color:var(--ink)}
 #next{background:var(--ink);color:var(--card)}#next:disabled{background:var(--card);color:var(--grey)}
 .slide{display:flex;gap:10px;align-items:center}.slide input{flex:1;min-height:44px;accent-color:var(--ink)}
 #next-say,.caution{color:var(--grey);font-size:15px}

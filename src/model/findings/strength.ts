@@ -7,14 +7,14 @@ export const STRENGTH_FINDINGS = {
     'strut',
     '',
     (f) =>
-      `utilisation ${num(f.value, 2)} under ${num(f.about?.['force_N'] as number, 0)} N (${f.about?.['combination']}), by ${f.about?.['rule']}; choose a stronger section than ${f.about?.['section']} or a shorter strut`,
+      `utilisation ${over(f.value)} under ${num(f.about?.['force_N'] as number, 0)} N (${f.about?.['combination']}), by ${f.about?.['rule']}; choose a stronger section than ${f.about?.['section']} or a shorter strut`,
   ),
   'socket-over-stressed': entry(
     'stop',
     'node',
     '',
     (f) =>
-      `the socket of ${f.about?.['strut']} has a utilisation of ${num(f.value, 2)} under ${num(f.about?.['force_N'] as number, 0)} N (${f.about?.['combination']}), by ${f.about?.['rule']}${f.about?.['depth_mm'] === undefined ? '; make the walls thicker or the force smaller' : `; it needs a depth of ${num(f.about['depth_mm'] as number, 1)} mm`}`,
+      `the socket of ${f.about?.['strut']} has a utilisation of ${over(f.value)} under ${num(f.about?.['force_N'] as number, 0)} N (${f.about?.['combination']}), by ${f.about?.['rule']}${f.about?.['depth_mm'] === undefined ? '; make the walls thicker or the force smaller' : `; it needs a depth of ${num(f.about['depth_mm'] as number, 1)} mm`}`,
     { withholds: true },
   ),
   'socket-no-path': entry(
@@ -37,7 +37,7 @@ export const STRENGTH_FINDINGS = {
     'panel',
     '',
     (f) =>
-      `utilisation ${num(f.value, 2)} under ${f.about?.['combination']}, by ${f.about?.['rule']}; use a thicker sheet than ${num(f.about?.['thickness'] as number, 1)} mm or hold it at more points`,
+      `utilisation ${over(f.value)} under ${f.about?.['combination']}, by ${f.about?.['rule']}; use a thicker sheet than ${num(f.about?.['thickness'] as number, 1)} mm or hold it at more points`,
     { withholds: true },
   ),
   'panel-sags': entry(
@@ -124,3 +124,11 @@ export const STRENGTH_FINDINGS = {
       'stands outdoors and its timber has no service class; give strength.serviceClass (3 for weather, 2 under a roof)',
   ),
 } as const;
+
+/** A utilisation above one, with as many decimals as it takes to be read as above one. */
+function over(value: number | null): string {
+  for (let decimals = 2; decimals < 6; decimals++) {
+    if (value !== null && Number(value.toFixed(decimals)) > 1) return num(value, decimals);
+  }
+  return num(value, 6);
+}
