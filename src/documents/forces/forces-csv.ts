@@ -1,6 +1,10 @@
+import { eulerLoad } from '../../strength/euler.js';
 import { type CsvColumn, DECIMALS, writeCsv } from '../formats/csv.js';
 import { type MemberRow, memberRows } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
+
+const effectiveLength = (r: MemberRow, records: PackRecords): number =>
+  r.part.axisLength * records.job.strength.effectiveLength;
 
 /** forces.csv: one row a strut; then one column a load case or combination. */
 export function forcesCsv(records: PackRecords): Uint8Array {
@@ -27,6 +31,8 @@ export function forcesCsv(records: PackRecords): Uint8Array {
         value: (r) => c.forces![index.get(r.member.mark)!]!,
       }),
     ),
+    { name: 'effective_length_mm', decimals: DECIMALS.length, value: (r) => effectiveLength(r, records) },
+    { name: 'euler_N', decimals: force, value: (r) => eulerLoad(r.part, effectiveLength(r, records)) },
   ];
   return writeCsv(columns, memberRows(records), records.job.output.csv);
 }
