@@ -30,7 +30,7 @@ const LETTERS: Readonly<
 /** Letterings to try on a wall, largest first; none where the wall has nothing to spare. */
 export function letteringsFor(job: Job, wall: number, leastWall: number): Lettering[] {
   const letters = LETTERS[job.nodes['process']];
-  const depth = Math.min(job.nodes.markDepth_mm ?? letters.depth, wall - leastWall);
+  const depth = Math.min(job.nodes.markDepth_mm ?? letters.depth, wall - leastWall - CHORDS);
   if (depth < LEAST_DEPTH) return [];
   const want = job.nodes.markHeight_mm ?? letters.want;
   return [1, 0.85, 0.7, 0.6, 0.5]
@@ -39,6 +39,8 @@ export function letteringsFor(job: Job, wall: number, leastWall: number): Letter
     .map((capHeight) => ({ capHeight, stroke: letters.stroke, depth }));
 }
 
+/** Chords of the polygons that sleeves are made as cost a wall this much, mm. */
+const CHORDS = 0.1;
 /** Shallower than this a mark does not show, mm; common practice, no source. */
 const LEAST_DEPTH = 0.2;
 /** Clear of mouth and cone, mm. */
