@@ -36,7 +36,9 @@ export function stepNotes(step: AssemblyStep, units: Units): string[] {
     ...(step.hold_min > 0 ? [`Hold still ${step.hold_min} minutes until the glue holds.`] : []),
     ...(step.access ? [] : ['A hand does not reach in here past the struts: use a tool, or build it on the bench.']),
     ...(step.unstable ? ['What stands can still move freely: hold it until more struts are in.'] : []),
-    ...(step.deflection_mm !== null && step.deflection_mm >= 0.1
+    ...(step.deflection_mm !== null &&
+    step.deflection_mm >= 0.1 &&
+    units.length(step.deflection_mm, 1) !== units.length(0, 1)
       ? [`It sags by ${units.length(step.deflection_mm, 1)} ${units.lengthUnit} under its own weight.`]
       : []),
   ];

@@ -39,7 +39,7 @@ function si(largest: number): Units {
 }
 
 /** NIST SP 811 (2008), appendix B.8: 1 lbf = 4.448222 N, 1 lb = 0.45359237 kg; 1 in = 25.4 mm exactly. */
-const NEWTON_PER_LBF = 4.4482216152605;
+export const NEWTON_PER_LBF = 4.4482216152605;
 const KG_PER_LB = 0.45359237;
 const MM_PER_INCH = 25.4;
 

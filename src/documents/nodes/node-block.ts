@@ -5,7 +5,7 @@ import type { Area } from '../kit/geometry2.js';
 import { INK, LINE, SIZE } from '../kit/ink.js';
 import type { Pen } from '../kit/pen.js';
 import { type Column, drawSmallTable, smallTableHeight } from '../kit/table.js';
-import { fixed, type Units } from '../kit/units.js';
+import { fixed, NEWTON_PER_LBF, type Units } from '../kit/units.js';
 import { PLAN } from '../kit/view/camera.js';
 import { angleTableHeight, drawAngleTable, TEXT } from './angle-table.js';
 import { jigSetting } from './drilling.js';
@@ -122,9 +122,10 @@ export function drawBlock(
   if (diagram && block.polyhedron) {
     const box: Area = { x: x + 2 * (pictureWidth + 1), y: top, width: pictureWidth, height: pictureHeight };
     drawForcePolyhedron(pen, box, diagram, block.polyhedron, outsideCamera(hub.outward));
-    const closure = Math.hypot(...block.polyhedron.closure);
+    const us = units.lengthUnit === 'in';
+    const closure = Math.hypot(...block.polyhedron.closure) / (us ? NEWTON_PER_LBF : 1);
     pen.text(
-      `Forces, closed to ${closure < 0.001 ? '0.001' : fixed(closure, 3)} N`,
+      `Forces, closed to ${closure < 0.001 ? '0.001' : fixed(closure, 3)} ${us ? 'lbf' : 'N'}`,
       box.x + pictureWidth / 2,
       top + pictureHeight + 3,
       {
