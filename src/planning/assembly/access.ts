@@ -28,7 +28,8 @@ export function hasAccess(setting: AssemblySetting, hub: HubPart, standing: Iter
   );
   if (!hand) return false;
   return hub.sockets.every((s) => {
-    if (s.pin <= 0 || s.setback === null) return true;
+    // The pin that locks a sliding end is pushed in by hand; only a joint that is pinned needs a tool at each socket.
+    if (s.joint !== 'pinned' || s.pin <= 0 || s.setback === null) return true;
     const at = addScaled(hub.at, s.direction, s.setback + s.depth / 2);
     const [diameter, long] = driver_mm;
     const off = diameter / 2 + s.wall;
