@@ -68,5 +68,7 @@ export function readMeasured(
     else if (columns === LENGTHS) lengths.set(mark!, values[0]!);
     else nodes.set(mark!, values as unknown as Vec3);
   }
+  if (faults.length === 0 && lengths.size + nodes.size === 0)
+    fault(1, 'measures nothing: there is no line under its header', 'add a line for each part measured');
   return { measured: faults.length === 0 ? { lengths, nodes } : null, faults };
 }
