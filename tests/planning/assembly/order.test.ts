@@ -1,0 +1,244 @@
+import { describe, expect, it } from 'vitest';
+import { packingListCsv } from '../../../src/documents/assembly/packing-list.js';
+import type { PackRecords } from '../../../src/documents/records.js';
+import type { Vec3 } from '../../../src/maths/vec3.js';
+import type { Truss } from '../../../src/model/truss.js';
+import { planAssembly } from '../../../src/planning/assembly/plan-assembly.js';
+import { assembled } from '../../helpers/assembled.js';
+import { mapped, trussOf } from '../../helpers/truss.js';
+
+/** A regular octahedron of edge a: 6 nodes, 12 struts, 8 faces; no panels. */
+const octahedron = (a: number): Truss => {
+  const r = a / Math.SQRT2;
+  return trussOf({
+    nodes: [
+      [r, 0, 0],
+      [0, r, 0],
+      [-r, 0, 0],
+      [0, -r, 0],
+      [0, 0, r],
+      [0, 0, -r],
+    ],
+    edges: [
+      [0, 1],
+      [1, 2],
+      [2, 3],
+      [3, 0],
+      [4, 0],
+      [4, 1],
+      [4, 2],
+      [4, 3],
+      [5, 0],
+      [5, 1],
+      [5, 2],
+      [5, 3],
+    ],
+    faces: [
+      [0, 1, 4],
+      [1, 2, 4],
+      [2, 3, 4],
+      [3, 0, 4],
+      [1, 0, 5],
+      [2, 1, 5],
+      [3, 2, 5],
+      [0, 3, 5],
+    ],
+  });
+};
+
+const order = (truss: Truss, fields: Record<string, unknown> = {}) => {
+  const assessed = assembled(truss, fields);
+  return { assessed, ...planAssembly(assessed) };
+};
+const entriesOf = (found: ReturnType<typeof order>) => found.plan.steps.flatMap((s) => s.struts);
+const blockedOf = (found: ReturnType<typeof order>) => entriesOf(found).filter((e) => e.entry === 'blocked');
+const codes = (found: ReturnType<typeof order>) => found.findings.map((f) => f.code);
+
+describe('whether every strut gets in', () => {
+  // An apex over a square of standing hubs must draw back by the engagement along four struts at 45 degrees (an octahedron's):
+  // it goes out by s √2 and each strut end stands aside by s. Struts that cannot bend that far stay out.
+  it('short stiff struts cannot: the last ones are named, with the remedy', () => {
+    const found = order(octahedron(150), { assembly: { springStrain: 1e-6 } });
+    expect(blockedOf(found).length).toBeGreaterThan(0);
+    expect(found.findings.filter((f) => f.code === 'strut-cannot-enter').map((f) => f.subject)).toEqual(
+      blockedOf(found).map((e) => e.strut),
+    );
+  });
+
+  it('the long slender struts of a tetrahedron can', () => {
+    const h = Math.sqrt(2 / 3);
+    const tetrahedron = trussOf({
+      nodes: [
+        [0, 0, 0],
+        [2000, 0, 0],
+        [1000, 1000 * Math.sqrt(3), 0],
+        [1000, 1000 / Math.sqrt(3), 2000 * h],
+      ],
+      edges: [
+        [0, 1],
+        [1, 2],
+        [2, 0],
+        [0, 3],
+        [1, 3],
+        [2, 3],
+      ],
+      faces: [[0, 2, 1]],
+    });
+    const found = order(tetrahedron);
+    expect(blockedOf(found)).toEqual([]);
+    expect(
+      entriesOf(found)
+        .map((e) => e.entry)
+        .sort(),
+    ).toEqual(['spread', 'spread', 'spread', 'squeezed', 'squeezed', 'squeezed']);
+    for (const e of entriesOf(found)) if (e.strain !== null) expect(e.strain).toBeLessThanOrEqual(0.004);
+  });
+
+  it('the same short struts can with the closing details that the job lets it give', () => {
+    const found = order(octahedron(150), { assembly: { springStrain: 1e-6, closing: 'give' } });
+    expect(blockedOf(found)).toEqual([]);
+    expect(found.plan.closing.length).toBeGreaterThan(0);
+    for (const e of found.plan.closing) expect(e.detail?.kind).toBe('slide');
+  });
+});
+
+describe('every part once', () => {
+  const found = order({ ...octahedron(500), faces: octahedron(500).faces.map((f) => ({ ...f, panel: true })) });
+  const { plan, assessed } = found;
+  const all = {
+    node: assessed.topology.truss.nodes.map((n) => n.mark).sort(),
+    strut: assessed.topology.truss.members.map((m) => m.mark).sort(),
+    panel: assessed.parts.panels
+      .filter((p) => p.makeable)
+      .map((p) => p.mark)
+      .sort(),
+  };
+
+  it('in the steps', () => {
+    expect(plan.steps.flatMap((s) => s.hubs).sort()).toEqual(all.node);
+    expect(
+      entriesOf(found)
+        .map((e) => e.strut)
+        .sort(),
+    ).toEqual(all.strut);
+    expect(all.panel).toHaveLength(8);
+    expect(plan.steps.flatMap((s) => s.panels).sort()).toEqual(all.panel);
+  });
+
+  it('with both hubs of a strut standing when it comes', () => {
+    const standing = new Set<string>();
+    for (const step of plan.steps) {
+      for (const hub of step.hubs) standing.add(hub);
+      for (const { strut } of step.struts)
+        for (const end of assessed.topology.truss.members.find((m) => m.mark === strut)!.ends)
+          expect(standing).toContain(end);
+    }
+  });
+
+  it('in the bags, and in the packing list', () => {
+    expect(plan.bags.flatMap((b) => b.hubs).sort()).toEqual(all.node);
+    expect(plan.bags.flatMap((b) => b.struts).sort()).toEqual(all.strut);
+    expect(plan.bags.flatMap((b) => b.panels).sort()).toEqual(all.panel);
+    const text = new TextDecoder().decode(
+      packingListCsv({ job: assessed.job, assembly: plan } as unknown as PackRecords),
+    );
+    const rows = text
+      .trim()
+      .split(/\r?\n/)
+      .slice(1)
+      .map((line) => line.split(','));
+    for (const kind of ['node', 'strut', 'panel'] as const)
+      expect(
+        rows
+          .filter((r) => r[1] === kind)
+          .map((r) => r[2])
+          .sort(),
+      ).toEqual(all[kind]);
+    expect(rows.filter((r) => r[1] === 'spare').length).toBeGreaterThan(0);
+  });
+
+  it('and the masses of steps and bags are those of the parts', () => {
+    const { struts, hubs, panels } = assessed.parts;
+    const whole = [...struts, ...hubs, ...panels].reduce((sum, p) => sum + (p.mass ?? 0), 0);
+    expect(plan.steps.reduce((sum, s) => sum + s.mass_kg, 0)).toBeCloseTo(whole, 9);
+    expect(plan.bags.reduce((sum, b) => sum + b.mass_kg, 0)).toBeCloseTo(whole, 9);
+  });
+});
+
+describe('what is wrong is named', () => {
+  it('a truss in two pieces', () => {
+    const a = octahedron(500);
+    const twice: Truss = {
+      ...a,
+      nodes: [
+        ...a.nodes,
+        ...a.nodes.map((n) => ({ mark: `B${n.mark}`, at: [n.at[0] + 3000, n.at[1], n.at[2]] as Vec3 })),
+      ],
+      members: [
+        ...a.members,
+        ...a.members.map((m) => ({
+          ...m,
+          mark: `B${m.mark}`,
+          ends: [`B${m.ends[0]}`, `B${m.ends[1]}`] as [string, string],
+        })),
+      ],
+    };
+    const found = order(twice);
+    expect(found.findings.find((f) => f.code === 'truss-in-pieces')?.value).toBe(2);
+    expect(entriesOf(found)).toHaveLength(24);
+    expect(codes(order(a))).not.toContain('truss-in-pieces');
+  });
+
+  it('a start that is no node; a node of the truss is started from', () => {
+    const unknown = order(octahedron(500), { assembly: { start: 'Q' } });
+    expect(unknown.findings.find((f) => f.code === 'start-unknown')?.subject).toBe('Q');
+    const known = order(octahedron(500), { assembly: { start: 'N4' } });
+    expect(codes(known)).not.toContain('start-unknown');
+    expect(known.plan.steps[0]!.hubs).toContain('N4');
+  });
+
+  it('a step that nothing makes stable is a stop: a square of pins on four legs sways', () => {
+    const table = trussOf({
+      nodes: [
+        [0, 0, 0],
+        [500, 0, 0],
+        [500, 500, 0],
+        [0, 500, 0],
+        [0, 0, 500],
+        [500, 0, 500],
+        [500, 500, 500],
+        [0, 500, 500],
+      ],
+      edges: [
+        [0, 4],
+        [1, 5],
+        [2, 6],
+        [3, 7],
+        [4, 5],
+        [5, 6],
+        [6, 7],
+        [7, 4],
+      ],
+      supports: [0, 1, 2, 3].map((i) => [i, 'xyz'] as const),
+    });
+    const pinned = order(table, { analysis: { joints: 'pinned' } });
+    const stop = pinned.findings.find((f) => f.code === 'step-unstable' && f.value === pinned.plan.steps.length);
+    expect(stop?.level).toBe('stop');
+    const rigid = order(table, { analysis: { joints: 'rigid' } });
+    expect(rigid.plan.steps.at(-1)!.unstable).toBe(false);
+  });
+});
+
+describe('the same truss elsewhere', () => {
+  const base = octahedron(150);
+  const fields = { assembly: { springStrain: 1e-6 } };
+  const count = blockedOf(order(base, fields)).length;
+
+  it.each<[string, Truss]>([
+    ['turned about z', mapped(base, ([x, y, z]) => [0.8 * x - 0.6 * y, 0.6 * x + 0.8 * y, z])],
+    ['moved', mapped(base, ([x, y, z]) => [x + 12_345, y - 678, z + 91])],
+    ['renumbered', { ...base, nodes: [...base.nodes].reverse(), members: [...base.members].reverse() }],
+  ])('%s: as many struts blocked', (_, truss) => {
+    expect(blockedOf(order(truss, fields))).toHaveLength(count);
+  });
+});
