@@ -7,10 +7,10 @@ export interface FitUp {
   readonly samples: number;
   /** Share of seeded samples in which every loop closes within the play. */
   readonly chance: number;
-  /** 1 - sum over loops of the chance that it does not close: no lower than this whatever the loops share. */
+  /** 1 - sum over loops of the chance that it alone does not close, for normal errors; loops that share struts share their play, so the sampled chance can be lower. */
   readonly chanceBound: number;
   readonly wanted: number;
-  /** Tolerance of the cut length with which the bound just reaches the wanted chance, mm: safe, never too wide; null: not even with perfect cuts. */
+  /** Tolerance of the cut length with which that sum just reaches the wanted chance, mm; null: not even with perfect cuts. */
   readonly cutNeeded_mm: number | null;
   /** Node that the errors move most: standard deviation, mm. */
   readonly movedMost: { readonly node: string; readonly deviation_mm: number } | null;

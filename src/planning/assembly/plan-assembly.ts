@@ -79,6 +79,7 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
   const standing: Link[] = [...order.start.links];
   const nodes = [...order.start.nodes];
   const propped = new Set<number>();
+  const steadied = new Set<number>();
   const every = Math.max(1, Math.ceil((order.moves.length + 1) / DEFLECTIONS));
   const glued = job.nodes.joint === 'glued';
 
@@ -96,7 +97,19 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
     for (const n of props) propped.add(n);
     const number = steps.length + 1;
     const measured = last || number % every === 0;
-    const stands = measured ? standsAs(setting, nodes, standing, [...propped], order.start.nodes) : null;
+    const standsOn = (held: Iterable<number>) => standsAs(setting, nodes, standing, [...held], order.start.nodes);
+    let stands = measured ? standsOn([...propped, ...steadied]) : null;
+    // What is held by its sockets can still swing with all that stands: then the step's own hubs are propped as well,
+    // until the whole stands without those props.
+    if (stands === 'unstable') {
+      const more = hubs.filter((n) => !propped.has(n) && !steadied.has(n));
+      for (const n of more) steadied.add(n);
+      props.push(...more);
+      stands = standsOn([...propped, ...steadied]);
+    } else if (measured && steadied.size > 0 && standsOn(propped) !== 'unstable') {
+      release.push(...steadied);
+      steadied.clear();
+    }
     const strutMass = new Map(parts.struts.map((s) => [s.mark, s.mass ?? 0]));
     steps.push({
       number,
