@@ -1,8 +1,15 @@
+import type { Job } from '../model/job/index.js';
 import type { HubPart } from '../model/parts.js';
+import { nodeSystem } from './systems/index.js';
 
-/** The hubs, not yet weighed, with some sockets deeper, by "strut@node", mm. Setbacks and cut lengths do not depend on depth. */
-export const deepenSockets = (hubs: readonly HubPart[], depths: ReadonlyMap<string, number>): readonly HubPart[] =>
-  hubs.map((hub) => {
+/** The hubs with some sockets deeper, by "strut@node", mm, and their masses anew. Setbacks and cut lengths do not depend on depth. */
+export function deepenSockets(
+  hubs: readonly HubPart[],
+  depths: ReadonlyMap<string, number>,
+  job: Job,
+): readonly HubPart[] {
+  if (depths.size === 0) return hubs;
+  return hubs.map((hub) => {
     let deeper = false;
     const sockets = hub.sockets.map((socket) => {
       const depth = depths.get(`${socket.strut}@${hub.mark}`);
@@ -10,5 +17,8 @@ export const deepenSockets = (hubs: readonly HubPart[], depths: ReadonlyMap<stri
       deeper = true;
       return { ...socket, depth };
     });
-    return deeper ? { ...hub, sockets } : hub;
+    if (!deeper) return hub;
+    const placed = { ...hub, sockets };
+    return { ...placed, mass: hub.mass === null ? null : (nodeSystem(hub.system)?.mass(placed, job) ?? null) };
   });
+}
