@@ -18,7 +18,8 @@ export interface DetailedHubs {
 }
 
 /**
- * Hubs of a truss as numbers: the socket of each strut end, its setback, and the hub's mass.
+ * Hubs of a truss as numbers: the socket of each strut end and its setback. Masses are null until `weighHubs`: sockets get deeper
+ * before they are known, and a mass costs more than all else here.
  *
  * @param sections by the member's index; null where unknown: that end gets no socket and its hub cannot be made
  * @param axes local axes of the struts, by the member's index
@@ -114,11 +115,18 @@ export function detailHubs(
       (s, i): Socket => ({ ...s, setback: setbacks[i] === null ? null : (rule ?? setbacks[i]!) }),
     );
     const makeable = whole && material !== null && system !== null && sockets.every((s) => s.setback !== null);
-    const placed = { ...hub, sockets, makeable };
-    return { ...placed, mass: system && material && whole ? system.mass(placed, job) : null };
+    return { ...hub, sockets, makeable };
   });
   return { hubs, findings };
 }
+
+/** The hubs with their masses, kg; null where a socket or the material is missing. */
+export const weighHubs = (topology: Topology, job: Job, hubs: readonly HubPart[]): readonly HubPart[] =>
+  hubs.map((hub) => {
+    const whole = hub.sockets.length === topology.barsAt[topology.nodeIndex.get(hub.mark)!]!.length;
+    const system = hub.material === NO_MATERIAL ? null : nodeSystem(hub.system);
+    return whole && system ? { ...hub, mass: system.mass(hub, job) } : hub;
+  });
 
 interface Draft {
   readonly hub: HubPart;

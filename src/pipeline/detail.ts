@@ -1,7 +1,7 @@
 import { axesOfStruts } from '../detailing/axes.js';
 import { deepenSockets } from '../detailing/deepen.js';
 import { type FaceForm, faceForms } from '../detailing/faces.js';
-import { type DetailedHubs, detailHubs } from '../detailing/hubs.js';
+import { type DetailedHubs, detailHubs, weighHubs } from '../detailing/hubs.js';
 import { detailPanels } from '../detailing/panels/detail-panels.js';
 import { sectionsOf } from '../detailing/sections.js';
 import { detailStruts } from '../detailing/struts.js';
@@ -38,7 +38,7 @@ export function layOut(topology: Topology, job: Job): Layout {
   };
 }
 
-/** Hubs and the struts that end in them. */
+/** Hubs, not yet weighed, and the struts that end in them. */
 export interface Fixings extends Pick<Parts, 'hubs' | 'struts'> {
   readonly findings: readonly Finding[];
 }
@@ -54,18 +54,19 @@ export function fix(
   depths: Parameters<typeof deepenSockets>[1],
   job: Job,
 ): Fixings {
-  const hubs = deepenSockets(shallow.hubs, depths, job);
+  const hubs = deepenSockets(shallow.hubs, depths);
   const struts = detailStruts(topology, job, sections, axes, hubs);
   return { hubs, struts: struts.struts, findings: [...shallow.findings, ...struts.findings] };
 }
 
-/** The same with the panels between those hubs. */
+/** The same with the hubs weighed and the panels between them. */
 export function withPanels(
   layout: Layout,
   fixings: Fixings,
 ): { readonly parts: Parts; readonly findings: readonly Finding[] } {
   const { topology, job, sections, forms, axes } = layout;
-  const { hubs, struts } = fixings;
+  const { struts } = fixings;
+  const hubs = weighHubs(topology, job, fixings.hubs);
   const panels = detailPanels({
     topology,
     job,

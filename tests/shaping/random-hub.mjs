@@ -1,5 +1,5 @@
 /** Random hubs over the compiled program, and their checks by code that shares nothing with the solid kernel. Names and numbers are invented. */
-import { detailHubs } from '../../dist/detailing/hubs.js';
+import { detailHubs, weighHubs } from '../../dist/detailing/hubs.js';
 import { writeStl } from '../../dist/documents/formats/stl.js';
 import { seededRandom } from '../../dist/maths/random.js';
 import { jobSchema } from '../../dist/model/job/index.js';
@@ -109,7 +109,7 @@ export function randomHub(seed, special = {}) {
     },
   };
   const { hubs } = detailHubs(topology, withDetails, sections, axes);
-  return { job, hub: hubs[0] };
+  return { job, hub: weighHubs(topology, withDetails, hubs.slice(0, 1))[0] };
 }
 
 /** Shapes a hub and returns its measures, and in words what is wrong with it. */

@@ -1,4 +1,4 @@
-import { addScaled, scale, type Vec3 } from '../../maths/vec3.js';
+import { scale, type Vec3 } from '../../maths/vec3.js';
 import { plateVolume } from './base-plate.js';
 import { type ClampParts, SCREW } from './clamp-parts.js';
 import type { HubShape } from './hub-shape.js';
@@ -25,8 +25,9 @@ export function sleeveVolume(shape: HubShape): number {
         const half = between(low, high, t);
         const slice = (areaOf(half) * (to - from)) / ALONG / (ROUND * ACROSS);
         const centre = scale(s.socket.direction, from + t * (to - from));
-        for (const [a, b] of gridOf(half)) {
-          const p = addScaled(addScaled(centre, s.socket.y, a), s.socket.z, b);
+        const { grid, sizeA, sizeB } = gridAcross(half);
+        for (let g = 0; g < grid.length; g += 2) {
+          const p = pointAcross(centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
           if (insidePlanes(planes, p) || sleeves.some((o) => o !== s && insidePath(o, p))) continue;
           let share = 1;
           for (const other of sleeves) if (other !== s && insideSleeve(other, p)) share++;
@@ -80,8 +81,9 @@ function pathThroughBody(s: Sleeve, planes: Float64Array, from: number): number 
   for (let at = from + STEP / 2; ; at += STEP) {
     const centre = scale(s.socket.direction, at);
     let hits = 0;
-    for (const [a, b] of gridOf(s.inner))
-      if (insidePlanes(planes, addScaled(addScaled(centre, s.socket.y, a), s.socket.z, b))) hits++;
+    const { grid, sizeA, sizeB } = gridAcross(s.inner);
+    for (let g = 0; g < grid.length; g += 2)
+      if (insidePlanes(planes, pointAcross(centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!))) hits++;
     if (hits === 0) return volume;
     volume += (areaOf(s.inner) * STEP * hits) / (ROUND * ACROSS);
   }
@@ -102,14 +104,27 @@ const stretches = (s: Sleeve): readonly (readonly [number, number, Half, Half])[
   [s.coneTop, s.mouth, s.outer, s.outer],
 ];
 
-/** Centres of cells of equal area. */
-function* gridOf(half: Half): Generator<readonly [number, number]> {
-  for (let k = 0; k < ACROSS; k++)
-    for (let m = 0; m < ROUND; m++) {
-      if (typeof half === 'number') {
-        const r = half * Math.sqrt((k + 0.5) / ACROSS);
-        const angle = (2 * Math.PI * (m + 0.5)) / ROUND;
-        yield [r * Math.cos(angle), r * Math.sin(angle)];
-      } else yield [half[0] * (((k + 0.5) / ACROSS) * 2 - 1), half[1] * (((m + 0.5) / ROUND) * 2 - 1)];
-    }
+/** The grid of a section and the half sizes that stretch it. */
+const gridAcross = (half: Half): { readonly grid: Float64Array; readonly sizeA: number; readonly sizeB: number } =>
+  typeof half === 'number'
+    ? { grid: ROUND_GRID, sizeA: half, sizeB: half }
+    : { grid: RECTANGLE_GRID, sizeA: half[0], sizeB: half[1] };
+
+/** centre + a y + b z of a sleeve's section. */
+function pointAcross(centre: Vec3, { socket: { y, z } }: Sleeve, a: number, b: number): Vec3 {
+  return [centre[0] + y[0] * a + z[0] * b, centre[1] + y[1] * a + z[1] * b, centre[2] + y[2] * a + z[2] * b];
+}
+
+/** Centres of cells of equal area, two numbers each: of the unit circle, and of the square from -1 to 1. */
+const ROUND_GRID = gridOf((k, m) => {
+  const r = Math.sqrt((k + 0.5) / ACROSS);
+  const angle = (2 * Math.PI * (m + 0.5)) / ROUND;
+  return [r * Math.cos(angle), r * Math.sin(angle)];
+});
+const RECTANGLE_GRID = gridOf((k, m) => [((k + 0.5) / ACROSS) * 2 - 1, ((m + 0.5) / ROUND) * 2 - 1]);
+
+function gridOf(at: (k: number, m: number) => readonly [number, number]): Float64Array {
+  const grid = new Float64Array(2 * ACROSS * ROUND);
+  for (let k = 0; k < ACROSS; k++) for (let m = 0; m < ROUND; m++) grid.set(at(k, m), 2 * (k * ROUND + m));
+  return grid;
 }

@@ -1,7 +1,7 @@
 import { angleBetween } from '../../maths/vec3.js';
 import { materialNamed } from '../../model/catalogue/resolve.js';
 import type { Job } from '../../model/job/index.js';
-import type { Socket } from '../../model/parts.js';
+import type { HubPart, Socket } from '../../model/parts.js';
 import { commonSetback, leastSetback } from './half-strip.js';
 import { hubShape } from './hub-shape.js';
 import { leastSetbacks } from './least-setbacks.js';
@@ -11,13 +11,13 @@ import { pathHalf } from './sleeve.js';
 import { outlineInSlab, sleeveCover } from './sleeve-cover.js';
 import { sleeveStiffness, sleeveStrength } from './sleeve-strength.js';
 import { sleeveVolume } from './sleeve-volume.js';
-import type { BarEnd, ClosePair, NodeSystem, Setbacks } from './system.js';
+import type { BarEnd, ClosePair, ConvexPiece, NodeSystem, Setbacks } from './system.js';
 
 /** What every hub of sleeves and spigots on a body has in common. */
 export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
   setbacks: socketSetbacks,
-  cover: (hub, job) => sleeveCover(hubShape(hub, job)),
-  outline: (hub, slab, job) => outlineInSlab(sleeveCover(hubShape(hub, job)), hub.at, slab),
+  cover,
+  outline: (hub, slab, job) => outlineInSlab(cover(hub, job), hub.at, slab),
   mass: (hub, job) =>
     hub.sockets.some((s) => s.setback === null)
       ? null
@@ -25,6 +25,17 @@ export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
   stiffness: (hub) => sleeveStiffness(hub),
   strength: (hub, job) => sleeveStrength(hub, job.nodes.vent_mm),
 };
+
+/** Every panel at a hub asks for its cover. */
+const covers = new WeakMap<HubPart, { readonly job: Job; readonly pieces: readonly ConvexPiece[] }>();
+
+function cover(hub: HubPart, job: Job): readonly ConvexPiece[] {
+  const known = covers.get(hub);
+  if (known?.job === job) return known.pieces;
+  const pieces = sleeveCover(hubShape(hub, job));
+  covers.set(hub, { job, pieces });
+  return pieces;
+}
 
 /** A printed hub with one blind socket a strut, along the strut's true direction. */
 export const SOCKET_SYSTEM: NodeSystem = {

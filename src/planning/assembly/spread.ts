@@ -53,11 +53,19 @@ export function spread(struts: readonly SpringStrut[]): Spread {
   return { ratio: each.reduce((m, r) => Math.max(m, r), 0), each, move: best };
 }
 
-const sideways = (s: SpringStrut, v: Vec3): number => length(addScaled(v, s.direction, -dot(v, s.direction)));
+/** |v - (v.d) d| */
+function sideways({ direction: d }: SpringStrut, v: Vec3): number {
+  const along = d[0] * v[0] + d[1] * v[1] + d[2] * v[2];
+  const x = v[0] - d[0] * along;
+  const y = v[1] - d[1] * along;
+  const z = v[2] - d[2] * along;
+  return Math.sqrt(x * x + y * y + z * z);
+}
 const short = (s: SpringStrut, v: Vec3): number => Math.max(0, s.travel + dot(v, s.direction));
 
 function cost(struts: readonly SpringStrut[], v: Vec3): number {
-  let [worst, missing] = [0, 0];
+  let worst = 0;
+  let missing = 0;
   for (const s of struts) {
     worst = Math.max(worst, sideways(s, v) / s.aside);
     missing = Math.max(missing, short(s, v));

@@ -1,6 +1,6 @@
 import { axesOfStruts } from '../../../src/detailing/axes.js';
 import { faceForms } from '../../../src/detailing/faces.js';
-import { detailHubs } from '../../../src/detailing/hubs.js';
+import { detailHubs, weighHubs } from '../../../src/detailing/hubs.js';
 import { sectionsOf } from '../../../src/detailing/sections.js';
 import { detailStruts } from '../../../src/detailing/struts.js';
 import { defaultJob, type Job } from '../../../src/model/job/index.js';
@@ -28,7 +28,7 @@ export function inputOf(truss: Truss, job: Job, given: Float64Array | null = nul
   const { sections } = sectionsOf(truss, job);
   const { forms } = faceForms(topology, { flatnessWarn: 1, flatnessStop: null });
   const axes = axesOfStruts(topology, job, forms);
-  const { hubs } = detailHubs(topology, job, sections, axes);
+  const hubs = weighHubs(topology, job, detailHubs(topology, job, sections, axes).hubs);
   const { struts } = detailStruts(topology, job, sections, axes, hubs);
   return { topology, job, parts: { struts, hubs, panels: [] }, forms, given };
 }
