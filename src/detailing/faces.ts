@@ -29,6 +29,8 @@ export interface FaceLimits {
   readonly flatnessWarn: number;
   /** mm; null: flatness never stops. */
   readonly flatnessStop: number | null;
+  /** mm: a panel out of flat by more is told of once, where panels are made, with what was done about it; absent: here. */
+  readonly panelsFrom?: number;
 }
 
 /** Flatness, outward normal, convexity and self-crossing of every face, with the findings they give rise to. */
@@ -116,7 +118,8 @@ function faceFindings(form: FaceForm, limits: FaceLimits): Finding[] {
   const kind = form.panel ? ('panel' as const) : ('face' as const);
   if (!form.normal) return [finding('face-has-no-normal', form.mark, { kind })];
   const found: Finding[] = [];
-  if (limits.flatnessStop !== null && form.flatness > limits.flatnessStop) {
+  const toldWithPanels = form.panel && limits.panelsFrom !== undefined && form.flatness > limits.panelsFrom;
+  if (limits.flatnessStop !== null && form.flatness > limits.flatnessStop && !toldWithPanels) {
     found.push(
       finding('face-not-flat', form.mark, {
         kind,
@@ -125,7 +128,7 @@ function faceFindings(form: FaceForm, limits: FaceLimits): Finding[] {
         limit: limits.flatnessStop,
       }),
     );
-  } else if (form.flatness > limits.flatnessWarn) {
+  } else if (form.flatness > limits.flatnessWarn && !toldWithPanels) {
     found.push(finding('face-not-flat', form.mark, { kind, value: form.flatness, limit: limits.flatnessWarn }));
   }
   if (form.crossesItself) found.push(finding('face-crosses-itself', form.mark, { kind }));

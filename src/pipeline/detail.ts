@@ -3,6 +3,7 @@ import { deepenSockets } from '../detailing/deepen.js';
 import { type FaceForm, faceForms } from '../detailing/faces.js';
 import { type DetailedHubs, detailHubs, weighHubs } from '../detailing/hubs.js';
 import { detailPanels } from '../detailing/panels/detail-panels.js';
+import { flatnessStop } from '../detailing/panels/patches.js';
 import { sectionsOf } from '../detailing/sections.js';
 import { detailStruts } from '../detailing/struts.js';
 import { nodeSystem } from '../detailing/systems/index.js';
@@ -27,6 +28,7 @@ export function layOut(topology: Topology, job: Job): Layout {
   const faces = faceForms(topology, {
     flatnessWarn: job.fit.flatnessWarn_mm,
     flatnessStop: job.fit.flatnessStop_mm ?? null,
+    panelsFrom: flatnessStop(job),
   });
   return {
     topology,

@@ -38,6 +38,10 @@ it('a square with corners alternately h up and h down is out of flat by h, where
   const twice = mapped(truss, (p) => scale(p, 2));
   expect(form(twice).forms[0]!.flatness).toBeCloseTo(2 * h, 9);
   expect(form(twice).findings).toMatchObject([{ code: 'face-not-flat', level: 'stop', limit: 1 }]);
+  // Where panels are made it is said what was done about it: not twice.
+  const once = (from: number) => faceForms(topologyOf(twice), { ...LIMITS, panelsFrom: from }).findings;
+  expect(once(1)).toEqual([]);
+  expect(once(2)).toMatchObject([{ code: 'face-not-flat', level: 'stop' }]);
 });
 
 it('an upright face is as flat as a level one: distance is square to the plane, not along z', () => {

@@ -34,10 +34,37 @@ export function cutCorner(
     const radius = Math.max(...touched.map((p) => Math.hypot(p[0] - node[0], p[1] - node[1])));
     return outer(differenceOf(rings, [circle(node, radius)]));
   }
-  if (how === 'straight') {
-    return outer(differenceOf(rings, [acrossCorner(corners, i, touched) ?? convexHull(toRing([...touched, node]))]));
-  }
-  return outer(differenceOf(rings, solid));
+  const across = how === 'straight' ? acrossCorner(corners, i, touched) : null;
+  if (across) return outer(differenceOf(rings, [across]));
+  const cut = how === 'straight' ? [convexHull(toRing([...touched, node]))] : solid;
+  return outer(differenceOf(rings, [...cut, ...beyondStruts(corners, i, bite)]));
+}
+
+/**
+ * What lies beyond the two struts at a corner as far along each as the hub reaches: of a panel over the struts the hub
+ * would leave a tongue there that hangs on nothing but its far end.
+ */
+function beyondStruts(corners: readonly Point2[], i: number, bite: readonly Ring[]): Ring[] {
+  const n = corners.length;
+  const node = corners[i]!;
+  const [before, after] = [corners[(i + n - 1) % n]!, corners[(i + 1) % n]!];
+  const far = 2 * Math.max(...bite.flatMap(toPoints).map((p) => Math.hypot(p[0] - node[0], p[1] - node[1])));
+  const bulges = (node[0] - before[0]) * (after[1] - node[1]) - (node[1] - before[1]) * (after[0] - node[0]) > 0;
+  return [after, before].flatMap((end, side) => {
+    const l = Math.hypot(end[0] - node[0], end[1] - node[1]) || 1;
+    const [ux, uy] = [(end[0] - node[0]) / l, (end[1] - node[1]) / l];
+    // Outwards is to the right of the edge that leaves the node, to the left of the one that comes to it, seen from the node.
+    const [ox, oy] = side === 0 ? [uy, -ux] : [-uy, ux];
+    const box = (from: number, to: number): Ring => {
+      const at = (s: number, out: number): Point2 => [node[0] + s * ux + out * ox, node[1] + s * uy + out * oy];
+      const loop = [at(from, 0), at(to, 0), at(to, far), at(from, far)];
+      return toRing(side === 0 ? loop.reverse() : loop);
+    };
+    const start = bulges ? -far : 0;
+    const out = intersectionOf(bite, [box(start, far)]).flatMap(toPoints);
+    const reach = Math.max(0, ...out.map((p) => (p[0] - node[0]) * ux + (p[1] - node[1]) * uy));
+    return reach > 0 ? [box(start, reach)] : [];
+  });
 }
 
 /** A polygon round a circle: its corners outside, so that nothing of the circle is left. */

@@ -10,7 +10,7 @@ import { engrave } from './engraving.js';
 import { type FaceLoop, faceLoop } from './face-loop.js';
 import { flatFigure, foldedFigure } from './fold.js';
 import { panelHold, sayHold } from './holding.js';
-import { holesAlong } from './holes.js';
+import { EDGE_OVER_DIAMETER, holesAlong, ON_LINE } from './holes.js';
 import { isOutdoors, movementStrain } from './movement.js';
 import { type Patch, patchesOf } from './patches.js';
 import type { Seats } from './seats.js';
@@ -67,7 +67,7 @@ function detailPanel(setting: PanelSetting, face: Face, patch: Patch, report: (f
     oversize,
   );
   const leastEdge = EDGE_OVER_DIAMETER * row.diameter;
-  if (row.nearest !== null && row.nearest < leastEdge - 1e-9)
+  if (row.nearest !== null && row.nearest < leastEdge - ON_LINE)
     report(finding('panel-hole-near-edge', mark, { value: row.nearest, limit: leastEdge }));
 
   const edgeLoss = Math.max(0, ...seats.movements.map((m) => job.panels.gap_mm + 2 * m));
@@ -83,7 +83,7 @@ function detailPanel(setting: PanelSetting, face: Face, patch: Patch, report: (f
         ? ''
         : hold.by === 'channel'
           ? 'the channel does not reach over it once it has moved'
-          : 'there is no room for a fixing';
+          : `there is no room for a fixing with a hole of ${row.diameter.toFixed(1)} mm`;
     report(finding('panel-not-held', mark, { about: { why } }));
   }
 
@@ -116,8 +116,6 @@ function detailPanel(setting: PanelSetting, face: Face, patch: Patch, report: (f
 const KG_PER_MM3 = 1e-9; // times kg/m³
 /** Most that one person lifts on a site: 20 to 25 kg in common guidance; common practice, no source. */
 const LIFT_KG = 20;
-/** Least distance of a hole's middle from the edge over its diameter; common practice for acrylic and plywood, no source. */
-const EDGE_OVER_DIAMETER = 1.5;
 const HAZARDS: Readonly<Record<string, string>> = {
   'laser-chlorine': 'its material gives off chlorine under a laser: never cut it on one',
   'laser-fire': 'its material burns and soots under a laser: do not cut it on one',

@@ -14,7 +14,7 @@ export interface HoleRow {
 }
 
 /**
- * Holes along every edge of the face: `edge_mm` in from the panel's own edge, evenly spread at no more than the pitch
+ * Holes along every edge of the face: `edge_mm` in from the panel's own edge, or as far as a hole made oversize needs, evenly spread at no more than the pitch
  * over what the corner cuts leave of it, at least one where it is long enough for one. A hole that would come nearer
  * than its edge distance to another edge is left out.
  *
@@ -28,6 +28,9 @@ export function holesAlong(
   oversize: number,
 ): HoleRow {
   const diameter = holes.diameter_mm + oversize;
+  // A hole that movement makes larger stands farther in, or it would come too near the edge or find no room at all.
+  const edge = oversize > 0 ? Math.max(holes.edge_mm, EDGE_OVER_DIAMETER * diameter) : holes.edge_mm;
+  const least = Math.min(edge, EDGE_OVER_DIAMETER * diameter) - ON_LINE;
   const centres: Point2[] = [];
   if (holes.diameter_mm > 0)
     corners.forEach((a, i) => {
@@ -36,17 +39,17 @@ export function holesAlong(
       const u: Point2 = [(b[0] - a[0]) / l, (b[1] - a[1]) / l];
       const span = spanOnLine(outline, a, u, insets[i]!);
       if (!span) return;
-      const [from, to] = [span[0] + holes.edge_mm, span[1] - holes.edge_mm];
+      const [from, to] = [span[0] + edge, span[1] - edge];
       if (to < from && span[1] - span[0] < 2 * diameter) return;
       const room = Math.max(0, to - from);
       const count = room > 0 ? Math.ceil(room / holes.pitch_mm) + 1 : 1;
       for (let k = 0; k < count; k++) {
         const s = count === 1 ? (span[0] + span[1]) / 2 : from + (room * k) / (count - 1);
-        const d = insets[i]! + holes.edge_mm;
+        const d = insets[i]! + edge;
         const p: Point2 = [a[0] + u[0] * s - u[1] * d, a[1] + u[1] * s + u[0] * d];
         const clear = clearanceAt([outline], p[0], p[1]);
         const apart = Math.min(Infinity, ...centres.map((c) => Math.hypot(c[0] - p[0], c[1] - p[1])));
-        if (clear >= diameter && apart >= 2 * diameter) centres.push(p);
+        if (clear >= least && apart >= 2 * diameter) centres.push(p);
       }
     });
   return {
@@ -57,8 +60,11 @@ export function holesAlong(
   };
 }
 
+/** Least distance of a hole's middle from the edge over its diameter; common practice for acrylic and plywood, no source. */
+export const EDGE_OVER_DIAMETER = 1.5;
+
 /** How far off the moved line a corner of the outline may lie to count as on it: ten steps of the integer grid. mm */
-const ON_LINE = 1e-4;
+export const ON_LINE = 1e-4;
 
 /** From where to where, measured along the edge from a, the outline runs on the edge's line moved in by d. */
 function spanOnLine(outline: Ring, a: Point2, u: Point2, d: number): [number, number] | null {

@@ -54,7 +54,7 @@ function prism(s: Sleeve, from: number, to: number, low: Sleeve['outer'], high: 
 }
 
 /** The convex piece between two rings of as many corners. */
-function between(bottom: readonly Vec3[], top: readonly Vec3[]): ConvexPiece {
+export function between(bottom: readonly Vec3[], top: readonly Vec3[]): ConvexPiece {
   const n = bottom.length;
   const edges = bottom.flatMap((_, k): [number, number][] => [
     [k, (k + 1) % n],

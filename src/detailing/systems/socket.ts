@@ -3,6 +3,7 @@ import { materialNamed } from '../../model/catalogue/resolve.js';
 import type { Job } from '../../model/job/index.js';
 import type { HubPart, Socket } from '../../model/parts.js';
 import { commonSetback, leastSetback } from './half-strip.js';
+import { hardwareCover } from './hardware.js';
 import { hubShape } from './hub-shape.js';
 import { leastSetbacks } from './least-setbacks.js';
 import { clearance, LEAST_WALL, measuredSize, sleeveWall, swelling } from './printing.js';
@@ -16,8 +17,11 @@ import type { BarEnd, ClosePair, ConvexPiece, NodeSystem, Setbacks } from './sys
 /** What every hub of sleeves and spigots on a body has in common. */
 export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
   setbacks: socketSetbacks,
-  cover,
-  outline: (hub, slab, job) => outlineInSlab(cover(hub, job), hub.at, slab),
+  cover: (hub, job) => coverOf(hub, job).hub,
+  outline(hub, slab, job) {
+    const known = coverOf(hub, job);
+    return outlineInSlab([...known.hub, ...known.hardware], hub.at, slab);
+  },
   mass: (hub, job) =>
     hub.sockets.some((s) => s.setback === null)
       ? null
@@ -27,14 +31,21 @@ export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
 };
 
 /** Every panel at a hub asks for its cover. */
-const covers = new WeakMap<HubPart, { readonly job: Job; readonly pieces: readonly ConvexPiece[] }>();
+const covers = new WeakMap<HubPart, Cover>();
 
-function cover(hub: HubPart, job: Job): readonly ConvexPiece[] {
+interface Cover {
+  readonly job: Job;
+  readonly hub: readonly ConvexPiece[];
+  readonly hardware: readonly ConvexPiece[];
+}
+
+function coverOf(hub: HubPart, job: Job): Cover {
   const known = covers.get(hub);
-  if (known?.job === job) return known.pieces;
-  const pieces = sleeveCover(hubShape(hub, job));
-  covers.set(hub, { job, pieces });
-  return pieces;
+  if (known?.job === job) return known;
+  const shape = hubShape(hub, job);
+  const made: Cover = { job, hub: sleeveCover(shape), hardware: hardwareCover(shape) };
+  covers.set(hub, made);
+  return made;
 }
 
 /** A printed hub with one blind socket a strut, along the strut's true direction. */

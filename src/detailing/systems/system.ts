@@ -98,7 +98,7 @@ export interface NodeSystem {
   setbacks(sockets: readonly Socket[], job: Job): Setbacks;
   /** The hub covered by convex pieces: the body and every sleeve, never smaller than the solid. */
   cover(hub: HubPart, job: Job): readonly ConvexPiece[];
-  /** Polygons in the slab's plane, mm, that cover all of the hub between the slab's faces; they may overlap. */
+  /** Polygons in the slab's plane, mm, that cover the hub, its pins, screws and ties between the slab's faces; they may overlap. */
   outline(hub: HubPart, slab: Slab, job: Job): readonly (readonly Point2[])[];
   /** kg, within 10 % of the solid's; null where a setback is unknown. */
   mass(hub: HubPart, job: Job): number | null;
