@@ -1,6 +1,6 @@
 import { SCREW } from '../detailing/systems/clamp-parts.js';
-import { largest, type Sleeve } from '../detailing/systems/sleeve.js';
-import { add, addScaled, scale, type Vec3 } from '../maths/vec3.js';
+import type { Sleeve } from '../detailing/systems/sleeve.js';
+import { add, addScaled, dot, scale, type Vec3 } from '../maths/vec3.js';
 import { BODY, type HubSpace } from './hub-space.js';
 
 /** A round hole through a hub: a vent or a pin. Relative to the node, mm. */
@@ -18,26 +18,27 @@ export interface Channel {
 
 const AZIMUTHS = 24;
 /** A vent may rise towards the mouth to get past a neighbour, rad. */
-const RISES = [0, Math.PI / 6, Math.PI / 4] as const;
+const RISES = [0, Math.PI / 6, Math.PI / 4, Math.PI / 3] as const;
 const STEP = 0.5;
 /** How far a channel is carried past the last plastic, mm. */
 const PAST = 0.8;
 
 /**
- * The vent of a socket: from the bore at the floor, sideways to the open by the shortest way that keeps `web` from every other
- * strut's path; never through the node's middle, since it starts at the stop and runs outwards. null where there is no way.
+ * The vent of a socket: from the foot of the bore's side, outwards to the open by the shortest way that keeps `web` from every
+ * other strut's path; never through the node's middle, since it starts at the stop and runs outwards. It starts at the side, not
+ * in the middle of the floor: one that rises would come through the wall half-way up, where the glue is. null where there is no way.
  */
 export function ventOf(space: HubSpace, index: number, diameter: number, web: number): Channel | null {
   const s = space.sleeves[index]!;
   const radius = diameter / 2;
-  const from = scale(s.socket.direction, s.stop + radius + FLOOR_CLEAR);
+  const floor = scale(s.socket.direction, s.stop + radius + FLOOR_CLEAR);
   return shortest(
     RISES.flatMap((rise) =>
       azimuths(s).map((side) =>
         march(
           space,
           index,
-          from,
+          addScaled(floor, side, Math.max(0, halfTowards(s, side) - radius - FLOOR_CLEAR)),
           add(scale(side, Math.cos(rise)), scale(s.socket.direction, Math.sin(rise))),
           radius,
           web,
@@ -46,6 +47,10 @@ export function ventOf(space: HubSpace, index: number, diameter: number, web: nu
     ),
   );
 }
+
+/** From the bore's axis to its side, along a direction of `azimuths`. */
+const halfTowards = (s: Sleeve, side: Vec3): number =>
+  typeof s.inner === 'number' ? s.inner : Math.abs(dot(side, s.socket.y)) > 0.5 ? s.inner[0] : s.inner[1];
 
 /** Floor and vent must not share a tangent plane, mm. */
 const FLOOR_CLEAR = 0.05;
@@ -174,7 +179,7 @@ function march(
   web: number,
 ): Channel | null {
   const meets = new Set<number>();
-  let last = largest(space.sleeves[index]!.outer);
+  let last = 0;
   for (let t = 0; t <= 2 * space.reach; t += STEP) {
     const p = addScaled(from, direction, t);
     if (!space.clearOfPaths(p, radius + web, index)) return null;
