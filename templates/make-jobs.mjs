@@ -10,7 +10,7 @@ const TEMPLATES = {
   'table-model': {
     about: [
       'A model for a table, of beech dowels, printed hubs and clear acrylic.',
-      'Any truss file of yours may stand under "truss". Print nodes/gauge.stl first, then enter the clearance that fits.',
+      'Any truss file of yours may stand under "truss". Print the fit gauge first (nodes/gauge.pdf says how), then enter the clearance that fits.',
     ],
     job: {
       title: 'Table model',

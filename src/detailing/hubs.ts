@@ -8,7 +8,7 @@ import type { HubPart, Socket, StrutPart } from '../model/parts.js';
 import type { Section } from '../model/section.js';
 import type { Topology } from '../model/topology.js';
 import { nodeSystem } from './systems/index.js';
-import { clearance, measuredSize } from './systems/printing.js';
+import { clearance, isMeasured, measuredSize } from './systems/printing.js';
 import type { BarEnd, NodeSystem } from './systems/system.js';
 
 export interface DetailedHubs {
@@ -43,9 +43,7 @@ export function detailHubs(
     return found;
   };
 
-  const bored = sections.find((s) => s !== null);
-  if (bored && !job.nodes.clearanceMeasured)
-    findings.push(finding('clearance-not-measured', 'truss', { value: clearance(job, measuredSize(bored)) }));
+  findings.push(...clearanceFindings(sections, job));
 
   const drafts: Draft[] = [];
   topology.truss.nodes.forEach((node, i) => {
@@ -127,6 +125,16 @@ export const weighHubs = (topology: Topology, job: Job, hubs: readonly HubPart[]
     const system = hub.material === NO_MATERIAL ? null : nodeSystem(hub.system);
     return whole && system ? { ...hub, mass: system.mass(hub, job) } : hub;
   });
+
+/** Says once that clearances are starting values, and of which sections. */
+function clearanceFindings(sections: readonly (Section | null)[], job: Job): Finding[] {
+  const guessed = new Map<string, Section>();
+  for (const s of sections) if (s && !isMeasured(job, s)) guessed.set(s.name, s);
+  const first = [...guessed.values()][0];
+  if (!first) return [];
+  const about = { sections: [...guessed.keys()].join(', ') };
+  return [finding('clearance-not-measured', 'truss', { value: clearance(job, first, measuredSize(first)), about })];
+}
 
 interface Draft {
   readonly hub: HubPart;

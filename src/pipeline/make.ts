@@ -19,7 +19,7 @@ import { withSharedStops } from './shared-stops.js';
 import { lineageOf, type Since } from './since.js';
 import { writeBeds } from './stages/beds.js';
 import { writeDocuments } from './stages/documents.js';
-import { writeGauges } from './stages/gauge.js';
+import { sectionsByUse, writeGauges } from './stages/gauge.js';
 import { makeHubs } from './stages/hubs.js';
 import { writeSheetFiles } from './stages/sheet-files.js';
 import { planSheets } from './stages/sheets.js';
@@ -58,7 +58,15 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   );
 
   const hubs = await makeHubs(assessed, run, writer, lineage);
-  const gauges = await writeGauges(assessed.parts.struts, job, writer);
+  const fonts = await loadFonts();
+  const gauges = await writeGauges(
+    sectionsByUse(assessed.parts.struts.map((s) => s.section)),
+    job,
+    writer,
+    { prints: 'nodes/', beds: 'nodes/beds/', comb: 'panels/' },
+    assessed.parts.panels.length > 0,
+    fonts,
+  );
   const beds = await writeBeds(hubs.printable, job, writer);
   const bars = await planBars(
     assessed.parts.struts.filter((s) => !done.has(`strut ${s.mark}`)),
@@ -95,7 +103,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   };
 
   const cutting = await writeSheetFiles(records, writer);
-  await writeDocuments(records, await loadFonts(), writer, run);
+  await writeDocuments(records, fonts, writer, run);
   await writer.put('assembly.html', assemblyHtml(records, await loadPageCode(), contentKey(writer.files())));
 
   const manifest = manifestOf(records, hubs.made, {
@@ -103,7 +111,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     parts: [
       ...cut.map((p) => (p.kind === 'panel' ? { ...p, files: cutting.filesOf(p.mark) } : p)),
       ...hubs.parts,
-      ...gauges,
+      ...gauges.parts,
     ],
     files: writer.files(),
     withheld: [...hubs.withheld, ...cutting.withheld.filter((mark) => !done.has(`panel ${mark}`))],

@@ -1,20 +1,17 @@
-import { clearance, LEAST_WALL, measuredSize, sleeveWall } from '../detailing/systems/printing.js';
+import { LEAST_WALL, measuredSize, sleeveWall } from '../detailing/systems/printing.js';
 import { grow, type Half, largest, outlineOf } from '../detailing/systems/sleeve.js';
 import type { Vec3 } from '../maths/vec3.js';
 import type { Job } from '../model/job/index.js';
 import type { Section } from '../model/section.js';
 import type { ShapedPiece } from '../model/shaped.js';
 import { addLettering, type Lettering, type TextSurface, textSize } from './engraving.js';
+import { gaugeClearances, gaugeKind, gaugeSize, gaugeWalls } from './gauge-steps.js';
 import { Bench, loadKernel, type Manifold } from './kernel.js';
 import { layDown } from './lay-down.js';
 import { letteringsFor } from './mark-places.js';
 import { MeshBuilder } from './mesh-builder.js';
 import { sidesFor } from './placed.js';
 
-/** Steps of the ladder of clearances about the job's own, mm. */
-const STEPS = [-0.2, -0.1, 0, 0.1, 0.2] as const;
-/** Walls of the ladder of walls, as multiples of the process's least. */
-const WALLS = [0.5, 0.75, 1, 1.5, 2] as const;
 const PLATE = 2;
 const FLOOR = 2;
 const AISLE = 5;
@@ -22,16 +19,12 @@ const AISLE = 5;
 const [SHALLOWEST, DEEPEST, DEPTH] = [6, 15, 1.2] as const;
 /** A clearance is felt as well in a thinner wall than a socket's, mm. */
 const MOST_WALL = 2.5;
-
-/** The clearances that the gauge tries, mm, the job's own in the middle. */
-export function gaugeClearances(section: Section, job: Job): number[] {
-  const own = clearance(job, measuredSize(section));
-  return STEPS.map((step) => Math.max(0.05, Math.round((own + step) * 100) / 100));
-}
+/** A spigot's root inside its block, and air round the tube that is pushed over it, mm. */
+const [PEG_ROOT, TUBE_AIR] = [1, 1] as const;
 
 /**
- * The fit gauge of a section: sockets stepped in clearance, lying, at 45 degrees and upright, each with its clearance in hundredths
- * of a millimetre on top, then walls of several thicknesses and letters of several heights, on one plate. Printed before anything
+ * The fit gauge of a section: sockets stepped in clearance, lying, upright and at 45 degrees, each with its clearance in hundredths
+ * of a millimetre on top (of a tube that hubs go into: spigots instead of sockets), then walls of several thicknesses and letters of several heights, on one plate. Printed before anything
  * else in the hubs' own material; the value that fits goes back into the job. null where the kernel could not make it clean.
  */
 export async function shapeGauge(section: Section, job: Job): Promise<ShapedPiece | null> {
@@ -46,13 +39,16 @@ export async function shapeGauge(section: Section, job: Job): Promise<ShapedPiec
 
 function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
   const { Manifold } = bench.kernel;
-  const size = measuredSize(section);
+  const peg = gaugeKind(section, job) === 'spigot';
+  const size = gaugeSize(section, job);
   const clearances = gaugeClearances(section, job);
   const { shape } = section;
   const boreOf = (c: number): Half =>
-    shape.kind === 'rectangle' ? [(shape.width + c) / 2, (shape.height + c) / 2] : (size + c) / 2;
+    shape.kind === 'rectangle' ? [(shape.width + c) / 2, (shape.height + c) / 2] : (peg ? size - c : size + c) / 2;
   const wall = Math.min(sleeveWall(job, size), MOST_WALL);
-  const widest = grow(boreOf(clearances[clearances.length - 1]!), wall);
+  const widest = peg
+    ? Math.max(grow(boreOf(clearances[0]!), 0) as number, measuredSize(section) / 2 + TUBE_AIR)
+    : grow(boreOf(clearances[clearances.length - 1]!), wall);
   // Across: the pitch along x; up: the size along the other axis.
   const across = typeof widest === 'number' ? widest : widest[0];
   const up = typeof widest === 'number' ? widest : widest[1];
@@ -61,7 +57,7 @@ function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
     letteringsFor(job, PLATE, LEAST_WALL[job.nodes['process']])[0])!;
   const strip = lettering.capHeight + lettering.stroke + 2.5;
   const pitch = Math.max(2 * across, textSize('.00', lettering).width + 1.5);
-  const width = STEPS.length * pitch;
+  const width = clearances.length * pitch;
 
   const solids: Manifold[] = [];
   const cutters: Manifold[] = [];
@@ -80,18 +76,19 @@ function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
     const mesh = new MeshBuilder();
     const outline = outlineOf(half, sidesFor(largest(half)));
     mesh.loft([
-      { z: -length, outline },
-      { z: 1, outline },
+      { z: peg ? -PEG_ROOT : -length, outline },
+      { z: peg ? length : 1, outline },
     ]);
     const local = bench.hold(new Manifold(new bench.kernel.Mesh(mesh.mesh())), 'bore');
-    cutters.push(
+    (peg ? solids : cutters).push(
       bench.hold(
         local.transform([1, 0, 0, 0, v[0], v[1], v[2], 0, d[0], d[1], d[2], 0, at[0], at[1], at[2], 1]),
-        'bore',
+        peg ? 'spigot' : 'bore',
       ),
     );
   };
-  const label = (c: number): string => `.${String(Math.round(c * 100)).padStart(2, '0')}`;
+  const aisle = AISLE + (peg ? depth : 0);
+  const label = (c: number): string => c.toFixed(2).replace(/^0/, '');
 
   // Lying: mouths in the front face.
   let y = 0;
@@ -103,7 +100,7 @@ function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
     bore(boreOf(c), [x, y, PLATE + up], [0, -1, 0], depth);
     write(label(c), x, y + lyingDepth / 2, lyingHeight);
   });
-  y += lyingDepth + AISLE;
+  y += lyingDepth + aisle;
 
   // Upright: mouths on top, the strip of values behind.
   const uprightHeight = PLATE + depth + FLOOR;
@@ -113,7 +110,7 @@ function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
     bore(boreOf(c), [x, y + up, uprightHeight], [0, 0, 1], depth);
     write(label(c), x, y + 2 * up + strip / 2, uprightHeight);
   });
-  y += 2 * up + strip + AISLE;
+  y += 2 * up + strip + aisle;
 
   // At 45 degrees: mouths in a slope, the strip behind it.
   const slope = 2 * up * Math.SQRT1_2;
@@ -137,14 +134,13 @@ function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
     bore(boreOf(c), [x, y + slope / 2, toe + slope / 2], [0, -Math.SQRT1_2, Math.SQRT1_2], depth);
     write(label(c), x, y + slope + (back - slope) / 2, toe + slope);
   });
-  y += back + AISLE;
+  y += back + aisle;
 
   // Walls that stand by themselves, their thickness in hundredths in front.
   const least = LEAST_WALL[job.nodes['process']];
   const wallLength = 8;
-  WALLS.forEach((share, i) => {
+  gaugeWalls(job).forEach((t, i) => {
     const x = (i + 0.5) * pitch;
-    const t = Math.round(least * share * 100) / 100;
     write(t >= 1 ? t.toFixed(1) : label(t), x, y + strip / 2, PLATE);
     solids.push(box([x - t / 2, y + strip, PLATE - 0.5], [x + t / 2, y + strip + wallLength, PLATE + 10]));
   });
@@ -155,7 +151,11 @@ function gaugeSolid(bench: Bench, section: Section, job: Job): Manifold {
   let tallest = 0;
   for (const l of letteringsFor(job, PLATE, least)) {
     const { width: w, height: h } = textSize(LETTERS, l);
-    if (x + w > width - 1) break;
+    if (x > 2 && x + w > width - 1) {
+      x = 2;
+      y += tallest + 1.5;
+      tallest = 0;
+    }
     write(LETTERS, x + w / 2, y + (l.capHeight + l.stroke) / 2 + 1, PLATE, l);
     x += w + 3;
     tallest = Math.max(tallest, h);

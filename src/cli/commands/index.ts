@@ -5,6 +5,7 @@ import type { CliCommand } from './command.js';
 import { compare } from './compare.js';
 import { convert } from './convert.js';
 import { exportTruss } from './export.js';
+import { gauge } from './gauge.js';
 import { make } from './make.js';
 import { mend } from './mend.js';
 import { nest } from './nest.js';
@@ -17,6 +18,7 @@ export const commands: readonly CliCommand[] = [
   newJob,
   make,
   check,
+  gauge,
   nest,
   size,
   catalogue,

@@ -1,7 +1,7 @@
 import { convexHull3 } from '../../maths/convex-hull3.js';
 import type { Vec3 } from '../../maths/vec3.js';
 import type { HubPart, Socket } from '../../model/parts.js';
-import { measuredSize } from './printing.js';
+import { measuredSize, ownClearance } from './printing.js';
 import { areaOf, boreHalf, largest } from './sleeve.js';
 import { outlineInSlab } from './sleeve-cover.js';
 import { SLEEVE_HUB, sizeSocket } from './socket.js';
@@ -24,7 +24,7 @@ export const DRILLED_BALL_SYSTEM: NodeSystem = {
   socket(bar, job) {
     const plain = sizeSocket({ ...bar, detail: 'plain' }, job);
     const size = measuredSize(bar.section);
-    const bore = size + (job.nodes.clearance_mm ?? DRILL_OVER);
+    const bore = size + (ownClearance(job, bar.section) ?? DRILL_OVER);
     const web = job.nodes.gap_mm ?? Math.max(LEAST_WEB, WEB_SHARE * size);
     return { ...plain, bore, wall: web, detail: bar.detail };
   },

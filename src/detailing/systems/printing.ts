@@ -34,9 +34,20 @@ export function swelling(job: Job, material: Material | null, size: number): num
   return (rate / 100) * job.fit.moistureChange * size;
 }
 
-/** Clearance of a socket over the strut's size, both across, mm: the job's measured one, else by process and size. */
-export const clearance = (job: Job, size: number): number =>
-  job.nodes.clearance_mm ?? CLEARANCE.find(([upTo]) => size <= upTo)![1][job.nodes['process']];
+/** Clearance of a socket over the strut's size, both across, mm: what the section's gauge gave, else the job's, else by process and size. */
+export const clearance = (job: Job, section: Section, size: number): number =>
+  ownClearance(job, section) ?? CLEARANCE.find(([upTo]) => size <= upTo)![1][job.nodes['process']];
+
+/** The clearance that the job gives a section, mm; null: none, the process's starting value holds. */
+export const ownClearance = (job: Job, section: Section): number | null =>
+  gaugedClearance(job, section) ?? job.nodes.clearance_mm ?? null;
+
+const gaugedClearance = ({ nodes }: Job, { name }: Section): number | null =>
+  Object.hasOwn(nodes.clearances, name) ? nodes.clearances[name]! : null;
+
+/** Whether the job says that the section's clearance comes from a printed gauge. */
+export const isMeasured = (job: Job, section: Section): boolean =>
+  job.nodes.clearanceMeasured || gaugedClearance(job, section) !== null;
 
 /** Wall of a sleeve round a strut of a size, mm: the job's, else the process's good wall and at least a quarter of the strut. */
 export const sleeveWall = (job: Job, size: number): number =>

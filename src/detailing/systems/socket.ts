@@ -81,7 +81,7 @@ function plainSocket(bar: BarEnd, job: Job): Socket {
   const { shape } = section;
   const size = measuredSize(section);
   const material = materialNamed(job, section.material);
-  const grown = (side: number): number => side + clearance(job, side) + swelling(job, material, side);
+  const grown = (side: number): number => side + clearance(job, section, side) + swelling(job, material, side);
   const depthOf = (side: number): number => job.nodes.depth_mm ?? job.nodes.depthFactor * side;
   const common = {
     strut: bar.strut,

@@ -22,7 +22,7 @@ export const SPIGOT_SYSTEM: NodeSystem = {
 
 /** Spigot = the tube's inside less the process's clearance; as deep as a socket of its own size would be. */
 function tubeSpigot(bar: BarEnd, job: Job, inside: number): Socket {
-  const bore = inside - clearance(job, inside);
+  const bore = inside - clearance(job, bar.section, inside);
   return {
     ...sizeSocket(bar, job),
     bore,
@@ -50,7 +50,7 @@ function boltedPlate(bar: BarEnd, job: Job, width: number, height: number): Sock
   const endDistance = Math.max(END * diameter, deep < MODEL_SIZE ? 0 : LEAST_END);
   const end: BoltedEnd = {
     plate,
-    slot: plate + clearance(job, plate),
+    slot: plate + clearance(job, bar.section, plate),
     bolts: 2,
     diameter,
     spacing: SPACING * diameter,

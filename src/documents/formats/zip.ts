@@ -4,7 +4,7 @@ import { crc32, crc32Combine } from '../../maths/crc32.js';
 export type DeflateBlocks = (bytes: Uint8Array) => Uint8Array;
 
 /** An empty stored block that ends a deflate stream (RFC 1951, 3.2.4). */
-const LAST_BLOCK = Uint8Array.of(1, 0, 0, 0xff, 0xff);
+export const LAST_BLOCK = Uint8Array.of(1, 0, 0, 0xff, 0xff);
 
 /** A stretch of a file, compressed to blocks that others can follow. */
 export interface Packed {

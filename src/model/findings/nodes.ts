@@ -79,7 +79,7 @@ export const NODE_FINDINGS = {
     'truss',
     'mm',
     (f) =>
-      `the sockets' clearance of ${num(f.value, 2)} mm is a starting value and not measured; print the fit gauge, then set nodes.clearance_mm and nodes.clearanceMeasured`,
+      `the sockets' clearance for ${f.about?.['sections']} (${num(f.value, 2)} mm) is a starting value and not measured; print the fit gauge and enter what fits under nodes.clearances`,
   ),
   'strut-through-plate': entry(
     'stop',

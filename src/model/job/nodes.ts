@@ -18,10 +18,14 @@ export const nodesSchema = z
       .nonnegative()
       .optional()
       .describe('Diametral clearance over the largest measured rod; absent: by process and diameter.'),
+    clearances: z
+      .record(z.string(), z.number().nonnegative())
+      .default({})
+      .describe('Diametral clearance by section, as its own fit gauge gave it; counts as measured.'),
     clearanceMeasured: z
       .boolean()
       .default(false)
-      .describe('true once the fit gauge has been printed and its value entered.'),
+      .describe('true once the fit gauge has been printed and its value entered in `clearance_mm`.'),
     wall_mm: z
       .number()
       .positive()

@@ -12,7 +12,16 @@ export interface PrintablePiece extends PrintPiece {
 }
 
 /** Arranges the pieces on the job's printers and writes a 3MF file a bed. */
-export async function writeBeds(pieces: readonly PrintablePiece[], job: Job, writer: PackWriter): Promise<BedPlan> {
+export const writeBeds = (pieces: readonly PrintablePiece[], job: Job, writer: PackWriter): Promise<BedPlan> =>
+  writeBedFiles(pieces, job, 'nodes/beds/', writer);
+
+/** The same with `path` before each bed's mark. */
+export async function writeBedFiles(
+  pieces: readonly PrintablePiece[],
+  job: Job,
+  path: string,
+  writer: PackWriter,
+): Promise<BedPlan> {
   const plan = planBeds(pieces, job.printers);
   const byName = new Map(pieces.map((p) => [`${p.mark} ${p.piece}`, p]));
   for (const bed of plan.beds) {
@@ -20,7 +29,7 @@ export async function writeBeds(pieces: readonly PrintablePiece[], job: Job, wri
       const { object, box } = byName.get(`${mark} ${piece}`)!;
       return { object, depth: box[1] };
     };
-    await writer.put(`nodes/beds/${bed.mark}.3mf`, bedFile(bed, objectOf, job.title, job.date, deflateBlocks));
+    await writer.put(`${path}${bed.mark}.3mf`, bedFile(bed, objectOf, job.title, job.date, deflateBlocks));
   }
   return plan;
 }

@@ -1,10 +1,10 @@
 import { drawingToDxf } from '../../documents/formats/dxf.js';
 import { drawingToSvg } from '../../documents/formats/svg.js';
-import { kerfComb } from '../../documents/panels/kerf-comb.js';
 import { sheetDrawing } from '../../documents/panels/sheet-drawing.js';
 import type { PackRecords } from '../../documents/records.js';
 import { isWithheld } from '../../model/hold.js';
 import type { PackWriter } from '../pack-writer.js';
+import { writeKerfComb } from './gauge.js';
 
 export interface SheetFiles {
   /** Panels without a place in any machine file: unsound, or on no sheet. */
@@ -40,7 +40,7 @@ export async function writeSheetFiles(records: PackRecords, writer: PackWriter):
     await writer.put(paths[1]!, drawingToDxf(drawing));
     for (const p of sheet.placements) if (!withheld.has(p.mark)) files.set(p.mark, paths);
   }
-  if (parts.panels.length > 0) await writer.put('panels/kerf-comb.svg', drawingToSvg(kerfComb(job.cutter)));
+  if (parts.panels.length > 0) await writeKerfComb(job, writer, 'panels/');
   for (const p of parts.panels) if (!files.has(p.mark)) withheld.add(p.mark);
   return { withheld: [...withheld], filesOf: (mark) => files.get(mark) ?? [] };
 }
