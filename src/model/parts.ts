@@ -117,6 +117,8 @@ export interface PanelEdge {
   readonly bevel: number;
   /** From the strut's axis to the panel's edge, in the panel's plane, mm. */
   readonly inset: number;
+  /** Where the outline runs along this edge, in the panel's frame, mm; absent: corner cuts left nothing of it. */
+  readonly side?: readonly [Point2, Point2];
 }
 
 /** Right-handed axes of a panel: p = origin + x X + y Y; z to the panel's outside. */

@@ -24,11 +24,12 @@ export function strutDigests(strut: StrutPart): Digests {
   return { form: digestOf(form), digest: digestOf([form, strut.mark, strut.ends.map((e) => e.node)]) };
 }
 
-/** Outline and holes in the panel's own frame, material, thickness; labels: the mark and what is engraved. */
+/** Outline, holes and bevels in the panel's own frame, material, thickness; labels: the mark and what is engraved. */
 export function panelDigests(panel: PanelPart): Digests {
   if (!panel.makeable || panel.outline.length === 0) return NOTHING;
   const line = (points: readonly (readonly [number, number])[]) => points.map(([x, y]) => [round(x), round(y)]);
-  const form = [panel.material?.name, panel.thickness, line(panel.outline), panel.holes.map(line)];
+  const bevels = panel.edges.some((e) => e.bevel !== 0) ? [panel.edges.map((e) => round(e.bevel))] : [];
+  const form = [panel.material?.name, panel.thickness, line(panel.outline), panel.holes.map(line), ...bevels];
   return { form: digestOf(form), digest: digestOf([form, panel.mark, panel.engraving.map(line)]) };
 }
 

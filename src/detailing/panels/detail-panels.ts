@@ -1,5 +1,5 @@
 import { offsetRings } from '../../maths/polygon/boolean.js';
-import { signedArea, toPoints, toRing } from '../../maths/polygon/ring.js';
+import { type Ring, signedArea, toPoints, toRing } from '../../maths/polygon/ring.js';
 import { addScaled, dot, Z_AXIS } from '../../maths/vec3.js';
 import type { Finding } from '../../model/finding.js';
 import { finding } from '../../model/findings/index.js';
@@ -10,7 +10,7 @@ import { engrave } from './engraving.js';
 import { type FaceLoop, faceLoop } from './face-loop.js';
 import { flatFigure, foldedFigure } from './fold.js';
 import { panelHold, sayHold } from './holding.js';
-import { EDGE_OVER_DIAMETER, holesAlong, ON_LINE } from './holes.js';
+import { EDGE_OVER_DIAMETER, holesAlong, ON_LINE, spanOnLine } from './holes.js';
 import { isOutdoors, movementStrain } from './movement.js';
 import { type Patch, patchesOf } from './patches.js';
 import type { Seats } from './seats.js';
@@ -96,9 +96,12 @@ function detailPanel(setting: PanelSetting, face: Face, patch: Patch, report: (f
   if (mass !== null && mass > LIFT_KG) report(finding('panel-heavy', mark, { value: mass, limit: LIFT_KG }));
   for (const hazard of choice.material?.hazards ?? [])
     if (job.cutter.kind === 'laser') report(finding('panel-hazard', mark, { about: { hazard: HAZARDS[hazard] } }));
+  if (job.cutter.kind === 'laser' && seats.edges.some((e) => e.bevel !== 0))
+    report(finding('panel-bevel-by-hand', mark));
   return {
     ...emptyPanel(face, patch, choice, loop, seats.edges),
     frame: seatFrame(loop, choice, seats),
+    edges: withSides(outline, loop, seats),
     outline: toPoints(outline),
     holes: row.holes,
     // The score line is engraved with the marks: it is cut part of the way, never through.
@@ -125,6 +128,20 @@ const HAZARDS: Readonly<Record<string, string>> = {
 function seatFrame(loop: FaceLoop, choice: PanelChoice, seats: Seats): PanelPart['frame'] {
   const height = choice.seating === 'between' ? 0 : choice.seating === 'over' ? seats.low : seats.high;
   return { ...loop.frame, origin: addScaled(loop.frame.origin, loop.frame.z, height) };
+}
+
+/** The edges with the part of the outline that runs along each. */
+function withSides(outline: Ring, loop: FaceLoop, seats: Seats): readonly PanelEdge[] {
+  return seats.edges.map((edge, i) => {
+    const [a, b] = [loop.corners[i]!, loop.corners[(i + 1) % loop.corners.length]!];
+    const l = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
+    const u: Point2 = [(b[0] - a[0]) / l, (b[1] - a[1]) / l];
+    const d = seats.insets[i]!;
+    const span = spanOnLine(outline, a, u, d);
+    if (!span) return edge;
+    const at = (s: number): Point2 => [a[0] + u[0] * s - u[1] * d, a[1] + u[1] * s + u[0] * d];
+    return { ...edge, side: [at(span[0]), at(span[1])] };
+  });
 }
 
 function wordsOf(mark: string, loop: FaceLoop, seats: Seats): Parameters<typeof engrave>[2] {

@@ -67,7 +67,7 @@ export const EDGE_OVER_DIAMETER = 1.5;
 export const ON_LINE = 1e-4;
 
 /** From where to where, measured along the edge from a, the outline runs on the edge's line moved in by d. */
-function spanOnLine(outline: Ring, a: Point2, u: Point2, d: number): [number, number] | null {
+export function spanOnLine(outline: Ring, a: Point2, u: Point2, d: number): [number, number] | null {
   let span: [number, number] | null = null;
   const n = outline.length;
   const place = (i: number): [number, number] => {

@@ -1,3 +1,4 @@
+import type { PanelPart } from '../../model/parts.js';
 import { writeJson } from '../formats/json.js';
 import type { PackRecords } from '../records.js';
 
@@ -12,9 +13,18 @@ export function outlinesJson(records: PackRecords): Uint8Array {
           {
             outline: panel.outline,
             holes: panel.holes,
+            ...bevelsOf(panel),
             frame: { origin: panel.frame.origin, x: panel.frame.x, y: panel.frame.y, z: panel.frame.z },
           },
         ]),
     ),
   );
+}
+
+/** Tilt from square of every edge that has one, where the outline runs along it; the outline is the larger face's. */
+function bevelsOf(panel: PanelPart): object {
+  const bevels = panel.edges.flatMap((e) =>
+    e.bevel !== 0 && e.side ? [{ side: e.side, bevel_deg: (e.bevel * 180) / Math.PI }] : [],
+  );
+  return bevels.length > 0 ? { bevels } : {};
 }

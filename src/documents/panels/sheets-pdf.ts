@@ -145,7 +145,7 @@ function edgePages(paper: Paper, panels: readonly PanelPart[], units: Units): vo
   const area = paper.addSheet({
     title: 'Edges of the panels',
     instruction:
-      'One row an edge, anticlockwise seen from outside. Dihedral: the angle between the two panels through the inside. Bevel: from square, outer face larger where positive. Inset: from the strut’s axis to the panel.',
+      'One row an edge, anticlockwise seen from outside. Dihedral: the angle between the two panels through the inside. Bevel: from square, outer face larger where positive (cut UNDER), inner face larger where negative (cut at the TOP); the outline is the larger face’s. Inset: from the strut’s axis to the panel.',
   });
   const columns: Column<EdgeRow>[] = [
     { head: 'From', bold: true, value: (r) => r.edge.from },

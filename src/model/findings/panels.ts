@@ -78,6 +78,12 @@ export const PANEL_FINDINGS = {
     'mm',
     () => 'has no room for its mark; stick a label on its outer side before it leaves the machine',
   ),
+  'panel-bevel-by-hand': entry(
+    'note',
+    'panel',
+    '',
+    () => 'has bevelled edges, which a laser cuts square: its outline is that of the larger face, bevel it afterwards',
+  ),
   'panel-split': entry(
     'note',
     'panel',

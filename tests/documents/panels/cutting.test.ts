@@ -1,10 +1,14 @@
 import { describe, expect, it } from 'vitest';
 import { circle } from '../../../src/detailing/panels/corner-cut.js';
 import { type DrawingLine, straightLine } from '../../../src/documents/kit/drawing.js';
-import { sharedCuts, withLeadIn, withTabs } from '../../../src/documents/panels/cut-lines.js';
+import { sayBevel } from '../../../src/documents/panels/bevel-notes.js';
 import { cutterPath, kerfOffset, sayKerf } from '../../../src/documents/panels/kerf.js';
 import { kerfComb } from '../../../src/documents/panels/kerf-comb.js';
+import { withLeadIn } from '../../../src/documents/panels/lead-in.js';
+import { sharedCuts } from '../../../src/documents/panels/shared-cuts.js';
 import { sheetDrawing } from '../../../src/documents/panels/sheet-drawing.js';
+import { tabSpans } from '../../../src/documents/panels/tabs.js';
+import { withoutSpans } from '../../../src/documents/panels/without-spans.js';
 import { withArcs } from '../../../src/maths/polygon/arcs.js';
 import { perimeter, signedArea, toRing } from '../../../src/maths/polygon/ring.js';
 import { cutterSchema } from '../../../src/model/job/panels.js';
@@ -78,19 +82,30 @@ describe('arcs', () => {
 describe('cuts', () => {
   const outline = straightLine(square(0, 0, 100), true);
 
-  it('leave four tabs of the width asked for', () => {
-    const cuts = withTabs(outline, 3);
+  it('leave four tabs of the width asked for, the cutter’s width added to each gap', () => {
+    const cuts = withoutSpans(outline, tabSpans(outline, 3, 2));
     expect(cuts.length).toBe(4);
-    expect(lengthOf(cuts)).toBeCloseTo(400 - 12, 9);
-    expect(withTabs(straightLine(square(0, 0, 10), true), 3)).toHaveLength(1);
+    expect(cuts.every((c) => !c.closed)).toBe(true);
+    expect(lengthOf(cuts)).toBeCloseTo(400 - 4 * 5, 9);
+    const small = straightLine(square(0, 0, 10), true);
+    expect(withoutSpans(small, tabSpans(small, 3, 0))).toEqual([small]);
   });
 
-  it('begin in the waste: outside an outline, inside a hole', () => {
-    const first = withLeadIn(outline, 5, 'outside').corners[0]!;
+  it('begin in the waste: outside an outline, inside a hole, shorter or elsewhere where a neighbour is near', () => {
+    const free = (): boolean => true;
+    const first = withLeadIn(outline, 5, 'outside', free).corners[0]!;
     expect(first.x < 0 || first.y < 0 || first.x > 100 || first.y > 100).toBe(true);
-    const hole = withLeadIn(outline, 5, 'inside').corners[0]!;
+    const hole = withLeadIn(outline, 5, 'inside', free).corners[0]!;
     expect(hole.x > 0 && hole.y > 0 && hole.x < 100 && hole.y < 100).toBe(true);
-    expect(lengthOf([withLeadIn(outline, 5, 'outside')])).toBeCloseTo(405, 9);
+    expect(lengthOf([withLeadIn(outline, 5, 'outside', free)])).toBeCloseTo(405, 9);
+    // Only below the outline there is room, and only 3 mm of it.
+    const below = withLeadIn(outline, 5, 'outside', (a, b) => Math.max(a[1], b[1]) <= 1e-9 && a[1] >= -3);
+    expect(below.corners[0]!.y).toBeCloseTo(-2.5 * Math.SQRT1_2, 9);
+    expect(withLeadIn(outline, 5, 'outside', () => false)).toEqual(outline);
+    // Beside a tab the run comes square to the end of the cut.
+    const [open] = withoutSpans(outline, [{ a: [40, 0], b: [60, 0] }]);
+    const [from, start] = withLeadIn(open!, 5, 'outside', free).corners;
+    expect([from!.x, from!.y, start!.x, start!.y]).toEqual([60, -5, 60, 0]);
   });
 
   it('that two panels share are made once', () => {
@@ -101,6 +116,126 @@ describe('cuts', () => {
     ]);
     expect(lengthOf(shared)).toBeCloseTo(400 + 150 + 40, 6);
     expect(shared.at(-1)!.closed).toBe(true);
+  });
+
+  it('shared, with tabs and lead-ins: nothing twice, nothing through a tab, no run into a neighbour', () => {
+    const cutter = cutterSchema.parse({
+      kind: 'router',
+      kerf_mm: 4,
+      tool_mm: 4,
+      spacing_mm: 4,
+      sharedCuts: true,
+      tabs_mm: 5,
+      leadIn_mm: 8,
+    });
+    const panel = (mark: string): PanelPart =>
+      ({
+        mark,
+        outline: square(0, 0, 96),
+        holes: [],
+        engraving: [],
+        edges: [],
+        makeable: true,
+      }) as unknown as PanelPart;
+    const at = (mark: string, x: number, y: number) => ({ mark, x, y, rotation_deg: 0 });
+    // Four panels one tool apart, two by two, and one well apart.
+    const placements = [at('A', 20, 20), at('B', 120, 20), at('C', 20, 120), at('D', 120, 120), at('E', 260, 40)];
+    const drawing = sheetDrawing(
+      { mark: 's', sheet: 'S', width: 400, height: 240, material: 'm', thickness: 3, yield: 0, placements },
+      { width: 400, height: 240 },
+      new Map(placements.map((p) => [p.mark, panel(p.mark)])),
+      cutter,
+      't',
+    );
+    const cuts = drawing.layers[3]!.lines;
+    const segments = cuts.flatMap(({ corners, closed }) =>
+      corners.flatMap((c, i) => {
+        const d = corners[(i + 1) % corners.length]!;
+        return i + 1 < corners.length || closed ? [[c.x, c.y, d.x, d.y] as const] : [];
+      }),
+    );
+    // Upright lines at x = 18, 118, 218, 258, 358 and level ones: 12 sides of the block, 4 of the single panel, a gap of 9 each.
+    const among = (v: number, ...list: number[]): boolean => list.some((w) => Math.abs(v - w) < 1e-6);
+    const within = (v: number, low: number, high: number): boolean => v > low - 1e-6 && v < high + 1e-6;
+    const onPath = segments.filter(([a, b, c, d]) => {
+      const [x, y] = [(a + c) / 2, (b + d) / 2];
+      if (Math.abs(a - c) < 1e-6)
+        return (among(x, 18, 118, 218) && within(y, 18, 218)) || (among(x, 258, 358) && within(y, 38, 138));
+      return (among(y, 18, 118, 218) && within(x, 18, 218)) || (among(y, 38, 138) && within(x, 258, 358));
+    });
+    const cut = onPath.reduce((s, [a, b, c, d]) => s + Math.hypot(c - a, d - b), 0);
+    expect(cut).toBeCloseTo(16 * (100 - 9), 3);
+    // What is not on the path are the runs in: none comes nearer to a panel than half the tool.
+    const runs = segments.filter((s) => !onPath.includes(s));
+    expect(runs.length).toBeGreaterThan(0);
+    for (const [a, b, c, d] of runs)
+      for (const t of [0, 0.5, 0.9]) {
+        const [x, y] = [a + t * (c - a), b + t * (d - b)];
+        for (const p of placements) {
+          const out = Math.hypot(Math.max(p.x - x, 0, x - p.x - 96), Math.max(p.y - y, 0, y - p.y - 96));
+          expect(out).toBeGreaterThanOrEqual(2 - 1e-6);
+        }
+      }
+  });
+});
+
+describe('bevels', () => {
+  it('stand beside their edges on the layer that is not cut, and nowhere else', () => {
+    const bevelled = {
+      mark: 'P1',
+      outline: square(0, 0, 100),
+      holes: [],
+      engraving: [],
+      makeable: true,
+      edges: [
+        {
+          bevel: Math.PI / 8,
+          side: [
+            [0, 0],
+            [100, 0],
+          ],
+        },
+        {
+          bevel: 0,
+          side: [
+            [100, 0],
+            [100, 100],
+          ],
+        },
+      ],
+    } as unknown as PanelPart;
+    expect(sayBevel(Math.PI / 8)).toBe('BEVEL 22.5 UNDER');
+    expect(sayBevel(-Math.PI / 8)).toBe('BEVEL 22.5 TOP');
+    const draw = (panel: PanelPart) =>
+      sheetDrawing(
+        {
+          mark: 's',
+          sheet: 'S',
+          width: 200,
+          height: 200,
+          material: 'm',
+          thickness: 3,
+          yield: 0,
+          placements: [{ mark: 'P1', x: 20, y: 20, rotation_deg: 0 }],
+        },
+        { width: 200, height: 200 },
+        new Map([['P1', panel]]),
+        cutterSchema.parse({ kerf_mm: 0 }),
+        't',
+      ).layers.map((l) => l.lines);
+    const [keep, engraved, , outside] = draw(bevelled);
+    const [plain] = draw({ ...bevelled, edges: [] });
+    expect(engraved).toEqual([]);
+    expect(outside!.length).toBe(1);
+    const notes = keep!.slice(plain!.length);
+    expect(notes.length).toBeGreaterThan(10);
+    for (const { corners } of notes)
+      for (const c of corners) {
+        expect(c.x).toBeGreaterThan(20);
+        expect(c.x).toBeLessThan(120);
+        expect(c.y).toBeGreaterThan(20);
+        expect(c.y).toBeLessThan(30);
+      }
   });
 });
 
@@ -120,6 +255,7 @@ describe('sheet drawing', () => {
         [40, 40],
       ],
     ],
+    edges: [],
     makeable: true,
   } as unknown as PanelPart;
   const sheet = {
