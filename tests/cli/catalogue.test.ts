@@ -1,24 +1,16 @@
 import { expect, it } from 'vitest';
-import { catalogue } from '../../src/cli/commands/catalogue.js';
-import type { Terminal } from '../../src/cli/terminal/terminal.js';
 import { MATERIALS } from '../../src/model/catalogue/materials/index.js';
 import { SECTIONS } from '../../src/model/catalogue/sections/index.js';
+import { listen } from './listen.js';
 
-async function run(word: string | undefined, options: Record<string, unknown> = {}) {
-  let [result, talk] = ['', ''];
-  const terminal: Terminal = {
-    result: (s) => void (result += s),
-    talk: (s) => void (talk += s),
-    watched: false,
-    colour: false,
-    columns: 100,
-  };
-  const status = await catalogue.run({ arguments: word === undefined ? [] : [word], options, terminal });
-  return { status, result, talk };
+async function run(word?: string, ...flags: string[]) {
+  const heard = listen();
+  const status = await heard.strutwright('catalogue', ...(word === undefined ? [] : [word]), ...flags);
+  return { status, result: heard.said, talk: heard.talked };
 }
 
 it('lists every section and material, each value with its source', async () => {
-  const { sections, materials } = JSON.parse((await run(undefined, { json: true })).result);
+  const { sections, materials } = JSON.parse((await run(undefined, '--json')).result);
   expect(sections.length).toBe(SECTIONS.size);
   expect(materials.length).toBe(MATERIALS.size);
   for (const m of materials)

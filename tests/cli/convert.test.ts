@@ -1,35 +1,21 @@
 import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, beforeEach, expect, it } from 'vitest';
-import { run } from '../../src/cli/main.js';
+import { afterAll, expect, it } from 'vitest';
+import { listen } from './listen.js';
 
 const dir = mkdtempSync(join(tmpdir(), 'convert-'));
 afterAll(() => rmSync(dir, { recursive: true, force: true }));
 const at = (name: string): string => join(dir, name);
 
-let [said, talked] = ['', ''];
-beforeEach(() => {
-  [said, talked] = ['', ''];
-});
-const strutwright = (...argv: string[]): Promise<number> =>
-  run(argv, {
-    result: (text) => {
-      said += text;
-    },
-    talk: (text) => {
-      talked += text;
-    },
-    watched: false,
-    colour: false,
-    columns: 100,
-  });
+const heard = listen();
+const { strutwright } = heard;
 
 writeFileSync(at('a.obj'), 'v 0 0 0\nv 1 0 0\nv 0 0 1\ng legs\nl 1 2\nl 2 3\nl 3 1\n');
 
 it('asks for the unit and the up axis, both at once, and writes nothing', async () => {
   expect(await strutwright('convert', at('a.obj'), '-o', at('truss.json'))).toBe(2);
-  expect(talked).toMatch(
+  expect(heard.talked).toMatch(
     /a\.obj: does not say its unit: give --unit mm, cm, m, in or ft\n.*a\.obj: does not say which way is up/,
   );
   expect(readdirSync(dir)).toEqual(['a.obj']);
@@ -38,13 +24,12 @@ it('asks for the unit and the up axis, both at once, and writes nothing', async 
 it('writes a truss file and the memory of its marks, and tells what it did', async () => {
   const call = ['convert', at('a.obj'), '-o', at('truss.json'), '--unit', 'm', '--up', 'y', '--find-faces'];
   expect(await strutwright(...call)).toBe(0);
-  expect(said).toContain('3 nodes, 3 struts, 1 face.\n');
+  expect(heard.said).toContain('3 nodes, 3 struts, 1 face.\n');
   expect(JSON.parse(readFileSync(at('truss.json'), 'utf8')).members).toHaveLength(3);
   const first = readFileSync(at('truss.json'), 'utf8');
   // Once more over its own file: the same bytes, every mark kept.
-  said = '';
   expect(await strutwright(...call, '--json')).toBe(0);
-  expect(JSON.parse(said).marks).toEqual({ kept: 7, new: 0, withdrawn: [], prefixed: false });
+  expect(JSON.parse(heard.said).marks).toEqual({ kept: 7, new: 0, withdrawn: [], prefixed: false });
   expect(readFileSync(at('truss.json'), 'utf8')).toBe(first);
 });
 
@@ -57,5 +42,5 @@ it.each([
   [['convert', at('a.obj')], /required option/],
 ])('refuses %j', async (argv, words) => {
   expect(await strutwright(...argv)).toBe(2);
-  expect(talked).toMatch(words);
+  expect(heard.talked).toMatch(words);
 });

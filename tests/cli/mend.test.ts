@@ -1,30 +1,16 @@
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, beforeEach, expect, it } from 'vitest';
-import { run } from '../../src/cli/main.js';
+import { afterAll, expect, it } from 'vitest';
 import { NESTED_CUBES } from '../published/rankine-cases.js';
+import { listen } from './listen.js';
 
 const dir = mkdtempSync(join(tmpdir(), 'mend-'));
 afterAll(() => rmSync(dir, { recursive: true, force: true }));
 const at = (name: string): string => join(dir, name);
 
-let [said, talked] = ['', ''];
-beforeEach(() => {
-  [said, talked] = ['', ''];
-});
-const strutwright = (...argv: string[]): Promise<number> =>
-  run(argv, {
-    result: (text) => {
-      said += text;
-    },
-    talk: (text) => {
-      talked += text;
-    },
-    watched: false,
-    colour: false,
-    columns: 100,
-  });
+const heard = listen();
+const { strutwright } = heard;
 
 /** A cube in a cube in centimetres, turned a little and rounded to 0.001 cm, with a comment that must survive. */
 const c = NESTED_CUBES;
@@ -52,7 +38,7 @@ writeFileSync(
   at('job.json'),
   '{ "format": "strutwright-job/1", "title": "Cubes", "truss": "truss.json", "scale": 10, "forceScale": 2 }',
 );
-const report = () => JSON.parse(said);
+const report = () => JSON.parse(heard.said);
 
 it('mends a truss file: flat and in balance, everything else as it was', async () => {
   expect(await strutwright('mend', at('truss.json'), '-o', at('mended.json'), '--json')).toBe(0);
@@ -63,7 +49,6 @@ it('mends a truss file: flat and in balance, everything else as it was', async (
   const mended = readFileSync(at('mended.json'), 'utf8');
   expect(mended).toContain('// Drawn by nobody.');
   expect(mended).toContain('"units": "cm"');
-  said = '';
   expect(await strutwright('mend', at('mended.json'), '--json')).toBe(0);
   expect(report()).toMatchObject({ movements: [], before: { flatness_mm: expect.closeTo(0, 9) } });
 });
@@ -71,15 +56,16 @@ it('mends a truss file: flat and in balance, everything else as it was', async (
 it("measures movements as built, at the job's scale", async () => {
   expect(await strutwright('mend', at('truss.json'), '--json')).toBe(0);
   const alone = report().largestMove_mm;
-  said = '';
   expect(await strutwright('mend', at('job.json'), '--json')).toBe(0);
   expect(report().largestMove_mm).toBeCloseTo(10 * alone, 6);
 });
 
 it('refuses beyond the bound with exit status 1, names the node and writes nothing', async () => {
   expect(await strutwright('mend', at('truss.json'), '--bound', '0.0001', '-o', at('never.json'))).toBe(1);
-  expect(said).toMatch(/STOP The truss: mending would move N\d+ by 0\.00\d+ mm, more than the 0\.0001? mm allowed/);
-  expect(talked).toContain('Nothing was written.');
+  expect(heard.said).toMatch(
+    /STOP The truss: mending would move N\d+ by 0\.00\d+ mm, more than the 0\.0001? mm allowed/,
+  );
+  expect(heard.talked).toContain('Nothing was written.');
   expect(() => readFileSync(at('never.json'))).toThrow();
 });
 
@@ -90,5 +76,5 @@ it.each([
   [['mend', at('truss.json'), '--keep', 'N1,Q9'], /--keep names Q9/],
 ])('refuses %j', async (argv, words) => {
   expect(await strutwright(...argv)).toBe(2);
-  expect(talked).toMatch(words);
+  expect(heard.talked).toMatch(words);
 });

@@ -1,29 +1,15 @@
 import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterAll, beforeEach, expect, it } from 'vitest';
-import { run } from '../../src/cli/main.js';
+import { afterAll, expect, it } from 'vitest';
+import { listen } from './listen.js';
 
 const dir = mkdtempSync(join(tmpdir(), 'nest-'));
 afterAll(() => rmSync(dir, { recursive: true, force: true }));
 const at = (name: string): string => join(dir, name);
 
-let [said, talked] = ['', ''];
-beforeEach(() => {
-  [said, talked] = ['', ''];
-});
-const strutwright = (...argv: string[]): Promise<number> =>
-  run(argv, {
-    result: (text) => {
-      said += text;
-    },
-    talk: (text) => {
-      talked += text;
-    },
-    watched: false,
-    colour: false,
-    columns: 100,
-  });
+const heard = listen();
+const { strutwright } = heard;
 
 writeFileSync(
   at('panels.json'),
@@ -50,8 +36,8 @@ writeFileSync(
 
 it('lays outlines on sheets and writes them with a plan and a manifest, the same bytes again', async () => {
   expect(await strutwright('nest', at('panels.json'), '--sheet', '600x400', '-o', at('cut'))).toBe(0);
-  expect(said).toMatch(/5 panels on 1 sheets; no plan has fewer than 1/);
-  expect(said).toMatch(/Kerf 0.2 mm .* is compensated/);
+  expect(heard.said).toMatch(/5 panels on 1 sheets; no plan has fewer than 1/);
+  expect(heard.said).toMatch(/Kerf 0.2 mm .* is compensated/);
   expect(readdirSync(at('cut')).sort()).toEqual(['manifest.json', 'nesting.json', 'sheets']);
   const plan = JSON.parse(readFileSync(at('cut/nesting.json'), 'utf8'));
   expect(plan.sheets[0].placements.length).toBe(5);
@@ -62,7 +48,7 @@ it('lays outlines on sheets and writes them with a plan and a manifest, the same
 
 it('prints the plan alone, flags what fits nowhere, and leaves the kerf to the shop at 0', async () => {
   expect(await strutwright('nest', at('panels.json'), '--sheet', '160x110*2', '--kerf', '0', '--json')).toBe(1);
-  const plan = JSON.parse(said);
+  const plan = JSON.parse(heard.said);
   expect(plan.kerf.compensated).toBe('shop');
   expect(plan.unplaced).toEqual([
     { mark: 'B', quantity: 1, reason: 'too-large' },
@@ -72,12 +58,11 @@ it('prints the plan alone, flags what fits nowhere, and leaves the kerf to the s
 
 it('refuses wrong use and bad files in a line each', async () => {
   expect(await strutwright('nest', at('panels.json'))).toBe(2);
-  expect(talked).toMatch(/give a folder with -o/);
+  expect(heard.talked).toMatch(/give a folder with -o/);
   expect(await strutwright('nest', at('panels.txt'), '--json')).toBe(2);
   expect(await strutwright('nest', at('absent.dxf'), '--json')).toBe(2);
   expect(await strutwright('nest', at('panels.json'), '--sheet', '600', '--json')).toBe(2);
   writeFileSync(at('bow.json'), '{ "P": { "outline": [[0,0],[10,10],[10,0],[0,10]] } }');
-  talked = '';
   expect(await strutwright('nest', at('bow.json'), '--json')).toBe(2);
-  expect(talked).toMatch(/bow\.json: panels\[0\] P: its outline crosses or touches itself/);
+  expect(heard.talked).toMatch(/bow\.json: panels\[0\] P: its outline crosses or touches itself/);
 });
