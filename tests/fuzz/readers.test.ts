@@ -5,14 +5,14 @@ import { writeTrussJson } from '../../src/documents/truss/truss-json.js';
 import type { RawGeometry } from '../../src/model/raw-geometry.js';
 import { convertGeometry } from '../../src/readers/convert/convert.js';
 import { readMarkMemory, writeMarkMemory } from '../../src/readers/convert/mark-memory.js';
-import { type Fault, sayFault } from '../../src/readers/fault.js';
 import { readCsv, readPairForces } from '../../src/readers/geometry/csv.js';
 import { readDxf } from '../../src/readers/geometry/dxf.js';
 import { readObj } from '../../src/readers/geometry/obj.js';
 import { readPly } from '../../src/readers/geometry/ply.js';
 import { readJob } from '../../src/readers/job.js';
 import { readTruss } from '../../src/readers/truss.js';
-import { mutated, RUNS, SEED } from './mutate.js';
+import { holds, mustBeFaults, options } from './holds.js';
+import { mutated } from './mutate.js';
 
 const file = (path: string): string => readFileSync(new URL(path, import.meta.url), 'utf8');
 const TRUSS = file('../../templates/table-model/truss.json').slice(0, 6000);
@@ -33,31 +33,6 @@ const PLY =
 const DXF = file('../readers/geometry/fixtures/tower.dxf');
 const NODES = 'Node;X [m];Y [m];Z [m]\nA;0;0;0\nB;1,5;0;0\nC;0;2;0,1\n';
 const STRUTS = 'Name,From,To,Force (kN),Group\nS1,A,B,-1.25,ring\nS2,B,C,,\n"S3",C,A,3,"x"\n';
-
-const options = { numRuns: RUNS, seed: SEED };
-/** No single file may take longer than this, ms; a sound one takes a few. */
-const LONGEST = 5000;
-
-/** Every fault is one visible line of file:line:column: what: mend. */
-function mustBeFaults(faults: readonly Fault[]): void {
-  for (const fault of faults) {
-    expect(sayFault(fault)).toMatch(/^f:[1-9]\d*:[1-9]\d*: [^\p{Cc}\p{Zl}\p{Zp}]+: [^\p{Cc}\p{Zl}\p{Zp}]+$/u);
-    expect(sayFault(fault).length).toBeLessThan(1500);
-  }
-}
-
-function holds(source: string, read: (text: string) => { value: unknown; faults: readonly Fault[] }): void {
-  fc.assert(
-    fc.property(mutated(source), (text) => {
-      const begun = performance.now();
-      const { value, faults } = read(text);
-      expect(performance.now() - begun).toBeLessThan(LONGEST);
-      expect(value === null).toBe(faults.length > 0);
-      mustBeFaults(faults);
-    }),
-    options,
-  );
-}
 
 /** What was read can be converted, and what that writes is a sound file or has faults in words. */
 function convertible(geometry: RawGeometry | null): void {

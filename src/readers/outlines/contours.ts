@@ -13,13 +13,11 @@ const SAME = 1e-4;
  */
 export function panelsOf(contours: readonly (readonly Point2[])[]): ReadOutline[] {
   const rings = contours.map((c) => tidyRing(toRing(c), SAME)).filter((r) => r.length >= 6);
-  const holders = rings.map((ring) =>
-    rings
-      .map((_, k) => k)
-      .filter(
-        (k) =>
-          rings[k] !== ring && Math.abs(signedArea(rings[k]!)) > Math.abs(signedArea(ring)) && lies(ring, rings[k]!),
-      ),
+  const areas = rings.map((ring) => Math.abs(signedArea(ring)));
+  const boxes = rings.map(boxOf);
+  const all = rings.map((_, k) => k);
+  const holders = rings.map((ring, i) =>
+    all.filter((k) => areas[k]! > areas[i]! && meet(boxes[k]!, boxes[i]!) && lies(ring, rings[k]!)),
   );
   const outlines = rings.map((_, i) => i).filter((i) => holders[i]!.length % 2 === 0);
   return outlines.map((i, count) => ({
@@ -32,11 +30,33 @@ export function panelsOf(contours: readonly (readonly Point2[])[]): ReadOutline[
   }));
 }
 
+type Box = readonly [number, number, number, number];
+
+/** Least x and y, largest x and y. */
+function boxOf(ring: Ring): Box {
+  const box: [number, number, number, number] = [ring[0]!, ring[1]!, ring[0]!, ring[1]!];
+  for (let i = 0; i < ring.length; i += 2) {
+    box[0] = Math.min(box[0], ring[i]!);
+    box[1] = Math.min(box[1], ring[i + 1]!);
+    box[2] = Math.max(box[2], ring[i]!);
+    box[3] = Math.max(box[3], ring[i + 1]!);
+  }
+  return box;
+}
+
+const meet = (a: Box, b: Box): boolean => a[0] <= b[2] && b[0] <= a[2] && a[1] <= b[3] && b[1] <= a[3];
+
+/** Corners of a ring that are asked where they lie: with all of them two fine curves would take the product of their chords. */
+const ASKED = 99;
+
 /** Whether a ring lies in another: most of its corners do, so that a shared corner does not decide. */
 function lies(ring: Ring, inside: Ring): boolean {
-  let within = 0;
-  for (let i = 0; i < ring.length; i += 2) if (clearanceAt([inside], ring[i]!, ring[i + 1]!) > 0) within++;
-  return within > ring.length / 4;
+  const corners = ring.length / 2;
+  const step = Math.max(1, Math.ceil(corners / ASKED));
+  let [within, asked] = [0, 0];
+  for (let c = 0; c < corners; c += step, asked++)
+    if (clearanceAt([inside], ring[2 * c]!, ring[2 * c + 1]!) > 0) within++;
+  return within > asked / 2;
 }
 
 /** Ends nearer than this join, mm: what drawings leave open by rounding. */

@@ -1,11 +1,14 @@
 import type { Point2 } from '../../model/parts.js';
 import { CHORD_ERROR } from './outline.js';
 
-/** Points of an arc about `centre` from angle a by `sweep` rad, both ends included, chords within the chord error. */
+/** Chords of one curve at most: with these an arc of 200 m still keeps the chord error, and no file can use up the memory. */
+const MOST_CHORDS = 10_000;
+
+/** Points of an arc about `centre` from angle a by `sweep` rad, both ends included, chords within the chord error; not finite where the arc is not. */
 export function arcPoints(centre: Point2, rx: number, ry: number, a: number, sweep: number, turn = 0): Point2[] {
   const r = Math.max(rx, ry);
   const step = r > CHORD_ERROR ? 2 * Math.acos(1 - CHORD_ERROR / r) : Math.PI / 4;
-  const n = Math.max(2, Math.ceil(Math.abs(sweep) / Math.min(step, Math.PI / 8)));
+  const n = chords(Math.abs(sweep) / Math.min(step, Math.PI / 8), 2);
   const [c, s] = [Math.cos(turn), Math.sin(turn)];
   return Array.from({ length: n + 1 }, (_, k): Point2 => {
     const t = a + (sweep * k) / n;
@@ -35,7 +38,7 @@ export function cubicPoints(p0: Point2, p1: Point2, p2: Point2, p3: Point2, scal
     Math.hypot(p0[0] - 2 * p1[0] + p2[0], p0[1] - 2 * p1[1] + p2[1]),
     Math.hypot(p1[0] - 2 * p2[0] + p3[0], p1[1] - 2 * p2[1] + p3[1]),
   );
-  const n = Math.max(1, Math.ceil(Math.sqrt((0.75 * dd * scale) / CHORD_ERROR)));
+  const n = chords(Math.sqrt((0.75 * dd * scale) / CHORD_ERROR), 1);
   return Array.from({ length: n }, (_, k): Point2 => {
     const t = (k + 1) / n;
     const u = 1 - t;
@@ -44,3 +47,7 @@ export function cubicPoints(p0: Point2, p1: Point2, p2: Point2, p3: Point2, scal
     return [mix(0), mix(1)];
   });
 }
+
+/** A whole number of chords, at least `least`; the least where `wanted` is no number, so that there is a point to tell it by. */
+const chords = (wanted: number, least: number): number =>
+  Number.isNaN(wanted) ? least : Math.min(MOST_CHORDS, Math.max(least, Math.ceil(wanted)));

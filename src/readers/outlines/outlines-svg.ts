@@ -1,8 +1,10 @@
 import type { Point2 } from '../../model/parts.js';
 import { LineFaults } from '../geometry/text-lines.js';
+import { linePlaces } from '../line-places.js';
 import { chain, panelsOf } from './contours.js';
 import { arcPoints } from './flatten.js';
 import type { OutlinesReading } from './outline.js';
+import { withoutComments } from './svg-comments.js';
 import { pathContours, type SvgContour } from './svg-path.js';
 
 /** [a b c d e f]: x' = a x + c y + e, y' = b x + d y + f (SVG 1.1, 7.4). */
@@ -44,10 +46,10 @@ export function readSvgOutlines(text: string, name: string): OutlinesReading {
   const stack: { name: string; matrix: Matrix; seen: boolean }[] = [];
   let root: Matrix | null = null;
   let scale = 1;
-  const body = text.replace(
-    /<!--[\s\S]*?-->|<\?[\s\S]*?\?>|<!DOCTYPE[^>[]*(\[[\s\S]*?\])?[^>]*>|<!\[CDATA\[[\s\S]*?\]\]>/g,
-    (s) => s.replace(/[^\n]/g, ' '),
-  );
+  const { body, unended } = withoutComments(text);
+  const places = linePlaces(body);
+  if (unended >= 0)
+    log.tell(places(unended).line, 'a comment or an instruction begins and does not end', 'export it again');
   for (const tag of body.matchAll(/<(\/?)([A-Za-z][\w:.-]*)((?:\s+[\w:.-]+\s*=\s*(?:"[^"]*"|'[^']*'))*)\s*(\/?)>/g)) {
     const element = tag[2]!.replace(/^svg:/, '');
     if (tag[1]) {
@@ -57,7 +59,7 @@ export function readSvgOutlines(text: string, name: string): OutlinesReading {
     const attributes = new Map(
       [...tag[3]!.matchAll(/([\w:.-]+)\s*=\s*(?:"([^"]*)"|'([^']*)')/g)].map((m) => [m[1]!, m[2] ?? m[3] ?? '']),
     );
-    const line = body.slice(0, tag.index).split('\n').length;
+    const { line } = places(tag.index);
     const above = stack.at(-1);
     if (element === 'svg' && !root) {
       const view = viewOf(attributes);
