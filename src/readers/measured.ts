@@ -1,7 +1,8 @@
-import { parse } from 'csv-parse/sync';
 import { nearest } from '../maths/nearest.js';
 import type { Vec3 } from '../maths/vec3.js';
 import { type Fault, quoted } from './fault.js';
+import { readTable } from './geometry/table.js';
+import { LineFaults } from './geometry/text-lines.js';
 
 /** What a table of measurements says; mm. */
 export interface MeasuredFile {
@@ -21,54 +22,36 @@ export function readMeasured(
   name: string,
   marks: { readonly struts: ReadonlySet<string>; readonly nodes: ReadonlySet<string> },
 ): { readonly measured: MeasuredFile | null; readonly faults: readonly Fault[] } {
-  const faults: Fault[] = [];
-  const fault = (line: number, what: string, mend: string): void =>
-    void faults.push({ file: name, line, column: 1, what, mend });
-  const semicolon = /^[^\n]*;/.test(text);
-  let rows: { record: string[]; info: { lines: number } }[] = [];
-  try {
-    rows = parse(text, {
-      bom: true,
-      delimiter: semicolon ? ';' : ',',
-      trim: true,
-      info: true,
-      relaxColumnCount: true,
-      skipEmptyLines: true,
-    }) as never;
-  } catch (error) {
-    fault(1, `is no table: ${(error as Error).message.split('\n')[0]}`, 'save it as comma-separated text');
-    return { measured: null, faults };
-  }
-  const header = rows[0]?.record.map((h) => h.toLowerCase()) ?? [];
+  const log = new LineFaults(name);
+  const fault = (line: number, what: string, mend: string): void => log.tell(line, what, mend);
+  const table = readTable(text, log);
+  if (!table) return { measured: null, faults: log.faults };
+  const header = table.columns.map((h) => h.trim().toLowerCase());
   const columns = [LENGTHS, NODES].find((c) => c.every((h) => header.includes(h)));
   if (!columns) {
     fault(1, 'its first line names neither mark,length_mm nor node,x_mm,y_mm,z_mm', 'name the columns so');
-    return { measured: null, faults };
+    return { measured: null, faults: log.faults };
   }
   const known = columns === LENGTHS ? marks.struts : marks.nodes;
   const lengths = new Map<string, number>();
   const nodes = new Map<string, Vec3>();
-  for (const { record, info } of rows.slice(1)) {
-    const [mark, ...numbers] = columns.map((c) => record[header.indexOf(c)] ?? '');
-    const values = numbers.map((n) => Number(semicolon ? n.replace(',', '.') : n));
+  for (const { cells, line } of table.rows) {
+    const [mark, ...numbers] = columns.map((c) => cells[header.indexOf(c)]?.trim() ?? '');
+    const values = numbers.map(table.number);
     if (!known.has(mark!)) {
       const near = nearest(mark!, known);
       fault(
-        info.lines,
+        line,
         `${quoted(mark!)} is no ${columns === LENGTHS ? 'strut' : 'node'} of the truss`,
         near ? `did you mean ${near}?` : 'use the marks of the cut list',
       );
-    } else if (
-      values.some((v, i) => !Number.isFinite(v) || numbers[i] === '') ||
-      (columns === LENGTHS && values[0]! <= 0)
-    ) {
-      fault(info.lines, `${quoted(numbers.join(', '))} is no measurement in mm`, 'give a number');
-    } else if (lengths.has(mark!) || nodes.has(mark!))
-      fault(info.lines, `${mark} is measured twice`, 'keep one line of it');
+    } else if (values.some(Number.isNaN) || (columns === LENGTHS && values[0]! <= 0)) {
+      fault(line, `${quoted(numbers.join(', '))} is no measurement in mm`, 'give a number');
+    } else if (lengths.has(mark!) || nodes.has(mark!)) fault(line, `${mark} is measured twice`, 'keep one line of it');
     else if (columns === LENGTHS) lengths.set(mark!, values[0]!);
     else nodes.set(mark!, values as unknown as Vec3);
   }
-  if (faults.length === 0 && lengths.size + nodes.size === 0)
+  if (log.faults.length === 0 && lengths.size + nodes.size === 0)
     fault(1, 'measures nothing: there is no line under its header', 'add a line for each part measured');
-  return { measured: faults.length === 0 ? { lengths, nodes } : null, faults };
+  return { measured: log.faults.length === 0 ? { lengths, nodes } : null, faults: log.faults };
 }

@@ -82,6 +82,13 @@ describe('a file that was damaged anywhere is read, or refused in words', () => 
       const { geometry, faults } = readDxf(text, 'f');
       return { value: geometry, faults };
     }));
+  it('a DXF file with blocks', () => {
+    const text = file('../readers/geometry/fixtures/blocks.dxf');
+    holds(text.slice(text.lastIndexOf('SECTION', text.indexOf('\nBLOCKS')) - 3), (damaged) => {
+      const { geometry, faults } = readDxf(damaged, 'f');
+      return { value: geometry, faults };
+    });
+  });
   it('a PLY file', () =>
     holds(PLY, (text) => {
       const { geometry, faults } = readPly(new TextEncoder().encode(text), 'f');

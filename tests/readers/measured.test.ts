@@ -33,4 +33,9 @@ describe('a table of measurements', () => {
     expect(read('').faults).toHaveLength(1);
     expect(read('mark,length_mm\n').faults).toHaveLength(1);
   });
+
+  it('a quotation mark in the wrong place is told without what stands beside it', () => {
+    const { faults } = read('=\u2028("x")mark,length_mm\nS01,450.2\n');
+    expect(faults.map((f) => f.what)).toEqual(['a cell has a quotation mark in the wrong place']);
+  });
 });

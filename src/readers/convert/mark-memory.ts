@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { markKey, markProblem } from '../../model/marks.js';
-import type { Fault } from '../fault.js';
+import { type Fault, quoted } from '../fault.js';
 import { parseJson } from '../json-document.js';
 import { inOrder } from '../order.js';
 import { checkSchema } from '../schema-faults.js';
@@ -36,7 +36,11 @@ export function readMarkMemory(
         markProblem(mark) ?? (seen.has(markKey(mark)) ? { what: 'stands twice', mend: 'remove one' } : null);
       if (problem)
         all.push(
-          document.fault(document.offset([part, mark], 'key'), `the mark "${mark}" ${problem.what}`, problem.mend),
+          document.fault(
+            document.offset([part, mark], 'key'),
+            `the mark ${quoted(mark)} ${problem.what}`,
+            problem.mend,
+          ),
         );
       seen.add(markKey(mark));
     }

@@ -1,5 +1,6 @@
-import { add, cross, isFinite3, normalise, scale, type Vec3 } from '../../maths/vec3.js';
+import { isFinite3, type Vec3 } from '../../maths/vec3.js';
 import { type DxfThing, numberOf } from './dxf-groups.js';
+import { planeOf } from './dxf-plane.js';
 import { plainNumber } from './text-lines.js';
 
 export interface Polyline {
@@ -22,7 +23,7 @@ export function lightPolyline(thing: DxfThing): Polyline | null {
     if (code === 20) points.push([x, plainNumber(text), elevation]);
     if (code === 42 && plainNumber(text) !== 0) bulges++;
   }
-  return finish(points.map(toWorld(thing)), (numberOf(thing, 70) & 1) === 1, bulges);
+  return finish(points.map(planeOf(thing)), (numberOf(thing, 70) & 1) === 1, bulges);
 }
 
 /** POLYLINE with its VERTEX entities: 2D, 3D (flag 8), polygon mesh (16) or polyface mesh (64). */
@@ -35,7 +36,7 @@ export function polyline(thing: DxfThing, vertices: readonly DxfThing[]): Polyli
   const real = vertices.filter((v) => !(numberOf(v, 70) & 16));
   const bulges = real.filter((v) => numberOf(v, 42) !== 0).length;
   const points = real.map(at);
-  return finish(flags & 8 ? points : points.map(toWorld(thing)), (flags & 1) === 1, bulges);
+  return finish(flags & 8 ? points : points.map(planeOf(thing)), (flags & 1) === 1, bulges);
 }
 
 function finish(points: readonly Vec3[], closed: boolean, bulges: number): Polyline | null {
@@ -69,16 +70,4 @@ function polygonMesh(thing: DxfThing, points: readonly Vec3[], flags: number): P
     for (let j = 0; j < (flags & 32 ? n : n - 1); j++)
       faces.push([at(i, j), at(i + 1, j), at(i + 1, j + 1), at(i, j + 1)]);
   return { points: [], closed: false, bulges: 0, faces };
-}
-
-/** Below this share of 1, |Nx| and |Ny| put the extrusion near world z (AutoCAD DXF reference, Arbitrary axis algorithm). */
-const NEAR_Z = 1 / 64;
-
-/** From the entity's plane to the world, by its extrusion direction (210, 220, 230) and the arbitrary axis algorithm. */
-function toWorld(thing: DxfThing): (p: Vec3) => Vec3 {
-  const z = normalise([numberOf(thing, 210), numberOf(thing, 220), numberOf(thing, 230, 1)]);
-  if (z[0] === 0 && z[1] === 0 && z[2] >= 0) return (p) => p;
-  const x = normalise(Math.abs(z[0]) < NEAR_Z && Math.abs(z[1]) < NEAR_Z ? cross([0, 1, 0], z) : cross([0, 0, 1], z));
-  const y = normalise(cross(z, x));
-  return (p) => add(add(scale(x, p[0]), scale(y, p[1])), scale(z, p[2]));
 }

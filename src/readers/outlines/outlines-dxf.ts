@@ -1,5 +1,6 @@
 import type { Point2 } from '../../model/parts.js';
 import { type DxfThing, dxfSections, numberOf, textOf } from '../geometry/dxf-groups.js';
+import { walkDxf } from '../geometry/dxf-walk.js';
 import { LineFaults, plainNumber } from '../geometry/text-lines.js';
 import { chain, panelsOf } from './contours.js';
 import { arcPoints, bulgePoints } from './flatten.js';
@@ -13,7 +14,7 @@ const KEEP_LAYER = 'DO-NOT-CUT';
 
 /**
  * Outlines of a DXF text file: closed LWPOLYLINE and POLYLINE with their bulges, CIRCLE, and LINE, ARC and open
- * polylines joined end to end. Text, points and what stands in paper space are left out and counted.
+ * polylines joined end to end; blocks opened. Text, points and what stands in paper space are left out and counted.
  */
 export function readDxfOutlines(text: string, name: string): OutlinesReading {
   const log = new LineFaults(name);
@@ -26,33 +27,19 @@ export function readDxfOutlines(text: string, name: string): OutlinesReading {
   const closed: Point2[][] = [];
   const open: Point2[][] = [];
   const count = (what: string, by = 1): void => void leftOut.set(what, (leftOut.get(what) ?? 0) + by);
-  const things = sections.get('ENTITIES') ?? [];
-  for (let i = 0; i < things.length; i++) {
-    const thing = things[i]!;
-    let vertices: DxfThing[] = [];
-    if (thing.type === 'POLYLINE') {
-      while (things[i + 1]?.type === 'VERTEX') vertices.push(things[++i]!);
-      if (things[i + 1]?.type === 'SEQEND') i++;
-      vertices = vertices.filter((v) => !(numberOf(v, 70) & 16));
-    }
-    if (numberOf(thing, 67) === 1) {
-      count(`${thing.type} in paper space`);
-      continue;
-    }
-    if (textOf(thing, 8) === KEEP_LAYER) {
-      count(`${thing.type} on ${KEEP_LAYER}`);
-      continue;
-    }
-    const drawn = contourOf(thing, vertices, scale);
-    if (drawn === null) {
-      if (thing.type !== '' && thing.type !== 'ENDSEC') count(thing.type);
-      continue;
-    }
-    const { points } = drawn;
+  walkDxf(sections, log, count, ({ thing, vertices, layer, place, scale: larger }) => {
+    if (layer === KEEP_LAYER) return count(`${thing.type} on ${KEEP_LAYER}`);
+    const real = vertices.filter((v) => !(numberOf(v, 70) & 16));
+    const drawn = contourOf(thing, real, scale * larger);
+    if (drawn === null) return count(thing.type);
+    const points = drawn.points.map(([x, y]): Point2 => {
+      const [px, py] = place([x / (scale * larger), y / (scale * larger), 0]);
+      return [px * scale, py * scale];
+    });
     if (!points.every((p) => Number.isFinite(p[0]) && Number.isFinite(p[1])))
       log.tell(thing.line, `${thing.type} has a coordinate that is not there or not finite`, 'export it again');
     else (drawn.closed ? closed : open).push(points);
-  }
+  });
   const joined = chain(open);
   if (joined.open > 0) count('open contour', joined.open);
   if (log.faults.length > 0) return { outlines: [], faults: log.faults, leftOut };

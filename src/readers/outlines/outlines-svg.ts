@@ -1,3 +1,4 @@
+import { isUsable } from '../../model/limits.js';
 import type { Point2 } from '../../model/parts.js';
 import { LineFaults } from '../geometry/text-lines.js';
 import { linePlaces } from '../line-places.js';
@@ -84,19 +85,14 @@ export function readSvgOutlines(text: string, name: string): OutlinesReading {
     if (!tag[4]) stack.push({ name: element, matrix, seen });
     if (!seen || element === 'svg' || element === 'g' || element === 'a') continue;
     const drawn = shapeOf(element, attributes, scale * Math.hypot(matrix[0], matrix[1]));
-    if (drawn === null) log.tell(line, `${element} has numbers that cannot be read`, 'export it again');
-    else if (drawn === undefined) leftOut.set(element, (leftOut.get(element) ?? 0) + 1);
-    else
-      for (const { points, closed } of drawn)
-        contours.push({
-          closed,
-          points: points.map(
-            ([x, y]): Point2 => [
-              matrix[0] * x + matrix[2] * y + matrix[4],
-              -(matrix[1] * x + matrix[3] * y + matrix[5]),
-            ],
-          ),
-        });
+    if (drawn === undefined) {
+      leftOut.set(element, (leftOut.get(element) ?? 0) + 1);
+      continue;
+    }
+    const placed = drawn?.map(({ points, closed }) => ({ closed, points: points.map((p) => place(matrix, p)) }));
+    // Numbers that are fine by themselves may be none in mm.
+    if (placed?.every((c) => c.points.every((p) => p.every(isUsable)))) contours.push(...placed);
+    else log.tell(line, `${element} has numbers that cannot be read`, 'export it again');
   }
   if (!root && log.faults.length === 0) log.tell(1, 'is not an SVG file', 'give a file with an svg element');
   if (log.faults.length > 0) return { outlines: [], faults: log.faults, leftOut };
@@ -106,6 +102,9 @@ export function readSvgOutlines(text: string, name: string): OutlinesReading {
   if (outlines.length === 0) log.tell(1, 'holds no closed contour', 'draw each panel as a closed path');
   return { outlines, faults: log.faults, leftOut };
 }
+
+/** A point in mm, y turned up. */
+const place = (m: Matrix, [x, y]: Point2): Point2 => [m[0] * x + m[2] * y + m[4], -(m[1] * x + m[3] * y + m[5])];
 
 /** From user units to mm. */
 function viewOf(attributes: ReadonlyMap<string, string>): Matrix | null {

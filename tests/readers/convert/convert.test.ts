@@ -210,6 +210,8 @@ describe('marks after a change of the drawing', () => {
     expect(readMarkMemory(writeMarkMemory(first.memory), 'm')).toEqual({ memory: first.memory, faults: [] });
     const bad = writeMarkMemory(first.memory).replace('"N001"', '"../N"');
     expect(readMarkMemory(bad, 'm').faults[0]!.what).toBe('the mark "../N" is not a mark');
+    const hidden = writeMarkMemory(first.memory).replace('"N001"', '"\u2028N001"');
+    expect(readMarkMemory(hidden, 'm').faults[0]!.what).toBe('the mark "\\u{2028}N001" is not a mark');
   });
 });
 

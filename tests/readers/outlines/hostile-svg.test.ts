@@ -35,3 +35,8 @@ it('a file of nothing but openings is refused soon', () => {
   for (const open of ['<!--', '<![CDATA[', '<!DOCTYPE[', '<?', '<a ', '<a b="'])
     expect(read(svg(open.repeat(300_000))).faults.length, open).toBeGreaterThan(0);
 });
+
+it('a viewBox that leaves no number finite is a fault', () => {
+  const text = svg('<circle cx="1" cy="1" r="1"/>').replace('0 0 200 100', '0 0 1e-320 100');
+  expect(read(text).faults.length).toBeGreaterThan(0);
+});
