@@ -1,6 +1,8 @@
 import type { Finding } from '../model/finding.js';
 import { sayFinding } from '../model/findings/index.js';
+import type { Utilisation } from '../model/solution.js';
 import { type ReciprocalReport, reciprocalReport } from '../statics/reciprocal/report.js';
+import { worstByStrut } from './member-rows.js';
 import type { Assessment } from './records.js';
 
 /** The object of check.json, `strutwright-check/1`. What was not computed is null and listed under `notChecked`. */
@@ -55,6 +57,7 @@ export interface FindingReport {
 
 export function checkReport(a: Assessment): CheckReport {
   const { truss } = a.topology;
+  const worst = worstByStrut(a.utilisations);
   return {
     format: 'strutwright-check/1',
     status: a.status,
@@ -73,7 +76,7 @@ export function checkReport(a: Assessment): CheckReport {
         }
       : null,
     displacements: displacementsOf(a),
-    members: truss.members.map((m, i) => memberReport(a, m.mark, i)),
+    members: truss.members.map((m, i) => memberReport(a, m.mark, i, worst.get(m.mark) ?? null)),
     faces: a.forms.map((f) => ({ mark: f.mark, flatness_mm: Number.isFinite(f.flatness) ? f.flatness : null })),
     reciprocal: reciprocalReport(a.topology, a.reciprocal),
     checked: a.checked,
@@ -106,12 +109,11 @@ function displacementsOf(a: Assessment): CheckReport['displacements'] {
   );
 }
 
-function memberReport(a: Assessment, mark: string, i: number): MemberReport {
+function memberReport(a: Assessment, mark: string, i: number, worst: Utilisation | null): MemberReport {
   const force: Record<string, number | null> = {};
   // The sources given and reciprocal have the one case that they claim; analysis has its load cases.
   if (a.forces && a.forces.source !== 'analysis') force['given'] = a.forces.values[i]!;
   else for (const c of a.solution?.cases ?? []) if (c.forces && c.kind !== 'given') force[c.name] = c.forces[i]!;
-  const worst = worstOf(a, mark);
   return {
     mark,
     force_N: force,
@@ -123,10 +125,3 @@ function memberReport(a: Assessment, mark: string, i: number): MemberReport {
     },
   };
 }
-
-const worstOf = (a: Assessment, mark: string): Assessment['utilisations'][number] | null => {
-  let worst: Assessment['utilisations'][number] | null = null;
-  for (const u of a.utilisations)
-    if (u.mark === mark && u.kind === 'strut' && (!worst || u.utilisation > worst.utilisation)) worst = u;
-  return worst;
-};

@@ -1,7 +1,7 @@
 import type { StrutPart } from '../model/parts.js';
 import type { MemberActions, Utilisation } from '../model/solution.js';
 import type { Member } from '../model/truss.js';
-import type { PackRecords } from './records.js';
+import type { Assessment, PackRecords } from './records.js';
 
 /** One strut with all that the lists say of it. Unknown is null. */
 export interface MemberRow {
@@ -17,8 +17,11 @@ export interface MemberRow {
   readonly envelope: { readonly least: number; readonly most: number } | null;
 }
 
+/** What the rows are made of: plans may be missing. */
+export type RowRecords = Assessment & Partial<Pick<PackRecords, 'stock'>>;
+
 /** The struts in the truss's order. */
-export function memberRows(records: PackRecords): MemberRow[] {
+export function memberRows(records: RowRecords): MemberRow[] {
   const worst = worstByStrut(records.utilisations);
   const bars = barsByStrut(records);
   return records.topology.truss.members.map((member, i) => ({
@@ -31,7 +34,8 @@ export function memberRows(records: PackRecords): MemberRow[] {
   }));
 }
 
-function worstByStrut(utilisations: readonly Utilisation[]): Map<string, Utilisation> {
+/** The largest utilisation of each strut itself, sockets apart. */
+export function worstByStrut(utilisations: readonly Utilisation[]): Map<string, Utilisation> {
   const worst = new Map<string, Utilisation>();
   for (const u of utilisations)
     if (u.kind === 'strut' && u.utilisation > (worst.get(u.mark)?.utilisation ?? Number.NEGATIVE_INFINITY))
@@ -39,7 +43,7 @@ function worstByStrut(utilisations: readonly Utilisation[]): Map<string, Utilisa
   return worst;
 }
 
-function barsByStrut(records: PackRecords): Map<string, string> {
+function barsByStrut(records: RowRecords): Map<string, string> {
   return new Map((records.stock?.bars ?? []).flatMap((bar) => bar.cuts.map((cut) => [cut.mark, bar.mark] as const)));
 }
 
@@ -50,7 +54,7 @@ function envelopeOf(actions: readonly MemberActions[]): MemberRow['envelope'] {
 }
 
 /** The largest force in N that the papers print. */
-export function largestForce(records: PackRecords): number {
+export function largestForce(records: Assessment): number {
   let largest = 0;
   for (const force of records.forces?.values ?? []) largest = Math.max(largest, Math.abs(force));
   for (const actions of records.solution?.actions ?? [])

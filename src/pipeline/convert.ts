@@ -28,6 +28,8 @@ export interface ConvertCall {
   readonly split: boolean;
   readonly findFaces: boolean;
   readonly panels: boolean;
+  /** Whether a truss file that stands at `out` is replaced. */
+  readonly replace: boolean;
 }
 
 export type ConvertOutcome =
@@ -52,7 +54,7 @@ export async function convertFile(call: ConvertCall): Promise<ConvertOutcome> {
       ...((call.unit ?? geometry.unit) ? [] : [`${call.file}: does not say its unit: give --unit mm, cm, m, in or ft`]),
       ...((call.up ?? geometry.up) ? [] : [`${call.file}: does not say which way is up: give --up y or --up z`]),
       ...tooMany(call.file, geometry),
-      ...(await mayReplace(call.out)),
+      ...(await mayReplace(call)),
     ];
     const forces = call.forces
       ? readPairForces(await readText(call.forces, MOST_BYTES), call.forces)
@@ -128,12 +130,12 @@ function tooMany(file: string, g: RawGeometry): string[] {
   return [...over('lines', g.lines.length, LIMITS.members), ...over('faces', g.loops.length, LIMITS.faces)];
 }
 
-/** An earlier truss file is replaced, nothing else is. */
-async function mayReplace(out: string): Promise<string[]> {
+/** An earlier truss file is replaced where that is asked for, nothing else ever is. */
+async function mayReplace({ out, replace }: ConvertCall): Promise<string[]> {
   const kind = await kindOf(out);
   if (kind === null) return [];
   const before = kind === 'file' ? await readText(out, MOST_BYTES).catch(() => '') : '';
-  return before.includes('"strutwright-truss/1"')
-    ? []
-    : [`${out}: is there and is not a truss file: choose another name`];
+  if (!before.includes('"strutwright-truss/1"'))
+    return [`${out}: is there and is not a truss file: choose another name`];
+  return replace ? [] : [`${out}: is there already: choose another name, or replace it with --force`];
 }

@@ -27,15 +27,22 @@ it('writes a truss file and the memory of its marks, and tells what it did', asy
   expect(heard.said).toContain('3 nodes, 3 struts, 1 face.\n');
   expect(JSON.parse(readFileSync(at('truss.json'), 'utf8')).members).toHaveLength(3);
   const first = readFileSync(at('truss.json'), 'utf8');
+  // Supports and loads that were written into it by hand would be lost: it is not replaced unasked.
+  expect(await strutwright(...call)).toBe(2);
+  expect(heard.talked).toMatch(/truss\.json: is there already: choose another name, or replace it with --force\n$/);
+  expect(readFileSync(at('truss.json'), 'utf8')).toBe(first);
   // Once more over its own file: the same bytes, every mark kept.
-  expect(await strutwright(...call, '--json')).toBe(0);
+  expect(await strutwright(...call, '--force', '--json')).toBe(0);
   expect(JSON.parse(heard.said).marks).toEqual({ kept: 7, new: 0, withdrawn: [], prefixed: false });
   expect(readFileSync(at('truss.json'), 'utf8')).toBe(first);
 });
 
 it.each([
   [['convert', at('none.obj'), '-o', at('t.json')], /none\.obj: is not there: check the path/],
-  [['convert', at('a.obj'), '-o', at('a.obj'), '--unit', 'm', '--up', 'z'], /a\.obj: is there and is not a truss file/],
+  [
+    ['convert', at('a.obj'), '-o', at('a.obj'), '--unit', 'm', '--up', 'z', '--force'],
+    /a\.obj: is there and is not a truss file/,
+  ],
   [['convert', at('a.obj'), '-o', at('t.json'), '--unit', 'yd'], /--unit is "yd": give one of/],
   [['convert', at('a.obj'), '-o', at('t.json'), '--merge', '-1'], /--merge is "-1": give a length/],
   [['convert', at('a.step'), '-o', at('t.json')], /is of an unknown kind: give a file that ends in/],

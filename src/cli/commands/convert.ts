@@ -9,6 +9,7 @@ export const convert: CliCommand = {
   examples: [
     'strutwright convert frame.dxf -o my-table/truss.json                       lines and faces of a drawing',
     'strutwright convert frame.obj -o truss.json --unit m --up y --find-faces   and the faces between its lines',
+    'strutwright convert frame-B.dxf -o my-table/truss.json --force             a new state of it: parts keep their marks',
     'strutwright convert nodes.csv --members struts.csv --unit mm --up z -o truss.json',
   ],
   define: (command) =>
@@ -22,6 +23,7 @@ export const convert: CliCommand = {
       .option('--panels', 'make every face a panel')
       .option('--members <csv>', 'struts by node names, beside a table of nodes')
       .option('--forces <csv>', 'forces by node pair: from, to, force')
+      .option('-f, --force', 'replace a truss file that is there; its supports, loads and cells are not kept')
       .option('--json', 'print the report as JSON on stdout'),
   async run({ arguments: [file], options, terminal }) {
     const wrong = wrongOptions(options);
@@ -42,6 +44,7 @@ export const convert: CliCommand = {
       split: options['split'] === true,
       findFaces: options['findFaces'] === true,
       panels: options['panels'] === true,
+      replace: options['force'] === true,
     });
     if ('faults' in outcome) {
       for (const fault of outcome.faults) terminal.talk(`${fault}\n`);

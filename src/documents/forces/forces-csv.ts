@@ -1,13 +1,21 @@
+import type { CaseResult } from '../../model/solution.js';
+import { GIVEN_CASE } from '../../model/truss.js';
 import { eulerLoad } from '../../strength/euler.js';
 import { type CsvColumn, DECIMALS, writeCsv } from '../formats/csv.js';
 import { type MemberRow, memberRows } from '../member-rows.js';
-import type { PackRecords } from '../records.js';
+import type { Assessment } from '../records.js';
 
-const effectiveLength = (r: MemberRow, records: PackRecords): number =>
+const effectiveLength = (r: MemberRow, records: Assessment): number =>
   r.part.axisLength * records.job.strength.effectiveLength;
 
+/** Given forces claim to balance the case `given`; where that was analysed too, it has a column of its own. */
+const nameOf = (c: CaseResult): string =>
+  c.kind === 'combination'
+    ? `combination ${c.name}`
+    : `case ${c.name}${c.name === GIVEN_CASE && c.kind !== 'given' ? ' analysed' : ''}`;
+
 /** forces.csv: one row a strut; then one column a load case or combination. */
-export function forcesCsv(records: PackRecords): Uint8Array {
+export function forcesCsv(records: Assessment): Uint8Array {
   const { force } = DECIMALS;
   const index = records.topology.memberIndex;
   const cases = [...(records.solution?.cases ?? []), ...(records.solution?.combinations ?? [])].filter((c) => c.forces);
@@ -26,7 +34,7 @@ export function forcesCsv(records: PackRecords): Uint8Array {
     { name: 'rule', value: (r) => r.worst?.rule ?? null },
     ...cases.map(
       (c): CsvColumn<MemberRow> => ({
-        name: `${c.kind === 'combination' ? 'combination' : 'case'} ${c.name} N`,
+        name: `${nameOf(c)} N`,
         decimals: force,
         value: (r) => c.forces![index.get(r.member.mark)!]!,
       }),
