@@ -2,6 +2,7 @@ import { expect, it } from 'vitest';
 import { MATERIALS } from '../../src/model/catalogue/materials/index.js';
 import { axialOnly } from '../../src/strength/actions.js';
 import { chi } from '../../src/strength/en1999/chi.js';
+import { effectiveThickness } from '../../src/strength/en1999/effective-thickness.js';
 import { EN_1999 } from '../../src/strength/en1999/index.js';
 
 const rules = { serviceClass: 1, factor: 3 } as const;
@@ -42,4 +43,25 @@ it('a tube of 25 x 2 mm, 1 m long: 5.25 kN of 6060-T6, 5.50 kN of 6082-T6', () =
 it('a wall thicker than its strength holds for is out of scope', () => {
   const shape = { kind: 'tube', diameter: 50, wall: 6 } as const;
   expect(EN_1999.outOfScope({ shape, material: MATERIALS.get('6082-T6')!, bucklingLength: 1000 })).toContain('6 mm');
+});
+
+it('a class 4 tube of 6060-T6, 150 x 1 mm, counts with 0.873 of its wall', () => {
+  // EN 1999-1-1 6.1.5 (6.12), class A (from memory), by hand: beta = 3 sqrt(150) = 36.742, epsilon = sqrt(250/140) = 1.336306, ratio 27.4955;
+  // rho = 32/27.4955 - 220/27.4955² = 1.163827 - 0.291005 = 0.872822.
+  expect(effectiveThickness(150, 1, { fo: 140, modulus: 70000, buckling: 'A' })).toBeCloseTo(0.872822, 5);
+  // The formula is 1 where class 3 ends: 32/22 - 220/484, 29/18 - 198/324.
+  const wallAt = (ratio: number): number => (ratio * Math.sqrt(250 / 140)) ** 2 / 9;
+  expect(effectiveThickness(wallAt(22.000001), 1, { fo: 140, modulus: 70000, buckling: 'A' })).toBeCloseTo(1, 6);
+  expect(effectiveThickness(wallAt(18.000001), 1, { fo: 140, modulus: 70000, buckling: 'B' })).toBeCloseTo(1, 6);
+  const member = {
+    shape: { kind: 'tube', diameter: 150, wall: 1 } as const,
+    material: MATERIALS.get('6060-T6')!,
+    bucklingLength: 100,
+  };
+  const squash = ((Math.PI / 4) * (150 ** 2 - 148 ** 2) * 140) / 1.1;
+  expect(EN_1999.judge(member, axialOnly('given', -0.5 * squash, 'short'), rules).utilisation).toBeCloseTo(
+    0.5 / 0.872822,
+    4,
+  );
+  expect(EN_1999.judge(member, axialOnly('given', 0.5 * squash, 'short'), rules).utilisation).toBeCloseTo(0.5, 6);
 });

@@ -5,52 +5,55 @@ import type { Frame, FrameMember } from '../../src/statics/frame/member.js';
 import { solveSecondOrder } from '../../src/statics/frame/second-order.js';
 import { prepareFrame, solveFrame } from '../../src/statics/frame/solve-frame.js';
 import { subdivide } from '../../src/statics/frame/subdivide.js';
-import { anyRotation, turned } from './motions.js';
+import { anyRotation, type Rotation, turned, turnedBack, turnedHeld } from './motions.js';
+import { holdEverywhere, type PublishedCheck, UNIT_SYSTEMS, type UnitSystem } from './unit-systems.js';
 
-const ID = [1, 0, 0, 0, 1, 0, 0, 0, 1];
-const ROTATIONS = [ID, anyRotation(1), anyRotation(2), anyRotation(3)].map((r, i) => [i, r] as const);
-// mm and N, or in and lb: the same numbers must follow from either.
+const ID: Rotation = [1, 0, 0, 0, 1, 0, 0, 0, 1];
+/** An invented round bar, N mm², N, N mm². */
 const EI = 2.1e9;
 const EA = 4.2e6;
 const GJ = 1.6e9;
+const ALL = [0, 1, 2, 3, 4, 5];
 
-function member(
-  points: readonly Vec3[],
-  a: number,
-  b: number,
-  r: readonly number[],
-  more: Partial<FrameMember> = {},
-): FrameMember {
-  const d = [0, 1, 2].map((k) => points[b][k] - points[a][k]);
-  const raw: Vec3 = [d[0], d[1], d[2]];
-  const length = Math.hypot(...d);
-  const x0 = normalise(raw);
-  const y0 = perpendicular(x0);
-  const [x, y] = [x0, y0].map((v) => turned(r, v)) as unknown as [Vec3, Vec3];
-  return {
-    ends: [a, b],
-    axes: {
-      x: [...x] as unknown as Vec3,
-      y: [...y] as unknown as Vec3,
-      z: cross([...x] as unknown as Vec3, [...y] as unknown as Vec3),
-    },
-    segments: [{ length, axial: EA, bendingY: EI, bendingZ: EI, torsion: GJ }],
-    springs: [],
-    ...more,
-  };
+interface Figure {
+  readonly points: readonly Vec3[];
+  readonly bars: readonly (readonly [number, number])[];
+  readonly held: (node: number) => readonly number[];
+  /** Segments and springs in mm and N; absent: one segment of the bar above. */
+  readonly shape?: (length: number) => Pick<FrameMember, 'segments' | 'springs'>;
 }
 
-function frameOf(
-  points: readonly Vec3[],
-  bars: readonly (readonly [number, number])[],
-  held: (node: number) => readonly number[],
-  r: readonly number[],
-): Frame {
+/** The figure, made in mm and N, in a system of units and turned. */
+function frameOf({ points, bars, held, shape }: Figure, s: UnitSystem, r: Rotation): Frame {
   const fixed = new Uint8Array(6 * points.length);
   points.forEach((_, i) => {
     for (const k of held(i)) fixed[6 * i + k] = 1;
   });
-  return { nodes: turned(r, points.flat()), members: bars.map(([a, b]) => member(points, a, b, r)), fixed };
+  const [ei, ea] = [s.newton * s.mm ** 2, s.newton];
+  const vec = (v: ArrayLike<number>): Vec3 => [v[0], v[1], v[2]];
+  const members = bars.map(([a, b]): FrameMember => {
+    const d = vec([0, 1, 2].map((k) => points[b][k] - points[a][k]));
+    const length = Math.hypot(...d);
+    const made = shape?.(length) ?? {
+      segments: [{ length, axial: EA, bendingY: EI, bendingZ: EI, torsion: GJ }],
+      springs: [],
+    };
+    const x0 = normalise(d);
+    const [x, y] = [x0, perpendicular(x0)].map((v) => vec(turned(r, v)));
+    return {
+      ends: [a, b],
+      axes: { x, y, z: cross(x, y) },
+      segments: made.segments.map((g) => ({
+        length: g.length * s.mm,
+        axial: g.axial * ea,
+        bendingY: g.bendingY * ei,
+        bendingZ: g.bendingZ * ei,
+        torsion: g.torsion * ei,
+      })),
+      springs: made.springs.map((k) => ({ at: k.at * s.mm, stiffness: k.stiffness * s.newton * s.mm })),
+    };
+  });
+  return { nodes: turned(r, points.flat(), s.mm), members, fixed: turnedHeld(r, fixed) };
 }
 
 function stiff(f: Frame) {
@@ -59,274 +62,313 @@ function stiff(f: Frame) {
   return p;
 }
 
-const ALL = [0, 1, 2, 3, 4, 5];
+/** Six freedoms a node of forces in N on some nodes, turned and in the system's units. */
+function forces(size: number, s: UnitSystem, r: Rotation, at: Readonly<Record<number, Vec3>>): Float64Array {
+  const out = new Float64Array(size);
+  for (const [i, v] of Object.entries(at)) out.set(turned(r, v, s.newton), 6 * Number(i));
+  return out;
+}
+const along = (v: ArrayLike<number>, d: Vec3): number => v[0] * d[0] + v[1] * d[1] + v[2] * d[2];
 
-describe('first-order frames of the handbooks', () => {
-  it.each(ROTATIONS)('an inclined cantilever sinks P L³ / 3EI square to its axis (rotation %i)', (_, r) => {
-    const l = 1000;
-    const points: Vec3[] = [
-      [0, 0, 0],
-      [600, 0, 800],
-    ];
-    const f = frameOf(points, [[0, 1]], (i) => (i === 0 ? ALL : []), r);
-    const square: Vec3 = [-0.8, 0, 0.6];
-    const nodal = new Float64Array(12);
-    nodal.set(
-      turned(
-        r,
-        square.map((v) => -50 * v),
-      ),
-      6,
-    );
-    const [s] = solveFrame(stiff(f), [{ nodal }]);
-    const tip = turned(r, square).reduce((sum, v, k) => sum + v * s.displacements[6 + k], 0);
-    expect(tip / (-(50 * l ** 3) / (3 * EI))).toBeCloseTo(1, 10);
-    expect(Math.hypot(...s.reactions.subarray(3, 6))).toBeCloseTo(50 * l, 5);
-    expect(s.residual).toBeLessThan(1e-14);
+/** An inclined cantilever under 50 N square to its axis. */
+function cantilever(s: UnitSystem, r: Rotation) {
+  const points: Vec3[] = [
+    [0, 0, 0],
+    [600, 0, 800],
+  ];
+  const f = frameOf({ points, bars: [[0, 1]], held: (i) => (i === 0 ? ALL : []) }, s, r);
+  const square: Vec3 = [0.8, 0, -0.6];
+  const [result] = solveFrame(stiff(f), [{ nodal: forces(12, s, r, { 1: [40, 0, -30] }) }]);
+  expect(result.residual).toBeLessThan(1e-14);
+  return { tip: along(turnedBack(r, result.displacements.subarray(6, 9)), square), result };
+}
+
+/** A beam of 2 m built in at both ends, in two members, under 0.3 N/mm down. */
+function fixedBeam(s: UnitSystem, r: Rotation) {
+  const points: Vec3[] = [
+    [0, 0, 0],
+    [1000, 0, 0],
+    [2000, 0, 0],
+  ];
+  const bars = [
+    [0, 1],
+    [1, 2],
+  ] as const;
+  const f = frameOf({ points, bars, held: (i) => (i === 1 ? [] : ALL) }, s, r);
+  const down = turned(r, [0, 0, (-0.3 * s.newton) / s.mm]);
+  const { x, y, z } = f.members[0].axes;
+  const line: [number, number, number] = [along(down, x), along(down, y), along(down, z)];
+  const members = new Map([0, 1].map((e) => [e, { line, freeElongation: 0 }]));
+  const [result] = solveFrame(stiff(f), [{ nodal: new Float64Array(18), members }]);
+  return { sag: -turnedBack(r, result.displacements.subarray(6, 9))[2], q: result.endForces };
+}
+
+/** A portal 3 m high, 4 m wide, fixed feet, 100 N along the beam, axial strain as good as none. */
+function portal(s: UnitSystem, r: Rotation) {
+  const points: Vec3[] = [
+    [0, 0, 0],
+    [0, 0, 3000],
+    [4000, 0, 3000],
+    [4000, 0, 0],
+  ];
+  const shape = (length: number) => ({
+    segments: [{ length, axial: 1e6 * EA, bendingY: EI, bendingZ: EI, torsion: GJ }],
+    springs: [],
   });
+  const bars = [
+    [0, 1],
+    [1, 2],
+    [3, 2],
+  ] as const;
+  const f = frameOf({ points, bars, held: (i) => (i === 0 || i === 3 ? ALL : []), shape }, s, r);
+  const nodal = forces(24, s, r, { 1: [50, 0, 0], 2: [50, 0, 0] });
+  return solveFrame(stiff(f), [{ nodal }])[0].endForces;
+}
+const bendingAt = (q: Float64Array, at: number): number => Math.hypot(q[at + 4], q[at + 5]);
 
-  it.each(ROTATIONS)(
-    'a fixed-end beam under a line load: wL²/12 at the ends, wL²/24 and wL⁴/384EI at the middle (rotation %i)',
-    (_, r) => {
-      const l = 2000;
-      const w = 0.3;
-      const points: Vec3[] = [
-        [0, 0, 0],
-        [l / 2, 0, 0],
-        [l, 0, 0],
-      ];
-      const f = frameOf(
-        points,
-        [
-          [0, 1],
-          [1, 2],
-        ],
-        (i) => (i === 1 ? [] : ALL),
-        r,
-      );
-      const axes = f.members[0].axes;
-      const down = turned(r, [0, 0, -1]);
-      const local = (a: Vec3): number => a.reduce((sum, v, k) => sum + v * down[k], 0) * w;
-      const line: [number, number, number] = [local(axes.x), local(axes.y), local(axes.z)];
-      const loads = new Map([0, 1].map((e) => [e, { line, freeElongation: 0 }]));
-      const [s] = solveFrame(stiff(f), [{ nodal: new Float64Array(18), members: loads }]);
-      const sag = down.reduce((sum, v, k) => sum + v * s.displacements[6 + k], 0);
-      expect(sag / ((w * l ** 4) / (384 * EI))).toBeCloseTo(1, 9);
-      expect(Math.hypot(s.endForces[4], s.endForces[5]) / ((w * l * l) / 12)).toBeCloseTo(1, 9);
-      expect(Math.hypot(s.endForces[10], s.endForces[11]) / ((w * l * l) / 24)).toBeCloseTo(1, 9);
-    },
-  );
-
-  it.each(ROTATIONS)('a portal with fixed feet under a sway force (rotation %i)', (_, r) => {
-    // Kleinlogel, Rigid Frame Formulas, frame with fixed feet, horizontal force at the beam, k = (I2/I1)(h/l), axial strain left out
-    // (from memory): foot moment P h (3k + 1) / (2 (6k + 1)), corner moment P h 3k / (2 (6k + 1)).
-    const [h, l, p] = [3000, 4000, 100];
+/** A cantilever of 1 m whose first 100 mm are four times as stiff and end in a spring, in one element or in four; 20 N at the tip. */
+function zoned(parts: number): PublishedCheck['value'] {
+  return (s, r) => {
     const points: Vec3[] = [
       [0, 0, 0],
-      [0, 0, h],
-      [l, 0, h],
-      [l, 0, 0],
+      [1000, 0, 0],
     ];
-    const f = frameOf(
-      points,
-      [
-        [0, 1],
-        [1, 2],
-        [3, 2],
-      ],
-      (i) => (i === 0 || i === 3 ? ALL : []),
-      r,
-    );
-    const rigidAxially = {
-      ...f,
-      members: f.members.map((m) => ({ ...m, segments: m.segments.map((s) => ({ ...s, axial: 1e6 * EA })) })),
-    };
-    const nodal = new Float64Array(24);
-    nodal.set(turned(r, [p / 2, 0, 0]), 6);
-    nodal.set(turned(r, [p / 2, 0, 0]), 12);
-    const [s] = solveFrame(stiff(rigidAxially), [{ nodal }]);
-    const k = h / l;
-    const moment = (e: number, at: number): number =>
-      Math.hypot(s.endForces[12 * e + at + 4], s.endForces[12 * e + at + 5]);
-    expect(moment(0, 0) / ((p * h * (3 * k + 1)) / (2 * (6 * k + 1)))).toBeCloseTo(1, 5);
-    expect(moment(0, 6) / ((p * h * 3 * k) / (2 * (6 * k + 1)))).toBeCloseTo(1, 5);
-  });
-
-  it('a cantilever with a stiff zone and a spring: tip = P (l³/3EI + zone + l²/k) (by hand)', () => {
-    const [zone, l, k, p] = [100, 900, 5e6, 20];
-    const points: Vec3[] = [
-      [0, 0, 0],
-      [zone + l, 0, 0],
-    ];
-    const f = frameOf(points, [[0, 1]], (i) => (i === 0 ? ALL : []), ID);
-    const m: FrameMember = {
-      ...f.members[0],
+    const shape = () => ({
       segments: [
-        { length: zone, axial: EA, bendingY: 4 * EI, bendingZ: 4 * EI, torsion: GJ },
-        { length: l, axial: EA, bendingY: EI, bendingZ: EI, torsion: GJ },
+        { length: 100, axial: EA, bendingY: 4 * EI, bendingZ: 4 * EI, torsion: GJ },
+        { length: 900, axial: EA, bendingY: EI, bendingZ: EI, torsion: GJ },
       ],
-      springs: [{ at: zone, stiffness: k }],
-    };
-    const nodal = new Float64Array(12);
-    nodal[8] = -p;
-    const bend = (from: number, to: number, ei: number): number => (to ** 3 - from ** 3) / (3 * ei);
-    const wanted = p * (bend(0, l, EI) + bend(l, l + zone, 4 * EI) + l ** 2 / k);
-    for (const parts of [1, 4]) {
-      const s = subdivide({ ...f, members: [m] }, parts);
-      const padded = new Float64Array(s.frame.fixed.length);
-      padded.set(nodal);
-      const [result] = solveFrame(stiff(s.frame), [{ nodal: padded }]);
-      expect(result.displacements[8] / -wanted).toBeCloseTo(1, 9);
-    }
-  });
+      springs: [{ at: 100, stiffness: 5e6 }],
+    });
+    const whole = frameOf({ points, bars: [[0, 1]], held: (i) => (i === 0 ? ALL : []), shape }, s, r);
+    const { frame } = subdivide(whole, parts);
+    const [result] = solveFrame(stiff(frame), [{ nodal: forces(frame.fixed.length, s, r, { 1: [0, 0, -20] }) }]);
+    return -turnedBack(r, result.displacements.subarray(6, 9))[2];
+  };
+}
+const bend = (from: number, to: number, ei: number): number => (to ** 3 - from ** 3) / (3 * ei);
 
-  it('names a node of a frame that nothing holds', () => {
+/** A shaft of 800 mm turned by 700 N mm at its free end. */
+const twist: PublishedCheck['value'] = (s, r) => {
+  const points: Vec3[] = [
+    [0, 0, 0],
+    [480, 0, 640],
+  ];
+  const f = frameOf({ points, bars: [[0, 1]], held: (i) => (i === 0 ? ALL : []) }, s, r);
+  const nodal = new Float64Array(12);
+  nodal.set(turned(r, [0.6, 0, 0.8], 700 * s.newton * s.mm), 9);
+  const [result] = solveFrame(stiff(f), [{ nodal }]);
+  return along(turnedBack(r, result.displacements.subarray(9, 12)), [0.6, 0, 0.8]);
+};
+
+// Any handbook of beams for cantilever, shaft and beam. Portal: Kleinlogel, Rigid Frame Formulas, frame with fixed feet, force at the
+// beam, k = (I2/I1)(h/l), axial strain left out (from memory): foot P h (3k + 1) / (2 (6k + 1)), corner P h 3k / (2 (6k + 1)).
+const K = 3000 / 4000;
+holdEverywhere('first-order frames of the handbooks', [
+  {
+    name: 'an inclined cantilever sinks P L³ / 3EI square to its axis',
+    wanted: (50 * 1000 ** 3) / (3 * EI),
+    dimension: 'length',
+    within: 1e-10,
+    turns: 'any',
+    value: (s, r) => cantilever(s, r).tip,
+  },
+  {
+    name: 'its foot holds P L',
+    wanted: 50 * 1000,
+    dimension: 'moment',
+    within: 1e-10,
+    turns: 'any',
+    value: (s, r) => Math.hypot(...cantilever(s, r).result.reactions.subarray(3, 6)),
+  },
+  {
+    name: 'a shaft turns by T L / GJ',
+    wanted: (700 * 800) / GJ,
+    dimension: 'number',
+    within: 1e-10,
+    turns: 'any',
+    value: twist,
+  },
+  {
+    name: 'a beam built in at both ends sags w L⁴ / 384EI',
+    wanted: (0.3 * 2000 ** 4) / (384 * EI),
+    dimension: 'length',
+    within: 1e-9,
+    turns: 'any',
+    value: (s, r) => fixedBeam(s, r).sag,
+  },
+  {
+    name: 'with w L² / 12 at its ends',
+    wanted: (0.3 * 2000 ** 2) / 12,
+    dimension: 'moment',
+    within: 1e-9,
+    turns: 'any',
+    value: (s, r) => bendingAt(fixedBeam(s, r).q, 0),
+  },
+  {
+    name: 'and w L² / 24 in its middle',
+    wanted: (0.3 * 2000 ** 2) / 24,
+    dimension: 'moment',
+    within: 1e-9,
+    turns: 'any',
+    value: (s, r) => bendingAt(fixedBeam(s, r).q, 6),
+  },
+  {
+    name: 'a portal with fixed feet under a sway force, moment at the foot',
+    wanted: (100 * 3000 * (3 * K + 1)) / (2 * (6 * K + 1)),
+    dimension: 'moment',
+    within: 1e-5,
+    turns: 'any',
+    value: (s, r) => bendingAt(portal(s, r), 0),
+  },
+  {
+    name: 'the same, moment at the corner',
+    wanted: (100 * 3000 * 3 * K) / (2 * (6 * K + 1)),
+    dimension: 'moment',
+    within: 1e-5,
+    turns: 'any',
+    value: (s, r) => bendingAt(portal(s, r), 6),
+  },
+  ...[1, 4].map(
+    (parts): PublishedCheck => ({
+      name: `a cantilever with a stiff zone and a spring in ${parts} elements: tip = P (l³/3EI + zone + l²/k), by hand`,
+      wanted: 20 * (bend(0, 900, EI) + bend(900, 1000, 4 * EI) + 900 ** 2 / 5e6),
+      dimension: 'length',
+      within: 1e-9,
+      turns: 'any',
+      value: zoned(parts),
+    }),
+  ),
+]);
+
+/** A strut of 1 m along z cut into elements; supports along the axes. */
+function strut(
+  parts: number,
+  bottom: readonly number[],
+  top: readonly number[],
+  s: UnitSystem,
+  r: Rotation,
+  shape?: Figure['shape'],
+) {
+  const points: Vec3[] = [
+    [0, 0, 0],
+    [0, 0, 1000],
+  ];
+  const one = { points, bars: [[0, 1]] as const, held: (i: number) => (i === 0 ? bottom : top) };
+  return subdivide(frameOf(shape ? { ...one, shape } : one, s, r), parts).frame;
+}
+const PIN = [0, 1, 2, 5];
+const ROLLER = [0, 1];
+
+/** Lowest load factor under a force of 1 N all along. */
+const lowest =
+  (parts: number, bottom: readonly number[], top: readonly number[], which = 0): PublishedCheck['value'] =>
+  (s, r) => {
+    const f = strut(parts, bottom, top, s, r);
+    const b = bucklingFactors(stiff(f), new Float64Array(parts).fill(-1), 2);
+    expect(b.sturm).toBe('agrees');
+    return b.factors[which];
+  };
+
+// Timoshenko and Gere, Theory of Elastic Stability, 2nd ed. 1961, section 2.1 for the exact loads; the figures of coarse meshes follow
+// from the consistent matrices and can be checked by hand for one element. Both planes bend alike: every root is double.
+const CRITICAL: readonly (readonly [string, readonly number[], readonly number[], number, number, number])[] = [
+  ['pin-pin, 1 element', PIN, ROLLER, 1, 12, 1e-7],
+  ['pin-pin, 2 elements', PIN, ROLLER, 2, 9.94385, 1e-6],
+  ['pin-pin, 4 elements', PIN, ROLLER, 4, 9.87466, 1e-6],
+  ['cantilever, 1 element', ALL, [], 1, 2.48596, 2e-6],
+  ['cantilever, 8 elements, π²/4', ALL, [], 8, Math.PI ** 2 / 4, 1e-5],
+  ['fixed-pinned, 1 element', ALL, ROLLER, 1, 30, 1e-7],
+  ['fixed-pinned, 2 elements', ALL, ROLLER, 2, 20.7088, 5e-6],
+  ['fixed-pinned, 8 elements, 20.1907', ALL, ROLLER, 8, 20.1907, 1e-3],
+  ['fixed-fixed, 2 elements', ALL, [0, 1, 3, 4, 5], 2, 40, 1e-7],
+  ['fixed-fixed, 8 elements, 4π²', ALL, [0, 1, 3, 4, 5], 8, 4 * Math.PI ** 2, 1e-3],
+  ['an Euler column in 8 elements, within 0.1 % of π²', PIN, ROLLER, 8, Math.PI ** 2, 1e-3],
+];
+holdEverywhere(
+  'buckling loads x L² / EI of a strut in elements',
+  CRITICAL.flatMap(([name, bottom, top, parts, wanted, within]): PublishedCheck[] => {
+    const check = { wanted: (wanted * EI) / 1000 ** 2, dimension: 'force' as const, within };
+    const turns = top.length === 0 ? ('any' as const) : ('quarter' as const);
+    // The factor is a number on a force of 1: in any system that force is one unit of it.
+    const at = (which: number) => lowest(parts, bottom, top, which);
+    return [
+      { name, ...check, turns, value: at(0) },
+      { name: `${name}, second plane`, ...check, turns, value: at(1) },
+    ];
+  }),
+);
+
+/** A strut of e0 = 2.5 mm initial bow under 0.6 of its critical force, in 8 elements. */
+function bowed(s: UnitSystem, r: Rotation) {
+  const [l, parts, e0] = [1000, 8, 2.5];
+  const f = strut(parts, PIN, ROLLER, s, r);
+  const critical = (Math.PI ** 2 * EI) / l ** 2;
+  const p = 0.6 * critical;
+  const nodal = forces(f.fixed.length, s, r, { 1: [0, 0, -p] });
+  const bow = new Float64Array(nodal.length);
+  const heights = Array.from({ length: parts + 1 }, (_, i) => turnedBack(r, f.nodes.subarray(3 * i, 3 * i + 3))[2]);
+  heights.forEach((h, i) => {
+    const z = h / s.mm;
+    bow.set(turned(r, [e0 * Math.sin((Math.PI * z) / l), 0, 0], s.mm), 6 * i);
+    bow.set(turned(r, [0, ((e0 * Math.PI) / l) * Math.cos((Math.PI * z) / l), 0]), 6 * i + 3);
+  });
+  const result = solveSecondOrder(stiff(f), { nodal }, new Float64Array(parts).fill(-p * s.newton), bow);
+  if (result.state !== 'stands') throw new Error(result.state);
+  expect(result.residual).toBeLessThan(1e-13);
+  const middle = heights.findIndex((h) => Math.abs(h / s.mm - l / 2) < 1e-6);
+  const more = turnedBack(r, result.displacements.subarray(6 * middle, 6 * middle + 3))[0];
+  const moment = Math.max(...f.members.map((_, e) => bendingAt(result.endForces, 12 * e + 6)));
+  return { more, moment };
+}
+const GROWN = 2.5 / (1 / 0.6 - 1);
+holdEverywhere('an imperfect pin-ended strut under 0.6 Pcr (Timoshenko and Gere 1961, section 1.10)', [
+  {
+    name: 'bows by e0 / (Pcr / P - 1) more',
+    wanted: GROWN,
+    dimension: 'length',
+    within: 5e-4,
+    turns: 'quarter',
+    value: (s, r) => bowed(s, r).more,
+  },
+  {
+    name: 'with P (e0 + bow) at its middle',
+    wanted: ((0.6 * Math.PI ** 2 * EI) / 1000 ** 2) * (2.5 + GROWN),
+    dimension: 'moment',
+    within: 5e-3,
+    turns: 'quarter',
+    value: (s, r) => bowed(s, r).moment,
+  },
+]);
+
+describe.each(UNIT_SYSTEMS)('states of a frame, in $name', (s) => {
+  it('names a node of a frame that nothing holds, or one end alone', () => {
     const points: Vec3[] = [
       [0, 0, 0],
       [300, 200, 100],
       [500, -100, 300],
     ];
-    const f = frameOf(
-      points,
-      [
-        [0, 1],
-        [1, 2],
-      ],
-      () => [],
-      ID,
-    );
-    expect(prepareFrame(f).state).toBe('mechanism');
-    const pinnedAtOneEnd = frameOf(
-      points,
-      [
-        [0, 1],
-        [1, 2],
-      ],
-      (i) => (i === 0 ? [0, 1, 2] : []),
-      anyRotation(5),
-    );
-    expect(prepareFrame(pinnedAtOneEnd).state).toBe('mechanism');
-  });
-});
-
-describe('second-order analysis', () => {
-  it('an imperfect pin-ended strut bows by e0 / (Pcr / P - 1) more, with P (e0 + bow) at its middle (Timoshenko and Gere 1961, section 1.10)', () => {
-    const [l, parts, e0] = [1000, 8, 2.5];
-    const points: Vec3[] = [
-      [0, 0, 0],
-      [0, 0, l],
-    ];
-    const one = frameOf(points, [[0, 1]], (i) => (i === 0 ? [0, 1, 2, 5] : [0, 1]), ID);
-    const cut = subdivide(one, parts);
-    const prepared = stiff(cut.frame);
-    const critical = (Math.PI ** 2 * EI) / l ** 2;
-    const p = 0.6 * critical;
-    const nodal = new Float64Array(cut.frame.fixed.length);
-    nodal[8] = -p;
-    const bow = new Float64Array(nodal.length);
-    const heights = Array.from({ length: parts + 1 }, (_, i) => cut.frame.nodes[3 * i + 2]);
-    heights.forEach((z, i) => {
-      bow[6 * i] = e0 * Math.sin((Math.PI * z) / l);
-      bow[6 * i + 4] = ((e0 * Math.PI) / l) * Math.cos((Math.PI * z) / l);
-    });
-    const s = solveSecondOrder(prepared, { nodal }, new Float64Array(parts).fill(-p), bow);
-    if (s.state !== 'stands') throw new Error(s.state);
-    const middle = heights.findIndex((z) => Math.abs(z - l / 2) < 1e-9);
-    const more = e0 / (critical / p - 1);
-    expect(s.displacements[6 * middle] / more).toBeCloseTo(1, 3);
-    const moments = cut.frame.members.map((_, e) => Math.hypot(s.endForces[12 * e + 10], s.endForces[12 * e + 11]));
-    expect(Math.max(...moments) / (p * (e0 + more))).toBeCloseTo(1, 2);
-    expect(s.residual).toBeLessThan(1e-14);
+    const bars = [
+      [0, 1],
+      [1, 2],
+    ] as const;
+    expect(prepareFrame(frameOf({ points, bars, held: () => [] }, s, ID)).state).toBe('mechanism');
+    const oneEnd = { points, bars, held: (i: number) => (i === 0 ? [0, 1, 2] : []) };
+    expect(prepareFrame(frameOf(oneEnd, s, anyRotation(5))).state).toBe('mechanism');
   });
 
-  it('says that a strut above its critical load buckles', () => {
-    const points: Vec3[] = [
-      [0, 0, 0],
-      [0, 0, 1000],
-    ];
-    const cut = subdivide(
-      frameOf(points, [[0, 1]], (i) => (i === 0 ? ALL : []), ID),
-      4,
-    );
-    const p = (1.02 * Math.PI ** 2 * EI) / 4e6;
-    const nodal = new Float64Array(cut.frame.fixed.length);
-    nodal[8] = -p;
-    const s = solveSecondOrder(
-      stiff(cut.frame),
-      { nodal },
-      new Float64Array(4).fill(-p),
-      new Float64Array(nodal.length),
-    );
-    expect(s.state).toBe('buckles');
-  });
-});
-
-describe('buckling loads x L² / EI of a strut in elements', () => {
-  // Timoshenko and Gere, Theory of Elastic Stability, 2nd ed. 1961, section 2.1 for the exact loads; the figures of coarse meshes follow
-  // from the consistent matrices and can be checked by hand for one element.
-  const strut = (
-    parts: number,
-    bottom: readonly number[],
-    top: readonly number[],
-    r: readonly number[],
-    scale: number,
-  ) => {
-    const l = 1000 * scale;
-    const points: Vec3[] = [
-      [0, 0, 0],
-      [0, 0, l],
-    ];
-    const one = frameOf(points, [[0, 1]], (i) => (i === 0 ? bottom : top), ID);
-    // Supports lie along the strut's own axes, so the frame is turned by quarter turns of its coordinates alone.
-    const cut = subdivide(one, parts).frame;
-    const back = {
-      ...cut,
-      nodes: turned(r, cut.nodes),
-      members: cut.members.map((m) => ({ ...m, axes: turnAxes(m.axes, r) })),
-    };
-    return { frame: back, l };
-  };
-  const turnAxes = (a: FrameMember['axes'], r: readonly number[]): FrameMember['axes'] => {
-    const t = (v: Vec3): Vec3 => [...turned(r, v)] as unknown as Vec3;
-    return { x: t(a.x), y: t(a.y), z: t(a.z) };
-  };
-  const pinBottom = [0, 1, 2, 5];
-  const roller = [0, 1];
-  const cases: readonly (readonly [string, readonly number[], readonly number[], number, number, number])[] = [
-    ['pin-pin, 1', pinBottom, roller, 1, 12, 6],
-    ['pin-pin, 2', pinBottom, roller, 2, 9.94385, 5],
-    ['pin-pin, 4', pinBottom, roller, 4, 9.87466, 5],
-    ['cantilever, 1', ALL, [], 1, 2.48596, 5],
-    ['fixed-pinned, 1', ALL, roller, 1, 30, 6],
-    ['fixed-pinned, 2', ALL, roller, 2, 20.7088, 4],
-    ['fixed-fixed, 2', ALL, [0, 1, 3, 4, 5], 2, 40, 6],
-  ];
-  it.each(cases)('%s', (_, bottom, top, parts, wanted, digits) => {
-    for (const scale of [1, 1 / 25.4]) {
-      const { frame, l } = strut(parts, bottom, top, ID, scale);
-      const b = bucklingFactors(stiff(frame), new Float64Array(parts).fill(-1), 2);
-      expect((b.factors[0] * l * l) / EI).toBeCloseTo(wanted, digits);
-      // Both planes bend alike: the root is double.
-      expect(b.factors[1] / b.factors[0]).toBeCloseTo(1, 8);
-      expect(b.sturm).toBe('agrees');
-    }
-  });
-
-  it('an Euler column in 8 elements comes within 0.1 % of π² EI / L², in any axes', () => {
-    const quarter = [0, 0, 1, 1, 0, 0, 0, 1, 0];
-    for (const [r, bottom, top] of [
-      [ID, [0, 1, 2, 5], [0, 1]],
-      [quarter, [0, 1, 2, 3], [1, 2]],
-    ] as const) {
-      const { frame, l } = strut(8, bottom, top, r, 1);
-      const b = bucklingFactors(stiff(frame), new Float64Array(8).fill(-1), 2);
-      expect((b.factors[0] * l * l) / EI / Math.PI ** 2).toBeCloseTo(1, 3);
-      expect(b.factors[0]).toBeGreaterThan((Math.PI ** 2 * EI) / (l * l));
+  it('a strut above its critical load buckles, in any axes', () => {
+    for (const r of [ID, anyRotation(4)]) {
+      const f = strut(4, ALL, [], s, r);
+      const p = (1.02 * Math.PI ** 2 * EI) / 4e6;
+      const nodal = forces(f.fixed.length, s, r, { 1: [0, 0, -p] });
+      const axial = new Float64Array(4).fill(-p * s.newton);
+      expect(solveSecondOrder(stiff(f), { nodal }, axial, new Float64Array(nodal.length)).state).toBe('buckles');
     }
   });
 
   it('a column in tension has no factor', () => {
-    const { frame } = strut(4, ALL, [], ID, 1);
-    expect(bucklingFactors(stiff(frame), new Float64Array(4).fill(1)).factors).toEqual([]);
+    const f = strut(4, ALL, [], s, anyRotation(6));
+    expect(bucklingFactors(stiff(f), new Float64Array(4).fill(1)).factors).toEqual([]);
   });
 });
