@@ -7,7 +7,7 @@ import { blockPoints, type Freedoms, gather, numberFreedoms, spread } from './fr
 import { barDirections, type PinFigure } from './pin-figure.js';
 
 /** Pivots below this share of their own diagonal entry: the stiffness is singular to working precision, its solutions are not to be trusted. */
-const SINGULAR_PIVOT = 1e-11;
+export const SINGULAR_PIVOT = 1e-11;
 
 export interface PinTruss extends PinFigure {
   /** E A of each bar, N; positive. */

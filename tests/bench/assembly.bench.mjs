@@ -5,7 +5,8 @@ import { planFitUp } from '../../dist/planning/fit-up/plan-fit-up.js';
 import { readJob } from '../../dist/readers/job.js';
 import { readTruss } from '../../dist/readers/truss.js';
 
-export const title = 'Order of building and fit-up: seconds of CPU';
+export const title =
+  'Order of building, sag at every step, and fit-up: seconds of CPU (order of 2,000 struts < 10, 10,000 samples on 500 struts < 5)';
 
 /** A square-on-square grid of n x n bays of 300 mm on its lower corners; 8 n² - 8 n + 4 struts and a little more. */
 export function grid(n) {
@@ -50,11 +51,13 @@ const cpu = (work) => {
 };
 
 export async function run(print) {
-  const { job } = readJob(
-    '{"format":"strutwright-job/1","title":"grid","truss":"t.json","analysis":{"buckling":false}}',
-    'job',
-  );
-  print('struts   assess    order  blocked   fit-up (10,000 samples)');
+  const jobOf = (joints) =>
+    readJob(
+      `{"format":"strutwright-job/1","title":"grid","truss":"t.json","analysis":{"buckling":false,"joints":"${joints}"}}`,
+      'job',
+    ).job;
+  const job = jobOf('pinned');
+  print('struts   assess    order  blocked  props   fit-up (10,000 samples)   order, rigid joints');
   for (const n of [8, 11, 16]) {
     const { truss } = readTruss(JSON.stringify(grid(n)), 'grid');
     const a = cpu(() => assess(truss, job));
@@ -62,8 +65,11 @@ export async function run(print) {
     const order = cpu(() => planAssembly(a.result));
     const fit = cpu(() => planFitUp(topology, parts, job));
     const blocked = order.result.plan.closing.length;
+    const props = order.result.plan.steps.reduce((sum, s) => sum + s.props.length, 0);
+    const stiff = assess(truss, jobOf('rigid'));
+    const rigid = cpu(() => planAssembly(stiff));
     print(
-      `${String(truss.members.length).padStart(6)} ${a.seconds.toFixed(2).padStart(8)} ${order.seconds.toFixed(2).padStart(8)} ${String(blocked).padStart(8)} ${fit.seconds.toFixed(2).padStart(8)}   chance ${fit.result?.chance}`,
+      `${String(truss.members.length).padStart(6)} ${a.seconds.toFixed(2).padStart(8)} ${order.seconds.toFixed(2).padStart(8)} ${String(blocked).padStart(8)} ${String(props).padStart(6)} ${fit.seconds.toFixed(2).padStart(8)}   chance ${fit.result?.chance}   ${rigid.seconds.toFixed(2)}`,
     );
   }
 }

@@ -1,6 +1,6 @@
 import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import { seededRandom } from '../random.js';
-import { type AnalyseOptions, analyse } from './analyse.js';
+import { type AnalyseOptions, type Analysis, analyse } from './analyse.js';
 import type { SparseMatrix } from './csc.js';
 import { diagonalOf, factorise } from './factorise.js';
 import { multiplySymmetric } from './multiply.js';
@@ -16,10 +16,12 @@ const ITERATIONS = 3;
 /**
  * The least eigenvalue of D^-1/2 A D^-1/2, D the diagonal of a positive semidefinite A, with its vector in A's unknowns:
  * how near A is to singular, whatever the units of its unknowns. Block inverse iteration with Ritz values.
+ * `known`: an analysis of A's pattern, where there is one.
  */
 export function leastScaledEigenvalue(
   lower: SparseMatrix,
   options: AnalyseOptions = {},
+  known?: Analysis,
 ): { readonly value: number; readonly vector: Float64Array } {
   const n = lower.columns;
   const root = diagonalOf(lower).map((d) => (d > 0 ? 1 / Math.sqrt(d) : 1));
@@ -28,7 +30,7 @@ export function leastScaledEigenvalue(
     for (let p = lower.starts[j]; p < lower.starts[j + 1]; p++) values[p] *= root[j] * root[lower.indices[p]];
   const scaled = { ...lower, values };
   const shifted = addToDiagonal(scaled, SHIFT);
-  const factor = factorise(analyse(shifted, options), shifted);
+  const factor = factorise(known ?? analyse(shifted, options), shifted);
   const random = seededRandom(1);
   let z: Float64Array[] = Array.from({ length: Math.min(BLOCK, n) }, () =>
     Float64Array.from({ length: n }, () => random() - 0.5),

@@ -22,6 +22,11 @@ export const assemblySchema = z
     lift_kg: z.number().positive().default(25).describe('What one person lifts.'),
     people: z.int().positive().default(2).describe('How many build it.'),
     springStrain: z.number().positive().default(0.004).describe('Largest strain of a strut that is sprung in.'),
+    sag: z
+      .number()
+      .positive()
+      .default(0.01)
+      .describe('Sag of what stands that calls for a prop, as a share of the mean strut length.'),
     spares: z.number().nonnegative().default(0.05).describe('Spare parts as a share, rounded up by kind.'),
   })
   .prefault({})

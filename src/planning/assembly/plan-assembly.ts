@@ -10,16 +10,9 @@ import { piecesOf } from '../../statics/analyse/figure.js';
 import { hasAccess } from './access.js';
 import { packBags, sparesOf } from './bags.js';
 import { benchUnits } from './bench-units.js';
-import { isHeld, orderPiece, type PieceOrder } from './search.js';
+import { Propper } from './props.js';
+import { orderPiece, type PieceOrder } from './search.js';
 import { type AssemblySetting, assemblySetting, type Link } from './setting.js';
-import { standsAs } from './stands.js';
-
-/** Largest deflection, mm, of what stands under its own weight; null where it cannot be computed. Nodes and struts by index. */
-export type Deflection = (
-  nodes: readonly number[],
-  struts: readonly number[],
-  props: readonly number[],
-) => number | null;
 
 export interface AssemblyInput {
   readonly topology: Topology;
@@ -30,9 +23,6 @@ export interface AssemblyInput {
   /** The bars bought, for the spares. */
   readonly bars?: readonly PlannedBar[];
 }
-
-/** Deflections are computed at most this many times in an order, evenly spread, so that time stays in bounds. */
-const DEFLECTIONS = 40;
 
 /**
  * The order of building: from the supports (or the job's start) upward, a hub with its struts a step, then the panels,
@@ -78,9 +68,7 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
   const hubOf = new Map(parts.hubs.map((h) => [h.mark, h]));
   const standing: Link[] = [...order.start.links];
   const nodes = [...order.start.nodes];
-  const propped = new Set<number>();
-  const steadied = new Set<number>();
-  const every = Math.max(1, Math.ceil((order.moves.length + 1) / DEFLECTIONS));
+  const propper = new Propper(setting, order.start.nodes);
   const glued = job.nodes.joint === 'glued';
 
   const push = (
@@ -89,30 +77,10 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
     entries: readonly StrutEntry[],
     last: boolean,
   ): void => {
-    const props = hubs.filter(
-      (n) => kind === 'hub' && !isHeld(setting, n, linksBetween(setting, n, standing)) && !isSupport(setting, n),
-    );
-    const release = [...propped].filter((n) => isHeld(setting, n, linksBetween(setting, n, standing)));
-    for (const n of release) propped.delete(n);
-    for (const n of props) propped.add(n);
-    const number = steps.length + 1;
-    const measured = last || number % every === 0;
-    const standsOn = (held: Iterable<number>) => standsAs(setting, nodes, standing, [...held], order.start.nodes);
-    let stands = measured ? standsOn([...propped, ...steadied]) : null;
-    // What is held by its sockets can still swing with all that stands: then the step's own hubs are propped as well,
-    // until the whole stands without those props.
-    if (stands === 'unstable') {
-      const more = hubs.filter((n) => !propped.has(n) && !steadied.has(n));
-      for (const n of more) steadied.add(n);
-      props.push(...more);
-      stands = standsOn([...propped, ...steadied]);
-    } else if (measured && steadied.size > 0 && standsOn(propped) !== 'unstable') {
-      release.push(...steadied);
-      steadied.clear();
-    }
+    const { props, release, stands } = propper.after(kind === 'hub' ? hubs : [], nodes, standing, last);
     const strutMass = new Map(parts.struts.map((s) => [s.mark, s.mass ?? 0]));
     steps.push({
-      number,
+      number: steps.length + 1,
       kind,
       hubs: hubs.map(mark),
       struts: entries,
@@ -120,7 +88,7 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
       props: props.map(mark),
       release: release.map(mark),
       hold_min: glued && entries.length > 0 ? job.assembly.hold_min : 0,
-      deflection_mm: typeof stands === 'number' ? stands : null,
+      deflection_mm: stands !== null && stands !== 'unstable' ? stands.most : null,
       unstable: stands === 'unstable',
       access: hubs.every((n) => {
         const hub = hubOf.get(mark(n));
@@ -147,16 +115,6 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
     push('hub', move.node >= 0 ? [move.node] : [], move.entries, i === order.moves.length - 1);
   });
 }
-
-const linksBetween = (setting: AssemblySetting, node: number, standing: readonly Link[]): readonly Link[] => {
-  const here = new Set(setting.linksAt[node]);
-  return standing.filter((l) => here.has(l));
-};
-
-const isSupport = (setting: AssemblySetting, node: number): boolean => {
-  const { truss } = setting.topology;
-  return truss.supports.some((s) => s.node === truss.nodes[node]!.mark && s.fixed.z);
-};
 
 /** One panel a step, the lowest first, each after all struts: what carries it stands by then. */
 function panelSteps(setting: AssemblySetting, forms: readonly FaceForm[], steps: AssemblyStep[]): void {

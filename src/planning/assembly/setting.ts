@@ -1,6 +1,8 @@
 import type { Job } from '../../model/job/index.js';
 import type { Parts, Socket } from '../../model/parts.js';
 import type { Topology } from '../../model/topology.js';
+import type { Sag, Standing } from '../../statics/analyse/standing.js';
+import { standingSeries } from '../../statics/analyse/standing-series.js';
 
 /** One strut as assembly sees it, by node index and strut index. */
 export interface Link {
@@ -27,6 +29,8 @@ export interface AssemblySetting {
   /** Links at each node, by node index. */
   readonly linksAt: readonly (readonly Link[])[];
   readonly hubMass: Float64Array;
+  /** Largest deflection, mm, of what stands under its own weight; see `standingSeries`. */
+  readonly deflection: (standing: Standing) => Sag | 'unstable' | null;
 }
 
 export function assemblySetting(topology: Topology, parts: Parts, job: Job): AssemblySetting {
@@ -60,7 +64,7 @@ export function assemblySetting(topology: Topology, parts: Parts, job: Job): Ass
   for (const link of links) for (const end of link.ends) linksAt[end]!.push(link);
   const hubMass = new Float64Array(topology.truss.nodes.length);
   for (const hub of parts.hubs) hubMass[topology.nodeIndex.get(hub.mark)!] = hub.mass ?? 0;
-  return { topology, job, parts, links, linksAt, hubMass };
+  return { topology, job, parts, links, linksAt, hubMass, deflection: standingSeries(topology, job, parts) };
 }
 
 /**

@@ -16,6 +16,12 @@ export interface Standing {
   readonly held: readonly number[];
 }
 
+/** Where what stands moves most under its own weight, mm, and the node by index. */
+export interface Sag {
+  readonly most: number;
+  readonly node: number;
+}
+
 /**
  * Largest displacement in mm of what stands under its own weight (no panels), on the supports that stand and on what else is
  * held. "unstable": it can move without straining; null: a stiffness is unknown.
@@ -25,7 +31,7 @@ export function standingDeflection(
   job: Job,
   parts: Parts,
   standing: Standing,
-): number | 'unstable' | null {
+): Sag | 'unstable' | null {
   const { truss } = whole;
   const marks = new Set(standing.nodes.map((n) => truss.nodes[n]!.mark));
   const members = standing.struts.map((s) => truss.members[s]!);
@@ -60,10 +66,13 @@ export function standingDeflection(
   if (model.kind === 'mechanism') return 'unstable';
   const weight = selfWeightCase(topology, job, here, NO_FACES);
   const { responses } = respond(model, topology, here, [weight]);
-  let most = 0;
+  let [most, at] = [0, 0];
   const d = responses[0]!.displacements;
-  for (let i = 0; i < d.length; i += 3) most = Math.max(most, Math.hypot(d[i]!, d[i + 1]!, d[i + 2]!));
-  return most;
+  for (let i = 0; i < d.length; i += 3) {
+    const size = Math.hypot(d[i]!, d[i + 1]!, d[i + 2]!);
+    if (size > most) [most, at] = [size, i / 3];
+  }
+  return { most, node: whole.nodeIndex.get(topology.truss.nodes[at]!.mark)! };
 }
 
 const NO_FACES: readonly FaceForm[] = [];

@@ -1,4 +1,5 @@
 import { fromTriplets, type SparseMatrix } from '../../maths/sparse/csc.js';
+import { elementSum } from '../../maths/sparse/element-sum.js';
 import type { Freedoms } from '../freedoms.js';
 import type { Frame } from './member.js';
 
@@ -41,34 +42,12 @@ export function frameSum(
   pattern: SparseMatrix,
   elementOf: (e: number) => Float64Array,
 ): (factors: ArrayLike<number>) => SparseMatrix {
-  const { starts, indices } = pattern;
-  const place = new Int32Array(78 * frame.members.length);
-  const value = new Float64Array(place.length);
-  const memberStarts = new Int32Array(frame.members.length + 1);
-  let at = 0;
-  const f = new Int32Array(12);
-  frame.members.forEach((m, e) => {
-    const k = elementOf(e);
-    for (let i = 0; i < 12; i++) f[i] = freedoms.of[6 * m.ends[i < 6 ? 0 : 1] + (i % 6)];
-    for (let i = 0; i < 12; i++)
-      for (let j = 0; j <= i; j++) {
-        if (f[i] < 0 || f[j] < 0 || k[12 * i + j] === 0) continue;
-        const [row, column] = [Math.max(f[i], f[j]), Math.min(f[i], f[j])];
-        let [low, high] = [starts[column], starts[column + 1] - 1];
-        while (low < high) {
-          const middle = (low + high) >> 1;
-          if (indices[middle] < row) low = middle + 1;
-          else high = middle;
-        }
-        place[at] = low;
-        value[at++] = k[12 * i + j];
-      }
-    memberStarts[e + 1] = at;
-  });
-  return (factors) => {
-    const values = new Float64Array(pattern.values.length);
-    for (let e = 0; e < frame.members.length; e++)
-      for (let p = memberStarts[e]; p < memberStarts[e + 1]; p++) values[place[p]] += factors[e] * value[p];
-    return { ...pattern, values };
-  };
+  return elementSum(
+    pattern,
+    frame.members.map((m, e) => ({ unknowns: memberFreedoms(m.ends, freedoms), matrix: elementOf(e) })),
+  );
 }
+
+/** The twelve freedoms of a member's ends. */
+export const memberFreedoms = (ends: readonly [number, number], freedoms: Freedoms): Int32Array =>
+  Int32Array.from({ length: 12 }, (_, i) => freedoms.of[6 * ends[i < 6 ? 0 : 1] + (i % 6)]);

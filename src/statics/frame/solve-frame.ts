@@ -10,9 +10,9 @@ import type { Frame, FrameMember } from './member.js';
 import { toGlobal, vectorToGlobal, vectorToLocal } from './rotate.js';
 
 /** Pivots below this share of their own diagonal entry call for a closer look. */
-const DOUBTFUL_PIVOT = 1e-6;
+export const DOUBTFUL_PIVOT = 1e-6;
 /** Least eigenvalue of the scaled stiffness below which the frame can move: rigid modes stay under 1e-16, flexible ones above 6e-10. */
-const SINGULAR = 1e-13;
+export const SINGULAR = 1e-13;
 
 /** Loads of one case on a frame. */
 export interface FrameLoads {
