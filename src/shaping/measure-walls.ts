@@ -50,9 +50,10 @@ export function measureWalls(
     let best: MeasuredWall | null = null;
     for (const share of SHARES) {
       const along = share * s.socket.depth;
+      const crossed = trianglesAcross(positions, triangles, near, d, dot(node, d) + s.stop + along);
       for (let k = 0; k < AZIMUTHS; k++) {
         const [start, out] = rayFrom(s, k, addScaled(node, d, s.stop + along), y, z);
-        const thickness = firstExit(positions, triangles, near, start, out);
+        const thickness = firstExit(positions, triangles, crossed, start, out);
         if (thickness === null || own.some((c) => onChannel(c, addScaled(start, out, thickness)))) continue;
         if (!best || thickness + START < best.thickness)
           best = { strut: s.socket.strut, thickness: thickness + START, along };
@@ -110,6 +111,18 @@ function trianglesNear(
   }
   return Uint32Array.from(near);
 }
+
+/** Of those triangles, the ones that the plane `d · x = level` meets: all rays of one share run in it. */
+function trianglesAcross(p: Float32Array, t: Uint32Array, near: Uint32Array, d: Vec3, level: number): Uint32Array {
+  const height = (corner: number) => p[corner]! * d[0] + p[corner + 1]! * d[1] + p[corner + 2]! * d[2] - level;
+  return near.filter((i) => {
+    const [a, b, c] = [height(3 * t[i]!), height(3 * t[i + 1]!), height(3 * t[i + 2]!)];
+    return Math.min(a, b, c) <= ON_PLANE && Math.max(a, b, c) >= -ON_PLANE;
+  });
+}
+
+/** mm; single precision of the mesh and the round-off of the sum above, many times over. */
+const ON_PLANE = 1e-3;
 
 /** Distance along a ray to where it leaves the solid; null where it starts outside or never leaves. Möller and Trumbore 1997. */
 function firstExit(p: Float32Array, t: Uint32Array, near: Uint32Array, start: Vec3, out: Vec3): number | null {
