@@ -37,10 +37,13 @@ export interface Assessment {
   readonly hold: readonly string[];
 }
 
+/** A piece without its mesh, which was written and dropped. */
+export type MadePiece = Omit<ShapedPiece, 'positions' | 'triangles'>;
+
 /** A hub as it was made: its pieces in print orientation and the files that hold them (none where they are withheld). */
 export interface MadeHub {
   readonly mark: string;
-  readonly pieces: readonly ShapedPiece[];
+  readonly pieces: readonly MadePiece[];
   readonly files: readonly string[];
 }
 

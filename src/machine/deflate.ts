@@ -1,4 +1,4 @@
-import { constants, deflateRawSync } from 'node:zlib';
+import { constants, deflateRawSync, inflateRawSync } from 'node:zlib';
 
 /**
  * Compresses bytes to whole deflate blocks that end on a byte boundary, none of them the last of its stream: such runs can be joined
@@ -6,3 +6,7 @@ import { constants, deflateRawSync } from 'node:zlib';
  */
 export const deflateBlocks = (bytes: Uint8Array): Uint8Array =>
   Uint8Array.from(deflateRawSync(bytes, { level: 6, finishFlush: constants.Z_SYNC_FLUSH }));
+
+/** The bytes of one run of such blocks. */
+export const inflateBlocks = (blocks: Uint8Array): Uint8Array =>
+  Uint8Array.from(inflateRawSync(blocks, { finishFlush: constants.Z_SYNC_FLUSH }));

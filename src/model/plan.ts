@@ -1,3 +1,5 @@
+import type { Point2 } from './parts.js';
+
 /** Bars with their cuts, lengths in mm, prices in the job's currency. */
 export interface StockPlan {
   readonly bars: readonly PlannedBar[];
@@ -80,6 +82,10 @@ export interface PlannedBed {
   readonly layers: number;
   /** volume / flow + layers x change, s; within about 30 %. */
   readonly time: number;
+  /** What the time is reckoned from: mm³/s, s a layer, mm a layer. */
+  readonly flow: number;
+  readonly layerChange: number;
+  readonly layer: number;
 }
 
 /** A piece on a bed: turned about z by 0 or 90 degrees about its own corner, then its box's lower corner stands at x, y. */
@@ -89,4 +95,11 @@ export interface BedItem {
   readonly x: number;
   readonly y: number;
   readonly turned: boolean;
+  /** Size as it lies before it is turned, mm. */
+  readonly box: readonly [number, number, number];
+  /** mm³ and kg */
+  readonly volume: number;
+  readonly mass: number;
+  /** Its outline from above in the bed's axes, anticlockwise, mm. */
+  readonly outline: readonly Point2[];
 }

@@ -10,7 +10,7 @@ import { VERSION } from '../model/version.js';
 import { gaugeClearances, gaugeSize } from '../shaping/gauge-steps.js';
 import { type LoadedJob, loadJob } from './load.js';
 import { packWriter, type WriteFile } from './pack-writer.js';
-import { sectionsByUse, writeGauges, writeKerfComb } from './stages/gauge.js';
+import { gaugeMarks, sectionsByUse, writeGauges, writeKerfComb } from './stages/gauge.js';
 
 /** What `gauge` is asked for. */
 export interface GaugeCall {
@@ -76,12 +76,13 @@ const usualJob = (): Job => jobSchema.parse({ format: 'strutwright-job/1', title
 
 /** What the gauges try, for a script: by section, mm. */
 export function gaugeJson({ job, sections }: GaugePlan): object {
+  const marks = gaugeMarks(sections);
   return {
     format: 'strutwright-gauge/1',
     process: job.nodes.process,
     gauges: sections.map((s, i) => ({
       section: s.name,
-      file: i === 0 ? 'gauge.stl' : `gauge-${s.name}.stl`,
+      file: `${marks[i]}.stl`,
       size_mm: gaugeSize(s, job),
       clearances_mm: gaugeClearances(s, job),
       job: { clearance_mm: clearance(job, s, gaugeSize(s, job)), measured: isMeasured(job, s) },

@@ -91,7 +91,9 @@ function totalsOf(a: Assessment, made: ReadonlyMap<string, MadeHub>): Totals {
     strut_mass_kg: sum(struts, (s) => s.mass ?? 0),
     node_mass_kg: sum(hubs, (h) => {
       const solid = made.get(h.mark);
-      return solid ? volumeOf(solid) * h.material.density * KG_PER_MM3 : (h.mass ?? 0);
+      // A drilled ball is turned, and what is printed is its guide.
+      const own = solid?.pieces.filter((p) => !p.piece.startsWith('guide-')) ?? [];
+      return own.length > 0 ? sum(own, (p) => p.volume) * h.material.density * KG_PER_MM3 : (h.mass ?? 0);
     }),
     panel_mass_kg: sum(panels, (p) => p.mass ?? 0),
     printed_volume_mm3: sum(made.values(), volumeOf),

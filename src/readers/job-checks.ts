@@ -1,5 +1,6 @@
 import { caseNameProblem } from '../model/marks.js';
 import { type Fault, quoted } from './fault.js';
+import { checkPrinters } from './job-printers.js';
 import { checkSections } from './job-sections.js';
 import type { JsonDocument } from './json-document.js';
 import { items, textOf } from './loose.js';
@@ -28,5 +29,5 @@ export function checkJob(document: JsonDocument): Fault[] {
       faults.push(document.fault(offset, `the case ${quoted(name)} stands twice`, 'rename one of them'));
     seen.add(name);
   });
-  return [...faults, ...checkSections(document)];
+  return [...faults, ...checkSections(document), ...checkPrinters(document)];
 }

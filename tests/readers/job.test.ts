@@ -72,3 +72,13 @@ it('a section, group or case may be called what the language has for itself', ()
   expect(job!.sections['constructor']).toBeUndefined();
   expect(job!.struts.groups['toString']).toBe('beech-6');
 });
+
+it('says that no printer prints by the process of the hubs', () => {
+  const text = (process: string): string =>
+    `{ "format": "strutwright-job/1", "title": "T", "truss": "t.json",\n  "nodes": { "process": "resin" },\n  "printers": [{ "process": "${process}" }] }`;
+  expect(readJob(text('resin'), 'job.json').faults).toEqual([]);
+  const { job, faults } = readJob(text('filament'), 'job.json');
+  expect(job).toBeNull();
+  expect(faults).toHaveLength(1);
+  expect(sayFault(faults[0]!)).toMatch(/^job\.json:3:.*no printer prints by resin/);
+});

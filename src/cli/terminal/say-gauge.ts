@@ -1,11 +1,13 @@
 import { isMeasured } from '../../detailing/systems/printing.js';
 import type { GaugePlan } from '../../pipeline/gauge.js';
+import { gaugeMarks } from '../../pipeline/stages/gauge.js';
 import { gaugeClearances } from '../../shaping/gauge-steps.js';
 
 /** What was made and what to do with it, one fact a line. */
 export function sayGauge({ job, sections }: GaugePlan, out: string): string {
+  const marks = gaugeMarks(sections);
   const lines = sections.map((s, i) => {
-    const file = i === 0 ? 'gauge.stl' : `gauge-${s.name}.stl`;
+    const file = `${marks[i]}.stl`;
     const values = gaugeClearances(s, job)
       .map((c) => c.toFixed(2))
       .join('  ');

@@ -8,6 +8,8 @@ export interface PackedObject extends Packed {
   readonly id: number;
   readonly name: string;
   readonly partNumber: string;
+  /** PNG of the object; null: none. */
+  readonly icon: Uint8Array | null;
 }
 
 /** One object of a bed and its place: the object is turned by 0 or 90 degrees about z, then moved. */
@@ -20,8 +22,10 @@ export interface BuildItem {
 
 const CORE = 'http://schemas.microsoft.com/3dmanufacturing/core/2015/02';
 const MODEL_PATH = '3D/3dmodel.model';
+const MODEL_RELATIONS = '3D/_rels/3dmodel.model.rels';
+const THUMBNAIL = 'http://schemas.openxmlformats.org/package/2006/relationships/metadata/thumbnail';
 
-/** A mesh as a named object with its part number. @param id unique on the bed, at least 1 */
+/** A mesh as a named object with its part number. @param id unique on the bed, at least 1; @param icon PNG of the object, or null */
 export function packObject(
   positions: Float32Array,
   triangles: Uint32Array,
@@ -29,9 +33,11 @@ export function packObject(
   name: string,
   partNumber: string,
   deflate: DeflateBlocks,
+  icon: Uint8Array | null = null,
 ): PackedObject {
   const text: string[] = [
-    `<object id="${id}" type="model" name="${escapeXml(name)}" partnumber="${escapeXml(partNumber)}"><mesh><vertices>\n`,
+    `<object id="${id}" type="model"${icon ? ` thumbnail="/${iconPath(id)}"` : ''} name="${escapeXml(name)}" ` +
+      `partnumber="${escapeXml(partNumber)}"><mesh><vertices>\n`,
   ];
   for (let i = 0; i < positions.length; i += 3)
     text.push(`<vertex x="${say(positions[i]!)}" y="${say(positions[i + 1]!)}" z="${say(positions[i + 2]!)}"/>\n`);
@@ -39,8 +45,10 @@ export function packObject(
   for (let i = 0; i < triangles.length; i += 3)
     text.push(`<triangle v1="${triangles[i]}" v2="${triangles[i + 1]}" v3="${triangles[i + 2]}"/>\n`);
   text.push('</triangles></mesh></object>\n');
-  return { id, name, partNumber, ...packText(text.join(''), deflate) };
+  return { id, name, partNumber, icon, ...packText(text.join(''), deflate) };
 }
+
+const iconPath = (id: number): string => `3D/Thumbnails/object-${id}.png`;
 
 /** A nanometre: finer than single precision from 16 mm up, and than any two vertices of a cleaned mesh. */
 const say = (v: number): string => String(Math.round(v * 1e6) / 1e6 + 0);
@@ -86,19 +94,27 @@ export function writeThreeMf(
     '<Default Extension="rels" ContentType="application/vnd.openxmlformats-package.relationships+xml"/>' +
     '<Default Extension="model" ContentType="application/vnd.ms-package.3dmanufacturing-3dmodel+xml"/>' +
     '<Default Extension="png" ContentType="image/png"/></Types>\n';
-  const relations =
-    '<?xml version="1.0" encoding="UTF-8"?>\n' +
-    '<Relationships xmlns="http://schemas.openxmlformats.org/package/2006/relationships">' +
-    `<Relationship Id="rel0" Type="http://schemas.microsoft.com/3dmanufacturing/2013/01/3dmodel" Target="/${MODEL_PATH}"/>` +
-    (thumbnail
-      ? '<Relationship Id="rel1" Type="http://schemas.openxmlformats.org/package/2006/relationships/metadata/thumbnail" Target="/Metadata/thumbnail.png"/>'
-      : '') +
-    '</Relationships>\n';
+  const icons = [...new Map(items.map(({ object }) => [object.id, object])).values()].filter((o) => o.icon !== null);
+  const relations = relationships([
+    ['http://schemas.microsoft.com/3dmanufacturing/2013/01/3dmodel', MODEL_PATH],
+    ...(thumbnail ? [[THUMBNAIL, 'Metadata/thumbnail.png'] as const] : []),
+  ]);
   const part = (path: string, content: string | Uint8Array) => zipEntry(path, [packText(content, deflate)]);
   return zip([
     part('[Content_Types].xml', types),
     part('_rels/.rels', relations),
     zipEntry(MODEL_PATH, [packText(head, deflate), ...items.map((i) => i.object), packText(tail, deflate)]),
+    // The pictures of objects belong to the model part, that of the whole to the package (core specification, 2.1 and 6.1).
+    ...(icons.length > 0
+      ? [part(MODEL_RELATIONS, relationships(icons.map(({ id }) => [THUMBNAIL, iconPath(id)])))]
+      : []),
+    ...icons.map(({ id, icon }) => part(iconPath(id), icon!)),
     ...(thumbnail ? [part('Metadata/thumbnail.png', thumbnail)] : []),
   ]);
 }
+
+const relationships = (targets: readonly (readonly [type: string, path: string])[]): string =>
+  '<?xml version="1.0" encoding="UTF-8"?>\n' +
+  '<Relationships xmlns="http://schemas.openxmlformats.org/package/2006/relationships">' +
+  targets.map(([type, path], i) => `<Relationship Id="rel${i}" Type="${type}" Target="/${path}"/>`).join('') +
+  '</Relationships>\n';

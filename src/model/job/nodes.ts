@@ -104,6 +104,10 @@ export const printersSchema = z
   .array(
     z.strictObject({
       name: z.string().default('printer').describe('What the printer is called on the sheets.'),
+      process: z
+        .enum(['filament', 'powder', 'resin'])
+        .optional()
+        .describe('How it prints; absent: as `nodes.process`. Hubs go to printers of their own process alone.'),
       bed: z.enum(['rectangle', 'circle']).default('rectangle').describe('Shape of the bed.'),
       width_mm: z.number().positive().default(210).describe('Usable width, or diameter of a round bed.'),
       depth_mm: z.number().positive().default(210).describe('Usable depth.'),

@@ -2,6 +2,7 @@ import { frameToWorld, type Mat4, multiply4 } from '../../maths/mat4.js';
 import { addScaled, cross, dot, length, normalise, type Vec3 } from '../../maths/vec3.js';
 import { defaultJob, type Job } from '../../model/job/index.js';
 import type { HubPart, Socket } from '../../model/parts.js';
+import { printersOf } from '../../model/printers.js';
 import type { ShapedHub } from '../../model/shaped.js';
 import type { ShapeHubInput } from './shape-hub-task.js';
 
@@ -42,7 +43,7 @@ export function canonicalHub(hub: HubPart, job: Job, tension: readonly number[])
   return {
     input: {
       hub: canonical,
-      job: { ...REST, nodes: job.nodes, printers: job.printers.map(sizeOnly) },
+      job: { ...REST, nodes: job.nodes, printers: printersOf(job).map(sizeOnly) },
       tension: tension.map((n) => Number(n.toPrecision(TENSION_DIGITS))),
     },
     toTruss: frameToWorld(hub.at, x, y),

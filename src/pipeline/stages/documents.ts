@@ -8,6 +8,7 @@ import { writeJson } from '../../documents/formats/json.js';
 import type { Fonts } from '../../documents/kit/fonts.js';
 import { barAnglesCsv } from '../../documents/nodes/bar-angles.js';
 import { barDirectionsCsv } from '../../documents/nodes/bar-directions.js';
+import { bedSheets } from '../../documents/nodes/bed-sheets.js';
 import { drillingCsv } from '../../documents/nodes/drilling.js';
 import { nodeSheets } from '../../documents/nodes/node-sheets.js';
 import { placementJson } from '../../documents/nodes/placement.js';
@@ -29,7 +30,7 @@ import { writeTrussJson } from '../../documents/truss/truss-json.js';
 import type { Run } from '../../model/run.js';
 import type { PackWriter } from '../pack-writer.js';
 
-type Make = (records: PackRecords, fonts: Fonts) => Uint8Array | null | Promise<{ readonly bytes: Uint8Array }>;
+type Make = (records: PackRecords, fonts: Fonts) => Uint8Array | null | Promise<{ readonly bytes: Uint8Array } | null>;
 
 /** Every paper and table of a pack, in the order of writing. A new one is a file in documents and a line here. */
 const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
@@ -52,6 +53,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['nodes/drilling.csv', drillingCsv],
   ['nodes/placement.json', placementJson],
   ['nodes/node-sheets.pdf', nodeSheets],
+  ['nodes/bed-sheets.pdf', bedSheets],
   ['assembly.pdf', assemblyPdf],
   ['assembly/packing-list.csv', packingListCsv],
   ['assembly/fit-up.csv', fitUpCsv],

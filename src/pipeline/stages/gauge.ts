@@ -4,6 +4,7 @@ import { drawingToSvg } from '../../documents/formats/svg.js';
 import { packObject } from '../../documents/formats/three-mf.js';
 import type { Fonts } from '../../documents/kit/fonts.js';
 import { gaugeSheet, type MadeGauge } from '../../documents/nodes/gauge-sheet.js';
+import { pieceIcon } from '../../documents/nodes/piece-pictures.js';
 import { kerfComb } from '../../documents/panels/kerf-comb.js';
 import { deflateBlocks } from '../../machine/deflate.js';
 import { sha256 } from '../../machine/hash.js';
@@ -13,6 +14,7 @@ import type { Section } from '../../model/section.js';
 import { shapeGauge } from '../../shaping/gauge.js';
 import type { PackPart, PackWriter } from '../pack-writer.js';
 import { type PrintablePiece, writeBedFiles } from './beds.js';
+import { viewOf } from './piece-view.js';
 
 /** Where the gauge's files go, each with its last slash or empty. */
 export interface GaugeFolders {
@@ -45,6 +47,7 @@ export async function writeGauges(
   const failed: string[] = [];
   const made: MadeGauge[] = [];
   const pieces: PrintablePiece[] = [];
+  const marks = gaugeMarks(sections);
   const density = materialNamed(job, job.nodes.material)?.density ?? 0;
   for (const [i, section] of sections.entries()) {
     const piece = await shapeGauge(section, job);
@@ -52,7 +55,7 @@ export async function writeGauges(
       failed.push(section.name);
       continue;
     }
-    const mark = i === 0 ? 'gauge' : `gauge-${section.name}`;
+    const mark = marks[i]!;
     const bytes = writeStl(piece.positions, piece.triangles, `gauge ${section.name}`);
     const file = `${folders.prints}${mark}.stl`;
     await writer.put(file, bytes);
@@ -65,7 +68,16 @@ export async function writeGauges(
       box: piece.box,
       volume: piece.volume,
       mass: piece.volume * MM3_TO_M3 * density,
-      object: packObject(piece.positions, piece.triangles, i + 1, mark, `gauge ${section.name}`, deflateBlocks),
+      object: packObject(
+        piece.positions,
+        piece.triangles,
+        i + 1,
+        mark,
+        `gauge ${section.name}`,
+        deflateBlocks,
+        pieceIcon(piece.positions, piece.triangles, deflateBlocks),
+      ),
+      view: viewOf(piece),
     });
   }
   await writeBedFiles(pieces, job, `${folders.beds}gauge-`, writer);
@@ -77,6 +89,17 @@ export async function writeGauges(
     await writer.put(`${folders.prints}gauge.pdf`, sheet.bytes);
   }
   return { parts, failed };
+}
+
+/** Names of the gauges' files: the first plain, the others by section, whatever a section may be called. */
+export function gaugeMarks(sections: readonly Section[]): string[] {
+  const taken = new Set<string>();
+  return sections.map(({ name }, i) => {
+    const plain = `gauge-${name.replaceAll(/[^A-Za-z0-9._-]+/g, '-')}`;
+    const mark = i === 0 ? 'gauge' : taken.has(plain.toLowerCase()) ? `${plain}-${i + 1}` : plain;
+    taken.add(mark.toLowerCase());
+    return mark;
+  });
 }
 
 /** Writes the kerf comb as SVG and DXF. */

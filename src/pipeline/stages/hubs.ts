@@ -1,10 +1,11 @@
-import type { Assessment, MadeHub } from '../../documents/records.js';
+import type { Assessment, MadeHub, MadePiece } from '../../documents/records.js';
 import { materialNamed } from '../../model/catalogue/resolve.js';
 import type { Finding } from '../../model/finding.js';
 import { isWithheld, settleFindings } from '../../model/hold.js';
 import type { Job } from '../../model/job/index.js';
 import type { HubPart } from '../../model/parts.js';
 import type { Run } from '../../model/run.js';
+import type { ShapedPiece } from '../../model/shaped.js';
 import { digestOf } from '../digests.js';
 import type { PackPart, PackWriter } from '../pack-writer.js';
 import type { Lineage } from '../since.js';
@@ -68,10 +69,12 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
           volume: piece.volume,
           mass: piece.volume * MM3_TO_M3 * density,
           object: output.objects[i]!,
+          view: output.views[i]!,
         });
       }
       if (!keep) withheld.push(hub.mark);
-      if (shaped.pieces.length > 0) made.set(hub.mark, { mark: hub.mark, pieces: shaped.pieces, files });
+      if (shaped.pieces.length > 0)
+        made.set(hub.mark, { mark: hub.mark, pieces: shaped.pieces.map(withoutMesh), files });
       parts.push(keep ? { ...part, files } : { ...part, digest: null, form: null });
       run.tell({ stage: 'Hubs', done: index + 1, total: again.length });
     },
@@ -79,6 +82,9 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
   const hubs = drafts.map(({ hub, part }) => ({ ...hub, revision: part.revision }));
   return { hubs, made, findings, parts, withheld, printable };
 }
+
+/** Meshes are written and dropped: thousands do not fit in memory. */
+const withoutMesh = ({ positions, triangles, ...rest }: ShapedPiece): MadePiece => rest;
 
 /** What a piece beside the node itself is; null: the node's own. */
 function accessory(piece: string): 'cap' | 'guide' | null {

@@ -1,4 +1,5 @@
 import type { Job } from '../../model/job/index.js';
+import type { Point2 } from '../../model/parts.js';
 import type { BedItem, BedPlan, PlannedBed } from '../../model/plan.js';
 import { type Box, type Floor, placeOn } from './place-on.js';
 
@@ -14,6 +15,8 @@ export interface PrintPiece {
   readonly volume: number;
   /** kg */
   readonly mass: number;
+  /** Convex outline from above, from the box's corner, mm; absent: the box. */
+  readonly footprint?: readonly Point2[];
 }
 
 /** Usable area of a printer's bed. */
@@ -79,10 +82,34 @@ function put(bed: OpenBed, piece: PrintPiece): boolean {
   bed.boxes.push(spot);
   const { margin_mm: margin } = bed.printer;
   bed.items.push({
-    item: { mark: piece.mark, piece: piece.piece, x: spot.x + margin, y: spot.y + margin, turned: spot.turned },
+    item: {
+      mark: piece.mark,
+      piece: piece.piece,
+      x: spot.x + margin,
+      y: spot.y + margin,
+      turned: spot.turned,
+      box: piece.box,
+      volume: piece.volume,
+      mass: piece.mass,
+      outline: outlineAt(piece, spot, margin),
+    },
     of: piece,
   });
   return true;
+}
+
+/** The footprint where it lies: a quarter turn about the corner carries it to the left by its depth. */
+function outlineAt(piece: PrintPiece, spot: Box, margin: number): Point2[] {
+  const [width, depth] = piece.box;
+  const outline: readonly Point2[] = piece.footprint ?? [
+    [0, 0],
+    [width, 0],
+    [width, depth],
+    [0, depth],
+  ];
+  return outline.map(([x, y]) =>
+    spot.turned ? [spot.x + margin + depth - y, spot.y + margin + x] : [spot.x + margin + x, spot.y + margin + y],
+  );
 }
 
 function closed(bed: OpenBed, index: number): PlannedBed {
@@ -100,5 +127,8 @@ function closed(bed: OpenBed, index: number): PlannedBed {
     mass: bed.items.reduce((sum, { of }) => sum + of.mass, 0),
     layers,
     time: volume / printer.flow_mm3_per_s + layers * printer.layerChange_s,
+    flow: printer.flow_mm3_per_s,
+    layerChange: printer.layerChange_s,
+    layer: printer.layer_mm,
   };
 }

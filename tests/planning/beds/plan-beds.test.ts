@@ -1,6 +1,8 @@
 import { expect, it } from 'vitest';
 import { seededRandom } from '../../../src/maths/random.js';
+import { jobSchema } from '../../../src/model/job/index.js';
 import { printersSchema } from '../../../src/model/job/nodes.js';
+import { printersOf } from '../../../src/model/printers.js';
 import { type PrintPiece, planBeds } from '../../../src/planning/beds/plan-beds.js';
 
 const piece = (mark: string, x: number, y: number, z = 20): PrintPiece => ({
@@ -80,4 +82,17 @@ it('gives the same plan whatever the order of the pieces', () => {
   const printers = printersSchema.parse([{}]);
   const pieces = Array.from({ length: 30 }, (_, i) => piece(`N${i}`, 20 + (i % 7) * 5, 30));
   expect(planBeds([...pieces].reverse(), printers)).toEqual(planBeds(pieces, printers));
+});
+
+it('fills the beds of printers of the hubs’ own process alone', () => {
+  const job = jobSchema.parse({
+    format: 'strutwright-job/1',
+    title: 'T',
+    truss: 't.json',
+    nodes: { process: 'powder' },
+    printers: [{ name: 'desk', process: 'filament' }, { name: 'powder bed', process: 'powder' }, { name: 'any' }],
+  });
+  expect(printersOf(job).map((p) => p.name)).toEqual(['powder bed', 'any']);
+  const { beds } = planBeds([piece('N1', 20, 20)], printersOf(job));
+  expect(beds.map((b) => b.printer)).toEqual(['powder bed']);
 });
