@@ -14,6 +14,7 @@ import { readPack } from '../pipeline/read-pack.js';
 import type { Since } from '../pipeline/since.js';
 import type { Call } from './commands/command.js';
 import { EXIT } from './exit.js';
+import { type StopSignals, stopSignals } from './stop-signals.js';
 import { painter } from './terminal/paint.js';
 import { progressLine } from './terminal/progress.js';
 import { sayPack } from './terminal/say-pack.js';
@@ -26,29 +27,35 @@ export const CACHE_FOLDER = '.strutwright-cache';
 /** The command `make` once its line is understood: makes the pack once, or again after every change. Gives the exit status. */
 export async function makeJob(call: Call): Promise<number> {
   const pool = openPool(WORKER, call.options['workers'] as number | undefined);
+  const stop = stopSignals(call.terminal);
   try {
-    return call.options['watch'] ? await followFiles(call, pool) : await makeOnce(call, pool);
+    return call.options['watch'] ? await followFiles(call, pool, stop) : await makeOnce(call, pool, stop);
   } finally {
+    stop.forget();
     await pool.close();
   }
 }
 
 /** Makes the pack again after each change of its inputs; ends with the process. */
-async function followFiles(call: Call, pool: Pool): Promise<never> {
+async function followFiles(call: Call, pool: Pool, stop: StopSignals): Promise<never> {
   const path = call.arguments[0]!;
   for (;;) {
     const read = await loadJob(path);
-    const known = 'loaded' in read ? read.loaded.inputs.map((i) => join(read.loaded.folder, i.path)) : [];
+    const known = 'loaded' in read ? read.loaded.inputs.map((i) => join(read.loaded.folder, i.path)) : read.files;
     // The watch stands before the run, so that a change during the run is not missed.
     const watch = watchFiles([path, join(path, 'job.json'), ...known]);
-    await makeOnce(call, pool);
+    await makeOnce(call, pool, stop);
     call.terminal.talk('Waiting for a change of the job or the truss; Ctrl+C ends.\n');
     await watch.next();
     watch.close();
   }
 }
 
-async function makeOnce({ arguments: [path], options, terminal }: Call, pool: Pool): Promise<number> {
+async function makeOnce(
+  { arguments: [path], options, terminal }: Call,
+  pool: Pool,
+  stop: StopSignals,
+): Promise<number> {
   const result = await loadJob(path!);
   if ('faults' in result) return refuse(terminal, result.faults);
   const { loaded } = result;
@@ -59,7 +66,7 @@ async function makeOnce({ arguments: [path], options, terminal }: Call, pool: Po
   try {
     const cache = options['cache'] === false ? null : await openCache(cacheOf(loaded), await buildOf(VERSION));
     const each = cache ? cachedEach(pool.each, cache) : pool.each;
-    const manifest = await writePack(loaded, out, { each, tell: progress.tell, since: earlier?.pack.manifest });
+    const manifest = await writePack(loaded, out, { each, tell: progress.tell, since: earlier?.pack.manifest, stop });
     await cache?.prune();
     progress.close();
     terminal.result(
@@ -89,9 +96,14 @@ async function writePack(
     readonly each: Pool['each'];
     readonly tell: ReturnType<typeof progressLine>['tell'];
     readonly since: Since | undefined;
+    readonly stop: StopSignals;
   },
 ): Promise<Manifest> {
   const pack = await openPackFolder(out);
+  how.stop.before(async () => {
+    await pack.abandon();
+    return 'Stopped before the pack was whole; nothing of it was kept.';
+  });
   try {
     const manifest = await makePack(truss, job, {
       write: async (file, bytes) => void (await pack.write(file, bytes)),
@@ -100,10 +112,17 @@ async function writePack(
       inputs,
       ...(how.since ? { since: how.since } : {}),
     });
-    await pack.commit();
+    const committed = pack.commit();
+    how.stop.before(async () => {
+      await committed;
+      return 'Stopped after the pack was whole.';
+    });
+    await committed;
     return manifest;
   } catch (error) {
     await pack.abandon();
     throw error;
+  } finally {
+    how.stop.before(null);
   }
 }

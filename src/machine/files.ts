@@ -1,7 +1,5 @@
-import { lstat, open, readFile, stat, writeFile } from 'node:fs/promises';
-import { dirname } from 'node:path';
+import { lstat, open, readFile, stat } from 'node:fs/promises';
 import { FileFault, fileFault } from './file-fault.js';
-import { makeFolder } from './make-folder.js';
 
 /** The bytes of a file of at most `most` bytes. Throws a FileFault. */
 export async function readBytes(path: string, most: number): Promise<Uint8Array> {
@@ -29,18 +27,6 @@ export async function readText(path: string, most: number): Promise<string> {
     return new TextDecoder('utf-8', { fatal: true, ignoreBOM: true }).decode(bytes);
   } catch {
     throw new FileFault('not-utf8', path, 'is not UTF-8 text');
-  }
-}
-
-/** Writes one file, its folder made where it is missing; an existing file is replaced only where `replace` says so. */
-export async function writeOne(path: string, bytes: Uint8Array | string, replace = false): Promise<void> {
-  try {
-    await makeFolder(dirname(path));
-    await writeFile(path, bytes, { flag: replace ? 'w' : 'wx' });
-  } catch (error) {
-    if ((error as NodeJS.ErrnoException).code === 'EEXIST')
-      throw new FileFault('failed', path, 'is there already', 'choose another name, or move it away');
-    throw fileFault(error, path);
   }
 }
 

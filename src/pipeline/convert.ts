@@ -1,7 +1,8 @@
 import { writeTrussJson } from '../documents/truss/truss-json.js';
 import { FileFault } from '../machine/file-fault.js';
-import { kindOf, readBytes, readText, writeOne } from '../machine/files.js';
+import { kindOf, readBytes, readText } from '../machine/files.js';
 import { dirname, join } from '../machine/paths.js';
+import { writeOne } from '../machine/write-one.js';
 import { LIMITS } from '../model/limits.js';
 import type { RawGeometry, RawReading, UpAxis } from '../model/raw-geometry.js';
 import type { LengthUnit } from '../model/units.js';

@@ -1,9 +1,10 @@
 import { sawPlanPdf } from '../documents/struts/saw-plan.js';
 import { stockPlanJson } from '../documents/struts/stock-plan.js';
 import { FileFault } from '../machine/file-fault.js';
-import { kindOf, readText, writeOne } from '../machine/files.js';
+import { kindOf, readText } from '../machine/files.js';
 import { loadFonts } from '../machine/fonts.js';
 import { basename, join } from '../machine/paths.js';
+import { writeOne } from '../machine/write-one.js';
 import { sectionNamed } from '../model/catalogue/resolve.js';
 import type { Finding } from '../model/finding.js';
 import { sayFinding } from '../model/findings/index.js';

@@ -8,8 +8,9 @@ import { writeTrussIfc } from '../documents/truss/truss-ifc.js';
 import { writeTrussJson } from '../documents/truss/truss-json.js';
 import { writeTrussObj } from '../documents/truss/truss-obj.js';
 import { FileFault } from '../machine/file-fault.js';
-import { kindOf, writeOne } from '../machine/files.js';
+import { kindOf } from '../machine/files.js';
 import { join } from '../machine/paths.js';
+import { writeOne } from '../machine/write-one.js';
 import { assess } from './assess.js';
 import { loadJob } from './load.js';
 

@@ -29,22 +29,27 @@ const MOST_BYTES = 4 * LIMITS.fileCharacters;
 
 /**
  * Reads a job file, or the job.json of a folder, and its truss. Either the loaded job or every fault, one line each;
- * never throws for what a user can get wrong.
+ * never throws for what a user can get wrong. `files` are those that a mending may change.
  */
 export async function loadJob(
   path: string,
-): Promise<{ readonly loaded: LoadedJob } | { readonly faults: readonly string[] }> {
+): Promise<{ readonly loaded: LoadedJob } | { readonly faults: readonly string[]; readonly files: readonly string[] }> {
+  const files: string[] = [];
+  const refused = (faults: readonly string[]) => ({ faults, files });
   try {
+    files.push(path);
     const jobPath = (await kindOf(path)) === 'folder' ? join(path, 'job.json') : path;
+    files.push(jobPath);
     const jobText = await readText(jobPath, MOST_BYTES);
     const { job, faults } = readJob(jobText, jobPath);
-    if (!job) return { faults: faults.map(sayFault) };
+    if (!job) return refused(faults.map(sayFault));
     const folder = dirname(jobPath);
     const trussPath = join(folder, job.truss);
+    files.push(trussPath);
     const trussText = await readText(trussPath, MOST_BYTES);
     const read = readTruss(trussText, trussPath);
     const all = [...faults, ...read.faults];
-    if (!read.truss || all.length > 0) return { faults: all.map(sayFault) };
+    if (!read.truss || all.length > 0) return refused(all.map(sayFault));
     return {
       loaded: {
         job,
@@ -57,7 +62,7 @@ export async function loadJob(
       },
     };
   } catch (error) {
-    if (error instanceof FileFault) return { faults: [error.message] };
+    if (error instanceof FileFault) return refused([error.message]);
     throw error;
   }
 }

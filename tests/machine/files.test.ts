@@ -2,7 +2,8 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, expect, it } from 'vitest';
-import { readText, writeOne } from '../../src/machine/files.js';
+import { readText } from '../../src/machine/files.js';
+import { writeOne } from '../../src/machine/write-one.js';
 
 const dir = mkdtempSync(join(tmpdir(), 'files-'));
 afterAll(() => rmSync(dir, { recursive: true, force: true }));
@@ -17,10 +18,4 @@ it('reads text, and says in one line why it cannot', async () => {
   await expect(readText('/dev/zero', 10)).rejects.toThrow(/not an ordinary file/);
   writeFileSync(path, new Uint8Array([0xff, 0xfe, 0x00]));
   await expect(readText(path, 10)).rejects.toThrow(/is not UTF-8 text: save/);
-});
-
-it('replaces an existing file only where it is told to', async () => {
-  await expect(writeOne(path, 'x')).rejects.toThrow(/is there already/);
-  await writeOne(path, 'x', true);
-  expect(await readText(path, 10)).toBe('x');
 });

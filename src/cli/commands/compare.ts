@@ -48,10 +48,11 @@ async function writePaper(
   after: ReadPack,
   { options, terminal }: Pick<Call, 'options' | 'terminal'>,
 ): Promise<number> {
-  const [{ comparisonPaper }, { FileFault }, { isPdf, writeOne }] = await Promise.all([
+  const [{ comparisonPaper }, { FileFault }, { isPdf }, { writeOne }] = await Promise.all([
     import('../../pipeline/comparison-paper.js'),
     import('../../machine/file-fault.js'),
     import('../../machine/files.js'),
+    import('../../machine/write-one.js'),
   ]);
   const out = String(options['pdf']);
   try {

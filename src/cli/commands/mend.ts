@@ -32,7 +32,7 @@ export const mend: CliCommand = {
     const [{ mendReport }, { FileFault }, { writeOne }, { mendFile }, { sayMending }] = await Promise.all([
       import('../../documents/mend-json.js'),
       import('../../machine/file-fault.js'),
-      import('../../machine/files.js'),
+      import('../../machine/write-one.js'),
       import('../../pipeline/mend.js'),
       import('../terminal/say-mending.js'),
     ]);

@@ -1,8 +1,9 @@
 import { FileFault } from '../../machine/file-fault.js';
-import { readText, writeOne } from '../../machine/files.js';
+import { readText } from '../../machine/files.js';
 import { listFolder } from '../../machine/folders.js';
 import { join } from '../../machine/paths.js';
 import { templateFolder, templateNames } from '../../machine/templates.js';
+import { writeOne } from '../../machine/write-one.js';
 import { nearest } from '../../maths/nearest.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';

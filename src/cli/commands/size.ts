@@ -1,6 +1,7 @@
 import { FileFault } from '../../machine/file-fault.js';
-import { readText, writeOne } from '../../machine/files.js';
+import { readText } from '../../machine/files.js';
 import { join } from '../../machine/paths.js';
+import { writeOne } from '../../machine/write-one.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';
 
