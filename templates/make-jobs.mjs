@@ -17,6 +17,7 @@ const TEMPLATES = {
       date: '2026-12-01',
       use: 'table',
       struts: { section: 'beech-8' },
+      assembly: { closing: 'give' },
       saw: { step_mm: 0.5, endFloat_mm: 0.75, kerf_mm: 2.4, endTrim_mm: 5 },
       stock: {
         bars: [{ section: 'beech-8', length_mm: 1000, price: 2.2 }],
@@ -37,6 +38,7 @@ const TEMPLATES = {
       date: '2026-12-01',
       use: 'table',
       struts: { section: 'birch-5/16in' },
+      assembly: { closing: 'give' },
       saw: { step_mm: 0.79375, endFloat_mm: 0.75, kerf_mm: 2.4, endTrim_mm: 6.35 },
       stock: {
         bars: [

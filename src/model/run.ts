@@ -2,6 +2,7 @@
 export interface Progress {
   readonly stage: string;
   readonly done: number;
+  /** 0 where it is not known how much there is. */
   readonly total: number;
 }
 

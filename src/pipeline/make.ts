@@ -48,7 +48,10 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     tell: options.tell ?? (() => {}),
     each: options.each ?? runHere(TASKS),
   };
+  /** Names what is done next; how much there is of it is not known before. */
+  const begin = (stage: string): void => run.tell({ stage, done: 0, total: 0 });
   const writer = packWriter(options.write);
+  begin('Checks');
   const assessed = withSharedStops(assess(truss, job));
 
   const lineage = lineageOf(options.since ?? null, job.revision);
@@ -57,8 +60,10 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     cut.filter((p) => lineage.unchanged(p.kind, p.mark, p.digest)).map((p) => `${p.kind} ${p.mark}`),
   );
 
+  begin('Hubs');
   const hubs = await makeHubs(assessed, run, writer, lineage);
   const fonts = await loadFonts();
+  begin('Gauges');
   const gauges = await writeGauges(
     sectionsByUse(assessed.parts.struts.map((s) => s.section)),
     job,
@@ -67,16 +72,20 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     assessed.parts.panels.length > 0,
     fonts,
   );
+  begin('Beds');
   const beds = await writeBeds(hubs.printable, job, writer);
+  begin('Bars');
   const bars = await planBars(
     assessed.parts.struts.filter((s) => !done.has(`strut ${s.mark}`)),
     job,
   );
+  begin('Sheets');
   const sheets = await planSheets(
     assessed.parts.panels.filter((p) => !done.has(`panel ${p.mark}`)),
     job,
   );
 
+  begin('Assembly');
   const assembly = planAssembly({ ...assessed, bars: bars.plan.bars });
   const fitUp = planFitUp(assessed.topology, assessed.parts, job);
 
@@ -102,8 +111,11 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
     fitUp,
   };
 
+  begin('Cut files');
   const cutting = await writeSheetFiles(records, writer);
+  begin('Papers');
   await writeDocuments(records, fonts, writer, run);
+  begin('Assembly page');
   await writer.put('assembly.html', assemblyHtml(records, await loadPageCode(), contentKey(writer.files())));
 
   const manifest = manifestOf(records, hubs.made, {

@@ -2,6 +2,7 @@ import { writeFileSync } from 'node:fs';
 import { parse } from 'csv-parse/sync';
 import { expect, it } from 'vitest';
 import type { Written } from '../../src/documents/kit/paper.js';
+import { unitsOf } from '../../src/documents/kit/units.js';
 import type { PackRecords } from '../../src/documents/records.js';
 import { barBatches } from '../../src/documents/struts/bar-batches.js';
 import { buyingListCsv } from '../../src/documents/struts/buying-list.js';
@@ -91,16 +92,21 @@ it('puts equal bars in one batch and says each setting once', () => {
     offcut: 0,
     kept: false,
   });
-  const batches = barBatches([
-    bar('B1', [400, 200, 200]),
-    bar('B2', [400, 200, 200]),
-    bar('B3', [400, 200]),
-    bar('B4', [400, 200], 'other'),
-  ]);
+  const batches = barBatches(
+    [bar('B1', [400, 200, 200]), bar('B2', [400, 200, 200]), bar('B3', [400, 200]), bar('B4', [400, 200], 'other')],
+    String,
+  );
   expect(batches.map((b) => b.bars.map((x) => x.mark))).toEqual([['B1', 'B2'], ['B3'], ['B4']]);
   expect(batches[0]!.settings).toEqual([
     { length: 400, times: 1 },
     { length: 200, times: 2 },
+  ]);
+  // In inches to 1/32 lengths half a millimetre apart may be one setting of the saw.
+  const { cut } = unitsOf({ ...defaultJob(), output: { ...defaultJob().output, units: 'US', fractions: true } }, 0);
+  const inches = barBatches([bar('B1', [307.5, 307.2]), bar('B2', [307.9, 307.2]), bar('B3', [308, 307.2])], cut);
+  expect(inches.map((b) => [b.bars.length, b.settings.map((s) => s.times)])).toEqual([
+    [2, [2]],
+    [1, [1, 1]],
   ]);
 });
 

@@ -7,7 +7,7 @@ export function progressLine(terminal: Terminal): { tell(progress: Progress): vo
   if (!terminal.watched) return { tell: () => {}, close: () => {} };
   const bar = new SingleBar(
     {
-      format: '{stage}  {value} of {total}',
+      format: (_, { value, total }, { stage: name }) => (total > 0 ? `${name}  ${value} of ${total}` : `${name}`),
       clearOnComplete: true,
       hideCursor: true,
       stream: process.stderr,
@@ -23,6 +23,7 @@ export function progressLine(terminal: Terminal): { tell(progress: Progress): vo
         stage = progress.stage;
         bar.start(progress.total, progress.done, { stage });
       }
+      bar.setTotal(progress.total);
       bar.update(progress.done, { stage });
     },
     close() {

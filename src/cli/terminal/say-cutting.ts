@@ -1,4 +1,4 @@
-import { fixed } from '../../documents/kit/units.js';
+import { fixed, sawMillimetres } from '../../documents/kit/units.js';
 import { barBatches } from '../../documents/struts/bar-batches.js';
 import { buyingLines } from '../../documents/struts/buying-list.js';
 import { sayProof } from '../../documents/struts/proof.js';
@@ -19,8 +19,8 @@ export function sayCutting(plan: StockPlan, currency: string): string {
       lines.push(
         `  ${String(l.quantity).padStart(width)} of ${fixed(l.length, 1)} mm${l.fromRack ? ', from the rack' : ''}`,
       );
-    for (const { bars: batch, settings } of barBatches(bars)) {
-      const cuts = settings.map((s) => `${s.times > 1 ? `${s.times} x ` : ''}${fixed(s.length, 1)}`).join(', ');
+    for (const { bars: batch, settings } of barBatches(bars, sawMillimetres)) {
+      const cuts = settings.map((s) => `${s.times > 1 ? `${s.times} x ` : ''}${sawMillimetres(s.length)}`).join(', ');
       const name = batch.length > 1 ? `${batch[0]!.mark} to ${batch.at(-1)!.mark}` : batch[0]!.mark;
       lines.push(`  ${name}, ${fixed(batch[0]!.length, 1)} mm: ${cuts}; left ${fixed(batch[0]!.offcut, 1)}`);
     }

@@ -127,7 +127,7 @@ function linesOf(paper: Paper, records: PackRecords, step: AssemblyStep, units: 
   for (const entry of step.struts) {
     const strut = cut.get(entry.strut)!;
     const how = common ? '' : howItEnters(entry);
-    const size = strut.cutLength === null ? 'no length' : `${units.length(strut.cutLength)} ${units.lengthUnit}`;
+    const size = strut.cutLength === null ? 'no length' : `${units.cut(strut.cutLength)} ${units.lengthUnit}`;
     add(`${entry.strut}  ${strut.ends[0].node}–${strut.ends[1].node}  ${size}${how ? `: ${how}` : ''}`, false, 2);
   }
   if (common) add(`All of them: ${common}.`);

@@ -52,7 +52,7 @@ export function pageData(records: PackRecords, key: string): PageData {
         ends: topology.truss.members[i]!.ends.map(node) as [number, number],
         section: s.section?.name ?? 'unknown',
         radius: s.section ? sectionProperties(s.section.shape).circumradius : 3,
-        cut: s.cutLength === null ? 'no length' : `${units.length(s.cutLength)} ${units.lengthUnit}`,
+        cut: s.cutLength === null ? 'no length' : `${units.cut(s.cutLength)} ${units.lengthUnit}`,
         force: f,
         forceText: f === null ? '' : `${units.force(f)} ${units.forceUnit} ${units.sense(f)}`.trim(),
         utilisation: used === undefined ? '' : fixed(used, 2),

@@ -8,6 +8,8 @@ export interface Units {
   /** For the strip along the foot. */
   readonly words: string;
   length(mm: number | null, decimals?: number): string;
+  /** A length to saw to: rounded down, since a strut that is too long holds its frame open. */
+  cut(mm: number | null): string;
   force(newton: number | null): string;
   /** T or C beside a force; nothing where it prints as nought or is unknown. */
   sense(newton: number | null): '' | 'T' | 'C';
@@ -30,6 +32,7 @@ function si(largest: number): Units {
     massUnit: 'kg',
     words: `mm, ${kilo ? 'kN' : 'N'}, kg, °`,
     length: (mm, digits = 1) => fixed(mm, digits),
+    cut: sawMillimetres,
     force: (n) => signed(n === null ? null : kilo ? n / 1000 : n, decimals),
     sense: (n) => senseOf(signed(n === null ? null : kilo ? n / 1000 : n, decimals)),
     mass: (kg) => fixed(kg, kg !== null && kg < 1 ? 3 : 2),
@@ -38,22 +41,34 @@ function si(largest: number): Units {
   };
 }
 
+/** A length to saw to in mm, rounded down to a tenth. */
+export const sawMillimetres = (mm: number | null): string => fixed(down(mm, 0.1), 1);
+
 /** NIST SP 811 (2008), appendix B.8: 1 lbf = 4.448222 N, 1 lb = 0.45359237 kg; 1 in = 25.4 mm exactly. */
 export const NEWTON_PER_LBF = 4.4482216152605;
 const KG_PER_LB = 0.45359237;
 const MM_PER_INCH = 25.4;
+/** The finest division of a carpenter's rule. */
+const PARTS = 32;
+
+/** Share of a step by which a length may miss it and still count as on it: what sums and conversions leave. */
+const ON_STEP = 1e-6;
+const down = (mm: number | null, step: number): number | null =>
+  mm === null ? null : Math.floor(mm / step + ON_STEP) * step;
 
 function us(largest: number, fractions: boolean): Units {
   const kip = largest / NEWTON_PER_LBF >= 10_000;
   const per = NEWTON_PER_LBF * (kip ? 1000 : 1);
   const decimals = decimalsFor(largest / per);
+  const length = (mm: number | null, digits = 1): string =>
+    mm === null ? '' : fractions ? inchFraction(mm / MM_PER_INCH) : fixed(mm / MM_PER_INCH, digits + 2);
   return {
     lengthUnit: 'in',
     forceUnit: kip ? 'kip' : 'lbf',
     massUnit: 'lb',
     words: `in, ${kip ? 'kip' : 'lbf'}, lb, °`,
-    length: (mm, digits = 1) =>
-      mm === null ? '' : fractions ? inchFraction(mm / MM_PER_INCH) : fixed(mm / MM_PER_INCH, digits + 2),
+    length,
+    cut: (mm) => length(down(mm, fractions ? MM_PER_INCH / PARTS : MM_PER_INCH / 1000)),
     force: (n) => signed(n === null ? null : n / per, decimals),
     sense: (n) => senseOf(signed(n === null ? null : n / per, decimals)),
     mass: (kg) => fixed(kg === null ? null : kg / KG_PER_LB, 3),
@@ -64,11 +79,11 @@ function us(largest: number, fractions: boolean): Units {
 
 /** Whole inches and the nearest thirty-second in lowest terms: 12 3/32. */
 export function inchFraction(inches: number): string {
-  const parts = Math.round(Math.abs(inches) * 32);
-  const [whole, rest] = [Math.floor(parts / 32), parts % 32];
+  const parts = Math.round(Math.abs(inches) * PARTS);
+  const [whole, rest] = [Math.floor(parts / PARTS), parts % PARTS];
   const sign = inches < 0 && parts > 0 ? '−' : '';
   if (rest === 0) return `${sign}${whole}`;
-  let [top, bottom] = [rest, 32];
+  let [top, bottom] = [rest, PARTS];
   while (top % 2 === 0) [top, bottom] = [top / 2, bottom / 2];
   return whole === 0 ? `${sign}${top}/${bottom}` : `${sign}${whole} ${top}/${bottom}`;
 }

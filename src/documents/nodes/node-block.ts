@@ -166,7 +166,7 @@ function socketColumns(hub: HubPart, cuts: ReadonlyMap<string, number | null>, u
       head: `Cut length\n${units.lengthUnit}`,
       align: 'right',
       bold: true,
-      value: (s) => units.length(cuts.get(s.strut) ?? null),
+      value: (s) => units.cut(cuts.get(s.strut) ?? null),
     },
   ];
 }

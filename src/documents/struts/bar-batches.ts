@@ -7,29 +7,29 @@ export interface BarBatch {
   readonly settings: readonly { readonly length: number; readonly times: number }[];
 }
 
-/** Puts neighbours in the plan that are equal in kind and in every length together. */
-export function barBatches(bars: readonly PlannedBar[]): BarBatch[] {
+/** Puts neighbours in the plan that are equal in kind and in every length as it is printed together: a saw is set by the print. */
+export function barBatches(bars: readonly PlannedBar[], print: (mm: number) => string): BarBatch[] {
   const batches: PlannedBar[][] = [];
   for (const bar of bars) {
     const last = batches.at(-1);
-    if (last && alike(last[0]!, bar)) last.push(bar);
+    if (last && alike(last[0]!, bar, print)) last.push(bar);
     else batches.push([bar]);
   }
-  return batches.map((group) => ({ bars: group, settings: settingsOf(group[0]!) }));
+  return batches.map((group) => ({ bars: group, settings: settingsOf(group[0]!, print) }));
 }
 
-const alike = (a: PlannedBar, b: PlannedBar): boolean =>
+const alike = (a: PlannedBar, b: PlannedBar, print: (mm: number) => string): boolean =>
   a.section === b.section &&
   a.stock === b.stock &&
   a.fromRack === b.fromRack &&
   a.cuts.length === b.cuts.length &&
-  a.cuts.every((cut, i) => cut.length === b.cuts[i]!.length);
+  a.cuts.every((cut, i) => print(cut.length) === print(b.cuts[i]!.length));
 
-function settingsOf(bar: PlannedBar): { length: number; times: number }[] {
+function settingsOf(bar: PlannedBar, print: (mm: number) => string): { length: number; times: number }[] {
   const settings: { length: number; times: number }[] = [];
   for (const { length } of bar.cuts) {
     const last = settings.at(-1);
-    if (last?.length === length) last.times++;
+    if (last && print(last.length) === print(length)) last.times++;
     else settings.push({ length, times: 1 });
   }
   return settings;

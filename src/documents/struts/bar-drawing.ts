@@ -27,7 +27,7 @@ export function drawBar(pen: Pen, x: number, y: number, scale: number, drawing: 
   bar.cuts.forEach((cut, i) => {
     const [left, room] = [x + at * scale, cut.length * scale];
     pen.rectangle(left, y, room, BAR_HEIGHT, { fill: INK.white, width: LINE.thin });
-    write(pen, units.length(cut.length), left, y, room, true);
+    write(pen, units.cut(cut.length), left, y, room, true);
     at += cut.length;
     // The last cut has no width where the bar ends before the blade does.
     const blade = Math.min(kerf, bar.length - trim[1] - at);

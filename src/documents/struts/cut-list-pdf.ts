@@ -36,7 +36,7 @@ export async function cutListPdf(records: PackRecords, fonts: Fonts): Promise<Wr
   const length = `, ${units.lengthUnit}`;
   const columns: Column<MemberRow>[] = [
     { head: 'Done', tick: true },
-    { head: `Cut length${length}`, align: 'right', bold: true, value: (r) => units.length(r.part.cutLength) },
+    { head: `Cut length${length}`, align: 'right', bold: true, value: (r) => units.cut(r.part.cutLength) },
     { head: 'Strut', bold: true, value: (r) => r.member.mark },
     { head: 'End A', value: (r) => r.member.ends[0] },
     { head: 'End B', value: (r) => r.member.ends[1] },

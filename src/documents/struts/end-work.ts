@@ -147,7 +147,7 @@ function anglesSection(flow: Flow, rows: readonly AngleRow[], units: Units): voi
           head: `Long point length, ${units.lengthUnit}`,
           align: 'right',
           bold: true,
-          value: (r) => units.length(r.longPointLength),
+          value: (r) => units.cut(r.longPointLength),
         },
         { head: 'End at', bold: true, value: (r) => r.node },
         { head: 'Mitre, °', align: 'right', bold: true, value: (r) => units.angle(r.mitre) },

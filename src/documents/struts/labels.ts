@@ -89,7 +89,7 @@ function drawLabel(
   const stub = left + box.width;
   pen.line([stub, centre], [stub + 5, centre], { width: LINE.strong });
   writeFitted(pen, far, stub + 6.2, nodeLine, room - box.width - 6.2, { size: SIZE.body, colour: INK.grey }, SIZE.note);
-  const length = row.part.cutLength === null ? 'no length' : `${units.length(row.part.cutLength)} ${units.lengthUnit}`;
+  const length = row.part.cutLength === null ? 'no length' : `${units.cut(row.part.cutLength)} ${units.lengthUnit}`;
   const section = row.part.section?.name ?? row.member.section ?? '';
   const foot = tall ? bottom - 4 : bottom;
   const lengthWidth = tall ? room : room * 0.48;

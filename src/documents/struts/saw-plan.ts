@@ -45,7 +45,7 @@ export async function sawPlanPdf(records: SawRecords, fonts: Fonts): Promise<Wri
     flow.heading(headingOf(section), 45);
     flow.paragraph(sayProof(section, job.stock.currency));
     const scale = paper.room.width / Math.max(...bars.map((b) => b.length));
-    for (const batch of barBatches(bars)) drawBatch(flow, paper, batch, scale, records, units);
+    for (const batch of barBatches(bars, units.cut)) drawBatch(flow, paper, batch, scale, records, units);
   }
   return paper.finish();
 }
@@ -82,9 +82,7 @@ function drawBatch(flow: Flow, paper: Paper, batch: BarBatch, scale: number, rec
   const bar = batch.bars[0]!;
   const { saw } = records.job;
   const width = paper.room.width;
-  const settings = batch.settings
-    .map((s) => `${s.times > 1 ? `${s.times} x ` : ''}${units.length(s.length)}`)
-    .join('   ');
+  const settings = batch.settings.map((s) => `${s.times > 1 ? `${s.times} x ` : ''}${units.cut(s.length)}`).join('   ');
   const settingLines = wrapText(pen, settings, width - 24, { size: SIZE.head, bold: true });
   const marks = batch.bars.map((b) => ({
     bar: b,

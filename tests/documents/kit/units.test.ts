@@ -12,6 +12,25 @@ describe('units of output', () => {
     expect(inchFraction(-1.25)).toBe('−1 1/4');
     expect(inchFraction(0)).toBe('0');
   });
+  it('rounds lengths to saw down, never up, in every unit', () => {
+    const job = defaultJob();
+    const at = (output: object) => unitsOf({ ...job, output: { ...job.output, ...output } }, 0).cut;
+    const [si, inches, fractions] = [
+      at({}),
+      at({ units: 'US', fractions: false }),
+      at({ units: 'US', fractions: true }),
+    ];
+    expect([si(212.29), si(212.3), si(70.1 * 3)]).toEqual(['212.2', '212.3', '210.3']);
+    expect([inches(254), inches(254.0253), inches(253.9999)]).toEqual(['10.000', '10.000', '9.999']);
+    // 12 3/32 in is 307.18125 mm.
+    expect([fractions(307.18125), fractions(307.9), fractions(307.18), fractions(null)]).toEqual([
+      '12 3/32',
+      '12 3/32',
+      '12 1/16',
+      '',
+    ]);
+    for (let k = 0; k < 3200; k++) expect(fractions((k * 25.4) / 32)).toBe(inchFraction(k / 32));
+  });
   it('leaves unknown numbers blank and never writes minus nought', () => {
     expect(fixed(null, 1)).toBe('');
     expect(fixed(Number.NaN, 1)).toBe('');
