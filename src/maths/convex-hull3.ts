@@ -37,29 +37,39 @@ export function convexHull3(input: readonly Vec3[]): Hull3 | null {
   const start = firstTetrahedron(points, extent);
   if (!start) return null;
 
-  const faces: Face[] = [];
   const [a, b, c, d] = start;
-  for (const [i, j, k] of [
-    [a, b, c],
-    [a, c, d],
-    [a, d, b],
-    [b, d, c],
-  ] as const)
-    faces.push(makeFace(points, i, j, k));
-  let live = faces;
+  const live = [
+    makeFace(points, a, b, c),
+    makeFace(points, a, c, d),
+    makeFace(points, a, d, b),
+    makeFace(points, b, d, c),
+  ];
+  const visible: Face[] = [];
+  const edges = new Set<number>();
   for (let p = 0; p < n; p++) {
-    if (start.includes(p)) continue;
+    if (p === a || p === b || p === c || p === d) continue;
     const [x, y, z] = points[p]!;
-    const visible: Face[] = [];
-    const hidden: Face[] = [];
-    for (const f of live) (f.nx * x + f.ny * y + f.nz * z > f.d ? visible : hidden).push(f);
+    visible.length = 0;
+    let hidden = 0;
+    for (let i = 0; i < live.length; i++) {
+      const f = live[i]!;
+      if (f.nx * x + f.ny * y + f.nz * z > f.d) visible.push(f);
+      else live[hidden++] = f;
+    }
     if (visible.length === 0) continue;
+    live.length = hidden;
     // An edge of one visible face whose reverse belongs to no visible face lies on the horizon.
-    const edges = new Set<number>();
-    for (const f of visible) for (const [u, v] of sides(f)) edges.add(u * n + v);
-    live = hidden;
+    edges.clear();
     for (const f of visible)
-      for (const [u, v] of sides(f)) if (!edges.has(v * n + u)) live.push(makeFace(points, u, v, p));
+      edges
+        .add(f.a * n + f.b)
+        .add(f.b * n + f.c)
+        .add(f.c * n + f.a);
+    for (const f of visible) {
+      if (!edges.has(f.b * n + f.a)) live.push(makeFace(points, f.a, f.b, p));
+      if (!edges.has(f.c * n + f.b)) live.push(makeFace(points, f.b, f.c, p));
+      if (!edges.has(f.a * n + f.c)) live.push(makeFace(points, f.c, f.a, p));
+    }
   }
   const planes = new Float64Array(4 * live.length);
   let volume = 0;
@@ -80,17 +90,19 @@ interface Face {
   readonly d: number;
 }
 
-const sides = (f: Face): readonly (readonly [number, number])[] => [
-  [f.a, f.b],
-  [f.b, f.c],
-  [f.c, f.a],
-];
-
 function makeFace(points: readonly Vec3[], a: number, b: number, c: number): Face {
-  const [p, q, r] = [points[a]!, points[b]!, points[c]!];
-  const [ux, uy, uz] = [q[0] - p[0], q[1] - p[1], q[2] - p[2]];
-  const [vx, vy, vz] = [r[0] - p[0], r[1] - p[1], r[2] - p[2]];
-  let [nx, ny, nz] = [uy * vz - uz * vy, uz * vx - ux * vz, ux * vy - uy * vx];
+  const p = points[a]!;
+  const q = points[b]!;
+  const r = points[c]!;
+  const ux = q[0] - p[0];
+  const uy = q[1] - p[1];
+  const uz = q[2] - p[2];
+  const vx = r[0] - p[0];
+  const vy = r[1] - p[1];
+  const vz = r[2] - p[2];
+  let nx = uy * vz - uz * vy;
+  let ny = uz * vx - ux * vz;
+  let nz = ux * vy - uy * vx;
   const l = Math.hypot(nx, ny, nz) || 1;
   nx /= l;
   ny /= l;

@@ -1,7 +1,7 @@
 import { type ColumnElimination, eliminateColumns, type SparseVector } from '../maths/sparse/column-elimination.js';
 import type { SparseMatrix } from '../maths/sparse/csc.js';
 import { multiplyTransposed } from '../maths/sparse/multiply.js';
-import { leftNullSpace, SINGULAR_CUT } from '../maths/sparse/null-space.js';
+import { leftNullSpace, type NullSpace, SINGULAR_CUT } from '../maths/sparse/null-space.js';
 import { norm, orthonormalise } from '../maths/sparse/orthonormalise.js';
 import { blockPoints, type Freedoms, gather, numberFreedoms, spread } from './freedoms.js';
 import { equilibriumMatrix, type PinFigure } from './pin-figure.js';
@@ -57,48 +57,27 @@ export interface FigureCounts {
  * `zero` count as nought: for coordinates that were rounded the caller gives more than round-off.
  */
 export function countStates(figure: PinFigure, zero: number = SINGULAR_CUT): FigureCounts {
-  const freedoms = numberFreedoms(figure.fixed, 3);
-  const a = equilibriumMatrix(figure, freedoms);
-  const axes = sweepAxes(figure);
-  let elimination = sweep(figure, freedoms, a, axes[0]);
-  const doubtful = (e: ColumnElimination): boolean =>
-    e.leastPivot < Math.max(DOUBTFUL_PIVOT, PIVOT_MARGIN * zero) || e.largestDropped > DOUBTFUL_DROP;
-  for (const axis of axes.slice(1)) {
-    if (!doubtful(elimination)) break;
-    const other = sweep(figure, freedoms, a, axis);
-    if (other.leastPivot > elimination.leastPivot) elimination = other;
-  }
+  const { freedoms, a } = examinationOf(figure);
+  const { elimination, space, counted, rank } = rankOf(figure, zero);
   const rigid = rigidMotions(figure);
   const rigidFree = rigid.map((v) => gather(freedoms, v));
-  let shapes = internalMechanisms(elimination, freedoms, rigidFree, a);
-  let rank = elimination.rank;
-  let decidedBy: FigureCounts['decidedBy'] = 'elimination';
+  let shapes: Mechanism[];
   let near: Mechanism[] = [];
-  let counted: readonly Float64Array[] = []; // near-mechanisms that count as mechanisms
   let least: number | null = null;
-  const nulls = freedoms.count - elimination.rank;
-  if (freedoms.count > 0 && nulls <= ARBITER_VECTORS && (doubtful(elimination) || freedoms.count <= ARBITER_FREEDOMS)) {
-    const space = leftNullSpace(a, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, figure.nodes) });
-    counted = space.next.filter((n) => n.value <= zero).map((n) => n.vector);
+  const byIteration = space !== null && freedoms.count - space.vectors.length !== elimination.rank;
+  if (byIteration) {
+    const inside = orthonormalise([...rigidFree, ...space.vectors], undefined).vectors.slice(rigidFree.length);
+    shapes = inside
+      .filter((z) => norm(z) > 0.5)
+      .map((z) => ({ shape: scaled(spread(freedoms, z)), singularValue: norm(multiplyTransposed(a, z)) }));
+  } else shapes = internalMechanisms(elimination, freedoms, rigidFree, a);
+  if (space) {
     const others = space.next.slice(counted.length);
     least = others[0]?.value ?? null;
     near = others
       .filter((n) => n.value < NEAR_MECHANISM)
       .map((n) => ({ shape: scaled(spread(freedoms, n.vector)), singularValue: n.value }));
-    const byIteration = freedoms.count - space.vectors.length;
-    if (byIteration !== rank) {
-      rank = byIteration;
-      decidedBy = 'inverse iteration';
-      const inside = orthonormalise([...rigidFree, ...space.vectors], undefined).vectors.slice(rigidFree.length);
-      shapes = inside
-        .filter((z) => norm(z) > 0.5)
-        .map((z) => ({
-          shape: scaled(spread(freedoms, z)),
-          singularValue: norm(multiplyTransposed(a, z)),
-        }));
-    }
   }
-  rank -= counted.length;
   shapes = [
     ...shapes,
     ...counted.map((z) => ({ shape: scaled(spread(freedoms, z)), singularValue: norm(multiplyTransposed(a, z)) })),
@@ -119,9 +98,77 @@ export function countStates(figure: PinFigure, zero: number = SINGULAR_CUT): Fig
       const t = scaled(multiplyTransposed(a, counted[state - elimination.dependent.length]));
       return { indices: Int32Array.from(t.keys()), values: t };
     },
-    decidedBy,
+    decidedBy: byIteration ? 'inverse iteration' : 'elimination',
     leastSingularValue: least,
   };
+}
+
+/** Number of states of self-stress alone, with the same rank. */
+export function countSelfStress(figure: PinFigure, zero: number): number {
+  return examinationOf(figure).a.columns - rankOf(figure, zero).rank;
+}
+
+interface Rank {
+  readonly rank: number;
+  readonly elimination: ColumnElimination;
+  /** Null where inverse iteration was not asked. */
+  readonly space: NullSpace | null;
+  /** Near-mechanisms that count as mechanisms. */
+  readonly counted: readonly Float64Array[];
+}
+
+function rankOf(figure: PinFigure, zero: number): Rank {
+  const { freedoms, sweepAlong, spaceOf } = examinationOf(figure);
+  const axes = sweepAxes(figure);
+  let elimination = sweepAlong(axes[0]);
+  const doubtful = (e: ColumnElimination): boolean =>
+    e.leastPivot < Math.max(DOUBTFUL_PIVOT, PIVOT_MARGIN * zero) || e.largestDropped > DOUBTFUL_DROP;
+  for (const axis of axes.slice(1)) {
+    if (!doubtful(elimination)) break;
+    const other = sweepAlong(axis);
+    if (other.leastPivot > elimination.leastPivot) elimination = other;
+  }
+  const nulls = freedoms.count - elimination.rank;
+  const asked =
+    freedoms.count > 0 && nulls <= ARBITER_VECTORS && (doubtful(elimination) || freedoms.count <= ARBITER_FREEDOMS);
+  const space = asked ? spaceOf() : null;
+  const counted = space?.next.filter((n) => n.value <= zero).map((n) => n.vector) ?? [];
+  const whole = space ? freedoms.count - space.vectors.length : elimination.rank;
+  return { rank: whole - counted.length, elimination, space, counted };
+}
+
+/** What does not depend on where nought ends: several cuts are put to one figure. */
+interface Examination {
+  readonly freedoms: Freedoms;
+  readonly a: SparseMatrix;
+  sweepAlong(axis: number): ColumnElimination;
+  spaceOf(): NullSpace;
+}
+
+const examined = new WeakMap<PinFigure, Examination>();
+
+function examinationOf(figure: PinFigure): Examination {
+  const known = examined.get(figure);
+  if (known) return known;
+  const freedoms = numberFreedoms(figure.fixed, 3);
+  const a = equilibriumMatrix(figure, freedoms);
+  const sweeps = new Map<number, ColumnElimination>();
+  let space: NullSpace | undefined;
+  const examination: Examination = {
+    freedoms,
+    a,
+    sweepAlong(axis) {
+      let found = sweeps.get(axis);
+      if (!found) sweeps.set(axis, (found = sweep(figure, freedoms, a, axis)));
+      return found;
+    },
+    spaceOf() {
+      space ??= leftNullSpace(a, { blockStarts: freedoms.blockStarts, points: blockPoints(freedoms, figure.nodes) });
+      return space;
+    },
+  };
+  examined.set(figure, examination);
+  return examination;
 }
 
 /** Axes by the figure's extent, longest first. */

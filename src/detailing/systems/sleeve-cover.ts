@@ -80,15 +80,18 @@ export function outlineInSlab(pieces: readonly ConvexPiece[], at: Vec3, slab: Sl
     const inside: [number, number][] = [];
     for (const p of local) if (p[2] >= slab.from && p[2] <= slab.to) inside.push([p[0], p[1]]);
     for (const [i, j] of piece.edges) {
-      const [p, q] = [local[i]!, local[j]!];
-      for (const level of [slab.from, slab.to])
-        if (p[2] < level !== q[2] < level) {
-          const t = (level - p[2]) / (q[2] - p[2]);
-          inside.push([p[0] + t * (q[0] - p[0]), p[1] + t * (q[1] - p[1])]);
-        }
+      crossLevel(inside, local[i]!, local[j]!, slab.from);
+      crossLevel(inside, local[i]!, local[j]!, slab.to);
     }
     const hull = convexHull2(inside);
     if (hull.length >= 3) polygons.push(hull);
   }
   return polygons;
+}
+
+/** Adds the point where the edge from p to q crosses a level, if it does. */
+function crossLevel(into: [number, number][], p: Vec3, q: Vec3, level: number): void {
+  if (p[2] < level === q[2] < level) return;
+  const t = (level - p[2]) / (q[2] - p[2]);
+  into.push([p[0] + t * (q[0] - p[0]), p[1] + t * (q[1] - p[1])]);
 }

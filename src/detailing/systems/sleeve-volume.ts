@@ -17,6 +17,7 @@ export function sleeveVolume(shape: HubShape): number {
   const planes = hull?.planes ?? new Float64Array(0);
   // A 12-gon that contains its circle is too large by this share of the area.
   let volume = (hull?.volume ?? 0) / polygonExcess(12) + (base ? plateVolume(base) : 0);
+  const p: [number, number, number] = [0, 0, 0]; // one for all points
   for (const s of sleeves) {
     for (const [from, to, low, high] of stretches(s)) {
       if (to <= from) continue;
@@ -27,11 +28,9 @@ export function sleeveVolume(shape: HubShape): number {
         const centre = scale(s.socket.direction, from + t * (to - from));
         const { grid, sizeA, sizeB } = gridAcross(half);
         for (let g = 0; g < grid.length; g += 2) {
-          const p = pointAcross(centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
-          if (insidePlanes(planes, p) || sleeves.some((o) => o !== s && insidePath(o, p))) continue;
-          let share = 1;
-          for (const other of sleeves) if (other !== s && insideSleeve(other, p)) share++;
-          volume += slice / share;
+          pointAcross(p, centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
+          const share = insidePlanes(planes, p) ? 0 : sharers(sleeves, s, p);
+          if (share > 0) volume += slice / share;
         }
       }
     }
@@ -43,6 +42,18 @@ export function sleeveVolume(shape: HubShape): number {
   }
   if (clamp) volume += armsVolume(clamp, sleeves, planes);
   return Math.max(volume, 0);
+}
+
+/** Sleeves that a point of one of them lies in, itself among them; none where another's path takes the plastic away. */
+function sharers(sleeves: readonly Sleeve[], own: Sleeve, p: Vec3): number {
+  let share = 1;
+  for (let i = 0; i < sleeves.length; i++) {
+    const other = sleeves[i]!;
+    if (other === own) continue;
+    if (insidePath(other, p)) return 0;
+    if (insideSleeve(other, p)) share++;
+  }
+  return share;
 }
 
 /** Points a side of the grid that an arm is summed over. */
@@ -77,13 +88,16 @@ function armsVolume(clamp: ClampParts, sleeves: readonly Sleeve[], planes: Float
 
 /** mm³ of the body that a strut's path takes beyond its own sleeve. */
 function pathThroughBody(s: Sleeve, planes: Float64Array, from: number): number {
+  const p: [number, number, number] = [0, 0, 0];
   let volume = 0;
   for (let at = from + STEP / 2; ; at += STEP) {
     const centre = scale(s.socket.direction, at);
     let hits = 0;
     const { grid, sizeA, sizeB } = gridAcross(s.inner);
-    for (let g = 0; g < grid.length; g += 2)
-      if (insidePlanes(planes, pointAcross(centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!))) hits++;
+    for (let g = 0; g < grid.length; g += 2) {
+      pointAcross(p, centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
+      if (insidePlanes(planes, p)) hits++;
+    }
     if (hits === 0) return volume;
     volume += (areaOf(s.inner) * STEP * hits) / (ROUND * ACROSS);
   }
@@ -110,9 +124,17 @@ const gridAcross = (half: Half): { readonly grid: Float64Array; readonly sizeA: 
     ? { grid: ROUND_GRID, sizeA: half, sizeB: half }
     : { grid: RECTANGLE_GRID, sizeA: half[0], sizeB: half[1] };
 
-/** centre + a y + b z of a sleeve's section. */
-function pointAcross(centre: Vec3, { socket: { y, z } }: Sleeve, a: number, b: number): Vec3 {
-  return [centre[0] + y[0] * a + z[0] * b, centre[1] + y[1] * a + z[1] * b, centre[2] + y[2] * a + z[2] * b];
+/** p = centre + a y + b z of a sleeve's section. */
+function pointAcross(
+  p: [number, number, number],
+  centre: Vec3,
+  { socket: { y, z } }: Sleeve,
+  a: number,
+  b: number,
+): void {
+  p[0] = centre[0] + y[0] * a + z[0] * b;
+  p[1] = centre[1] + y[1] * a + z[1] * b;
+  p[2] = centre[2] + y[2] * a + z[2] * b;
 }
 
 /** Centres of cells of equal area, two numbers each: of the unit circle, and of the square from -1 to 1. */

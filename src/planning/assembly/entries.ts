@@ -8,6 +8,18 @@ import { spread } from './spread.js';
  * as many as can be spread together: while the worst needs more than its limit, it is left to be closed.
  */
 export function entriesOf(setting: AssemblySetting, hub: number, links: readonly Link[]): readonly StrutEntry[] {
+  let known = found.get(setting);
+  if (!known) found.set(setting, (known = new Map()));
+  const key = `${hub}:${links.map((l) => l.strut).join()}`;
+  let entries = known.get(key);
+  if (!entries) known.set(key, (entries = findEntries(setting, hub, links)));
+  return entries;
+}
+
+/** Orders tried one after another come to the same hubs with the same struts. */
+const found = new WeakMap<AssemblySetting, Map<string, readonly StrutEntry[]>>();
+
+function findEntries(setting: AssemblySetting, hub: number, links: readonly Link[]): readonly StrutEntry[] {
   const mark = (link: Link): string => setting.topology.truss.members[link.strut]!.mark;
   const detailed = links.filter((l) => l.detail);
   const entries: StrutEntry[] = detailed.map((l) => ({

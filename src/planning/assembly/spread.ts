@@ -1,4 +1,4 @@
-import { addScaled, dot, length, normalise, scale, type Vec3, ZERO } from '../../maths/vec3.js';
+import { addScaled, length, normalise, scale, type Vec3, ZERO } from '../../maths/vec3.js';
 
 /** A strut between a loose hub and a standing one, as the spreading sees it. */
 export interface SpringStrut {
@@ -29,46 +29,72 @@ const PENALTY = 1e3;
  * (Hooke and Jeeves, J. ACM 8(2), 1961), from the mean of the directions. With one strut the ratio is 0: it slides in.
  */
 export function spread(struts: readonly SpringStrut[]): Spread {
+  const springs = struts.map(({ direction: [x, y, z], travel, aside }): Spring => ({ x, y, z, travel, aside }));
   const most = struts.reduce((m, s) => Math.max(m, s.travel), 0);
   const mean = struts.reduce<Vec3>((sum, s) => addScaled(sum, s.direction, 1), ZERO);
-  let best = scale(length(mean) > 1e-9 ? normalise(mean) : (struts[0]?.direction ?? ZERO), -most);
-  let value = cost(struts, best);
+  let [x, y, z] = scale(length(mean) > 1e-9 ? normalise(mean) : (struts[0]?.direction ?? ZERO), -most);
+  let value = cost(springs, x, y, z, Number.POSITIVE_INFINITY);
   let step = Math.max(most, 1e-6) * 2;
-  for (let h = 0; h < HALVINGS; h++) {
+  // No cost lies below nought: a strut alone slides in from where the search would begin.
+  for (let h = 0; h < HALVINGS && value > LEAST_GAIN; h++) {
     for (let moved = true; moved; ) {
       moved = false;
-      for (const d of PATTERN) {
-        const next = addScaled(best, d, step);
-        const at = cost(struts, next);
-        if (at < value - 1e-12) {
-          [best, value, moved] = [next, at, true];
+      for (let k = 0; k < PATTERN.length; k++) {
+        const d = PATTERN[k]!;
+        const nextX = x + d[0] * step;
+        const nextY = y + d[1] * step;
+        const nextZ = z + d[2] * step;
+        const at = cost(springs, nextX, nextY, nextZ, value);
+        if (at < value - LEAST_GAIN) {
+          x = nextX;
+          y = nextY;
+          z = nextZ;
+          value = at;
+          moved = true;
         }
       }
     }
     step /= 2;
   }
-  const each = struts.map((s) =>
-    short(s, best) > 1e-3 * s.travel ? Number.POSITIVE_INFINITY : sideways(s, best) / s.aside,
+  const each = springs.map((s) =>
+    short(s, x, y, z) > 1e-3 * s.travel ? Number.POSITIVE_INFINITY : sideways(s, x, y, z) / s.aside,
   );
-  return { ratio: each.reduce((m, r) => Math.max(m, r), 0), each, move: best };
+  return { ratio: each.reduce((m, r) => Math.max(m, r), 0), each, move: [x, y, z] };
+}
+
+/** A step counts when it gains more than round-off, as a share of what a strut is allowed. */
+const LEAST_GAIN = 1e-12;
+
+/** A strut with its direction in plain numbers: the search allocates nothing. */
+interface Spring {
+  readonly x: number;
+  readonly y: number;
+  readonly z: number;
+  readonly travel: number;
+  readonly aside: number;
 }
 
 /** |v - (v.d) d| */
-function sideways({ direction: d }: SpringStrut, v: Vec3): number {
-  const along = d[0] * v[0] + d[1] * v[1] + d[2] * v[2];
-  const x = v[0] - d[0] * along;
-  const y = v[1] - d[1] * along;
-  const z = v[2] - d[2] * along;
+function sideways(d: Spring, vx: number, vy: number, vz: number): number {
+  const along = d.x * vx + d.y * vy + d.z * vz;
+  const x = vx - d.x * along;
+  const y = vy - d.y * along;
+  const z = vz - d.z * along;
   return Math.sqrt(x * x + y * y + z * z);
 }
-const short = (s: SpringStrut, v: Vec3): number => Math.max(0, s.travel + dot(v, s.direction));
 
-function cost(struts: readonly SpringStrut[], v: Vec3): number {
+const short = (d: Spring, vx: number, vy: number, vz: number): number =>
+  Math.max(0, d.travel + (vx * d.x + vy * d.y + vz * d.z));
+
+/** The cost of holding the hub at v; infinite as soon as it is known to reach `limit`. */
+function cost(springs: readonly Spring[], vx: number, vy: number, vz: number, limit: number): number {
   let worst = 0;
   let missing = 0;
-  for (const s of struts) {
-    worst = Math.max(worst, sideways(s, v) / s.aside);
-    missing = Math.max(missing, short(s, v));
+  for (let i = 0; i < springs.length; i++) {
+    const s = springs[i]!;
+    worst = Math.max(worst, sideways(s, vx, vy, vz) / s.aside);
+    missing = Math.max(missing, short(s, vx, vy, vz));
+    if (worst + PENALTY * missing >= limit) return Number.POSITIVE_INFINITY;
   }
   return worst + PENALTY * missing;
 }

@@ -1,8 +1,17 @@
 import type { Topology } from '../../model/topology.js';
 import type { PinFigure } from '../pin-figure.js';
 
-/** The truss as a pin-jointed figure. Nodes where no strut ends take no part: they are held. */
+/** The truss as a pin-jointed figure, one object a truss. Nodes where no strut ends take no part: they are held. */
 export function figureOf(topology: Topology): PinFigure {
+  let figure = figures.get(topology);
+  if (!figure) figures.set(topology, (figure = makeFigure(topology)));
+  return figure;
+}
+
+/** What is found out about a figure is kept with it, so the same truss gives the same object. */
+const figures = new WeakMap<Topology, PinFigure>();
+
+function makeFigure(topology: Topology): PinFigure {
   const { truss } = topology;
   const fixed = new Uint8Array(3 * truss.nodes.length);
   for (const { node, fixed: held } of truss.supports) {

@@ -13,8 +13,12 @@ export interface TrussMatrix {
 
 export function trussMatrix(topology: Topology, supported: boolean): TrussMatrix {
   const onSupports = figureOf(topology);
-  const free = Uint8Array.from(onSupports.fixed, (_, f) => (topology.barsAt[Math.floor(f / 3)].length === 0 ? 1 : 0));
-  const figure = supported ? onSupports : { ...onSupports, fixed: free };
+  const figure = supported || topology.truss.supports.length === 0 ? onSupports : freeOf(topology, onSupports);
   const freedoms = numberFreedoms(figure.fixed, 3);
   return { figure, freedoms, matrix: equilibriumMatrix(figure, freedoms) };
+}
+
+function freeOf(topology: Topology, onSupports: PinFigure): PinFigure {
+  const fixed = Uint8Array.from(onSupports.fixed, (_, f) => (topology.barsAt[Math.floor(f / 3)].length === 0 ? 1 : 0));
+  return { ...onSupports, fixed };
 }

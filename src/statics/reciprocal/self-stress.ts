@@ -1,5 +1,5 @@
 import type { Topology } from '../../model/topology.js';
-import { countStates } from '../state-counts.js';
+import { countSelfStress } from '../state-counts.js';
 import { trussMatrix } from './equilibrium-matrix.js';
 
 /**
@@ -7,4 +7,4 @@ import { trussMatrix } from './equilibrium-matrix.js';
  * equilibrium matrix (unit directions) up to `cut` count as nought.
  */
 export const selfStressStates = (topology: Topology, supported: boolean, cut: number): number =>
-  countStates(trussMatrix(topology, supported).figure, cut).selfStressStates;
+  countSelfStress(trussMatrix(topology, supported).figure, cut);
