@@ -38,76 +38,107 @@ export function convexHull3(input: readonly Vec3[]): Hull3 | null {
   if (!start) return null;
 
   const [a, b, c, d] = start;
-  const live = [
-    makeFace(points, a, b, c),
-    makeFace(points, a, c, d),
-    makeFace(points, a, d, b),
-    makeFace(points, b, d, c),
-  ];
-  const visible: Face[] = [];
+  const at = new Float64Array(3 * n);
+  points.forEach((p, i) => {
+    at.set(p, 3 * i);
+  });
+  const faces = new FaceList(at);
+  faces.add(a, b, c);
+  faces.add(a, c, d);
+  faces.add(a, d, b);
+  faces.add(b, d, c);
   const edges = new Set<number>();
   for (let p = 0; p < n; p++) {
     if (p === a || p === b || p === c || p === d) continue;
-    const [x, y, z] = points[p]!;
-    visible.length = 0;
-    let hidden = 0;
-    for (let i = 0; i < live.length; i++) {
-      const f = live[i]!;
-      if (f.nx * x + f.ny * y + f.nz * z > f.d) visible.push(f);
-      else live[hidden++] = f;
-    }
+    const visible = faces.takeVisible(at[3 * p]!, at[3 * p + 1]!, at[3 * p + 2]!);
     if (visible.length === 0) continue;
-    live.length = hidden;
     // An edge of one visible face whose reverse belongs to no visible face lies on the horizon.
     edges.clear();
-    for (const f of visible)
-      edges
-        .add(f.a * n + f.b)
-        .add(f.b * n + f.c)
-        .add(f.c * n + f.a);
-    for (const f of visible) {
-      if (!edges.has(f.b * n + f.a)) live.push(makeFace(points, f.a, f.b, p));
-      if (!edges.has(f.c * n + f.b)) live.push(makeFace(points, f.b, f.c, p));
-      if (!edges.has(f.a * n + f.c)) live.push(makeFace(points, f.c, f.a, p));
-    }
+    for (let k = 0; k < visible.length; k += 3)
+      for (let m = 0; m < 3; m++) edges.add(visible[k + m]! * n + visible[k + ((m + 1) % 3)]!);
+    for (let k = 0; k < visible.length; k += 3)
+      for (let m = 0; m < 3; m++) {
+        const u = visible[k + m]!;
+        const v = visible[k + ((m + 1) % 3)]!;
+        if (!edges.has(v * n + u)) faces.add(u, v, p);
+      }
   }
-  const planes = new Float64Array(4 * live.length);
+  const corners: [number, number, number][] = [];
   let volume = 0;
-  live.forEach((f, i) => {
-    planes.set([f.nx, f.ny, f.nz, f.d], 4 * i);
-    volume += triple(points[f.a]!, points[f.b]!, points[f.c]!) / 6;
-  });
-  return { points, faces: live.map((f) => [f.a, f.b, f.c] as const), planes, volume };
+  for (let f = 0; f < faces.count; f++) {
+    const [i, j, k] = [faces.corners[3 * f]!, faces.corners[3 * f + 1]!, faces.corners[3 * f + 2]!];
+    corners.push([i, j, k]);
+    volume += triple(points[i]!, points[j]!, points[k]!) / 6;
+  }
+  return { points, faces: corners, planes: faces.planes.slice(0, 4 * faces.count), volume };
 }
 
-interface Face {
-  readonly a: number;
-  readonly b: number;
-  readonly c: number;
-  readonly nx: number;
-  readonly ny: number;
-  readonly nz: number;
-  readonly d: number;
+/** Triangles over points, three corners and a plane n·p = d each, in the order in which they were added. */
+class FaceList {
+  count = 0;
+  corners = new Int32Array(3 * 64);
+  planes = new Float64Array(4 * 64);
+  readonly #at: Float64Array;
+
+  constructor(at: Float64Array) {
+    this.#at = at;
+  }
+
+  add(a: number, b: number, c: number): void {
+    const f = this.count++;
+    if (3 * f === this.corners.length) {
+      this.corners = grown(this.corners, new Int32Array(6 * f));
+      this.planes = grown(this.planes, new Float64Array(8 * f));
+    }
+    this.corners[3 * f] = a;
+    this.corners[3 * f + 1] = b;
+    this.corners[3 * f + 2] = c;
+    setPlane(this.planes, 4 * f, this.#at, 3 * a, 3 * b, 3 * c);
+  }
+
+  /** Takes out the faces that see a point; their corners, three a face. The others keep their order. */
+  takeVisible(x: number, y: number, z: number): number[] {
+    const { planes, corners } = this;
+    const visible: number[] = [];
+    let kept = 0;
+    for (let f = 0; f < this.count; f++) {
+      const k = 4 * f;
+      if (planes[k]! * x + planes[k + 1]! * y + planes[k + 2]! * z > planes[k + 3]!) {
+        visible.push(corners[3 * f]!, corners[3 * f + 1]!, corners[3 * f + 2]!);
+        continue;
+      }
+      if (kept < f) {
+        corners.copyWithin(3 * kept, 3 * f, 3 * f + 3);
+        planes.copyWithin(4 * kept, k, k + 4);
+      }
+      kept++;
+    }
+    this.count = kept;
+    return visible;
+  }
 }
 
-function makeFace(points: readonly Vec3[], a: number, b: number, c: number): Face {
-  const p = points[a]!;
-  const q = points[b]!;
-  const r = points[c]!;
-  const ux = q[0] - p[0];
-  const uy = q[1] - p[1];
-  const uz = q[2] - p[2];
-  const vx = r[0] - p[0];
-  const vy = r[1] - p[1];
-  const vz = r[2] - p[2];
-  let nx = uy * vz - uz * vy;
-  let ny = uz * vx - ux * vz;
-  let nz = ux * vy - uy * vx;
+function grown<T extends Int32Array | Float64Array>(from: T, to: T): T {
+  to.set(from);
+  return to;
+}
+
+/** n = (q - p) x (r - p) / |...| and d = n·p of the points at p, q and r of `at`. */
+function setPlane(into: Float64Array, k: number, at: Float64Array, p: number, q: number, r: number): void {
+  const ux = at[q]! - at[p]!;
+  const uy = at[q + 1]! - at[p + 1]!;
+  const uz = at[q + 2]! - at[p + 2]!;
+  const vx = at[r]! - at[p]!;
+  const vy = at[r + 1]! - at[p + 1]!;
+  const vz = at[r + 2]! - at[p + 2]!;
+  const nx = uy * vz - uz * vy;
+  const ny = uz * vx - ux * vz;
+  const nz = ux * vy - uy * vx;
   const l = Math.hypot(nx, ny, nz) || 1;
-  nx /= l;
-  ny /= l;
-  nz /= l;
-  return { a, b, c, nx, ny, nz, d: nx * p[0] + ny * p[1] + nz * p[2] };
+  into[k] = nx / l;
+  into[k + 1] = ny / l;
+  into[k + 2] = nz / l;
+  into[k + 3] = into[k]! * at[p]! + into[k + 1]! * at[p + 1]! + into[k + 2]! * at[p + 2]!;
 }
 
 const triple = (a: Vec3, b: Vec3, c: Vec3): number =>
@@ -134,8 +165,9 @@ function firstTetrahedron(points: readonly Vec3[], extent: number): [number, num
   };
   const c = farthest(offLine);
   if (offLine(points[c]!) < flat) return null;
-  const f = makeFace(points, a, b, c);
-  const height = (p: Vec3): number => f.nx * p[0] + f.ny * p[1] + f.nz * p[2] - f.d;
+  const f = new Float64Array(4);
+  setPlane(f, 0, Float64Array.from([...points[a]!, ...points[b]!, ...points[c]!]), 0, 3, 6);
+  const height = (p: Vec3): number => f[0]! * p[0] + f[1]! * p[1] + f[2]! * p[2] - f[3]!;
   const d = farthest((p) => Math.abs(height(p)));
   if (Math.abs(height(points[d]!)) < flat) return null;
   return height(points[d]!) < 0 ? [a, b, c, d] : [a, c, b, d];

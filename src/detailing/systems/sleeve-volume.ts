@@ -2,6 +2,7 @@ import { scale, type Vec3 } from '../../maths/vec3.js';
 import { plateVolume } from './base-plate.js';
 import { type ClampParts, SCREW } from './clamp-parts.js';
 import type { HubShape } from './hub-shape.js';
+import { insideAll, mayTouch, planesCutting, reachOf } from './section-reach.js';
 import { areaOf, type Half, largest, type Sleeve } from './sleeve.js';
 import { bodyHull } from './sleeve-cover.js';
 import { between, insidePath, insidePlanes, insideSleeve } from './sleeve-inside.js';
@@ -27,9 +28,13 @@ export function sleeveVolume(shape: HubShape): number {
         const slice = (areaOf(half) * (to - from)) / ALONG / (ROUND * ACROSS);
         const centre = scale(s.socket.direction, from + t * (to - from));
         const { grid, sizeA, sizeB } = gridAcross(half);
+        // Most planes and sleeves lie wholly on one side of a slice: its points are held against the others alone.
+        const reach = reachOf(half);
+        const cutting = planesCutting(planes, centre, reach);
+        const others = sleeves.filter((o) => o !== s && mayTouch(o, centre, reach));
         for (let g = 0; g < grid.length; g += 2) {
           pointAcross(p, centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
-          const share = insidePlanes(planes, p) ? 0 : sharers(sleeves, s, p);
+          const share = cutting && insideAll(cutting, p) ? 0 : sharers(others, p);
           if (share > 0) volume += slice / share;
         }
       }
@@ -45,13 +50,11 @@ export function sleeveVolume(shape: HubShape): number {
 }
 
 /** Sleeves that a point of one of them lies in, itself among them; none where another's path takes the plastic away. */
-function sharers(sleeves: readonly Sleeve[], own: Sleeve, p: Vec3): number {
+function sharers(others: readonly Sleeve[], p: Vec3): number {
   let share = 1;
-  for (let i = 0; i < sleeves.length; i++) {
-    const other = sleeves[i]!;
-    if (other === own) continue;
-    if (insidePath(other, p)) return 0;
-    if (insideSleeve(other, p)) share++;
+  for (let i = 0; i < others.length; i++) {
+    if (insidePath(others[i]!, p)) return 0;
+    if (insideSleeve(others[i]!, p)) share++;
   }
   return share;
 }
@@ -94,9 +97,10 @@ function pathThroughBody(s: Sleeve, planes: Float64Array, from: number): number 
     const centre = scale(s.socket.direction, at);
     let hits = 0;
     const { grid, sizeA, sizeB } = gridAcross(s.inner);
-    for (let g = 0; g < grid.length; g += 2) {
+    const cutting = planesCutting(planes, centre, reachOf(s.inner));
+    for (let g = 0; cutting && g < grid.length; g += 2) {
       pointAcross(p, centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
-      if (insidePlanes(planes, p)) hits++;
+      if (insideAll(cutting, p)) hits++;
     }
     if (hits === 0) return volume;
     volume += (areaOf(s.inner) * STEP * hits) / (ROUND * ACROSS);

@@ -42,11 +42,7 @@ function count(topology: Topology, figure: PinFigure): States {
   const marks = truss.nodes.map((n) => n.mark);
   const at = truss.nodes.map((n) => n.at);
   const say = (shape: Float64Array) => mechanismInWords(marks, at, figure.ends, shape);
-  const notes = counts.mechanismShapes.map((m) => ({
-    ...say(m.shape),
-    shape: m.shape,
-    singularValue: m.singularValue,
-  }));
+  const notes = counts.mechanismShapes.map((m) => noteOf(m, () => say(m.shape)));
   const findings: Finding[] = counts.nearMechanisms.map((m) =>
     finding('near-mechanism', 'truss', {
       value: m.singularValue,
@@ -68,6 +64,25 @@ function count(topology: Topology, figure: PinFigure): States {
           findings.push(finding('truss-unsupported', 'truss', { about: { words: say(motion).words } }));
     }
   return { figure, counts, notes, findings, held };
+}
+
+/** The note on a mechanism; its words are looked for when they are read. */
+function noteOf(
+  { shape, singularValue }: FigureCounts['mechanismShapes'][number],
+  say: () => Pick<MechanismNote, 'words' | 'nodes'>,
+): MechanismNote {
+  let said: Pick<MechanismNote, 'words' | 'nodes'> | undefined;
+  const saying = () => (said ??= say());
+  return {
+    get words() {
+      return saying().words;
+    },
+    get nodes() {
+      return saying().nodes;
+    },
+    shape,
+    singularValue,
+  };
 }
 
 /** The record of the counts; `loads`: forces over all nodes of each case, N, three a node. */
