@@ -66,6 +66,29 @@ export interface BucklingResult {
   readonly shape: Float64Array | null;
   /** Mark of the strut that bows most between its nodes in the lowest shape; null where the nodes move most. */
   readonly strut: string | null;
+  /** Lowest factor with design stiffness (EN 1995-1-1 2.2.2: E0.05 / gammaM, creep under the permanent share); null: nothing buckles. */
+  readonly design?: number | null;
+  /** The strut nearest to Euler's load from node to node with pinned ends, with design stiffness; null: none is pressed. */
+  readonly euler?: { readonly strut: string; readonly factor: number } | null;
+}
+
+/** What a support on the ground must hold under one combination, N: tension and pressure positive, one of them 0. */
+export interface SupportDemand {
+  readonly node: string;
+  readonly combination: string;
+  readonly uplift: number;
+  readonly pressure: number;
+  readonly shear: number;
+  /** Ballast that holds the uplift down, kg. */
+  readonly ballast: number;
+}
+
+/** How near the whole is to tipping over an edge of its feet: overturning over holding moment of the worst combination. */
+export interface Overturning {
+  readonly edge: readonly [string, string];
+  readonly combination: string;
+  /** null: nothing holds it. */
+  readonly ratio: number | null;
 }
 
 /** All that statics finds out. A null field was not computed; the reason stands in `notChecked`. */
@@ -76,6 +99,10 @@ export interface Solution {
   /** By member index: the actions of every combination (and of the given forces). */
   readonly actions: readonly (readonly MemberActions[])[];
   readonly buckling: readonly BucklingResult[];
+  /** Every support held in z under every combination, and under the climber that lifts it most; absent: not analysed. */
+  readonly supports?: readonly SupportDemand[];
+  /** Absent: fewer than three feet, or not analysed. */
+  readonly overturning?: Overturning | null;
   /** Largest normalised residual of the solves behind this. */
   readonly solveResidual: number | null;
   readonly checked: readonly string[];

@@ -22,6 +22,8 @@ export function judgeMembers(
   const utilisations: Utilisation[] = [];
   const findings: Finding[] = [];
   const lacking = new Map<string, { standard: Standard; values: readonly string[]; count: number }>();
+  // Where people are under it or weather is on it, a strut that nothing judged is not built.
+  const level = job.use === 'outdoor' || job.use === 'overhead' ? 'stop' : 'warn';
   const unknown = new Map<string, { material: string; count: number }>();
   struts.forEach((strut, i) => {
     const { section, material } = strut;
@@ -38,7 +40,7 @@ export function judgeMembers(
     }
     if (said.kind === 'out-of-scope') {
       const about = { standard: said.standard.name, reason: said.reason };
-      findings.push(finding('strength-out-of-scope', strut.mark, { about }));
+      findings.push(finding('strength-out-of-scope', strut.mark, { level, about }));
       return;
     }
     const { utilisation, rule } = said.verdict;
@@ -51,7 +53,7 @@ export function judgeMembers(
   });
   for (const [material, { standard, values, count }] of lacking) {
     const about = { material, standard: standard.name, struts: count, values: values.join(', ') };
-    findings.push(finding('material-value-missing', 'truss', { about }));
+    findings.push(finding('material-value-missing', 'truss', { level, about }));
   }
   for (const [section, { material, count }] of unknown)
     findings.push(finding('section-material-unknown', 'truss', { value: count, about: { section, material } }));

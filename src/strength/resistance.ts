@@ -20,7 +20,13 @@ export interface Resistance {
   readonly round: boolean;
 }
 
-/** Elastic and plastic section values in closed form. Rectangle in torsion by Roark, table of torsion, case 4 (from memory). */
+/** 8 a b² / 3 over a polynomial in b/a: torsion modulus of a rectangle of half sides a >= b, Roark's Formulas for Stress and Strain, 6th ed., table of torsion, case 4 (from memory). */
+function rectangleTorsion(a: number, b: number): number {
+  const r = b / a;
+  return (8 * a * b * b) / 3 / (1 + 0.6095 * r + 0.8865 * r ** 2 - 1.8023 * r ** 3 + 0.91 * r ** 4);
+}
+
+/** Elastic and plastic section values in closed form. */
 export function resistanceOf(shape: SectionShape): Resistance {
   const { area, iy, iz } = sectionProperties(shape);
   const radii = { iy: Math.sqrt(iy / area), iz: Math.sqrt(iz / area) };
@@ -33,7 +39,7 @@ export function resistanceOf(shape: SectionShape): Resistance {
       wz: (h * b * b) / 6,
       wply: (b * h * h) / 4,
       wplz: (h * b * b) / 4,
-      wt: (8 * long ** 2 * short ** 2) / (3 * long + 1.8 * short),
+      wt: rectangleTorsion(long, short),
       ...radii,
       shearPeak: 1.5,
       round: false,

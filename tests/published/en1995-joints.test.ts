@@ -43,8 +43,8 @@ it('rows: three bolts at 5 d count as 2.12; one counts as one', () => {
 
 it('least distances of an M8 and an M16 bolt: the loaded end 80 and 112 mm', () => {
   // EN 1995-1-1 table 8.4 (from memory).
-  expect(leastDistances(8)).toEqual({ along: 40, end: 80, edge: 24 });
-  expect(leastDistances(16)).toEqual({ along: 80, end: 112, edge: 48 });
+  expect(leastDistances(8)).toEqual({ along: 40, end: 80, pressedEnd: 32, edge: 24 });
+  expect(leastDistances(16)).toEqual({ along: 80, end: 112, pressedEnd: 64, edge: 48 });
 });
 
 it('splitting of a member of 50 x 200 mm loaded at half its depth: 9.9 kN', () => {

@@ -4,6 +4,7 @@ import type { SectionShape } from '../../src/model/section.js';
 import type { MemberActions } from '../../src/model/solution.js';
 import { EN_1995 } from '../../src/strength/en1995/index.js';
 import { betaC, kc, relativeSlenderness } from '../../src/strength/en1995/kc.js';
+import { criticalBending, kcrit } from '../../src/strength/en1995/kcrit.js';
 import { kh } from '../../src/strength/en1995/kh.js';
 
 const MPA_PER_PSI = 6894.757293168e-6;
@@ -85,4 +86,75 @@ it('a D40 round bar of 12 x 300 mm carries 648 N for a medium time', () => {
   const { utilisation, rule } = EN_1995.judge(member, { ...none, axial: -647.6053878374541 }, dry);
   expect(utilisation).toBeCloseTo(1, 12);
   expect(rule).toBe('EN 1995-1-1 6.3.2 (6.23)');
+});
+
+describe('lateral buckling of a deep rectangle, EN 1995-1-1 6.3.3', () => {
+  it('kcrit: 1 up to 0.75, 1.56 - 0.75 lambda up to 1.4, 1 / lambda² beyond (6.34), from memory', () => {
+    expect([0.5, 0.75, 1, 1.4, 2].map(kcrit)).toEqual([1, 1, expect.closeTo(0.81, 12), expect.closeTo(0.51, 12), 0.25]);
+  });
+  it('C24 of 38 x 235 mm over 4 m: sigma_m,crit = 0.78 b² E0.05 / (h lef) = 8.867 MPa, lambda 1.645, kcrit 0.3695', () => {
+    // 0.78 x 38² x 7400 / (235 x 4000) = 8.8668; sqrt(24 / 8.8668) = 1.64521; 1 / 2.70672 = 0.369451 (worked in Python).
+    expect(criticalBending(38, 235, 4000, 7400)).toBeCloseTo(8.86677, 4);
+    const member = {
+      shape: { kind: 'rectangle', width: 38, height: 235 } as const,
+      material: timber('C24'),
+      bucklingLength: 4000,
+    };
+    const m = 5e5;
+    const w = (38 * 235 ** 2) / 6;
+    const bent = m / w / (0.369449 * ((24 * 0.8) / 1.3));
+    const alone = EN_1995.judge(member, { ...none, momentY: m }, dry);
+    expect(alone.rule).toBe('EN 1995-1-1 6.3.3 (6.33)');
+    expect(alone.utilisation).toBeCloseTo(bent, 4);
+    // (6.35): (sigma_m / (kcrit fm))² + sigma_c / (kc,z fc), which (6.24) with 0.7 of the plain bending does not reach here.
+    const both = EN_1995.judge(member, { ...none, momentY: 1.9 * m, axial: -200 }, dry);
+    const rel = (4000 / (38 / Math.sqrt(12)) / Math.PI) * Math.sqrt(21 / 7400);
+    const k = 0.5 * (1 + 0.2 * (rel - 0.3) + rel ** 2);
+    const column = 1 / (k + Math.sqrt(k ** 2 - rel ** 2));
+    expect(both.rule).toBe('EN 1995-1-1 6.3.3 (6.35)');
+    expect(both.utilisation).toBeCloseTo((1.9 * bent) ** 2 + 200 / (38 * 235) / (column * ((21 * 0.8) / 1.3)), 4);
+  });
+  it('lying on its side it is the same', () => {
+    const member = (width: number, height: number) => ({
+      shape: { kind: 'rectangle', width, height } as const,
+      material: timber('C24'),
+      bucklingLength: 4000,
+    });
+    const up = EN_1995.judge(member(38, 235), { ...none, momentY: 5e5 }, dry);
+    const flat = EN_1995.judge(member(235, 38), { ...none, momentZ: 5e5 }, dry);
+    expect(flat.utilisation).toBeCloseTo(up.utilisation, 12);
+  });
+});
+
+describe('torsion, EN 1995-1-1 6.1.8 (6.14)', () => {
+  const torque = (shape: SectionShape, t: number) =>
+    EN_1995.judge({ shape, material: timber('C24'), bucklingLength: 1000 }, { ...none, torsion: t }, dry);
+  it('kshape 1.2 of a round bar: 16 T / (pi d³) over 1.2 fv', () => {
+    const { utilisation, rule } = torque({ kind: 'round', diameter: 40 }, 20000);
+    expect(utilisation).toBeCloseTo((16 * 20000) / (Math.PI * 40 ** 3) / (1.2 * ((4 * 0.8) / 1.3)), 10);
+    expect(rule).toBe('EN 1995-1-1 6.1.8 (6.14)');
+  });
+  it('kshape 1 + 0.05 h/b of a rectangle, at most 1.3 (A2:2014, from memory); a square twists by T / 0.208 b³', () => {
+    // Timoshenko and Goodier, Theory of Elasticity, table of rectangular bars: 0.208 for a square, 0.246 for 2 : 1 (from memory).
+    const square = torque({ kind: 'rectangle', width: 60, height: 60 }, 1e5);
+    expect(square.utilisation / (1e5 / (0.208 * 60 ** 3) / (1.05 * ((4 * 0.8) / 1.3)))).toBeCloseTo(1, 2);
+    const flat = torque({ kind: 'rectangle', width: 40, height: 80 }, 1e5);
+    expect(flat.utilisation / (1e5 / (0.246 * 80 * 40 ** 2) / (1.1 * ((4 * 0.8) / 1.3)))).toBeCloseTo(1, 2);
+  });
+});
+
+it('kh of tension goes by the larger side, of bending by the depth in that bending; glulam up to 600 mm', () => {
+  const member = (width: number, height: number, material: string) => ({
+    shape: { kind: 'rectangle', width, height } as const,
+    material: timber(material),
+    bucklingLength: 1000,
+  });
+  const fd = (x: number): number => (x * 0.8) / 1.3;
+  const pulled = EN_1995.judge(member(50, 100, 'C24'), { ...none, axial: 10000 }, dry).utilisation;
+  expect(pulled).toBeCloseTo(10000 / 5000 / (fd(14.5) * 1.5 ** 0.2), 10);
+  const weak = EN_1995.judge(member(50, 100, 'C24'), { ...none, momentZ: 1e5 }, dry).utilisation;
+  // (6.12) with 1 on the weak axis: W = 100 x 50²/6, kh of 50 mm = min(3^0.2, 1.3).
+  expect(weak).toBeCloseTo(1e5 / ((100 * 50 ** 2) / 6) / (fd(24) * 3 ** 0.2), 10);
+  expect(kh('glulam', 300, 420)).toBeCloseTo(2 ** 0.1, 12);
+  expect(kh('glulam', 100, 420)).toBe(1.1);
 });

@@ -54,7 +54,7 @@ it('net section in tension alone: (70 - 10) x (95 - 9) mm² x 14.5 x 0.8 / 1.3',
   expect(bolted(socketCase(-1000))!.some((v) => v.rule.includes('5.2'))).toBe(false);
 });
 
-it('a loaded end nearer than 80 mm fails by the table, a compressed one does not ask', () => {
+it('a loaded end nearer than 80 mm fails by the table, a compressed one asks for 4 d', () => {
   expect(judgeSocket(socketCase(10, { endDistance: 40 }))).toEqual({
     utilisation: 2,
     rule: 'EN 1995-1-1 table 8.4, loaded end',

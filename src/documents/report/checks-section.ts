@@ -1,3 +1,4 @@
+import type { BucklingResult } from '../../model/solution.js';
 import type { Flow } from '../kit/flow.js';
 import { fixed, type Units } from '../kit/units.js';
 import type { PackRecords } from '../records.js';
@@ -28,14 +29,28 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
     for (const note of counts.mechanismNotes.slice(0, MECHANISMS_SHOWN)) flow.paragraph(`Mechanism: ${note.words}.`);
     const more = counts.mechanismNotes.length - MECHANISMS_SHOWN;
     if (more > 0) flow.paragraph(`And ${more} more mechanisms of this kind.`);
-  }
-  for (const buckling of solution?.buckling ?? [])
-    if (buckling.factors[0] !== undefined)
+    if (counts.mechanisms > 0 && counts.loadCompatible !== null)
       flow.paragraph(
-        `Buckling of the whole under ${buckling.combination}: lowest load factor ${fixed(buckling.factors[0], 2)}.`,
+        counts.loadCompatible
+          ? 'The loads are compatible with the mechanisms: they do no work on them, so the struts alone can balance them.'
+          : 'The loads are not compatible with the mechanisms: they drive them, and struts on pins alone cannot balance them.',
       );
+  }
+  for (const buckling of solution?.buckling ?? []) bucklingWords(flow, buckling);
   flow.paragraph(`Checked: ${checked.length > 0 ? checked.join(', ') : 'nothing'}.`);
   if (notChecked.length > 0) flow.paragraph(`Not checked: ${notChecked.join(', ')}.`, { bold: true });
+}
+
+function bucklingWords(flow: Flow, { combination, factors, strut, design, euler }: BucklingResult): void {
+  if (factors[0] === undefined) return;
+  const designed = design !== undefined && design !== null && design < factors[0];
+  const first = strut ? `${strut} bows first` : 'the nodes sway first';
+  const own = euler
+    ? ` Taken alone, from node to node with pinned ends, ${euler.strut} is nearest to its Euler load: at ${fixed(euler.factor, 2)} times.`
+    : '';
+  flow.paragraph(
+    `Buckling of the whole under ${combination}: lowest load factor ${fixed(factors[0], 2)}${designed ? `, ${fixed(design, 2)} with design stiffness` : ''}; ${first}.${own}`,
+  );
 }
 
 function reciprocalWords(flow: Flow, { reciprocal }: PackRecords): void {

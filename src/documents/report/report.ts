@@ -11,6 +11,7 @@ import { comparisonSection } from './comparison-section.js';
 import { findingsSection } from './findings-section.js';
 import { materialsSection } from './materials-section.js';
 import { picturesSection } from './pictures/index.js';
+import { supportsSection } from './supports-section.js';
 import { totalsSection } from './totals-section.js';
 import { utilisationSection } from './utilisation-section.js';
 
@@ -26,6 +27,7 @@ export async function report(records: PackRecords, fonts: Fonts): Promise<Writte
   const flow = new Flow(paper);
   findingsSection(flow, records);
   checksSection(flow, records, units);
+  supportsSection(flow, records, units);
   totalsSection(flow, records, units);
   flow.heading('Cautions', 30);
   for (const { trade, words } of CAUTIONS) flow.paragraph(`${trade}. ${words}`);

@@ -132,7 +132,7 @@ export const STATICS_FINDINGS = {
     'truss',
     '',
     (f) =>
-      `tips over ${f.about?.['edge']} under ${f.about?.['combination']}: overturning is ${num(f.value, 2)} times what its loads hold down; widen the base or anchor it`,
+      `tips over ${f.about?.['edge']} under ${f.about?.['combination']}: ${f.value === null ? 'nothing holds it down' : `overturning is ${num(f.value, 2)} times what its loads hold down`}; widen the base or anchor it`,
   ),
   'forces-not-elastic': entry(
     'note',

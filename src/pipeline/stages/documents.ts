@@ -4,6 +4,7 @@ import { packingListCsv } from '../../documents/assembly/packing-list.js';
 import { checkReport } from '../../documents/check-json.js';
 import { forceSheets } from '../../documents/forces/force-sheets.js';
 import { forcesCsv } from '../../documents/forces/forces-csv.js';
+import { supportsCsv } from '../../documents/forces/supports-csv.js';
 import { writeJson } from '../../documents/formats/json.js';
 import type { Fonts } from '../../documents/kit/fonts.js';
 import { barAnglesCsv } from '../../documents/nodes/bar-angles.js';
@@ -38,6 +39,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['report.pdf', report],
   ['forces/forces.csv', forcesCsv],
   ['forces/force-sheets.pdf', forceSheets],
+  ['forces/supports.csv', supportsCsv],
   ['struts/cut-list.csv', cutListCsv],
   ['struts/cut-list.pdf', cutListPdf],
   ['struts/stock-plan.json', stockPlanJson],

@@ -18,9 +18,11 @@ import { climberActions } from './climber.js';
 import { equilibriumOfCase } from './equilibrium-of-case.js';
 import { strutStiffness } from './member-stiffness.js';
 import { jointsHold, type Model, modelOf, respond } from './model.js';
+import { overturningOf } from './overturning.js';
 import { actionsOf, axialForces, combine, pinLoads, type Response } from './response.js';
 import { stabilityOf } from './stability.js';
 import { countsRecord, type States, statesOf } from './states.js';
+import { supportDemands } from './support-demands.js';
 import { overturningFindings, upliftFindings } from './supports.js';
 
 /** A solve with a larger normalised residual is reported: well-posed ones stay below 1e-14. */
@@ -107,6 +109,9 @@ export function analyseTruss(input: AnalysisInput): Analysed {
   );
 
   let worstResidual = residual;
+  const supports = combined.flatMap((r, c) => supportDemands(topology, combinations[c]!.name, r.reactions));
+  const climber_N = climbed(job) ? job.analysis.climber_N : 0;
+  const overturning = overturningOf(topology, job, cases, combinations, climber_N);
   if (climbed(job)) {
     const permanent = cases.map((c, i) => [i, c] as const).filter(([, c]) => c.duration === 'permanent');
     const dead =
@@ -119,6 +124,7 @@ export function analyseTruss(input: AnalysisInput): Analysed {
     const climber = climberActions(topology, job, parts, model, dead, spans);
     for (const [e, own] of climber.actions.entries()) actions[e]!.push(...own);
     worstResidual = Math.max(worstResidual, climber.residual);
+    supports.push(...climber.supports);
   }
   if (given) findings.push(...besideGiven(topology, given, pin, cases, responses, actions, job));
 
@@ -129,8 +135,7 @@ export function analyseTruss(input: AnalysisInput): Analysed {
   if (stability) findings.push(...stability.findings);
   for (const [e, own] of (stability?.secondOrder?.actions ?? []).entries()) actions[e]!.push(...own);
   findings.push(...mechanismNotes(states, job, parts, stability?.lowest ?? null, held));
-  findings.push(...upliftFindings(topology, job, combinations, combined));
-  findings.push(...overturningFindings(topology, job, cases, combinations));
+  findings.push(...upliftFindings(supports, job), ...overturningFindings(overturning, job));
   if (worstResidual > INEXACT)
     findings.push(finding('solve-inexact', 'truss', { value: worstResidual, limit: INEXACT }));
 
@@ -153,6 +158,8 @@ export function analyseTruss(input: AnalysisInput): Analysed {
       combinations: combined.map((r, c) => result(combinations[c]!.name, 'combination', r)),
       actions,
       buckling: stability?.buckling ?? [],
+      supports,
+      overturning,
       solveResidual: worstResidual,
       checked: ['states', 'loads', ...(stability ? ['stability'] : [])],
       notChecked: stability ? [] : ['stability'],

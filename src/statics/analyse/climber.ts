@@ -1,13 +1,22 @@
 import type { Job } from '../../model/job/index.js';
 import type { Parts } from '../../model/parts.js';
-import type { MemberActions } from '../../model/solution.js';
+import type { MemberActions, SupportDemand } from '../../model/solution.js';
 import type { Topology } from '../../model/topology.js';
 import { CaseBuilder, type LoadCase } from '../loads/load-case.js';
 import { type Model, respond } from './model.js';
 import { actionsOf, combine, type Response } from './response.js';
+import { mostLifted, supportDemands } from './support-demands.js';
 
 /** Nodes whose loads are solved for at once: bounds the memory. */
 const CHUNK = 64;
+
+export interface Climbed {
+  /** By member index. */
+  readonly actions: readonly (readonly MemberActions[])[];
+  /** What lifts each support most, the permanent loads at their favourable factor; supports that no climber lifts are left out. */
+  readonly supports: readonly SupportDemand[];
+  readonly residual: number;
+}
 
 /**
  * Actions under a person at each node in turn beside the permanent loads: per member those of the largest and least axial
@@ -20,11 +29,12 @@ export function climberActions(
   model: Exclude<Model, { kind: 'mechanism' }>,
   permanent: Response | null,
   spans: readonly (readonly [number, number])[],
-): { readonly actions: readonly (readonly MemberActions[])[]; readonly residual: number } {
+): Climbed {
   const { truss } = topology;
-  const { gammaQ, gammaG } = job.loads;
+  const { gammaQ, gammaG, gammaGfavourable } = job.loads;
   const members = truss.members.length;
   const kept: MemberActions[][] = truss.members.map(() => []);
+  let lifted: SupportDemand[] = [];
   let residual = 0;
   const nodes = truss.nodes.map((_, i) => i).filter((i) => topology.barsAt[i]!.length > 0);
   for (let from = 0; from < nodes.length; from += CHUNK) {
@@ -48,9 +58,12 @@ export function climberActions(
         : combine([r], [[0, gammaQ]]);
       const name = `${permanent ? `${gammaG} G + ` : ''}${gammaQ} climber at ${cases[k]!.name}`;
       for (let e = 0; e < members; e++) keepExtremes(kept[e]!, actionsOf(both, e, ...spans[e]!, name, 'short'));
+      const held = r.reactions.map((v, i) => gammaQ * v + gammaGfavourable * (permanent?.reactions[i] ?? 0));
+      const light = `${permanent ? `${gammaGfavourable} G + ` : ''}${gammaQ} climber at ${cases[k]!.name}`;
+      lifted = mostLifted([...lifted, ...supportDemands(topology, light, held)]);
     });
   }
-  return { actions: kept, residual };
+  return { actions: kept, supports: lifted, residual };
 }
 
 /** Keeps at most three: the largest axial force, the least, the largest moment. */

@@ -2,6 +2,7 @@ import type { Finding } from '../../model/finding.js';
 import { finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { Parts } from '../../model/parts.js';
+import { sectionProperties } from '../../model/section.js';
 import type { BucklingResult } from '../../model/solution.js';
 import type { Topology } from '../../model/topology.js';
 import { bucklesBelow, bucklingFactors } from '../frame/frame-buckling.js';
@@ -10,7 +11,7 @@ import { type Subdivided, subdivide } from '../frame/subdivide.js';
 import type { Combination } from '../loads/combinations.js';
 import type { LoadCase } from '../loads/load-case.js';
 import { pinBucklesBelow, pinBuckling } from '../pin-buckling.js';
-import { designStiffness } from './design-stiffness.js';
+import { designShare, designStiffness } from './design-stiffness.js';
 import type { Model } from './model.js';
 import { axialForces, PER_MEMBER, type Response } from './response.js';
 import { type SecondOrderActions, secondOrderActions } from './second-order-actions.js';
@@ -62,7 +63,8 @@ export function stabilityOf(
   }
   for (const c of chosen) {
     const { name } = combinations[c]!;
-    const softer = designStiffness(job, parts, permanentShare(topology, cases, combinations[c]!));
+    const share = permanentShare(topology, cases, combinations[c]!);
+    const softer = designStiffness(job, parts, share);
     const pinned = model.kind === 'pinned' ? model.truss : null;
     const axial = cut ? elementForces(topology, responses[c]!, cut.sub) : axialForces(responses[c]!);
     // One factorisation says whether this combination is worse than the worst so far; only then are its factors sought.
@@ -78,6 +80,8 @@ export function stabilityOf(
       combination: name,
       factors: found.factors,
       strut: shape && cut ? bowingStrut(topology, cut.sub, shape) : null,
+      design: found.factors.length > 0 ? found.factors[0]! * softer : null,
+      euler: nearestToEuler(topology, job, parts, axialForces(responses[c]!), share),
       shape: shape
         ? Float64Array.from(
             { length: 3 * topology.truss.nodes.length },
@@ -135,6 +139,26 @@ function bowingStrut(topology: Topology, sub: Subdivided, shape: Float64Array): 
   if (node < topology.truss.nodes.length) return null;
   const element = sub.frame.members.findIndex((m) => m.ends[1] === node);
   return topology.truss.members[sub.memberOf[element]!]!.mark;
+}
+
+/** The strut with the lowest pi² E I / L² over its compression, from node to node with pinned ends, E the design stiffness; null: none is pressed. */
+function nearestToEuler(
+  topology: Topology,
+  job: Job,
+  parts: Parts,
+  axial: Float64Array,
+  share: number,
+): { readonly strut: string; readonly factor: number } | null {
+  let nearest: { strut: string; factor: number } | null = null;
+  parts.struts.forEach(({ section, material, mark }, e) => {
+    if (!section || !material || !(axial[e]! < 0)) return;
+    const { iy, iz } = sectionProperties(section.shape);
+    const length = topology.axisLength[e]! * job.strength.effectiveLength;
+    const stiffness = material.modulus * designShare(job, material, share) * Math.min(iy, iz);
+    const factor = (Math.PI ** 2 * stiffness) / length ** 2 / -axial[e]!;
+    if (nearest === null || factor < nearest.factor) nearest = { strut: mark, factor };
+  });
+  return nearest;
 }
 
 /** Combinations by the largest compression over Euler's load of any strut, worst first; those without compression are left out. */

@@ -23,7 +23,7 @@ const psi0 = (kind: CaseKind, job: Job): number =>
   kind === 'imposed' ? PSI0_IMPOSED[job.loads.category] : kind === 'snow' ? 0.5 : 0.6;
 
 /**
- * Combinations of the job's own writing, or by EN 1990 expression (6.10): gammaG G, gammaG G + gammaQ Q1 + sum gammaQ psi0 Qi
+ * Combinations of the job's own writing, with the uplift combination where they leave it out, or by EN 1990 expression (6.10): gammaG G, gammaG G + gammaQ Q1 + sum gammaQ psi0 Qi
  * for each leading action, and gammaG,inf G + gammaQ Q1 for each (always so with wind). Cases of one variable kind are
  * alternatives to each other, but for imposed loads, which act alone and all together.
  */
@@ -49,7 +49,22 @@ function written(cases: readonly LoadCase[], job: Job): ReturnType<typeof combin
     const favourable = known.some(([i, f]) => PERMANENT.includes(cases[i]!.kind) && f <= 1);
     if (known.length > 0) combinations.push({ name, factors: known, duration: shortest(known, cases), favourable });
   }
-  return { combinations, findings };
+  return { combinations: [...combinations, ...missingUplift(combinations, cases, job)], findings };
+}
+
+/** gammaG,inf G + gammaQ W for each wind case that no written combination lets lift: light things are lost by it, so it is never left out. */
+function missingUplift(given: readonly Combination[], cases: readonly LoadCase[], job: Job): Combination[] {
+  const { gammaGfavourable, gammaQ } = job.loads;
+  const permanent = cases.map((_, i) => i).filter((i) => PERMANENT.includes(cases[i]!.kind));
+  const lifts = (c: Combination, wind: number): boolean =>
+    c.factors.some(([i, f]) => i === wind && f >= gammaQ) &&
+    c.factors.every(([i, f]) => !permanent.includes(i) || f <= gammaGfavourable);
+  return cases.flatMap((c, wind) => {
+    if (c.kind !== 'wind' || given.some((g) => lifts(g, wind))) return [];
+    const factors = [...permanent.map((i) => [i, gammaGfavourable] as const), [wind, gammaQ] as const];
+    const name = nameOf(factors, cases, permanent.length > 1);
+    return [{ name, factors, duration: shortest(factors, cases), favourable: true }];
+  });
 }
 
 function generated(cases: readonly LoadCase[], job: Job): Combination[] {

@@ -61,6 +61,7 @@ export const bolted: SocketPath = (c) => {
     const pulled = actions.axial > 0 ? force / net : 0;
     push((pulled + (6 * bending) / (net * end.plate)) / tension, 'net section of the plate, across layers');
   }
+  if (actions.axial < 0) push(least.pressedEnd / end.endDistance, 'EN 1995-1-1 table 8.4, unloaded end');
   if (actions.axial > 0) {
     push(least.end / end.endDistance, 'EN 1995-1-1 table 8.4, loaded end');
     const net = woodLimit(strut, 'ft', actions.duration, rules);

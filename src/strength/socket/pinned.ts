@@ -2,6 +2,7 @@ import { PIN_STEEL } from '../../model/catalogue/pin.js';
 import { GAMMA_M_CONNECTION, kMod } from '../../model/catalogue/timber-factors.js';
 import { PIN_FACTORS, pinBearing, pinUse } from '../en1993/pin.js';
 import { embeddingStrength } from '../en1995/joint/embedding.js';
+import { leastDistances } from '../en1995/joint/row.js';
 import { hubLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
@@ -12,7 +13,7 @@ import { sleeveChecks } from './sleeve.js';
  * Pinned: a steel cross pin at half the socket's depth carries tension and compression.
  * Pin in double shear 0.6 A fup / gammaM2 a plane and in bending F/8 (b + 4 c + 2 a) against 1.5 Wel fyp / gammaM0 (EN 1993-1-8 3.13, table 3.10, figure 3.11);
  * bearing on wood fh,k = 0.082 (1 - 0.01 d) rho_k (EN 1995-1-1 8.5.1.1 (8.16)) and on the two walls; in tension the strut's net section, plug shear of the wood
- * behind the pin (two planes as long as the end distance) and of the walls before it, and the sleeve's net section.
+ * behind the pin (two planes as long as the end distance; dowels of 6 mm and more in graded timber keep the distances of EN 1995-1-1 8.6) and of the walls before it, and the sleeve's net section.
  */
 export const pinned: SocketPath = (c) => {
   const { actions, rules, strut, hub, socket } = c;
@@ -52,11 +53,21 @@ export const pinned: SocketPath = (c) => {
     const plug = woodLimit(strut, 'fv', duration, rules);
     if (plug !== null)
       push(end > 0 ? force / (2 * end * t * plug) : NO_END_DISTANCE, 'plug shear of the strut behind the pin');
+    // Thinner pins are no dowels by 8.6 (2); plug shear alone judges them.
+    if (d >= LEAST_DOWEL && strut.strength['fvk'] !== undefined) {
+      const least = leastDistances(d);
+      if (force > 0)
+        push(end > 0 ? least.end / end : NO_END_DISTANCE, 'EN 1995-1-1 8.6, table 8.5, loaded end of the pin');
+      if (force > 0) push(least.edge / (t / 2), 'EN 1995-1-1 8.6, table 8.5, edge of the pin');
+    }
     const plastic = hubLimit(hub, 'fv', duration, rules);
     if (plastic !== null) push(force / (4 * (socket.depth / 2) * wall * plastic), 'plug shear of the socket walls');
   }
   return [...checks, ...sleeveChecks(c, sleeve(c).area - 2 * d * wall)];
 };
+
+/** Thinnest dowel that EN 1995-1-1 8.6 (2) covers, mm. */
+const LEAST_DOWEL = 6;
 
 /** Utilisation reported where the pin sits beyond the strut's end: it holds nothing, however small the force. */
 const NO_END_DISTANCE = 1000;

@@ -342,6 +342,43 @@ describe('supports', () => {
     expect(codes(r)).toContain('truss-overturns');
   });
 
+  it('each has its pressure, uplift, shear and ballast under every combination', () => {
+    const r = run(tripod([60, 0, -10]), pinned);
+    const demands = r.solution.supports!;
+    expect(demands.length).toBe(3 * r.solution.combinations.length);
+    for (const [c, combination] of r.solution.combinations.entries())
+      for (const [k, { node, force }] of combination.reactions.entries()) {
+        const d = demands[3 * c + k];
+        expect([d.node, d.combination]).toEqual([node, combination.name]);
+        expect(d.pressure - d.uplift).toBeCloseTo(force[2], 9);
+        expect(d.shear).toBeCloseTo(Math.hypot(force[0], force[1]), 9);
+        expect(d.ballast).toBeCloseTo(d.uplift / (0.9 * G), 9);
+      }
+    // One load that pushes it over and nothing else: nothing holds it.
+    expect(r.solution.overturning).toMatchObject({ ratio: null });
+  });
+
+  it('tip over by 1.5 x 60 N x 400 mm against 0.9 x 10 N x 150 mm: 26.7 (by hand, feet on a circle of 300 mm)', () => {
+    const wind = { name: 'wind', kind: 'wind', nodes: [{ node: 'N0', force_N: [-60, 0, 0] }], misfit: [] };
+    const { overturning } = run(tripod([0, 0, -10]), { ...pinned, loads: { cases: [wind] } } as never).solution;
+    expect(overturning!.ratio).toBeCloseTo((1.5 * 60 * 400) / (0.9 * 10 * 150), 9);
+    expect(overturning!.combination).toBe('0.9 given + 1.5 wind');
+  });
+
+  it('a climber 200 mm beyond the feet tips it and lifts each far foot by 333 N (1.5 kN x 200 / 450 by two, by hand)', () => {
+    const far = tripod([0, 0, 0]);
+    const nodes = far.nodes.map((n, i) => (i === 0 ? { ...n, at: [500, 0, 400] as const } : n));
+    const r = run({ ...far, nodes }, { ...pinned, use: 'outdoor', loads: { indoors: true } } as never);
+    expect(r.solution.overturning!.combination).toContain('climber at N0');
+    expect(r.findings.some((f) => f.code === 'truss-overturns' && f.level === 'stop')).toBe(true);
+    const lifted = r.solution.supports!.filter((d) => d.uplift > 0);
+    expect(lifted.map((d) => d.node)).toEqual(['N2', 'N3']);
+    for (const d of lifted) {
+      expect(d.uplift).toBeCloseTo((1500 * 200) / 450 / 2, 6);
+      expect(d.combination).toBe('0.9 G + 1.5 climber at N0');
+    }
+  });
+
   it('on plain ground cannot be lifted outdoors', () => {
     const r = run(tripod([60, 0, -10]), {
       ...pinned,

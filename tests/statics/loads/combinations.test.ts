@@ -72,4 +72,27 @@ describe('combinations by EN 1990 (6.10)', () => {
     expect(combinations).toEqual([{ name: 'mine', factors: [[0, 2]], duration: 'short', favourable: false }]);
     expect(findings.map((f) => f.about?.['case'])).toEqual(['rain', 'hail']);
   });
+
+  it('written ones that do not let the wind lift get 0.9 G + 1.5 W beside them, once', () => {
+    const list = cases([
+      ['self-weight', 'self-weight'],
+      ['gust', 'wind'],
+      ['gale', 'wind'],
+    ]);
+    const down = { name: 'down', factors: { 'self-weight': 1.35, gust: 1.5 } };
+    const weak = { name: 'weak', factors: { 'self-weight': 0.9, gust: 1 } };
+    const up = { name: 'up', factors: { 'self-weight': 0.9, gust: 1.5 } };
+    const written = (...combinations: { name: string; factors: Record<string, number> }[]) =>
+      combinationsOf(list, jobWith({ loads: { combinations } })).combinations;
+    expect(written(down, weak).map((c) => c.name)).toEqual(['down', 'weak', '0.9 G + 1.5 gust', '0.9 G + 1.5 gale']);
+    expect(written(down, up).map((c) => c.name)).toEqual(['down', 'up', '0.9 G + 1.5 gale']);
+    expect(written(down)[1]).toMatchObject({
+      factors: [
+        [0, 0.9],
+        [1, 1.5],
+      ],
+      duration: 'short',
+      favourable: true,
+    });
+  });
 });
