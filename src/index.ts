@@ -1,5 +1,5 @@
 /** The library: the same functions that the commands use, without the file system. */
-import { nestPanels as nest } from './planning/nesting/nest-panels.js';
+import { type NestingHelp, nestPanels as nest } from './planning/nesting/nest-panels.js';
 import type { NestingAnswer, NestingRequest } from './planning/nesting/request.js';
 import { planStock as plan } from './planning/stock/plan-stock.js';
 import type { StockAnswer, StockRequest } from './planning/stock/request.js';
@@ -14,8 +14,12 @@ export type { Fault } from './readers/fault.js';
 export { readJob } from './readers/job.js';
 export { readTruss } from './readers/truss.js';
 
-/** Panels on sheets, with the caller's clock for `timeLimitMs`; see src/planning/nesting/nest-panels.ts. */
-export const nestPanels = (request: NestingRequest): Promise<NestingAnswer> => nest(request, () => performance.now());
+/**
+ * Panels on sheets, with the caller's clock for `timeLimitMs`; see src/planning/nesting/nest-panels.ts. `each`: a worker pool's, as
+ * makePack takes it; absent: everything runs in this thread, with the same result.
+ */
+export const nestPanels = (request: NestingRequest, options?: Pick<NestingHelp, 'each'>): Promise<NestingAnswer> =>
+  nest(request, { clock: Date.now, ...options });
 
 /** Pieces cut from bars, with the caller's clock for `timeLimitMs`; see src/planning/stock/plan-stock.ts. */
 export const planStock = (request: StockRequest): Promise<StockAnswer> => plan(request, () => performance.now());

@@ -83,6 +83,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   const sheets = await planSheets(
     assessed.parts.panels.filter((p) => !done.has(`panel ${p.mark}`)),
     job,
+    run,
   );
 
   begin('Assembly');

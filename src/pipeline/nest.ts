@@ -10,7 +10,7 @@ import type { Job } from '../model/job/index.js';
 import { LIMITS } from '../model/limits.js';
 import type { PanelPart } from '../model/parts.js';
 import { VERSION } from '../model/version.js';
-import { nestPanels } from '../planning/nesting/nest-panels.js';
+import { type NestingHelp, nestPanels } from '../planning/nesting/nest-panels.js';
 import type { NestingAnswer, NestingSheet } from '../planning/nesting/request.js';
 import { sayFault } from '../readers/fault.js';
 import type { OutlinesReading } from '../readers/outlines/outline.js';
@@ -42,7 +42,7 @@ const READERS: Readonly<Record<string, (text: string, name: string) => OutlinesR
 /** Reads a file of outlines and lays them on sheets; or every fault, one line each. */
 export async function nestFile(
   call: NestCall,
-  clock: () => number,
+  help: NestingHelp,
 ): Promise<NestOutcome | { readonly faults: readonly string[] }> {
   const ending = call.file.split('.').at(-1)!.toLowerCase();
   const read = READERS[ending];
@@ -65,7 +65,7 @@ export async function nestFile(
         effort: call.cutter.effort,
         ...(call.timeLimitMs === null ? {} : { timeLimitMs: call.timeLimitMs }),
       },
-      clock,
+      help,
     );
     if (answer.faults.length > 0)
       return { faults: answer.faults.map((f) => `${call.file}: ${f.place}: ${f.wrong}: ${f.mend}`) };

@@ -2,12 +2,14 @@ import { InvalidArgumentError } from 'commander';
 import { sayKerf } from '../../documents/panels/kerf.js';
 import { FileFault } from '../../machine/file-fault.js';
 import { openPackFolder } from '../../machine/pack-folder.js';
+import { openPool } from '../../machine/pool.js';
 import { cutterSchema } from '../../model/job/panels.js';
 import { type NestCall, nestFile, nestJson, writeNest } from '../../pipeline/nest.js';
 import type { NestingSheet } from '../../planning/nesting/request.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';
 
+const WORKER = new URL('../../pipeline/worker.js', import.meta.url);
 const TURNS = { free: null, quarter: [0, 90, 180, 270], half: [0, 180], fixed: [0] } as const;
 
 export const nest: CliCommand = {
@@ -60,7 +62,8 @@ export const nest: CliCommand = {
       seed: (options['seed'] as number | undefined) ?? 1,
       timeLimitMs: limit === undefined ? null : limit * 1000,
     };
-    const outcome = await nestFile(call, () => performance.now());
+    const pool = openPool(WORKER);
+    const outcome = await nestFile(call, { clock: Date.now, each: pool.each }).finally(() => pool.close());
     if ('faults' in outcome) {
       for (const fault of outcome.faults) terminal.talk(`${fault}\n`);
       return EXIT.refused;

@@ -3,9 +3,8 @@ import { finding } from '../../model/findings/index.js';
 import type { Job } from '../../model/job/index.js';
 import type { PanelPart } from '../../model/parts.js';
 import type { NestingPlan, PlannedSheet } from '../../model/plan.js';
+import type { Run } from '../../model/run.js';
 import { nestPanels } from '../../planning/nesting/nest-panels.js';
-
-const NO_CLOCK = (): number => 0;
 
 const TURNS: Readonly<Record<Job['cutter']['rotations'], readonly number[] | undefined>> = {
   free: undefined,
@@ -18,6 +17,7 @@ const TURNS: Readonly<Record<Job['cutter']['rotations'], readonly number[] | und
 export async function planSheets(
   panels: readonly PanelPart[],
   job: Job,
+  run: Pick<Run, 'each'>,
 ): Promise<{ readonly plan: NestingPlan; readonly findings: readonly Finding[] }> {
   const findings: Finding[] = [];
   const sheets: PlannedSheet[] = [];
@@ -49,7 +49,7 @@ export async function planSheets(
         seed: job.seed,
         effort: job.cutter.effort,
       },
-      NO_CLOCK,
+      { each: run.each },
     );
     for (const panel of answer.unplaced) {
       const code = panel.reason === 'too-large' ? 'panel-larger-than-sheet' : 'sheets-run-out';

@@ -1,5 +1,5 @@
 import type { Random } from '../../maths/random.js';
-import { type Budget, isSpent } from './budget.js';
+import { type Budget, goneOf, isSpent } from './budget.js';
 import { construct } from './construct.js';
 import { type Field, fitsField, type Layout, newLayout, put, restore, snapshot } from './layout.js';
 import type { NoFitStore } from './no-fit.js';
@@ -14,13 +14,38 @@ export interface SheetKind {
   readonly available: number;
 }
 
+export interface PlacedPiece {
+  readonly piece: number;
+  readonly pose: Pose;
+  readonly x: number;
+  readonly y: number;
+}
+
+type PlacedSheet = { readonly kind: number; readonly placed: readonly PlacedPiece[] };
+
 export interface SheetPlan {
-  readonly sheets: readonly {
-    readonly kind: number;
-    readonly placed: readonly { readonly piece: number; readonly pose: Pose; readonly x: number; readonly y: number }[];
-  }[];
+  readonly sheets: readonly PlacedSheet[];
   readonly left: readonly { readonly piece: number; readonly reason: 'too-large' | 'no-sheet-left' }[];
   readonly lowerBound: number;
+  /** Area of the sheets less what is free right of the panels on the one that was shortened, mm². */
+  readonly taken: number;
+  /** Share of a length that the next step would take away; null: nothing was shortened. */
+  readonly step: number | null;
+}
+
+export interface SheetTask {
+  readonly shapes: readonly Shape[];
+  readonly kinds: readonly SheetKind[];
+  readonly spacing: number;
+  readonly store: NoFitStore;
+  readonly budget: Budget;
+  readonly random: Random;
+  readonly boundOf: (shapes: readonly Shape[]) => number;
+  /** A plan to go on from, with the step it ended with; null: from nothing. */
+  readonly start: readonly PlacedSheet[] | null;
+  readonly step: number | null;
+  /** Whether what is left of the budget ends with small steps. */
+  readonly last: boolean;
 }
 
 /** Overlap in mm that a finished plan may have: half of what spacing and margin promise. */
@@ -30,15 +55,8 @@ const TOLERANCE = 5e-4;
  * The way: fill sheets by first fit in several orders; then try to do without one sheet after another, its pieces
  * pressed onto the others and the overlaps worked out; then shorten the last sheet's used length.
  */
-export function planSheets(
-  shapes: readonly Shape[],
-  kinds: readonly SheetKind[],
-  spacing: number,
-  store: NoFitStore,
-  budget: Budget,
-  random: Random,
-  boundOf: (shapes: readonly Shape[]) => number,
-): SheetPlan {
+export function planSheets(task: SheetTask): SheetPlan {
+  const { shapes, kinds, spacing, store, budget, random, start } = task;
   const tooLarge = (s: Shape): boolean =>
     !kinds.some((k) => k.available > 0 && s.poses.some((p) => fitsField(k.field, p, TOLERANCE)));
   const left: { piece: number; reason: 'too-large' | 'no-sheet-left' }[] = [];
@@ -48,20 +66,16 @@ export function planSheets(
     else fit.push(i);
   });
   const chosen = fit.map((i) => shapes[i]!);
-  const lowerBound = boundOf(chosen);
-  if (fit.length === 0) return { sheets: [], left, lowerBound };
+  const lowerBound = task.boundOf(chosen);
+  if (fit.length === 0) return { sheets: [], left, lowerBound, taken: 0, step: null };
 
-  let best: Layout | null = null;
-  for (const sizes of sizeOrders(kinds))
-    for (const order of orders(chosen)) {
-      if (best && isSpent(budget, budget.limit / 4)) break;
-      const layout = fill(chosen, order, sizes, kinds, spacing, store, budget);
-      if (!best || better(layout, best, kinds)) best = layout;
-      if (best.fields.length <= lowerBound && best.field.every((f) => f >= 0)) break;
-    }
-  const layout = reduceSheets(best!, kinds, lowerBound, random, budget);
+  const begun = start
+    ? layoutFrom(start, fit, chosen, kinds, spacing, store, budget)
+    : filled(chosen, kinds, spacing, store, budget, lowerBound);
+  const layout = reduceSheets(begun, kinds, lowerBound, random, budget);
   const last = emptiest(layout, kinds);
-  if (last >= 0) shortenOne(layout, last, random, budget);
+  const short = last >= 0 ? shortenOne(layout, last, task) : null;
+  const whole = layout.fields.reduce((sum, f) => sum + kinds[f.kind]!.area, 0);
 
   const sheets = layout.fields.map((f, k) => ({
     kind: f.kind,
@@ -72,7 +86,46 @@ export function planSheets(
   layout.field.forEach((f, i) => {
     if (f < 0) left.push({ piece: fit[i]!, reason: 'no-sheet-left' });
   });
-  return { sheets, left, lowerBound };
+  return { sheets, left, lowerBound, taken: whole - (short?.free ?? 0), step: short?.step ?? null };
+}
+
+/** The best of first fit in several orders of sheets and pieces. */
+function filled(
+  chosen: readonly Shape[],
+  kinds: readonly SheetKind[],
+  spacing: number,
+  store: NoFitStore,
+  budget: Budget,
+  lowerBound: number,
+): Layout {
+  let best: Layout | null = null;
+  for (const sizes of sizeOrders(kinds))
+    for (const order of orders(chosen)) {
+      if (best && isSpent(budget, budget.limit / 4)) break;
+      const layout = fill(chosen, order, sizes, kinds, spacing, store, budget);
+      if (!best || better(layout, best, kinds)) best = layout;
+      if (best.fields.length <= lowerBound && best.field.every((f) => f >= 0)) break;
+    }
+  return best!;
+}
+
+/** The layout that a plan describes. */
+function layoutFrom(
+  start: readonly PlacedSheet[],
+  fit: readonly number[],
+  chosen: readonly Shape[],
+  kinds: readonly SheetKind[],
+  spacing: number,
+  store: NoFitStore,
+  budget: Budget,
+): Layout {
+  const fields = start.map((s) => ({ ...kinds[s.kind]!.field }));
+  const layout = newLayout(store, chosen, fields, spacing, TOLERANCE, budget);
+  const place = new Map(fit.map((piece, i) => [piece, i]));
+  start.forEach((s, f) => {
+    for (const p of s.placed) put(layout, place.get(p.piece)!, p.pose, p.x, p.y, f);
+  });
+  return layout;
 }
 
 /** Sizes of sheets in the order in which new ones are opened: as given, largest first, smallest first. */
@@ -175,7 +228,8 @@ function reduceSheets(
   budget: Budget,
 ): Layout {
   let layout = start;
-  const limit = budget.spent + 0.7 * (budget.limit - budget.spent);
+  const gone = goneOf(budget);
+  const limit = gone + 0.7 * (budget.limit - gone);
   let tries = 0;
   let near: Layout | null = null;
   while (
@@ -269,10 +323,15 @@ function spread(layout: Layout, i: number, fields: readonly number[], random: Ra
   put(layout, i, pose, x, y, f);
 }
 
-/** Shortens one field of a layout with the others left as they are. */
-function shortenOne(layout: Layout, f: number, random: Random, budget: Budget): void {
+/** Shortens one field of a layout with the others left as they are: the area free right of its pieces, and the step it ended with. */
+function shortenOne(
+  layout: Layout,
+  f: number,
+  task: SheetTask,
+): { readonly free: number; readonly step: number } | null {
+  const { budget } = task;
   const pieces = [...layout.on[f]!];
-  if (pieces.length === 0) return;
+  if (pieces.length === 0) return null;
   const alone = newLayout(
     layout.store,
     pieces.map((i) => layout.shapes[i]!),
@@ -285,12 +344,17 @@ function shortenOne(layout: Layout, f: number, random: Random, budget: Budget): 
     put(alone, k, layout.pose[i]!, layout.x[i]!, layout.y[i]!, 0);
   });
   restore(alone, snapshot(alone));
-  const limit = Math.min(budget.limit, budget.spent + SHORTEN_SHARE * budget.limit);
-  shorten(alone, 0, random, limit);
+  const gone = goneOf(budget);
+  // Where more sheets than one are full, how the last one ends is worth less than a minute's search.
+  const share = layout.fields.length > 1 ? SHORTEN_SHARE : 1;
+  const limit = Math.min(budget.limit, gone + share * budget.limit);
+  const { length, step } = shorten(alone, 0, task.random, { limit, step: task.step, last: task.last });
   pieces.forEach((i, k) => {
     put(layout, i, alone.pose[k]!, alone.x[k]!, alone.y[k]!, f);
   });
+  const field = layout.fields[f]!;
+  return { free: (field.x1 - field.x0 - length) * (field.y1 - field.y0), step };
 }
 
-/** Share of the whole budget that shortening the last sheet may take. */
-const SHORTEN_SHARE = 0.6;
+/** Share of the whole budget that shortening the last of several sheets may take. */
+const SHORTEN_SHARE = 0.3;

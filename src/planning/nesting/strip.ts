@@ -1,5 +1,5 @@
 import type { Random } from '../../maths/random.js';
-import { isSpent } from './budget.js';
+import { goneOf, isSpent } from './budget.js';
 import { type Field, type Layout, put, refreshDepths, restore, type Snapshot, snapshot } from './layout.js';
 import type { Pose } from './pose.js';
 import { separate } from './separate.js';
@@ -8,7 +8,7 @@ import { separate } from './separate.js';
 const BOLD_SHARE = 0.6;
 /** Shares of the length that one bold step takes away, at first and at last; misses before a smaller one; near misses kept. */
 const FIRST_SHARE = 0.03;
-const LEAST_SHARE = 0.0005;
+const LEAST_SHARE = 0.004;
 const MISSES = 3;
 const POOL = 8;
 /** Shares of the length that one small step takes away, at first and at last. */
@@ -19,15 +19,28 @@ const SQUEEZE_PATIENCE = { rounds: 40, strikes: 1 } as const;
 /** A length this share above the area bound is the bound. */
 const CLOSED = 1e-9;
 
+/** How far a shortening goes. */
+export interface Shortening {
+  /** Evaluations at which it ends. */
+  readonly limit: number;
+  /** Share that the first bold step takes away; null: the usual. */
+  readonly step: number | null;
+  /** Whether the budget ends with small steps. */
+  readonly last: boolean;
+}
+
 /**
  * Shortens the used length of field f from the right, again and again, and leaves the shortest layout without
- * overlaps standing. The layout must start without overlaps. Returns the used length, from x0 to the rightmost piece.
+ * overlaps standing. The layout must start without overlaps.
+ *
+ * @returns length: from x0 to the rightmost piece; step: the share that a further search should take away first
  */
-export function shorten(layout: Layout, f: number, random: Random, limit: number): number {
+export function shorten(layout: Layout, f: number, random: Random, how: Shortening): { length: number; step: number } {
+  const { limit } = how;
   const field = layout.fields[f]!;
   const full = field.x1;
-  const start = layout.budget.spent;
-  const boldLimit = start + BOLD_SHARE * (limit - start);
+  const start = goneOf(layout.budget);
+  const boldLimit = how.last ? start + BOLD_SHARE * (limit - start) : limit;
   const fieldsOf = (): readonly number[] => [f];
   let best: Snapshot = snapshot(layout);
   let length = usedLength(layout, f);
@@ -38,7 +51,7 @@ export function shorten(layout: Layout, f: number, random: Random, limit: number
   const aim = (share: number): number => Math.max(length * (1 - share), widest, least);
 
   // Boldly: to a shorter length at once, and where that fails with pieces exchanged in one of the near misses.
-  let share = FIRST_SHARE;
+  let share = how.step ?? FIRST_SHARE;
   let misses = 0;
   let pool: { shot: Snapshot; total: number }[] = [];
   while (!isSpent(layout.budget, boldLimit) && !done()) {
@@ -54,6 +67,7 @@ export function shorten(layout: Layout, f: number, random: Random, limit: number
       length = usedLength(layout, f);
       pool = [];
       misses = 0;
+      share = Math.min(FIRST_SHARE, 2 * share);
       continue;
     }
     pool.push({ shot: snapshot(layout), total: sumDepth(layout) });
@@ -70,9 +84,9 @@ export function shorten(layout: Layout, f: number, random: Random, limit: number
   }
 
   // Then in small steps from the best alone, smaller as the budget runs out.
-  const squeezeStart = layout.budget.spent;
-  while (!isSpent(layout.budget, limit) && !done()) {
-    const gone = (layout.budget.spent - squeezeStart) / Math.max(1, limit - squeezeStart);
+  const squeezeStart = goneOf(layout.budget);
+  while (how.last && !isSpent(layout.budget, limit) && !done()) {
+    const gone = (goneOf(layout.budget) - squeezeStart) / Math.max(1, limit - squeezeStart);
     const target = aim(FIRST_STEP * (LAST_STEP / FIRST_STEP) ** gone);
     field.x1 = field.x0 + target;
     restore(layout, best);
@@ -84,7 +98,7 @@ export function shorten(layout: Layout, f: number, random: Random, limit: number
   }
   field.x1 = full;
   restore(layout, best);
-  return length;
+  return { length, step: share };
 }
 
 const sumDepth = (layout: Layout): number => layout.depth.reduce((a, b) => a + b, 0) / 2;

@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { nestPanels } from '../../../src/index.js';
 import { seededRandom } from '../../../src/maths/random.js';
+import type { Run } from '../../../src/model/run.js';
+import { type Lane, nestLane } from '../../../src/planning/nesting/lane.js';
 import type { NestingRequest } from '../../../src/planning/nesting/request.js';
 import { planErrors } from './verify.js';
 
@@ -62,6 +64,19 @@ describe('panels on sheets', () => {
     const request = { panels: inventedPanels(20, 8), sheets: [sheet], spacing: 2, margin: 5, effort: 0.1 };
     expect(await nestPanels(request)).toEqual(await nestPanels(request));
     for (const seed of [2, 3]) await checked({ ...request, seed });
+  });
+
+  it('gives the same plan whoever searches: this thread, or workers that only get and give plain records', async () => {
+    const request = { panels: inventedPanels(14, 3), sheets: [sheet], spacing: 2, margin: 5, effort: 0.7 };
+    let lanes = 0;
+    const each: Run['each'] = async (task, inputs, take) => {
+      expect(task).toBe('nest-lane');
+      const outputs = structuredClone(inputs).map((lane) => nestLane(lane as Lane, null));
+      lanes += outputs.length;
+      for (const [i, output] of outputs.entries()) await take(structuredClone(output) as never, i);
+    };
+    expect(await nestPanels(request, { each })).toEqual(await nestPanels(request));
+    expect(lanes).toBeGreaterThanOrEqual(2);
   });
 
   it('uses offcuts of any outline and respects how many there are', async () => {
