@@ -1,6 +1,3 @@
-import { FileFault } from '../../machine/file-fault.js';
-import { readText } from '../../machine/files.js';
-import { sayFault } from '../../readers/fault.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';
 
@@ -16,12 +13,17 @@ export const asBuilt: CliCommand = {
   ],
   define: (command) => command.option('--json', 'print the corrections as JSON on stdout'),
   async run({ arguments: [path, table], options, terminal }) {
-    const [{ assess }, { loadJob }, { correctCuts }, { readMeasured }] = await Promise.all([
-      import('../../pipeline/assess.js'),
-      import('../../pipeline/load.js'),
-      import('../../planning/fit-up/as-built.js'),
-      import('../../readers/measured.js'),
-    ]);
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [{ FileFault }, { readText }, { assess }, { loadJob }, { correctCuts }, { sayFault }, { readMeasured }] =
+      await Promise.all([
+        import('../../machine/file-fault.js'),
+        import('../../machine/files.js'),
+        import('../../pipeline/assess.js'),
+        import('../../pipeline/load.js'),
+        import('../../planning/fit-up/as-built.js'),
+        import('../../readers/fault.js'),
+        import('../../readers/measured.js'),
+      ]);
     const refuse = (lines: readonly string[]): number => {
       for (const line of lines) terminal.talk(`${line}\n`);
       return EXIT.refused;

@@ -3,7 +3,6 @@ import type { Comparison } from '../../model/comparison.js';
 import type { ReadPack } from '../../pipeline/read-pack.js';
 import { EXIT } from '../exit.js';
 import { painter } from '../terminal/paint.js';
-import { sayComparison } from '../terminal/say-comparison.js';
 import type { Call, CliCommand } from './command.js';
 
 export const compare: CliCommand = {
@@ -20,9 +19,10 @@ export const compare: CliCommand = {
       .option('--pdf <file>', 'write it as a PDF too, with clouds round what changed')
       .addOption(new Option('--paper <size>', 'paper of the PDF').choices(['A4', 'A3', 'Letter']).default('A4')),
   async run({ arguments: [before, after], options, terminal }) {
-    const [{ comparePacks }, { readPack }] = await Promise.all([
+    const [{ comparePacks }, { readPack }, { sayComparison }] = await Promise.all([
       import('../../pipeline/compare.js'),
       import('../../pipeline/read-pack.js'),
+      import('../terminal/say-comparison.js'),
     ]);
     const [old, now] = [await readPack(before!), await readPack(after!)];
     const faults = [old, now].flatMap((read) => ('faults' in read ? read.faults : []));

@@ -1,6 +1,5 @@
 import { LENGTH_UNITS, type LengthUnit } from '../../model/units.js';
 import { EXIT } from '../exit.js';
-import { sayConversion } from '../terminal/say-conversion.js';
 import type { CliCommand } from './command.js';
 
 export const convert: CliCommand = {
@@ -31,7 +30,10 @@ export const convert: CliCommand = {
       for (const line of wrong) terminal.talk(`strutwright: ${line}\n`);
       return EXIT.refused;
     }
-    const { convertFile } = await import('../../pipeline/convert.js');
+    const [{ convertFile }, { sayConversion }] = await Promise.all([
+      import('../../pipeline/convert.js'),
+      import('../terminal/say-conversion.js'),
+    ]);
     const text = (key: string): string | null => (typeof options[key] === 'string' ? (options[key] as string) : null);
     const outcome = await convertFile({
       file: file!,

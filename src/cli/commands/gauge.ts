@@ -1,10 +1,6 @@
 import { InvalidArgumentError } from 'commander';
-import { FileFault } from '../../machine/file-fault.js';
-import { openPackFolder } from '../../machine/pack-folder.js';
-import { join } from '../../machine/paths.js';
 import type { Job } from '../../model/job/index.js';
 import { EXIT } from '../exit.js';
-import { sayGauge } from '../terminal/say-gauge.js';
 import type { CliCommand } from './command.js';
 
 const PROCESSES: readonly Job['nodes']['process'][] = ['filament', 'powder', 'resin'];
@@ -30,7 +26,15 @@ export const gauge: CliCommand = {
       terminal.talk('strutwright: give a job, or a folder with -o, or --json for the values alone\n');
       return EXIT.refused;
     }
-    const { planGauge, makeGauge, gaugeJson } = await import('../../pipeline/gauge.js');
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [{ FileFault }, { openPackFolder }, { join }, { planGauge, makeGauge, gaugeJson }, { sayGauge }] =
+      await Promise.all([
+        import('../../machine/file-fault.js'),
+        import('../../machine/pack-folder.js'),
+        import('../../machine/paths.js'),
+        import('../../pipeline/gauge.js'),
+        import('../terminal/say-gauge.js'),
+      ]);
     const outcome = await planGauge({
       job: path ?? null,
       sections: (options['section'] as string[] | undefined) ?? [],

@@ -1,10 +1,5 @@
 import { InvalidArgumentError } from 'commander';
-import { sayKerf } from '../../documents/panels/kerf.js';
-import { FileFault } from '../../machine/file-fault.js';
-import { openPackFolder } from '../../machine/pack-folder.js';
-import { openPool } from '../../machine/pool.js';
-import { cutterSchema } from '../../model/job/panels.js';
-import { type NestCall, nestFile, nestJson, writeNest } from '../../pipeline/nest.js';
+import type { NestCall } from '../../pipeline/nest.js';
 import type { NestingSheet } from '../../planning/nesting/request.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';
@@ -42,6 +37,22 @@ export const nest: CliCommand = {
       terminal.talk('strutwright: give a folder with -o, or --json for the plan alone\n');
       return EXIT.refused;
     }
+    // Loaded when asked for, so that help and wrong use answer at once.
+    const [
+      { sayKerf },
+      { FileFault },
+      { openPackFolder },
+      { openPool },
+      { cutterSchema },
+      { nestFile, nestJson, writeNest },
+    ] = await Promise.all([
+      import('../../documents/panels/kerf.js'),
+      import('../../machine/file-fault.js'),
+      import('../../machine/pack-folder.js'),
+      import('../../machine/pool.js'),
+      import('../../model/job/panels.js'),
+      import('../../pipeline/nest.js'),
+    ]);
     const usual = cutterSchema.parse(undefined);
     const kerf = options['kerf'] as number | undefined;
     const sheets = (options['sheet'] as NestingSheet[] | undefined) ?? [];

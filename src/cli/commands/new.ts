@@ -1,10 +1,3 @@
-import { FileFault } from '../../machine/file-fault.js';
-import { readText } from '../../machine/files.js';
-import { listFolder } from '../../machine/folders.js';
-import { join } from '../../machine/paths.js';
-import { templateFolder, templateNames } from '../../machine/templates.js';
-import { writeOne } from '../../machine/write-one.js';
-import { nearest } from '../../maths/nearest.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';
 
@@ -20,6 +13,23 @@ export const newJob: CliCommand = {
   ],
   define: (command) => command.option('-t, --template <name>', 'which template', 'table-model'),
   async run({ arguments: [folder], options, terminal }) {
+    const [
+      { FileFault },
+      { readText },
+      { listFolder },
+      { join },
+      { templateFolder, templateNames },
+      { writeOne },
+      { nearest },
+    ] = await Promise.all([
+      import('../../machine/file-fault.js'),
+      import('../../machine/files.js'),
+      import('../../machine/folders.js'),
+      import('../../machine/paths.js'),
+      import('../../machine/templates.js'),
+      import('../../machine/write-one.js'),
+      import('../../maths/nearest.js'),
+    ]);
     const name = String(options['template']);
     const names = await templateNames();
     if (!names.includes(name)) {

@@ -1,7 +1,3 @@
-import { FileFault } from '../../machine/file-fault.js';
-import { readText } from '../../machine/files.js';
-import { join } from '../../machine/paths.js';
-import { writeOne } from '../../machine/write-one.js';
 import { EXIT } from '../exit.js';
 import type { CliCommand } from './command.js';
 
@@ -19,16 +15,29 @@ export const size: CliCommand = {
       .option('--json', 'print the choices as JSON on stdout'),
   async run({ arguments: [path], options, terminal }) {
     // Loaded when asked for, so that help and wrong use answer at once.
-    const [{ sizingReport }, { withSections }, { LIMITS }, { loadJob }, { sizeJob }, { saySizing }] = await Promise.all(
-      [
-        import('../../documents/sizing-json.js'),
-        import('../../documents/truss/with-sections.js'),
-        import('../../model/limits.js'),
-        import('../../pipeline/load.js'),
-        import('../../pipeline/size-job.js'),
-        import('../terminal/say-sizing.js'),
-      ],
-    );
+    const [
+      { sizingReport },
+      { withSections },
+      { FileFault },
+      { readText },
+      { join },
+      { writeOne },
+      { LIMITS },
+      { loadJob },
+      { sizeJob },
+      { saySizing },
+    ] = await Promise.all([
+      import('../../documents/sizing-json.js'),
+      import('../../documents/truss/with-sections.js'),
+      import('../../machine/file-fault.js'),
+      import('../../machine/files.js'),
+      import('../../machine/paths.js'),
+      import('../../machine/write-one.js'),
+      import('../../model/limits.js'),
+      import('../../pipeline/load.js'),
+      import('../../pipeline/size-job.js'),
+      import('../terminal/say-sizing.js'),
+    ]);
     const result = await loadJob(path!);
     if ('faults' in result) {
       for (const fault of result.faults) terminal.talk(`${fault}\n`);

@@ -1,6 +1,5 @@
 import type { CutCall } from '../../pipeline/cut-pieces.js';
 import { EXIT } from '../exit.js';
-import { sayCutting } from '../terminal/say-cutting.js';
 import type { CliCommand } from './command.js';
 
 export const stock: CliCommand = {
@@ -31,9 +30,10 @@ export const stock: CliCommand = {
       for (const line of wrong) terminal.talk(`strutwright: ${line}\n`);
       return EXIT.refused;
     }
-    const [{ cutPieces }, { sayFinding }] = await Promise.all([
+    const [{ cutPieces }, { sayFinding }, { sayCutting }] = await Promise.all([
       import('../../pipeline/cut-pieces.js'),
       import('../../model/findings/index.js'),
+      import('../terminal/say-cutting.js'),
     ]);
     const outcome = await cutPieces(call);
     if ('faults' in outcome) {
