@@ -5,7 +5,7 @@ import type { FitUp } from '../model/fit-up.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
 import type { BedPlan, NestingPlan, StockPlan } from '../model/plan.js';
-import type { ShapedPiece } from '../model/shaped.js';
+import type { ShapedPiece, WeakestSection } from '../model/shaped.js';
 import type { Solution, Utilisation } from '../model/solution.js';
 import type { Topology } from '../model/topology.js';
 import type { Equilibrium } from '../statics/equilibrium.js';
@@ -45,6 +45,8 @@ export interface MadeHub {
   readonly mark: string;
   readonly pieces: readonly MadePiece[];
   readonly files: readonly string[];
+  /** The section of its plastic that is least for what it must pass on; null or absent: not measured. */
+  readonly weakest?: WeakestSection | null;
 }
 
 /** Everything that the papers of a pack draw on. */

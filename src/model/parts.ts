@@ -92,6 +92,8 @@ export interface HubPart {
   readonly system: string;
   /** Outward direction at the node (away from the truss's middle), unit; for the outward mark. */
   readonly outward: Vec3;
+  /** Up, for the up-mark; absent: the truss's z. */
+  readonly up?: Vec3;
   readonly sockets: readonly Socket[];
   /** kg, in closed form; null where a setback is unknown. */
   readonly mass: number | null;

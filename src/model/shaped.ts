@@ -21,9 +21,27 @@ export interface ShapedPiece {
   readonly overhang: number;
 }
 
+/** The section of a hub that is least for what it must pass on. */
+export interface WeakestSection {
+  /** The strut that it lies square to. */
+  readonly strut: string;
+  /** Between that strut's root and its stop, or through the middle of the body. */
+  readonly where: 'root' | 'core';
+  /** From the node along the strut, mm. */
+  readonly distance: number;
+  /** Half-width of the square about the strut's line (in the core: about the body's middle) that is counted, mm. */
+  readonly within: number;
+  /** mm², measured on the mesh. */
+  readonly area: number;
+  /** The sleeve's own section, or of the core the largest sleeve's, mm². */
+  readonly needed: number;
+}
+
 /** A hub's solids and what was found wrong while they were made; no pieces where none could be made. */
 export interface ShapedHub {
   readonly mark: string;
   readonly pieces: readonly ShapedPiece[];
   readonly findings: readonly Finding[];
+  /** null: not measured; absent where there are no pieces. */
+  readonly weakest?: WeakestSection | null;
 }

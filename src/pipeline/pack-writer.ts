@@ -17,6 +17,13 @@ export interface PackPart {
   /** Revision letter of the part's own last change. */
   readonly revision: string;
   readonly files: readonly string[];
+  /** Of a printed node: its weakest section square to a strut and what it must be at least, measured on the mesh. */
+  readonly weakest_section?: {
+    readonly strut: string;
+    readonly where: 'root' | 'core';
+    readonly area_mm2: number;
+    readonly needed_mm2: number;
+  };
 }
 
 export type WriteFile = (path: string, bytes: Uint8Array) => void | Promise<void>;

@@ -18,35 +18,40 @@ export interface Channel {
 
 const AZIMUTHS = 24;
 /** A vent may rise towards the mouth to get past a neighbour, rad. */
-const RISES = [0, Math.PI / 6, Math.PI / 4, Math.PI / 3] as const;
+const RISES = [0, Math.PI / 6, Math.PI / 4] as const;
 const STEP = 0.5;
 /** How far a channel is carried past the last plastic, mm. */
 const PAST = 0.8;
 
 /**
- * The vent of a socket: from the foot of the bore's side, outwards to the open by the shortest way that keeps `web` from every
- * other strut's path; never through the node's middle, since it starts at the stop and runs outwards. It starts at the side, not
+ * The vent of a socket: from the foot of the bore's side, outwards to the open by the least rise, then the shortest way, that keeps `web`
+ * from every other strut's path; never through the node's middle, since it starts at the stop and runs outwards. It starts at the side, not
  * in the middle of the floor: one that rises would come through the wall half-way up, where the glue is. null where there is no way.
  */
 export function ventOf(space: HubSpace, index: number, diameter: number, web: number): Channel | null {
   const s = space.sleeves[index]!;
   const radius = diameter / 2;
   const floor = scale(s.socket.direction, s.stop + radius + FLOOR_CLEAR);
-  return shortest(
-    RISES.flatMap((rise) =>
+  for (const rise of RISES) {
+    const found = shortest(
       azimuths(s).map((side) =>
         march(
           space,
           index,
-          addScaled(floor, side, Math.max(0, halfTowards(s, side) - radius - FLOOR_CLEAR)),
+          addScaled(floor, side, Math.max(0, halfTowards(s, side) - START_INSIDE * radius)),
           add(scale(side, Math.cos(rise)), scale(s.socket.direction, Math.sin(rise))),
           radius,
           web,
         ),
       ),
-    ),
-  );
+    );
+    if (found) return found;
+  }
+  return null;
 }
+
+/** The start's middle stands this share of a vent's radius inside the bore's side: open to the bore, and through the wall soon. */
+const START_INSIDE = 0.4;
 
 /** From the bore's axis to its side, along a direction of `azimuths`. */
 const halfTowards = (s: Sleeve, side: Vec3): number =>

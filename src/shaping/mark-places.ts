@@ -16,15 +16,24 @@ export interface MarkPlace {
   readonly side: number;
   /** Half the angle it takes up. */
   readonly halfAngle: number;
+  /** From and to along the strut, mm from the node. */
+  readonly from: number;
+  readonly to: number;
 }
 
-/** Capital height wanted and least legible, stroke and depth by process, mm; seen in published design guides. */
+/** A part of a sleeve's surface where no mark may stand, as a mark's own. */
+export type Taken = Pick<MarkPlace, 'side' | 'halfAngle' | 'from' | 'to'>;
+
+/**
+ * Capital height wanted and least legible, stroke and depth by process, mm; seen in published design guides. The stroke shrinks with
+ * the letters down to the thinnest groove that stays open: a nozzle's line and a little (common practice, no source).
+ */
 const LETTERS: Readonly<
-  Record<Job['nodes']['process'], { want: number; least: number; stroke: number; depth: number }>
+  Record<Job['nodes']['process'], { want: number; least: number; stroke: number; thinnest: number; depth: number }>
 > = {
-  filament: { want: 5, least: 3, stroke: 0.8, depth: 0.4 },
-  powder: { want: 3.5, least: 2, stroke: 0.5, depth: 0.5 },
-  resin: { want: 3.5, least: 1.6, stroke: 0.4, depth: 0.4 },
+  filament: { want: 5, least: 2.4, stroke: 0.8, thinnest: 0.5, depth: 0.4 },
+  powder: { want: 3.5, least: 2, stroke: 0.5, thinnest: 0.4, depth: 0.5 },
+  resin: { want: 3.5, least: 1.6, stroke: 0.4, thinnest: 0.3, depth: 0.4 },
 };
 
 /** Letterings to try on a wall, largest first; none where the wall has nothing to spare. */
@@ -36,7 +45,11 @@ export function letteringsFor(job: Job, wall: number, leastWall: number): Letter
   return [1, 0.85, 0.7, 0.6, 0.5]
     .map((share) => share * want)
     .filter((h, i) => i === 0 || h >= letters.least)
-    .map((capHeight) => ({ capHeight, stroke: letters.stroke, depth }));
+    .map((capHeight) => ({
+      capHeight,
+      stroke: Math.max(letters.thinnest, letters.stroke * Math.min(1, capHeight / letters.want)),
+      depth,
+    }));
 }
 
 /** Chords of the polygons that sleeves are made as cost a wall this much, mm. */
@@ -56,47 +69,63 @@ const MOST_HALF_ANGLE = 1.35;
  * towards `towards`, clear of other pieces, of holes, and of the sides already `taken`. null where no legible size fits.
  *
  * @param groove where a groove round the sleeve starts, along the strut
- * @param words the line as it reads along the strut, and as it reads round it
+ * @param crowd whether to begin round the mouth instead of along the middle
+ * @param words the line as it reads along the strut, and as it reads round it; null: it does not
+ * @param least cosine of the angle to `towards` (a unit vector) that the side may look away by at most
  */
 export function placeMark(
   space: HubSpace,
   sleeve: number,
-  words: { readonly along: string; readonly round: string },
+  words: { readonly along: string; readonly round: string | null },
   letterings: readonly Lettering[],
   chamfer: number,
   towards: Vec3,
-  taken: readonly { readonly side: number; readonly halfAngle: number }[],
+  taken: readonly Taken[],
   holes: readonly Channel[],
   groove = Number.POSITIVE_INFINITY,
+  least = Number.NEGATIVE_INFINITY,
+  crowd = false,
 ): MarkPlace | null {
   const s = space.sleeves[sleeve]!;
   const from = s.coneTop + MARGIN;
   const bolts = s.socket.bolted;
   // A plate is marked between the shoulder and its first bolt.
   const to = bolts ? s.stop + bolts.endDistance - 1.5 * bolts.diameter : Math.min(s.mouth - chamfer, groove) - MARGIN;
-  const middle = (from + to) / 2;
   for (const lettering of letterings)
-    for (const turn of ['along', 'round'] as const) {
+    for (const turn of crowd ? (['round', 'along'] as const) : (['along', 'round'] as const)) {
       const text = words[turn];
+      if (text === null) continue;
       const { width, height } = textSize(text, lettering);
       const [reach, across] = turn === 'along' ? [width, height] : [height, width];
       if (reach > to - from) continue;
       let best: MarkPlace | null = null;
       let bestScore = Number.NEGATIVE_INFINITY;
-      for (const { side, radius, room, halfAngle } of sidesOf(s, across)) {
-        if (across > room) continue;
-        if (taken.some((t) => turnBetween(t.side, side) < t.halfAngle + halfAngle + 0.1)) continue;
-        const surface = surfaceOf(s, side, radius, middle, turn);
-        const score = dot(outwardOf(s, side), towards);
-        if (score <= bestScore + 1e-9) continue;
-        if (!patchIsFree(space, sleeve, surface, width, height, holes)) continue;
-        bestScore = score;
-        best = { text, sleeve, lettering, surface, side, halfAngle };
+      for (const share of crowd ? FROM_MOUTH : FROM_MIDDLE) {
+        const middle = from + reach / 2 + share * (to - from - reach);
+        const [low, high] = [middle - reach / 2, middle + reach / 2];
+        for (const { side, radius, room, halfAngle } of sidesOf(s, across)) {
+          if (across > room) continue;
+          const score = dot(outwardOf(s, side), towards);
+          if (score <= bestScore + 1e-9 || score < least) continue;
+          if (taken.some((t) => overlaps(t, side, halfAngle, low, high))) continue;
+          const surface = surfaceOf(s, side, radius, middle, turn);
+          if (!patchIsFree(space, sleeve, surface, width, height, holes)) continue;
+          bestScore = score;
+          best = { text, sleeve, lettering, surface, side, halfAngle, from: low, to: high };
+        }
+        if (best) return best;
       }
-      if (best) return best;
     }
   return null;
 }
+
+/** Whether a mark would come within a stroke of what is taken. */
+const overlaps = (t: Taken, side: number, halfAngle: number, from: number, to: number): boolean =>
+  t.from < to + MARGIN && from < t.to + MARGIN && turnBetween(t.side, side) < t.halfAngle + halfAngle + 0.1;
+
+/** Where a line is tried between the root, 0, and the mouth, 1. */
+const FROM_MIDDLE = [0.5, 1, 0, 0.75, 0.25] as const;
+const FROM_MOUTH = [1, 0.75, 0.5, 0.25, 0] as const;
 
 interface Side {
   readonly side: number;

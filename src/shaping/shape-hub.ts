@@ -1,19 +1,20 @@
-import { type ClampParts, IN_PLANE, PARTING } from '../detailing/systems/clamp-parts.js';
+import { type ClampParts, PARTING } from '../detailing/systems/clamp-parts.js';
 import { hubShape } from '../detailing/systems/hub-shape.js';
 import { LEAST_WALL } from '../detailing/systems/printing.js';
-import { dot } from '../maths/vec3.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
 import type { HubPart } from '../model/parts.js';
-import type { ShapedHub, ShapedPiece } from '../model/shaped.js';
-import { boltHolesOf, type Channel, pinOf, plateHolesOf, screwHolesOf, ventOf } from './channels.js';
+import type { ShapedHub, ShapedPiece, WeakestSection } from '../model/shaped.js';
+import type { Channel } from './channels.js';
 import { type Cradle, capSolid, cradleOf } from './cradle.js';
 import { bushingSleeves, bushings, guideHalves } from './drilling-guide.js';
+import { channelsOf } from './hub-channels.js';
+import { marksOf } from './hub-marks.js';
 import { HubSpace } from './hub-space.js';
 import { Bench, loadKernel, type Manifold, SolidFailed } from './kernel.js';
 import { layDown } from './lay-down.js';
-import { letteringsFor, type MarkPlace, placeMark, sideTowards } from './mark-places.js';
+import { weakestSection } from './measure-sections.js';
 import { type MeasuredWall, measureWalls } from './measure-walls.js';
 import { openEdges } from './open-edges.js';
 import { chooseLie, type Lie } from './orientation.js';
@@ -36,7 +37,7 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
     const marks = job.nodes.marks ? marksOf(hub, job, space, channels, cradles, findings) : [];
     const solid = socketSolid(bench, space, { marks, channels, cradles, chamfer: job.nodes.chamfer_mm });
     const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
-    if (space.shape.clamp) return shapeHalves(bench, hub, job, solid, space.shape.clamp, findings);
+    if (space.shape.clamp) return shapeHalves(bench, hub, job, solid, space, space.shape.clamp, findings);
     const lie = space.shape.base
       ? ON_PLATE
       : chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
@@ -47,7 +48,7 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
     }
     const main = laid[0];
     if (main) findings.push(...wallFindings(hub, main, space, channels, job));
-    return finish(hub, job, laid, findings);
+    return finish(hub, job, laid, findings, main ? weakestOf(hub, [main], space, findings) : null);
   } catch (error) {
     if (!(error instanceof SolidFailed)) throw error;
     findings.push(finding('solid-failed', hub.mark, { about: { what: error.message } }));
@@ -66,6 +67,7 @@ function shapeHalves(
   hub: HubPart,
   job: Job,
   solid: Manifold,
+  space: HubSpace,
   clamp: ClampParts,
   findings: Finding[],
 ): ShapedHub {
@@ -76,7 +78,8 @@ function shapeHalves(
     const half = bench.hold(solid.trimByPlane([side * x, side * y, side * z], PARTING / 2), 'half');
     return layDown(bench, half, chooseLie(half, [], ON_A_FACE), hub.at, i === 0 ? 'A' : 'B');
   });
-  return finish(hub, job, laid, findings);
+  const halves = laid.filter((p) => p !== null);
+  return finish(hub, job, laid, findings, weakestOf(hub, halves, space, findings));
 }
 
 /** A drilled ball itself is not printed: its guide is, in two halves, each bushing with its marks. */
@@ -96,14 +99,41 @@ function shapeGuide(bench: Bench, hub: HubPart, job: Job, findings: Finding[]): 
 }
 
 /** Pieces that are closed, with what is to be said of their sizes. */
-function finish(hub: HubPart, job: Job, laid: readonly (ShapedPiece | null)[], findings: Finding[]): ShapedHub {
+function finish(
+  hub: HubPart,
+  job: Job,
+  laid: readonly (ShapedPiece | null)[],
+  findings: Finding[],
+  weakest: WeakestSection | null = null,
+): ShapedHub {
   const pieces = laid.filter((p) => p !== null);
   const faults = pieces
     .map((p) => openEdges(p.positions, p.triangles))
     .reduce((a, b) => a + b, laid.length - pieces.length);
   for (const piece of pieces) findings.push(...sizeFindings(hub, piece, job));
   if (faults > 0) findings.push(finding('mesh-open', hub.mark, { value: faults, limit: 0 }));
-  return { mark: hub.mark, pieces: faults === 0 ? pieces : [], findings };
+  return { mark: hub.mark, pieces: faults === 0 ? pieces : [], findings, weakest };
+}
+
+/** Share of a section that chords of polygons and letters may cost it. */
+const SECTION_SLACK = 0.02;
+
+function weakestOf(
+  hub: HubPart,
+  pieces: readonly ShapedPiece[],
+  space: HubSpace,
+  findings: Finding[],
+): WeakestSection | null {
+  const weakest = weakestSection(pieces, space.sleeves, hub.at);
+  if (weakest && weakest.area < weakest.needed * (1 - SECTION_SLACK))
+    findings.push(
+      finding('section-weak', hub.mark, {
+        value: weakest.area,
+        limit: weakest.needed,
+        about: { strut: weakest.strut, where: weakest.where },
+      }),
+    );
+  return weakest;
 }
 
 /** What a wall may fall short of the process's least by, mm: chords of polygons. */
@@ -162,90 +192,4 @@ function sizeFindings(hub: HubPart, piece: ShapedPiece, job: Job): Finding[] {
   if (piece.overhang > MUCH_OVERHANG)
     findings.push(finding('much-overhang', hub.mark, { value: piece.overhang, limit: MUCH_OVERHANG }));
   return findings;
-}
-
-/** Corners of the polygons that bores and holes are made as, mm. */
-const CHORDS = 0.1;
-
-function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Finding[]): Channel[] {
-  const web = LEAST_WALL[job.nodes['process']] + CHORDS;
-  const channels: Channel[] = [...plateHolesOf(space, web), ...screwHolesOf(space)];
-  hub.sockets.forEach((s, i) => {
-    if (s.pin > 0) {
-      const pin = pinOf(space, i, web);
-      if (pin) channels.push(pin);
-      else findings.push(finding('pin-meets-bore', hub.mark, { value: s.pin, about: { strut: s.strut } }));
-    }
-    channels.push(...boltHolesOf(space, i));
-    if (job.nodes.vent_mm > 0 && space.sleeves[i]!.hollow && s.detail !== 'drop-in') {
-      const vent = ventOf(space, i, job.nodes.vent_mm, web);
-      if (vent) channels.push(vent);
-      else findings.push(finding('vent-left-out', hub.mark, { about: { strut: s.strut } }));
-    }
-  });
-  return channels;
-}
-
-function marksOf(
-  hub: HubPart,
-  job: Job,
-  space: HubSpace,
-  channels: readonly Channel[],
-  cradles: readonly Cradle[],
-  findings: Finding[],
-): MarkPlace[] {
-  const places: MarkPlace[] = [];
-  const opening = (i: number): Cradle | undefined => cradles.find((c) => c.sleeve === i);
-  const taken = hub.sockets.map((_, i): { side: number; halfAngle: number }[] => {
-    const c = opening(i);
-    return [...(c ? [{ side: c.angle, halfAngle: c.halfAngle }] : []), ...partingSides(space, i)];
-  });
-  const leastWall = LEAST_WALL[job.nodes['process']];
-  const place = (i: number, along: string, round: string, sense: 1 | -1): boolean => {
-    const s = hub.sockets[i]!;
-    const towards = sideTowards(s.direction, hub.outward);
-    const found = placeMark(
-      space,
-      i,
-      { along, round },
-      letteringsFor(job, s.wall, leastWall),
-      job.nodes.chamfer_mm,
-      [sense * towards[0], sense * towards[1], sense * towards[2]],
-      taken[i]!,
-      channels,
-      opening(i)?.groove?.from,
-    );
-    if (!found) return false;
-    places.push(found);
-    taken[i]!.push(found);
-    return true;
-  };
-  const missing: string[] = [];
-  hub.sockets.forEach((s, i) => {
-    if (!place(i, s.strut, s.strut, 1)) missing.push(s.strut);
-  });
-  // The node's own mark with its revision: on the first sleeve that has room for it, the widest first.
-  const own = `${hub.mark}/${hub.revision}`;
-  const order = hub.sockets.map((_, i) => i).sort((a, b) => size(space, b) - size(space, a) || a - b);
-  if (!order.some((i) => place(i, own, own, -1))) missing.push(own);
-  hub.sockets.forEach((s, i) => {
-    if (!place(i, `>${s.farNode}`, `^${s.farNode}`, -1)) missing.push(`>${s.farNode}`);
-  });
-  if (missing.length > 0)
-    findings.push(finding('mark-left-out', hub.mark, { value: missing.length, about: { marks: missing.join(', ') } }));
-  return places;
-}
-
-/** The two sides of a sleeve that a clamp's parting plane cuts, so that no mark crosses the cut. */
-function partingSides(space: HubSpace, i: number): { side: number; halfAngle: number }[] {
-  const { clamp, sleeves } = space.shape;
-  const s = sleeves[i]!.socket;
-  if (!clamp || Math.abs(dot(clamp.normal, s.direction)) > IN_PLANE) return [];
-  const side = Math.atan2(dot(clamp.normal, s.z), dot(clamp.normal, s.y)) + Math.PI / 2;
-  return [side, side + Math.PI].map((at) => ({ side: at, halfAngle: 0.1 }));
-}
-
-function size(space: HubSpace, i: number): number {
-  const { outer, mouth, coneTop } = space.sleeves[i]!;
-  return (typeof outer === 'number' ? 2 * outer : outer[0] + outer[1]) * (mouth - coneTop);
 }

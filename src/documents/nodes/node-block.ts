@@ -1,5 +1,6 @@
 import type { ForceDiagram, NodePolyhedron } from '../../model/force-diagram.js';
 import type { HubPart, Socket } from '../../model/parts.js';
+import type { WeakestSection } from '../../model/shaped.js';
 import { fitText, writeFitted } from '../kit/fit-text.js';
 import type { Area } from '../kit/geometry2.js';
 import { INK, LINE, SIZE } from '../kit/ink.js';
@@ -18,6 +19,7 @@ import {
   outsideCamera,
 } from './hub-picture.js';
 import { drawForcePolyhedron } from './polyhedron-picture.js';
+import { weakestWords } from './weakest-words.js';
 
 /** Width of one picture and its greatest height, mm. */
 const PICTURE = 52;
@@ -34,6 +36,8 @@ const ANGLES_ELSEWHERE = 5;
 /** One node's block, measured. */
 export interface Block {
   readonly hub: HubPart;
+  /** null: not measured. */
+  readonly weakest: WeakestSection | null;
   readonly polyhedron: NodePolyhedron | null;
   readonly pictures: readonly { readonly name: string; readonly picture: HubPicture }[];
   readonly pictureWidth: number;
@@ -48,7 +52,14 @@ export interface Block {
 }
 
 /** Measures the block of a node in `width` mm on a sheet with `room` mm of height. */
-export function blockOf(pen: Pen, hub: HubPart, polyhedron: NodePolyhedron | null, width: number, room: number): Block {
+export function blockOf(
+  pen: Pen,
+  hub: HubPart,
+  polyhedron: NodePolyhedron | null,
+  width: number,
+  room: number,
+  weakest: WeakestSection | null = null,
+): Block {
   const jig = hub.system === 'drilled-ball' ? JIG : 0;
   const pictureWidth = Math.min(
     PICTURE,
@@ -73,6 +84,7 @@ export function blockOf(pen: Pen, hub: HubPart, polyhedron: NodePolyhedron | nul
   const angles = heightWith(smallTableHeight(n, 2, TEXT) + angleTableHeight(n)) <= room;
   return {
     hub,
+    weakest,
     polyhedron,
     pictures,
     pictureWidth,
@@ -106,6 +118,7 @@ export function drawBlock(
       : [units.massUnit === 'kg' ? `${fixed(hub.mass * 1000, 0)} g` : `${units.mass(hub.mass)} lb`]),
     hub.material.title,
     `revision ${hub.revision}`,
+    ...(block.weakest ? [`least section ${weakestWords(block.weakest, units)}`] : []),
   ];
   writeFitted(pen, said.join(' · '), x + wide + 5, y + 7.6, width - wide - 5, { size: SIZE.body }, 6.5);
   const top = y + HEAD;

@@ -31,7 +31,16 @@ export async function nodeSheets(records: PackRecords, fonts: Fonts): Promise<Wr
   for (let i = 0; i < hubs.length; i += columns) {
     const row = hubs
       .slice(i, i + columns)
-      .map((hub) => blockOf(paper.pen, hub, polyhedra.get(hub.mark) ?? null, width, area.height));
+      .map((hub) =>
+        blockOf(
+          paper.pen,
+          hub,
+          polyhedra.get(hub.mark) ?? null,
+          width,
+          area.height,
+          records.made.get(hub.mark)?.weakest ?? null,
+        ),
+      );
     const height = Math.max(...row.map((block) => block.height));
     if (y + height > area.y + area.height && y > area.y) {
       area = paper.continueSheet();

@@ -1,5 +1,7 @@
+import type { WeakestSection } from '../../model/shaped.js';
 import type { Flow } from '../kit/flow.js';
 import { fixed, type Units } from '../kit/units.js';
+import { weakestWords } from '../nodes/weakest-words.js';
 import type { PackRecords } from '../records.js';
 
 interface Total {
@@ -41,6 +43,19 @@ export function totalsSection(flow: Flow, records: PackRecords, units: Units): v
     ],
     rows.filter((row) => row.count !== '0'),
   );
+  const weakest = weakestOf(records);
+  if (weakest)
+    flow.paragraph(
+      `Of all printed nodes ${weakest.mark} has the least section for what it must pass on: ${weakestWords(weakest.section, units)}, as a multiple of the section of ${weakest.section.where === 'core' ? 'its largest sleeve' : 'that strut’s sleeve'}; measured on the solids.`,
+    );
+}
+
+function weakestOf(records: PackRecords): { readonly mark: string; readonly section: WeakestSection } | null {
+  let least: { mark: string; section: WeakestSection } | null = null;
+  for (const { mark, weakest } of records.made.values())
+    if (weakest && (!least || weakest.area * least.section.needed < least.section.area * weakest.needed))
+      least = { mark, section: weakest };
+  return least;
 }
 
 const metres = (mm: number, units: Units): string =>

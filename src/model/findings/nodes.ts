@@ -28,6 +28,13 @@ export const NODE_FINDINGS = {
     (f) => `wall of ${num(f.value, 2)} mm at ${f.about?.['where']}, least ${num(f.limit, 2)} mm for this process`,
     { withholds: true },
   ),
+  'section-weak': entry(
+    'warn',
+    'node',
+    'mm²',
+    (f) =>
+      `the section ${f.about?.['where'] === 'core' ? 'through its core' : 'behind the stop'} square to ${f.about?.['strut']} has ${num(f.value, 0)} mm², less than the ${num(f.limit, 0)} mm² of ${f.about?.['where'] === 'core' ? 'its largest sleeve' : 'that sleeve'}; give it a thicker wall or more gap`,
+  ),
   'node-material-unknown': entry(
     'stop',
     'truss',

@@ -9,7 +9,7 @@ import type { ShapeHubInput } from './shape-hub-task.js';
 /** Direction cosines are kept to 1e-7 (0.02 mm at 200 m), lengths to 1e-4 mm: finer than any printer steps. */
 const DIRECTION_STEPS = 1e7;
 const LENGTH_STEPS = 1e4;
-/** The outward side only chooses where letters go: in eighths, so that it does not follow every move of the far side. */
+/** The outward side and up only choose where letters go: in eighths, so that these do not follow every move of the far side. */
 const OUTWARD_STEPS = 8;
 /** Tension only weighs print orientations: two digits, so that a part does not change with the last digit of a force. */
 const TENSION_DIGITS = 2;
@@ -37,6 +37,7 @@ export function canonicalHub(hub: HubPart, job: Job, tension: readonly number[])
     ...hub,
     at: [0, 0, 0],
     outward: steps(turned(hub.outward), OUTWARD_STEPS),
+    up: steps(turned(Z), OUTWARD_STEPS),
     mass: null,
     sockets: hub.sockets.map((s) => canonicalSocket(s, turned)),
   };
@@ -58,7 +59,7 @@ export const placeHub = (shaped: ShapedHub, toTruss: Mat4): ShapedHub => ({
 
 /** The same hub without its labels: two hubs with the same form differ in their letters at most. */
 export const formOf = ({ hub, job, tension }: HubMaking): HubMaking => ({
-  hub: { ...hub, mark: '', revision: '', sockets: hub.sockets.map((s) => ({ ...s, strut: '', farNode: '' })) },
+  hub: { ...hub, up: Z, mark: '', revision: '', sockets: hub.sockets.map((s) => ({ ...s, strut: '', farNode: '' })) },
   job,
   tension,
 });

@@ -5,7 +5,7 @@ import { isWithheld, settleFindings } from '../../model/hold.js';
 import type { Job } from '../../model/job/index.js';
 import type { HubPart } from '../../model/parts.js';
 import type { Run } from '../../model/run.js';
-import type { ShapedPiece } from '../../model/shaped.js';
+import type { ShapedHub, ShapedPiece } from '../../model/shaped.js';
 import { digestOf } from '../digests.js';
 import type { PackPart, PackWriter } from '../pack-writer.js';
 import type { Lineage } from '../since.js';
@@ -74,8 +74,14 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
       }
       if (!keep) withheld.push(hub.mark);
       if (shaped.pieces.length > 0)
-        made.set(hub.mark, { mark: hub.mark, pieces: shaped.pieces.map(withoutMesh), files });
-      parts.push(keep ? { ...part, files } : { ...part, digest: null, form: null });
+        made.set(hub.mark, {
+          mark: hub.mark,
+          pieces: shaped.pieces.map(withoutMesh),
+          files,
+          weakest: shaped.weakest ?? null,
+        });
+      const section = weakestRecord(shaped.weakest);
+      parts.push(keep ? { ...part, files, ...section } : { ...part, digest: null, form: null, ...section });
       run.tell({ stage: 'Hubs', done: index + 1, total: again.length });
     },
   );
@@ -85,6 +91,16 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
 
 /** Meshes are written and dropped: thousands do not fit in memory. */
 const withoutMesh = ({ positions, triangles, ...rest }: ShapedPiece): MadePiece => rest;
+
+/** Square millimetres of the manifest: to 0.01. */
+const area = (mm2: number): number => Math.round(mm2 * 100) / 100;
+
+const weakestRecord = (w: ShapedHub['weakest']): Pick<PackPart, 'weakest_section'> =>
+  w
+    ? {
+        weakest_section: { strut: w.strut, where: w.where, area_mm2: area(w.area), needed_mm2: area(w.needed) },
+      }
+    : {};
 
 /** What a piece beside the node itself is; null: the node's own. */
 function accessory(piece: string): 'cap' | 'guide' | null {
