@@ -1,5 +1,6 @@
 import { crossingFindings } from '../detailing/crossings.js';
 import { nameFindings } from '../detailing/names.js';
+import { packChecks } from '../documents/pack-checks.js';
 import type { Assessment } from '../documents/records.js';
 import type { Job } from '../model/job/index.js';
 import type { Parts } from '../model/parts.js';
@@ -93,7 +94,12 @@ export function assess(file: Truss, asked: Job): Assessment {
       ...solution.checked,
       ...judgement.checked,
     ],
-    notChecked: [...(equilibrium ? [] : ['equilibrium']), ...solution.notChecked, ...judgement.notChecked],
+    notChecked: [
+      ...(equilibrium ? [] : ['equilibrium']),
+      ...solution.notChecked,
+      ...judgement.notChecked,
+      ...packChecks(made.parts),
+    ],
   });
 }
 

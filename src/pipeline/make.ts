@@ -1,4 +1,5 @@
 import { assemblyHtml } from '../documents/assembly/assembly-html.js';
+import { packChecks } from '../documents/pack-checks.js';
 import type { PackRecords } from '../documents/records.js';
 import { loadFonts } from '../machine/fonts.js';
 import { loadPageCode } from '../machine/page-code.js';
@@ -90,8 +91,11 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   const assembly = planAssembly({ ...assessed, bars: bars.plan.bars });
   const fitUp = planFitUp(assessed.topology, assessed.parts, job);
 
+  const here = packChecks(assessed.parts);
   const settled = settle({
     ...assessed,
+    checked: [...assessed.checked, ...here],
+    notChecked: assessed.notChecked.filter((c) => !here.includes(c)),
     found: [
       ...assessed.found,
       ...hubs.findings,

@@ -1,3 +1,4 @@
+import { packChecks } from '../../documents/pack-checks.js';
 import type { Assessment } from '../../documents/records.js';
 import type { Level } from '../../model/finding.js';
 import { sayFinding } from '../../model/findings/index.js';
@@ -11,6 +12,8 @@ const plural = (n: number, word: string, many = `${word}s`): string => `${n} ${n
 /** The check in sentences, one fact a line, findings last and worst first. */
 export function sayAssessment(a: Assessment, paint: Paint): string {
   const { truss } = a.topology;
+  const left = packChecks(a.parts).filter((c) => a.notChecked.includes(c));
+  const missing = a.notChecked.filter((c) => !left.includes(c));
   const lines = [
     `${paint('bold', a.job.title)}, revision ${a.job.revision}`,
     '',
@@ -19,7 +22,8 @@ export function sayAssessment(a: Assessment, paint: Paint): string {
     ...flatnessLines(a),
     ...strengthLines(a),
     `Checked: ${a.checked.join(', ') || 'nothing'}.`,
-    ...(a.notChecked.length > 0 ? [`Not checked: ${a.notChecked.join(', ')}.`] : []),
+    ...(missing.length > 0 ? [`Not checked: ${missing.join(', ')}.`] : []),
+    ...(left.length > 0 ? [`Not checked until the pack is made: ${left.join(', ')}.`] : []),
     '',
     ...a.findings.map(
       (f) =>
