@@ -6,6 +6,7 @@ import type { Job } from '../model/job/index.js';
 import type { Material } from '../model/material.js';
 import type { HubPart, Socket, StrutPart } from '../model/parts.js';
 import type { Section } from '../model/section.js';
+import { endChoice } from '../model/strut-end.js';
 import type { Topology } from '../model/topology.js';
 import { nodeSystem } from './systems/index.js';
 import { clearance, isMeasured, measuredSize } from './systems/printing.js';
@@ -57,6 +58,7 @@ export function detailHubs(
       if (!section) return [];
       // At the "to" end the strut points back along its own x: y turns with it, z stays.
       const { y, z } = axes[bar.memberIndex]!;
+      const asked = endChoice(job, bar.member.mark, node.mark);
       return {
         strut: bar.member.mark,
         farNode: bar.far.mark,
@@ -64,11 +66,12 @@ export function detailHubs(
         y: bar.end === 0 ? y : negate(y),
         z,
         section,
-        joint: job.nodes.joint,
-        detail: job.struts.ends[`${bar.member.mark}@${node.mark}`] ?? 'plain',
+        joint: asked.joint ?? job.nodes.joint,
+        detail: asked.detail,
+        ...(asked.hold ? { hold: asked.hold } : {}),
       };
     });
-    const sockets = system ? ends.map((end) => system.socket(end, job)) : [];
+    const sockets = system ? ends.map((end) => socketOf(system, end, job)) : [];
     const found = system?.setbacks(sockets, job);
     for (const pair of found?.tooClose ?? [])
       findings.push(
@@ -108,7 +111,9 @@ export function detailHubs(
   const everywhere = Math.max(0, ...drafts.flatMap((d) => d.setbacks.map((s) => s ?? 0)));
   const hubs = drafts.map(({ hub, system, material, whole, setbacks }): HubPart => {
     const atNode = Math.max(0, ...setbacks.map((s) => s ?? 0));
-    const rule = { least: null, 'equal-at-node': atNode, equal: everywhere }[job.nodes.setbacks];
+    const rule = system?.ownSetbacks
+      ? null
+      : { least: null, 'equal-at-node': atNode, equal: everywhere }[job.nodes.setbacks];
     const sockets = hub.sockets.map(
       (s, i): Socket => ({ ...s, setback: setbacks[i] === null ? null : (rule ?? setbacks[i]!) }),
     );
@@ -134,6 +139,12 @@ function clearanceFindings(sections: readonly (Section | null)[], job: Job): Fin
   if (!first) return [];
   const about = { sections: [...guessed.keys()].join(', ') };
   return [finding('clearance-not-measured', 'truss', { value: clearance(job, first, measuredSize(first)), about })];
+}
+
+/** The socket that a strut's end asks for, else its node's; a ball has bores alone. */
+function socketOf(system: NodeSystem, end: BarEnd, job: Job): Socket {
+  const own = end.hold && !system.ownSetbacks ? nodeSystem(end.hold) : null;
+  return (own ?? system).socket(end, job);
 }
 
 interface Draft {

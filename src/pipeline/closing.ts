@@ -1,4 +1,5 @@
 import type { Job } from '../model/job/index.js';
+import { endKey, withDetail } from '../model/strut-end.js';
 import type { Topology } from '../model/topology.js';
 import { blockedStruts } from '../planning/assembly/blocked.js';
 import type { Fixings } from './detail.js';
@@ -24,11 +25,11 @@ export function giveClosingDetails<T extends { readonly job: Job; readonly fixin
     const blocked = blockedStruts(topology, { ...fixings, panels: [] }, job);
     if (blocked.length === 0) break;
     const sockets = new Map(fixings.hubs.map((h) => [h.mark, h.sockets.length]));
-    const ends = { ...job.struts.ends };
+    let ends = job.struts.ends;
     for (const strut of blocked) {
       const [a, b] = topology.truss.members[topology.memberIndex.get(strut)!]!.ends;
       const node = (sockets.get(b) ?? 0) < (sockets.get(a) ?? 0) ? b : a;
-      ends[`${strut}@${node}`] = 'slide';
+      ends = withDetail(ends, endKey(strut, node), 'slide');
     }
     found = again({ ...job, struts: { ...job.struts, ends } });
   }

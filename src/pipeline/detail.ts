@@ -56,7 +56,7 @@ export function fix(
   depths: Parameters<typeof deepenSockets>[1],
   job: Job,
 ): Fixings {
-  const hubs = deepenSockets(shallow.hubs, depths);
+  const hubs = deepenSockets(shallow.hubs, depths, job);
   const struts = detailStruts(topology, job, sections, axes, hubs);
   return { hubs, struts: struts.struts, findings: [...shallow.findings, ...struts.findings] };
 }

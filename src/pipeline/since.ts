@@ -14,6 +14,8 @@ export interface Lineage {
   unchanged(kind: PartKind, mark: string, digest: string | null): boolean;
   /** Revision letter of the part's own last change. */
   revision(kind: PartKind, mark: string, digest: string | null): string;
+  /** Caps and guides that the earlier pack has of a node, without their files. */
+  accessories(node: string): readonly PackPart[];
 }
 
 /** `revision`: the letter of this issue. Without an earlier pack everything is new. */
@@ -26,5 +28,9 @@ export function lineageOf(since: Since | null, revision: string): Lineage {
   return {
     unchanged: (kind, mark, digest) => same(kind, mark, digest) !== null,
     revision: (kind, mark, digest) => same(kind, mark, digest)?.revision ?? revision,
+    accessories: (node) =>
+      (since?.parts ?? [])
+        .filter((p) => (p.kind === 'cap' || p.kind === 'guide') && p.mark.startsWith(`${node}.`))
+        .map((p) => ({ ...p, files: [] })),
   };
 }

@@ -1,5 +1,6 @@
 import { convexHull3 } from '../../maths/convex-hull3.js';
 import type { Vec3 } from '../../maths/vec3.js';
+import type { Job } from '../../model/job/index.js';
 import type { HubPart, Socket } from '../../model/parts.js';
 import { measuredSize, ownClearance } from './printing.js';
 import { areaOf, boreHalf, largest } from './sleeve.js';
@@ -20,6 +21,8 @@ export const DRILLED_BALL_SYSTEM: NodeSystem = {
   ...SLEEVE_HUB,
   name: 'drilled-ball',
   title: 'Drilled ball',
+  ownSetbacks: true,
+  deepen: deeperBall,
   material: (job) => job.nodes.ball.material,
   socket(bar, job) {
     const plain = sizeSocket({ ...bar, detail: 'plain' }, job);
@@ -34,7 +37,7 @@ export const DRILLED_BALL_SYSTEM: NodeSystem = {
     const least = found.setbacks.map((s, i) => (square[i] ? null : s));
     const needed = Math.max(0, ...sockets.map((s, i) => (least[i] === null ? 0 : surfaceOver(s, least[i]! + s.depth))));
     const own = job.nodes.ball.diameter_mm;
-    const radius = own === undefined ? (BALL_STEP / 2) * Math.ceil((2 * needed) / BALL_STEP - 1e-9) : own / 2;
+    const radius = own === undefined ? ballSize(needed) : own / 2;
     return {
       ...found,
       setbacks: least.map((s, i) =>
@@ -49,6 +52,20 @@ export const DRILLED_BALL_SYSTEM: NodeSystem = {
   mass: (hub) =>
     hub.sockets.some((s) => s.setback === null) ? null : ballVolume(hub) * MM3_TO_M3 * hub.material.density,
 };
+
+/**
+ * A ball whose bores are deeper: no stop moves inwards, so that bores stay apart, and the ball grows to the next size that its rims
+ * lie on. A ball whose diameter the job gives stays as it is.
+ */
+function deeperBall(hub: HubPart, depths: ReadonlyMap<string, number>, job: Job): HubPart {
+  if (job.nodes.ball.diameter_mm !== undefined || hub.sockets.some((s) => s.setback === null)) return hub;
+  const sockets = hub.sockets.map((s) => ({ ...s, depth: Math.max(s.depth, depths.get(s.strut) ?? 0) }));
+  const radius = ballSize(Math.max(...sockets.map((s) => surfaceOver(s, s.setback! + s.depth))));
+  return { ...hub, sockets: sockets.map((s) => ({ ...s, setback: entryAt(s, radius) - s.depth })) };
+}
+
+/** Radius of the least ball that is sold and at least as large, mm. */
+const ballSize = (needed: number): number => (BALL_STEP / 2) * Math.ceil((2 * needed) / BALL_STEP - 1e-9);
 
 /** Radius of a ball whose surface a bore's rim meets at a distance from its middle, and back. */
 const surfaceOver = (s: Socket, entry: number): number => Math.hypot(entry, largest(boreHalf(s)));

@@ -15,6 +15,8 @@ export interface BarEnd {
   readonly section: Section;
   readonly joint: Joint;
   readonly detail: EndDetail;
+  /** What this end asks for besides its node's system; absent: nothing. */
+  readonly hold?: 'socket' | 'spigot';
 }
 
 /** Two bars nearer to each other than the system can part. */
@@ -92,6 +94,10 @@ export interface NodeSystem {
   readonly title: string;
   /** Name of what its hubs are made from; absent: the job's node material. */
   material?(job: Job): string;
+  /** Setbacks follow from the shape itself and cannot be made equal to others: bores that end on one ball. */
+  readonly ownSetbacks?: true;
+  /** Deeper sockets, mm by strut; absent: the depth alone grows, from the stop out. */
+  deepen?(hub: HubPart, depths: ReadonlyMap<string, number>, job: Job): HubPart;
   /** Bore, wall, depth and pin of one strut's socket; its setback is still null. */
   socket(bar: BarEnd, job: Job): Socket;
   /** The setbacks that keep every pair of struts at a node apart by the web wanted. */

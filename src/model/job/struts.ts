@@ -1,5 +1,7 @@
 import { z } from 'zod';
 
+const detail = z.enum(['plain', 'drop-in', 'slide']);
+
 /** Sections of the struts, the saw and the stock. */
 export const strutsSchema = z
   .strictObject({
@@ -10,9 +12,27 @@ export const strutsSchema = z
       .default('faces')
       .describe('How a rectangular section is turned: from the faces beside the strut, or its height upright.'),
     ends: z
-      .record(z.string(), z.enum(['plain', 'drop-in', 'slide']))
+      .record(
+        z.string(),
+        z.union([
+          detail.describe('Only its closing detail.'),
+          z.strictObject({
+            detail: detail.optional().describe('How the strut gets in; absent: plain.'),
+            joint: z
+              .enum(['glued', 'pinned', 'seated', 'loose'])
+              .optional()
+              .describe('How this end passes its force; absent: as `nodes.joint`.'),
+            hold: z
+              .enum(['socket', 'spigot'])
+              .optional()
+              .describe(
+                'A sleeve round the strut, or a spigot or plate in it; absent: as the node. Not in a drilled ball.',
+              ),
+          }),
+        ]),
+      )
       .default({})
-      .describe('Closing detail of a strut end, by "strut@node".'),
+      .describe('What one strut end asks for, by "strut@node": plain, drop-in or slide, or that and more.'),
     pinDrill: z.boolean().default(false).describe('Whether strut ends are drilled for the cross pins before assembly.'),
     faceJoints: z
       .boolean()

@@ -44,7 +44,7 @@ export function canonicalHub(hub: HubPart, job: Job, tension: readonly number[])
   return {
     input: {
       hub: canonical,
-      job: { ...REST, nodes: job.nodes, printers: printersOf(job).map(sizeOnly) },
+      job: { ...REST, nodes: shapingOf(job.nodes), printers: printersOf(job).map(sizeOnly) },
       tension: tension.map((n) => Number(n.toPrecision(TENSION_DIGITS))),
     },
     toTruss: frameToWorld(hub.at, x, y),
@@ -65,6 +65,26 @@ export const formOf = ({ hub, job, tension }: HubMaking): HubMaking => ({
 });
 
 const REST = defaultJob('Untitled');
+
+/**
+ * What of the job's node settings a solid is made from: those that say only how sockets were sized, which the sockets themselves
+ * carry, go back to their defaults, so that no part changes because a value was marked as measured or another node has another system.
+ */
+function shapingOf(nodes: Job['nodes']): Job['nodes'] {
+  const { clearance_mm, depth_mm, gap_mm, wall_mm, bondStrength_MPa, ...rest } = nodes;
+  const usual = REST.nodes;
+  return {
+    ...rest,
+    system: usual.system,
+    systems: usual.systems,
+    material: usual.material,
+    clearances: usual.clearances,
+    clearanceMeasured: usual.clearanceMeasured,
+    setbacks: usual.setbacks,
+    depthFactor: usual.depthFactor,
+    joint: usual.joint,
+  };
+}
 
 function frameOf(sockets: readonly Socket[]): readonly [Vec3, Vec3, Vec3] {
   const first = sockets[0];

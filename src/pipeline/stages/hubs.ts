@@ -44,7 +44,7 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
     object: 1 + i * PIECES,
   }));
   const again = drafts.filter((d) => !d.unchanged);
-  for (const { part } of drafts.filter((d) => d.unchanged)) parts.push(part);
+  for (const { part } of drafts.filter((d) => d.unchanged)) parts.push(...lineage.accessories(part.mark), part);
   await run.each<ShapeHubInput, ShapeHubOutput>(
     'shape-hub',
     again.map((d) => ({ ...d.input, object: d.object })),
