@@ -14,6 +14,37 @@ const standing = (duration: Duration): boolean => duration !== 'short' && durati
 export const plasticLimit = (strength: number, duration: Duration, rules: Rules): number =>
   standing(duration) ? Math.min(strength / rules.factor, strength * SUSTAINED_SHARE) : strength / rules.factor;
 
+export const isWood = ({ family }: Material): boolean => family === 'timber' || family === 'glulam';
+
+/** Of strengths along the grain, where no class gives those across it: the least ratios of EN 338:2016 (ft,90 / fv 0.4 / 4.0, fc,90 / fc,0 2.5 / 21). */
+const [TENSION_ACROSS, COMPRESSION_ACROSS] = [0.1, 0.119] as const;
+/** Rolling shear is about twice the tension across the grain: note to EN 1995-1-1 6.1.7, from memory. */
+const ROLLING = 2;
+
+/** Design value of wood across the grain, MPa; null: not known. */
+function acrossGrain(
+  material: Material,
+  symbol: 'ft' | 'ftZ' | 'fc' | 'fv',
+  duration: Duration,
+  rules: Rules,
+): number | null {
+  const { strength, family } = material;
+  const { ft90k, fc90k } = strength;
+  const factor =
+    strength['fvk'] === undefined
+      ? 1 / rules.factor
+      : kMod(rules.serviceClass, duration) / gammaM(family as 'timber' | 'glulam');
+  if (symbol === 'fc') {
+    const along = strength['fc0k'] ?? strength['fc'];
+    const across = fc90k ?? (along === undefined ? undefined : COMPRESSION_ACROSS * along);
+    return across === undefined ? null : factor * across;
+  }
+  const shear = strength['fvk'] ?? strength['fv'];
+  const pull = ft90k ?? (shear === undefined ? undefined : TENSION_ACROSS * shear);
+  if (pull === undefined) return null;
+  return factor * (symbol === 'fv' ? Math.min(ROLLING * pull, shear ?? ROLLING * pull) : pull);
+}
+
 /** Design value of a timber strength, MPa: the characteristic one by EN 1995-1-1 (2.14), else the ultimate one over the factor; null: not known, or not timber. */
 export function woodLimit(
   material: Material,
@@ -30,7 +61,7 @@ export function woodLimit(
 }
 
 /**
- * What a hub of a material may carry, MPa; null: not known. Wood by its own rule; a print by the plastic's, `ftZ` being tension
+ * What a hub of a material may carry, MPa; null: not known. Wood across the grain, since its grain runs anyhow to a bore; a print by the plastic's, `ftZ` being tension
  * across its layers, whatever way it is printed.
  */
 export function hubLimit(
@@ -39,8 +70,7 @@ export function hubLimit(
   duration: Duration,
   rules: Rules,
 ): number | null {
-  if (hub.family === 'timber' || hub.family === 'glulam')
-    return woodLimit(hub, symbol === 'ftZ' ? 'ft' : symbol, duration, rules);
+  if (isWood(hub)) return acrossGrain(hub, symbol, duration, rules);
   const strength = hub.strength[symbol] ?? (symbol === 'ftZ' ? hub.strength['ft'] : undefined);
   return strength === undefined ? null : plasticLimit(strength, duration, rules);
 }

@@ -55,10 +55,11 @@ function passesOf(hub: HubPart, job: Job): readonly SocketPasses[] {
     const { depth, travel, pin, wall, form } = hub.sockets[k]!;
     return {
       // Gross: the paths take the pin's hole off themselves.
-      wallArea: s.wallArea + 2 * pin * wall,
+      wallArea: s.wallArea + (s.solid ? 0 : 2 * pin * wall),
       bondPerDepth: s.bondArea / (depth - (travel ?? 0)),
       stopArea: s.stopArea,
-      hollow: form === undefined || form === 'sleeve',
+      hollow: !s.solid && (form === undefined || form === 'sleeve'),
+      ...(s.screws ? { screws: s.screws } : {}),
     };
   });
 }

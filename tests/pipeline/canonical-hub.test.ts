@@ -35,3 +35,20 @@ it('the solid made in its own frame and moved is the solid made in place', async
       if (i % 10 === 0) expect(Math.min(...there.map((q) => distance(p, q)))).toBeLessThan(0.5);
   }
 });
+
+it('does not change with what only says how its sockets were sized, nor with other nodes', () => {
+  const job = defaultJob('Tetrahedron');
+  const of = (nodes: object) => {
+    const changed = { ...job, nodes: { ...job.nodes, ...nodes } };
+    const { parts, job: made } = assess(truss!, changed);
+    return parts.hubs.map((hub) => JSON.stringify(canonicalHub(hub, made, []).input));
+  };
+  const before = of({});
+  expect(of({ clearanceMeasured: true })).toEqual(before);
+  // The process's own starting value, now measured, for the section that is there and for one that is not.
+  expect(of({ clearances: { 'beech-8': 0.4, 'beech-25': 0.9 } })).toEqual(before);
+  const mixed = of({ systems: { A: 'clamp' } });
+  expect(mixed.filter((m, i) => m === before[i])).toHaveLength(3);
+  expect(of({ clearances: { 'beech-8': 0.5 } }).filter((m, i) => m === before[i])).toHaveLength(0);
+  expect(of({ chamfer_mm: 0.3 }).filter((m, i) => m === before[i])).toHaveLength(0);
+});

@@ -166,3 +166,25 @@ it('tells relabelled from changed, new and withdrawn; what was never made is no 
   expect(c.withdrawn).toEqual([{ kind: 'strut', mark: 'S3' }]);
   expect(c.totals['relabelled']).toEqual({ strut: 1, node: 1, panel: 0, cap: 0, guide: 0, gauge: 0 });
 });
+
+it('lists caps and guides of unchanged hubs as unchanged, without files', async () => {
+  const own: Job = {
+    ...job('A'),
+    struts: { ...job('A').struts, ends: { 'S7@A': 'drop-in' } },
+    nodes: { ...job('A').nodes, systems: { E: 'drilled-ball' } },
+  };
+  const source = trussOf(text('[150, 90, 240]'));
+  const one = await make(source, own);
+  const kinds = (m: Made, kind: string): string[] => m.manifest.parts.filter((p) => p.kind === kind).map((p) => p.mark);
+  expect(kinds(one, 'cap')).toEqual(['A.cap-S7']);
+  expect(kinds(one, 'guide')).toEqual(['E.guide-A', 'E.guide-B']);
+  const two = await make(source, { ...own, revision: 'B' }, one.manifest);
+  expect(kinds(two, 'cap')).toEqual(kinds(one, 'cap'));
+  expect(kinds(two, 'guide')).toEqual(kinds(one, 'guide'));
+  for (const p of two.manifest.parts.filter((x) => x.kind === 'cap' || x.kind === 'guide')) {
+    expect(p.files).toEqual([]);
+    expect(p.revision).toBe('A');
+  }
+  const c = await comparePacks(one.pack, two.pack);
+  expect([c.changed, c.new, c.withdrawn].flat()).toEqual([]);
+}, 120_000);

@@ -1,3 +1,4 @@
+import { clampStrength } from './clamp-strength.js';
 import { SLEEVE_HUB, sizeSocket } from './socket.js';
 import type { NodeSystem } from './system.js';
 
@@ -7,4 +8,5 @@ export const CLAMP_SYSTEM: NodeSystem = {
   name: 'clamp',
   title: 'Printed hub in two halves, screwed',
   socket: sizeSocket,
+  strength: clampStrength,
 };

@@ -82,6 +82,18 @@ export interface SocketStrength {
   readonly pin: { readonly diameter: number; readonly shearPlanes: number; readonly bearingArea: number } | null;
   /** Share of the plastic's in-plane strength that is left across layers. */
   readonly acrossLayers: number;
+  /** A body round the bore that has no sleeve: the wall area is a section through it. */
+  readonly solid?: true;
+  /** Screws that hold a parted hub together: how many, sine of the strut's angle to the parting plane, and for each the cylinder of its thread and its head's ring. */
+  readonly screws?: ClampScrews;
+}
+
+export interface ClampScrews {
+  readonly count: number;
+  readonly out: number;
+  /** mm² */
+  readonly threadArea: number;
+  readonly headArea: number;
 }
 
 /**

@@ -8,9 +8,14 @@ export const strutsSchema = z
     section: z.string().default('beech-8').describe('Section of every strut that has none of its own.'),
     groups: z.record(z.string(), z.string()).default({}).describe('Section by group.'),
     rollFrom: z
-      .enum(['faces', 'up'])
+      .union([
+        z.enum(['faces', 'up']).describe('The faces beside the strut, or upright.'),
+        z.tuple([z.number(), z.number(), z.number()]).describe('A direction in the truss’s axes.'),
+      ])
       .default('faces')
-      .describe('How a rectangular section is turned: from the faces beside the strut, or its height upright.'),
+      .describe(
+        'Where the height of a rectangular section points: to the outside of the faces beside the strut, up, or along a direction [x, y, z]; a strut’s own roll turns it from there.',
+      ),
     ends: z
       .record(
         z.string(),

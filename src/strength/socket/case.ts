@@ -1,3 +1,4 @@
+import type { ClampScrews } from '../../detailing/systems/system.js';
 import type { Material } from '../../model/material.js';
 import type { Socket } from '../../model/parts.js';
 import type { MemberActions } from '../../model/solution.js';
@@ -13,6 +14,8 @@ export interface SocketPasses {
   readonly stopArea: number;
   /** A sleeve round the strut, or a plug or solid body that has no bore of its own. */
   readonly hollow: boolean;
+  /** Screws that hold the hub's halves together; absent: it is whole. */
+  readonly screws?: ClampScrews;
 }
 
 /** One end of a strut in its socket, under one combination. */

@@ -1,4 +1,4 @@
-import { plasticLimit, woodLimit } from '../limits.js';
+import { hubLimit, isWood, plasticLimit, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase, SocketPath } from './case.js';
 import { bondSurface, engaged } from './geometry.js';
@@ -7,7 +7,7 @@ import { sleeveChecks } from './sleeve.js';
 
 /** Glued: the bond on the engaged perimeter carries tension and compression (the strut floats off the stop), then the sleeve. */
 export const glued: SocketPath = (c) => {
-  const { actions, rules, bond, strut } = c;
+  const { actions, rules, bond, strut, hub } = c;
   const surface = bondSurface(c);
   const force = Math.abs(actions.axial);
   const checks: Verdict[] = [];
@@ -20,6 +20,13 @@ export const glued: SocketPath = (c) => {
     if (wood !== null)
       checks.push({ utilisation: force / surface / wood, rule: 'shear of the wood at the socket bond' });
   }
+  // A ball's wood round the bore: its grain runs anyhow, so it is sheared across.
+  const ball = isWood(hub) ? hubLimit(hub, 'fv', actions.duration, rules) : null;
+  if (ball !== null && surface > 0)
+    checks.push({
+      utilisation: force / surface / ball,
+      rule: 'EN 1995-1-1 6.1.7, rolling shear of the ball at the socket bond',
+    });
   const rod = gluedRod(c);
   if (rod !== null) checks.push({ utilisation: force / rod, rule: 'glued-in rod (Feligioni et al.), pull-out' });
   return surface > 0 || force === 0 ? [...checks, ...sleeveChecks(c)] : null;
@@ -30,8 +37,7 @@ function gluedRod(c: SocketCase): number | null {
   const { hub, strut, socket, rules } = c;
   const { shape } = socket.section;
   const metal = strut.family === 'steel' || strut.family === 'aluminium';
-  const wood = hub.family === 'timber' || hub.family === 'glulam';
-  if (!metal || !wood || shape.kind === 'rectangle' || typeof socket.bore !== 'number') return null;
+  if (!metal || !isWood(hub) || shape.kind === 'rectangle' || typeof socket.bore !== 'number') return null;
   const glue = Math.max(0, (socket.bore - shape.diameter) / 2);
   return gluedRodCapacity(shape.diameter, glue, engaged(c), hub.density, GLUE_FRACTURE.brittle) / rules.factor;
 }

@@ -5,6 +5,7 @@ import type { SocketCase, SocketPath } from './case.js';
 import { glued } from './glued.js';
 import { loose } from './loose.js';
 import { pinned } from './pinned.js';
+import { screwChecks } from './screws.js';
 import { seated } from './seated.js';
 
 const PATHS: Readonly<Record<Joint, SocketPath>> = { glued, pinned, seated, loose };
@@ -14,5 +15,6 @@ export function judgeSocket(socket: SocketCase): Verdict | null {
   const path = socket.socket.bolted ? bolted : PATHS[socket.socket.joint];
   const checks = path(socket);
   if (checks === null) return null;
-  return checks.length === 0 ? { utilisation: 0, rule: 'socket' } : governing(checks);
+  const all = [...checks, ...screwChecks(socket)];
+  return all.length === 0 ? { utilisation: 0, rule: 'socket' } : governing(all);
 }

@@ -1,4 +1,4 @@
-import { hubLimit, woodLimit } from '../limits.js';
+import { hubLimit, isWood, woodLimit } from '../limits.js';
 import type { Verdict } from '../standard.js';
 import type { SocketCase } from './case.js';
 import { acrossPin, engaged, sleeve } from './geometry.js';
@@ -17,7 +17,9 @@ export function sleeveChecks(c: SocketCase, area = sleeve(c).area): Verdict[] {
   if (along !== null && bent !== null)
     checks.push({
       utilisation: Math.abs(actions.axial) / area / along + moment / sleeve(c).modulus / bent,
-      rule: `socket wall ${actions.axial >= 0 ? 'tension across layers' : 'compression'}${moment > 0 ? ' with bending' : ''}`,
+      rule: isWood(hub)
+        ? `EN 1995-1-1 6.1.3, net section of the ball, ${actions.axial >= 0 ? 'tension' : 'compression'} across the grain${moment > 0 ? ' with bending' : ''}`
+        : `socket wall ${actions.axial >= 0 ? 'tension across layers' : 'compression'}${moment > 0 ? ' with bending' : ''}`,
     });
   if (moment > 0) {
     const pressure = (6 * moment) / (acrossPin(c) * engaged(c) ** 2);
