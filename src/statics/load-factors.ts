@@ -55,14 +55,7 @@ export function lowestLoadFactors(
   }
   const fine =
     shifted.state === 'factorised'
-      ? largestEigenvalues(
-          n,
-          (block) => backSolve(shifted, block.map(weigh)),
-          weigh,
-          Math.min(wanted, n),
-          FINE_BASIS,
-          FINE,
-        )
+      ? largestEigenvalues(n, (_, weighed) => backSolve(shifted, weighed), weigh, Math.min(wanted, n), FINE_BASIS, FINE)
       : rough;
   // (K + sigma Kg)⁻¹ K has eigenvalues lambda / (lambda - sigma).
   const pairs = fine.values

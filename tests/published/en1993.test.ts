@@ -145,3 +145,55 @@ describe('a wall that buckles before it yields, EN 1993-1-6 annex D', () => {
     expect(rule).toBe('EN 1993-1-6 8.5.3 (8.19)');
   });
 });
+
+describe('EN 1993-1-1 6.2, sections by hand', () => {
+  const member = (
+    shape: { kind: 'rectangle'; width: number; height: number } | { kind: 'tube'; diameter: number; wall: number },
+  ) => ({
+    shape,
+    material: MATERIALS.get('S235')!,
+    bucklingLength: 500,
+  });
+  const flat = member({ kind: 'rectangle', width: 20, height: 40 });
+  const none = axialOnly('given', 0, 'short');
+  const mpl = { y: (20 * 40 ** 2 * 235) / 4, z: (40 * 20 ** 2 * 235) / 4 };
+
+  it('a bar of 20 x 40 mm about both axes: My/Mpl,y + Mz/Mpl,z, W = b h²/4 (6.2.1 (7))', () => {
+    const { utilisation } = EN_1993.judge(flat, { ...none, momentY: 0.4 * mpl.y, momentZ: 0.3 * mpl.z }, rules);
+    expect(utilisation).toBeCloseTo(0.7, 12);
+  });
+  it('pulled and bent: N/A fy + My/Mpl,y', () => {
+    const a = { ...none, axial: 0.25 * 800 * 235, momentY: 0.4 * mpl.y };
+    expect(EN_1993.judge(flat, a, rules).utilisation).toBeCloseTo(0.65, 12);
+  });
+  it('shear above half its resistance lowers fy by (2 V/Vpl - 1)² (6.2.8 (3)): at 0.8 to 64 %', () => {
+    const a = { ...none, shearZ: (0.8 * 800 * 235) / Math.sqrt(3), momentY: 0.64 * mpl.y };
+    const { utilisation, rule } = EN_1993.judge(flat, a, rules);
+    expect(utilisation).toBeCloseTo(1, 12);
+    expect(rule).toBe('EN 1993-1-1 6.2.5 (6.12)');
+    // At half nothing is taken off.
+    const half = { ...none, shearZ: (0.5 * 800 * 235) / Math.sqrt(3), momentY: 0.64 * mpl.y };
+    expect(EN_1993.judge(flat, half, rules).utilisation).toBeCloseTo(0.64, 12);
+  });
+  it('torsion of a thin tube: T / (2 pi r² t) sqrt3 / fy, to 1 % (Bredt, any handbook)', () => {
+    const tube = member({ kind: 'tube', diameter: 60, wall: 1 });
+    const t = 2e5;
+    const { utilisation, rule } = EN_1993.judge(tube, { ...none, torsion: t }, rules);
+    expect((utilisation * 235) / Math.sqrt(3) / (t / (2 * Math.PI * 29.5 ** 2))).toBeCloseTo(1, 1);
+    expect(rule).toBe('EN 1993-1-1 6.2.7 (6.23)');
+  });
+  it('a class 3 tube is bent elastically and pressed with kyy of its own column of table B.1', () => {
+    // 100 x 1.25, d/t 80; 3 m. Sums in plain formulas, (6.61): n + (1 + 0.6 min(lambda, 1) n) M / Wel fy, curve c.
+    const tube = { ...member({ kind: 'tube', diameter: 100, wall: 1.25 }), bucklingLength: 3000 };
+    expect(sectionClass(tube.shape, 235, 210000)).toBe(3);
+    const area = (Math.PI / 4) * (100 ** 2 - 97.5 ** 2);
+    const inertia = (Math.PI / 64) * (100 ** 4 - 97.5 ** 4);
+    const lambda = Math.sqrt((area * 235) / ((Math.PI ** 2 * 210000 * inertia) / 3000 ** 2));
+    const phi = 0.5 * (1 + 0.49 * (lambda - 0.2) + lambda ** 2);
+    const n = 20000 / ((area * 235) / (phi + Math.sqrt(phi ** 2 - lambda ** 2)));
+    const m = 5e5 / ((inertia / 50) * 235);
+    const a = { ...none, axial: -20000, momentZ: 5e5 };
+    expect(lambda).toBeLessThan(1);
+    expect(EN_1993.judge(tube, a, rules).utilisation).toBeCloseTo(n + (1 + 0.6 * lambda * n) * m, 10);
+  });
+});

@@ -27,7 +27,8 @@ export function supportsSection(flow: Flow, { solution }: PackRecords, units: Un
         ? `Nothing holds it down against tipping over ${tips.edge.join('-')} under ${tips.combination}.`
         : `Nearest to tipping over: ${tips.edge.join('-')} under ${tips.combination}, where overturning is ${fixed(tips.ratio, 2)} of what holds it.`,
     );
-  const { force } = units;
+  // Columns name the sense, so a sign would only be read as tension.
+  const force = (n: number): string => units.force(n).replace('+', '');
   flow.table(
     [
       { head: 'Support', bold: true, value: (r: SupportRow) => r.node },

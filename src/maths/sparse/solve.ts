@@ -4,6 +4,9 @@ import { largest, multiplySymmetric, symmetricNorm } from './multiply.js';
 
 /** Right-hand sides that pass through the factor together: as many as a tile's sums fit the registers. */
 const BLOCK = 4;
+/** Numbers of the factor in one strip of rows: 16 kB, half of a usual first-level cache. */
+const STRIP = 2048;
+const LEAST_STRIP = 8;
 /** Above this normalised residual a solve is refined, at most REFINEMENTS times: round-off alone stays near 1e-16. */
 const REFINE_ABOVE = 1e-15;
 const REFINEMENTS = 2;
@@ -198,11 +201,15 @@ function backward(factor: Factor, y: Float64Array, work: Float64Array): void {
       work[to + 2] = y[q + 2];
       work[to + 3] = y[q + 3];
     }
-    let k = 0;
-    for (; k + 1 < width; k += 2)
-      twoColumns(l, base + width * width + k, width, height - width, work, width * BLOCK, y, first + k * BLOCK);
-    if (k < width)
-      oneColumn(l, base + width * width + k, width, height - width, work, width * BLOCK, y, first + k * BLOCK);
+    // Columns are strided: rows go in strips that stay in the nearest cache while every pair of columns passes over them.
+    const strip = Math.max(LEAST_STRIP, Math.floor(STRIP / width));
+    for (let r = width; r < height; r += strip) {
+      const count = Math.min(strip, height - r);
+      let k = 0;
+      for (; k + 1 < width; k += 2)
+        twoColumns(l, base + r * width + k, width, count, work, r * BLOCK, y, first + k * BLOCK);
+      if (k < width) oneColumn(l, base + r * width + k, width, count, work, r * BLOCK, y, first + k * BLOCK);
+    }
     for (let i = width - 1; i >= 0; i--) {
       const at = first + i * BLOCK;
       const y0 = y[at];
