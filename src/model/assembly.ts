@@ -17,6 +17,8 @@ export interface StrutEntry {
   readonly strain: number | null;
   /** Closing detail and the node that has it; null where it needs none or has none. */
   readonly detail: { readonly node: string; readonly kind: EndDetail | 'clamp' } | null;
+  /** Mark of the hub or strut that a blocked one would run into; absent: its travel is what blocks it. */
+  readonly hits?: string;
 }
 
 export interface AssemblyStep {

@@ -18,8 +18,12 @@ export const ASSEMBLY_FINDINGS = {
     'warn',
     'strut',
     '',
-    () =>
-      'cannot get in between its two hubs once they stand; give one of its ends a closing detail (drop-in or slide) under "struts", or clamp a hub',
+    (f) =>
+      `${
+        f.about?.['hits'] === undefined
+          ? 'cannot get in between its two hubs once they stand'
+          : `runs into ${f.about['hits']} on its way in`
+      }; give it a closing detail under "struts" (a slide or drop-in at one end, or drop-in at both), or clamp a hub`,
   ),
   'step-unstable': entry(
     'stop',

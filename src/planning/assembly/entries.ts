@@ -1,25 +1,20 @@
 import { negate, normalise, subtract } from '../../maths/vec3.js';
 import type { StrutEntry } from '../../model/assembly.js';
+import { hubFouls, strutFouls } from './fouls.js';
 import type { AssemblySetting, Link } from './setting.js';
-import { spread } from './spread.js';
+import { type Spread, spread } from './spread.js';
 
 /**
  * How the struts between a loose hub and the hubs that stand get in. Struts with a closing detail always do; of the others
- * as many as can be spread together: while the worst needs more than its limit, it is left to be closed.
+ * as many as can be spread together: while the worst needs more than its limit, or one runs into a hub or a strut on its way, it
+ * is left to be closed. `stands`: the struts that stand already, by index.
  */
-export function entriesOf(setting: AssemblySetting, hub: number, links: readonly Link[]): readonly StrutEntry[] {
-  let known = found.get(setting);
-  if (!known) found.set(setting, (known = new Map()));
-  const key = `${hub}:${links.map((l) => l.strut).join()}`;
-  let entries = known.get(key);
-  if (!entries) known.set(key, (entries = findEntries(setting, hub, links)));
-  return entries;
-}
-
-/** Orders tried one after another come to the same hubs with the same struts. */
-const found = new WeakMap<AssemblySetting, Map<string, readonly StrutEntry[]>>();
-
-function findEntries(setting: AssemblySetting, hub: number, links: readonly Link[]): readonly StrutEntry[] {
+export function entriesOf(
+  setting: AssemblySetting,
+  hub: number,
+  links: readonly Link[],
+  stands: (strut: number) => boolean,
+): readonly StrutEntry[] {
   const mark = (link: Link): string => setting.topology.truss.members[link.strut]!.mark;
   const detailed = links.filter((l) => l.detail);
   const entries: StrutEntry[] = detailed.map((l) => ({
@@ -30,10 +25,18 @@ function findEntries(setting: AssemblySetting, hub: number, links: readonly Link
   }));
   let plain = links.filter((l) => !l.detail);
   while (plain.length > 0) {
-    const result = spread(
-      plain.map((l) => ({ direction: towards(setting, hub, l), travel: l.travel, aside: l.aside })),
-    );
-    if (result.ratio <= 1) {
+    const result = spreadOf(setting, hub, plain);
+    let worst = result.ratio <= 1 ? -1 : worstOf(plain, result.each);
+    let by: string | null = null;
+    if (worst < 0) {
+      by = hubFouls(setting, hub, result.move, stands);
+      if (by !== null) worst = worstOf(plain, result.each);
+      for (let i = 0; i < plain.length && worst < 0; i++) {
+        by = strutFouls(setting, hub, plain[i]!, result.move, stands);
+        if (by !== null) worst = i;
+      }
+    }
+    if (worst < 0) {
       plain.forEach((l, i) => {
         const bent = result.each[i]! * setting.job.assembly.springStrain;
         entries.push({
@@ -45,12 +48,35 @@ function findEntries(setting: AssemblySetting, hub: number, links: readonly Link
       });
       break;
     }
-    const worst = worstOf(plain, result.each);
-    entries.push({ strut: mark(plain[worst]!), entry: 'blocked', strain: null, detail: null });
+    entries.push({
+      strut: mark(plain[worst]!),
+      entry: 'blocked',
+      strain: null,
+      detail: null,
+      ...(by === null ? {} : { hits: by }),
+    });
     plain = plain.filter((_, i) => i !== worst);
   }
   const order = new Map(links.map((l, i) => [mark(l), i]));
   return entries.sort((a, b) => order.get(a.strut)! - order.get(b.strut)!);
+}
+
+/** Orders tried one after another come to the same hubs with the same struts. */
+const known = new WeakMap<AssemblySetting, Map<string, Spread>>();
+
+function spreadOf(setting: AssemblySetting, hub: number, links: readonly Link[]): Spread {
+  let here = known.get(setting);
+  if (!here) {
+    here = new Map();
+    known.set(setting, here);
+  }
+  const key = `${hub}:${links.map((l) => l.strut).join()}`;
+  let result = here.get(key);
+  if (!result) {
+    result = spread(links.map((l) => ({ direction: towards(setting, hub, l), travel: l.travel, aside: l.aside })));
+    here.set(key, result);
+  }
+  return result;
 }
 
 const towards = (setting: AssemblySetting, hub: number, link: Link) => {

@@ -43,7 +43,9 @@ export function planAssembly(input: AssemblyInput): {
   panelSteps(setting, input.forms, steps);
 
   const closing = steps.flatMap((s) => s.struts.filter((e) => e.entry === 'blocked' || e.entry === 'detail'));
-  for (const e of closing) if (e.entry === 'blocked') findings.push(finding('strut-cannot-enter', e.strut));
+  for (const e of closing)
+    if (e.entry === 'blocked')
+      findings.push(finding('strut-cannot-enter', e.strut, e.hits === undefined ? {} : { about: { hits: e.hits } }));
   for (const s of steps) {
     if (!s.access)
       for (const hub of s.hubs) findings.push(finding('hub-out-of-reach', hub, { about: { step: s.number } }));
@@ -92,7 +94,7 @@ function pieceSteps(setting: AssemblySetting, order: PieceOrder, steps: Assembly
       unstable: stands === 'unstable',
       access: hubs.every((n) => {
         const hub = hubOf.get(mark(n));
-        return !hub || hasAccess(setting, hub, standing);
+        return !hub || hasAccess(setting, hub, new Set(standing));
       }),
       mass_kg:
         hubs.reduce((sum, n) => sum + setting.hubMass[n]!, 0) +

@@ -49,11 +49,12 @@ interface Candidate extends HubMove {
 function greedy(setting: AssemblySetting, start: StartUnit, chance: () => number): PieceOrder {
   const standing = new Set(start.nodes);
   const done = new Set(start.links.map((l) => l.strut));
+  const stands = (strut: number): boolean => done.has(strut);
   const candidates = new Map<number, Candidate>();
   const refresh = (node: number): void => {
     if (standing.has(node)) return;
     const links = setting.linksAt[node]!.filter((l) => standing.has(other(l, node)) && !done.has(l.strut));
-    if (links.length > 0) candidates.set(node, candidate(setting, node, links));
+    if (links.length > 0) candidates.set(node, candidate(setting, node, links, stands));
   };
   const neighbours = (node: number): number[] => setting.linksAt[node]!.map((l) => other(l, node));
   for (const node of start.nodes) for (const n of neighbours(node)) refresh(n);
@@ -70,7 +71,9 @@ function greedy(setting: AssemblySetting, start: StartUnit, chance: () => number
     }
   while (candidates.size > 0) {
     const [first, second] = bestTwo(candidates.values(), setting);
-    const chosen = second && chance() < CHANCE_OF_SECOND ? second : first!;
+    const likely = second && chance() < CHANCE_OF_SECOND ? second : first!;
+    // What has come to stand since it was looked at may be in its way.
+    const chosen = candidate(setting, likely.node, likely.links, stands);
     moves.push(chosen);
     blocked += chosen.blocked;
     if (!chosen.held) props += 1;
@@ -91,8 +94,13 @@ function entriesBetweenStanding(setting: AssemblySetting, link: Link): readonly 
   return [{ strut: member.mark, entry: detail ? 'detail' : 'blocked', strain: null, detail }];
 }
 
-function candidate(setting: AssemblySetting, node: number, links: readonly Link[]): Candidate {
-  const entries = entriesOf(setting, node, links);
+function candidate(
+  setting: AssemblySetting,
+  node: number,
+  links: readonly Link[],
+  stands: (strut: number) => boolean,
+): Candidate {
+  const entries = entriesOf(setting, node, links, stands);
   const blocked = entries.filter((e) => e.entry === 'blocked').length;
   return { node, entries, links, blocked, allowed: entries.length - blocked, held: isHeld(setting, node, links) };
 }

@@ -1,8 +1,14 @@
+import { largest } from '../../detailing/systems/sleeve.js';
+import type { Vec3 } from '../../maths/vec3.js';
 import type { Job } from '../../model/job/index.js';
 import type { Parts, Socket } from '../../model/parts.js';
 import type { Topology } from '../../model/topology.js';
 import type { Sag, Standing } from '../../statics/analyse/standing.js';
 import { standingSeries } from '../../statics/analyse/standing-series.js';
+import { type ClosingEnd, closingEnd } from './closing-way.js';
+import { linkRadius, strutHalf } from './fouls.js';
+import { type HubRoom, hubRoom } from './hub-room.js';
+import { nearLinks } from './near-links.js';
 
 /** One strut as assembly sees it, by node index and strut index. */
 export interface Link {
@@ -15,7 +21,7 @@ export interface Link {
   readonly travel: number;
   /** Sideways movement of an end that its bending limit and its socket's play allow, mm. */
   readonly aside: number;
-  /** Closing detail at either end. */
+  /** Closing detail at either end, where the strut can get past the sleeves with it. */
   readonly detail: { readonly end: 0 | 1; readonly kind: 'drop-in' | 'slide' | 'clamp' } | null;
   readonly mass: number;
 }
@@ -31,11 +37,27 @@ export interface AssemblySetting {
   readonly hubMass: Float64Array;
   /** Largest deflection, mm, of what stands under its own weight; see `standingSeries`. */
   readonly deflection: (standing: Standing) => Sag | 'unstable' | null;
+  /** The solid of a node's hub; null where none is made. */
+  readonly roomAt: (node: number) => HubRoom | null;
+  /** Struts that may come within a distance of a point, a superset. */
+  readonly near: (at: Vec3, within: number) => readonly number[];
+  /** Largest radius of a strut, mm. */
+  readonly thickest: number;
 }
 
 export function assemblySetting(topology: Topology, parts: Parts, job: Job): AssemblySetting {
   const sockets = new Map(parts.hubs.flatMap((h) => h.sockets.map((s) => [`${s.strut}@${h.mark}`, s] as const)));
   const systemOf = new Map(parts.hubs.map((h) => [h.mark, h.system]));
+  const hubOf = new Map(parts.hubs.map((h) => [h.mark, h]));
+  const rooms: (HubRoom | null | undefined)[] = topology.truss.nodes.map(() => undefined);
+  const roomAt = (node: number): HubRoom | null => {
+    const known = rooms[node];
+    if (known !== undefined) return known;
+    const hub = hubOf.get(topology.truss.nodes[node]!.mark);
+    const made = hub ? hubRoom(hub, job) : null;
+    rooms[node] = made;
+    return made;
+  };
   const links = topology.truss.members.map((member, strut): Link => {
     const part = parts.struts[strut]!;
     const own = member.ends.map((node) => sockets.get(`${member.mark}@${node}`) ?? null) as [
@@ -46,17 +68,33 @@ export function assemblySetting(topology: Topology, parts: Parts, job: Job): Ass
     const length = topology.axisLength[strut]!;
     const depth = Math.min(own[0]?.depth ?? 0, own[1]?.depth ?? 0);
     const play = (part.ends[0].float ?? 0) + (part.ends[1].float ?? 0);
-    const detail = ([0, 1] as const)
-      .map((end) => ({ end, kind: systemOf.get(member.ends[end]) === 'clamp' ? 'clamp' : part.ends[end].detail }))
-      .find((d) => d.kind !== 'plain');
+    const aside = asideOf(own, length, job.assembly.springStrain);
+    const closing = ([0, 1] as const).map(
+      (end): ClosingEnd => ({
+        kind: systemOf.get(member.ends[end]) === 'clamp' ? 'clamp' : part.ends[end].detail,
+        sleeve: 0,
+      }),
+    ) as [ClosingEnd, ClosingEnd];
+    const detailed = closing.some((c) => c.kind !== 'plain');
+    const section = (own[0] ?? own[1])?.section;
     return {
       strut,
       ends,
       sockets: own,
       length,
       travel: Math.max(0, depth - play),
-      aside: asideOf(own, length, job.assembly.springStrain),
-      detail: (detail ?? null) as Link['detail'],
+      aside,
+      detail:
+        detailed && section
+          ? closingEnd(
+              closing.map((c, end) => ({
+                ...c,
+                sleeve: roomAt(ends[end]!)?.sleeveOf(member.mark)?.half ?? 0,
+              })) as unknown as [ClosingEnd, ClosingEnd],
+              largest(strutHalf(section)),
+              aside,
+            )
+          : null,
       mass: part.mass ?? 0,
     };
   });
@@ -64,7 +102,18 @@ export function assemblySetting(topology: Topology, parts: Parts, job: Job): Ass
   for (const link of links) for (const end of link.ends) linksAt[end]!.push(link);
   const hubMass = new Float64Array(topology.truss.nodes.length);
   for (const hub of parts.hubs) hubMass[topology.nodeIndex.get(hub.mark)!] = hub.mass ?? 0;
-  return { topology, job, parts, links, linksAt, hubMass, deflection: standingSeries(topology, job, parts) };
+  return {
+    topology,
+    job,
+    parts,
+    links,
+    linksAt,
+    hubMass,
+    deflection: standingSeries(topology, job, parts),
+    roomAt,
+    near: nearLinks(topology),
+    thickest: links.reduce((most, l) => Math.max(most, linkRadius(l)), 0),
+  };
 }
 
 /**

@@ -1,9 +1,14 @@
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { packingListCsv } from '../../../src/documents/assembly/packing-list.js';
 import type { PackRecords } from '../../../src/documents/records.js';
 import type { Vec3 } from '../../../src/maths/vec3.js';
 import type { Truss } from '../../../src/model/truss.js';
+import { assess } from '../../../src/pipeline/assess.js';
 import { planAssembly } from '../../../src/planning/assembly/plan-assembly.js';
+import { readJob } from '../../../src/readers/job.js';
+import { readTruss } from '../../../src/readers/truss.js';
 import { assembled } from '../../helpers/assembled.js';
 import { mapped, trussOf } from '../../helpers/truss.js';
 
@@ -52,6 +57,14 @@ const order = (truss: Truss, fields: Record<string, unknown> = {}) => {
 };
 const entriesOf = (found: ReturnType<typeof order>) => found.plan.steps.flatMap((s) => s.struts);
 const blockedOf = (found: ReturnType<typeof order>) => entriesOf(found).filter((e) => e.entry === 'blocked');
+/** A strut's cut length, the way between its sockets' mouths, and their depths, mm. */
+const fitOf = (found: ReturnType<typeof order>, strut: string) => {
+  const part = found.assessed.parts.struts.find((s) => s.mark === strut)!;
+  const sockets = found.assessed.parts.hubs.flatMap((h) => h.sockets.filter((s) => s.strut === strut));
+  const depths = sockets.map((s) => s.depth);
+  const gap = part.axisLength - sockets.reduce((sum, s) => sum + s.setback! + s.depth, 0);
+  return { cut: part.cutLength!, gap, depths };
+};
 const codes = (found: ReturnType<typeof order>) => found.findings.map((f) => f.code);
 
 describe('whether every strut gets in', () => {
@@ -63,6 +76,11 @@ describe('whether every strut gets in', () => {
     expect(found.findings.filter((f) => f.code === 'strut-cannot-enter').map((f) => f.subject)).toEqual(
       blockedOf(found).map((e) => e.strut),
     );
+    // A straight bar longer than the way between two mouths and the deeper socket together has no place with one end in and the other out.
+    for (const { strut } of blockedOf(found)) {
+      const { cut, gap, depths } = fitOf(found, strut);
+      expect(cut).toBeGreaterThan(gap + Math.max(...depths));
+    }
   });
 
   it('the long slender struts of a tetrahedron can', () => {
@@ -98,7 +116,36 @@ describe('whether every strut gets in', () => {
     const found = order(octahedron(150), { assembly: { springStrain: 1e-6, closing: 'give' } });
     expect(blockedOf(found)).toEqual([]);
     expect(found.plan.closing.length).toBeGreaterThan(0);
-    for (const e of found.plan.closing) expect(e.detail?.kind).toBe('slide');
+    // No bending at all: an end can only rise by its play, not past a sleeve. So all are laid in at both ends.
+    const { ends } = found.assessed.job.struts;
+    for (const e of found.plan.closing) {
+      expect(e.detail?.kind).toBe('drop-in');
+      const member = found.assessed.topology.truss.members.find((m) => m.mark === e.strut)!;
+      for (const node of member.ends) expect(ends[`${e.strut}@${node}`]).toBe('drop-in');
+    }
+  });
+});
+
+describe('a slide', () => {
+  const folder = join(import.meta.dirname, '..', '..', '..', 'examples', 'lantern');
+  const { truss } = readTruss(readFileSync(join(folder, 'truss.json'), 'utf8'), 'truss.json');
+  const { job } = readJob(readFileSync(join(folder, 'job.json'), 'utf8'), 'job.json');
+  const assessed = assess(truss!, { ...job!, assembly: { ...job!.assembly, closing: 'give' } });
+  const found = { assessed, ...planAssembly(assessed) };
+  const slid = found.plan.closing.filter((e) => e.detail?.kind === 'slide');
+
+  it('is given to struts that can be tilted past their far sleeve', () => {
+    expect(blockedOf(found)).toEqual([]);
+    expect(slid.length).toBeGreaterThan(0);
+  });
+
+  it('is deep enough: with one end all the way in, the other is out of its socket', () => {
+    for (const { strut } of slid) {
+      const { cut, gap, depths } = fitOf(found, strut);
+      expect(cut).toBeLessThanOrEqual(gap + Math.max(...depths));
+      // And it could not be without: a bar longer than the way between the mouths and the plain depth together.
+      expect(cut).toBeGreaterThan(gap + Math.min(...depths));
+    }
   });
 });
 
