@@ -23,6 +23,8 @@ export interface Lane {
   readonly start: LanePlan | null;
   /** Whether this is the last turn, in which the best is squeezed in small steps. */
   readonly last: boolean;
+  /** Whether panels that may turn freely are turned to any angle: finer, and slower. */
+  readonly turning: boolean;
   /** On the caller's clock, ms, between which the search may run; null: no limit. */
   readonly time: { readonly from: number; readonly to: number } | null;
 }
@@ -56,7 +58,7 @@ export const piecesOf = (panels: readonly NestingPanel[]): string[] =>
 
 /** Searches from nothing or from a plan, for as many evaluations as it is given or as long as its time. `clock` in ms. */
 export function nestLane(lane: Lane, clock: (() => number) | null): LanePlan {
-  const maker = poseMaker();
+  const maker = poseMaker(lane.turning);
   const byOutline = new Map<string, Shape>();
   const pieces: Shape[] = [];
   for (const panel of lane.panels) {

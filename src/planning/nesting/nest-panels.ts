@@ -100,6 +100,8 @@ async function bestPlan(
         evaluations: evaluations * share,
         start,
         last: turn === turns.length - 1,
+        // One lane begins without: where edge-aligned angles do, it comes farther.
+        turning: lane + turn > 0 || lanes === 1,
         time: slot(lane),
       }),
     );

@@ -21,12 +21,22 @@ export function noFitStore(budget: Budget): NoFitStore {
   let numbers = 0;
   return {
     region(a, b) {
+      // What was made in passing holds its own regions; of two such the later.
+      const holder = a.passing && (!b.passing || a.id > b.id) ? a : b.passing ? b : null;
+      if (holder) {
+        const key = holder === a ? 2 * b.id : 2 * a.id + 1;
+        const known = holder.passing!.get(key);
+        if (known) return known;
+        const region = noFitRegion(a, b);
+        budget.spent += costOf(a, b);
+        holder.passing!.set(key, region);
+        return region;
+      }
       let row = table[a.id];
       const found = row?.[b.id];
       if (found) return found;
       const made = noFitRegion(a, b);
-      const sums = a.parts.length * b.parts.length;
-      budget.spent += sums === 1 ? CONVEX_COST : UNION_COST * sums;
+      budget.spent += costOf(a, b);
       numbers += made.edges.length + 16;
       if (numbers > MOST_NUMBERS) {
         table = [];
@@ -41,6 +51,11 @@ export function noFitStore(budget: Budget): NoFitStore {
       return made;
     },
   };
+}
+
+function costOf(a: Pose, b: Pose): number {
+  const sums = a.parts.length * b.parts.length;
+  return sums === 1 ? CONVEX_COST : UNION_COST * sums;
 }
 
 /** Union over the convex parts of a + (-b) (Minkowski; the way of Agarwal, Flato and Halperin 2002). */

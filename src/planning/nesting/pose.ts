@@ -1,5 +1,6 @@
 import { convexParts } from '../../maths/polygon/convex-parts.js';
 import { coverRing } from '../../maths/polygon/cover.js';
+import type { Region } from '../../maths/polygon/depth.js';
 import { boundsOf, movedRing, type Ring, signedArea } from '../../maths/polygon/ring.js';
 
 /** A panel's outline turned about its own 0,0: what the search moves about, never mirrored. */
@@ -11,6 +12,8 @@ export interface Pose {
   readonly ring: Ring;
   readonly parts: readonly Ring[];
   readonly box: readonly [number, number, number, number];
+  /** Regions of a pose that a search made in passing: they go with it; null: a pose that is kept, whose regions the store holds. */
+  readonly passing: Map<number, Region> | null;
 }
 
 /** One outline, however many panels have it. */
@@ -26,6 +29,8 @@ export interface Shape {
   readonly rotations: readonly number[] | null;
   /** Poses that a search draws from at random; the exact angles allowed, or edge-aligned ones where any is. */
   readonly poses: Pose[];
+  /** A pose at any angle, in degrees, that nobody keeps; null where the outline may not turn freely, or a search does without. */
+  readonly turned: ((degrees: number) => Pose) | null;
 }
 
 /** Makes poses and gives each its number; a pose asked for twice is the same object. */
@@ -35,9 +40,23 @@ export interface PoseMaker {
   pose(shape: Shape, degrees: number): Pose;
 }
 
-export function poseMaker(): PoseMaker {
+/** @param turning whether freely turning outlines get poses at other than edge-aligned angles */
+export function poseMaker(turning: boolean): PoseMaker {
   let count = 0;
   const known = new Map<Shape, Map<number, Pose>>();
+  const poseAt = (shape: Shape, angle: number, passing: Pose['passing']): Pose => {
+    const turned = (ring: Ring): Ring => turnedRing(ring, angle);
+    const ring = turned(shape.ring);
+    return {
+      id: count++,
+      shape,
+      degrees: angle,
+      ring,
+      parts: shape.parts.map(turned),
+      box: boundsOf(ring),
+      passing,
+    };
+  };
   const pose = (shape: Shape, degrees: number): Pose => {
     let ofShape = known.get(shape);
     if (!ofShape) {
@@ -47,16 +66,7 @@ export function poseMaker(): PoseMaker {
     const angle = ((degrees % 360) + 360) % 360;
     const found = ofShape.get(angle);
     if (found) return found;
-    const turned = (ring: Ring): Ring => turnedRing(ring, angle);
-    const ring = turned(shape.ring);
-    const made: Pose = {
-      id: count++,
-      shape,
-      degrees: angle,
-      ring,
-      parts: shape.parts.map(turned),
-      box: boundsOf(ring),
-    };
+    const made = poseAt(shape, angle, null);
     ofShape.set(angle, made);
     return made;
   };
@@ -70,6 +80,10 @@ export function poseMaker(): PoseMaker {
       area: signedArea(ring),
       rotations,
       poses: [],
+      turned:
+        turning && rotations === null && parts.length <= TURNED_PARTS
+          ? (degrees) => poseAt(made, ((degrees % 360) + 360) % 360, new Map())
+          : null,
     };
     for (const degrees of rotations ?? alignedAngles(cover, parts.length > 1 ? FEW_ALIGNED : MOST_ALIGNED)) {
       const p = pose(made, degrees);
@@ -111,6 +125,9 @@ function coverOf(ring: Ring): Ring {
   const reach = COVER_REACH * Math.max(x1 - x0, y1 - y0);
   return coverRing(ring, PLAIN_CORNERS / 2, reach, HULL_SHARE);
 }
+
+/** Outlines of more convex parts than this are turned to their edge-aligned angles alone: a no-fit region of theirs costs too much. */
+const TURNED_PARTS = 3;
 
 /** Most angles that a freely turning outline is tried at, convex and concave: the latter's no-fit regions are dear. */
 const MOST_ALIGNED = 24;

@@ -1,6 +1,6 @@
 import type { Random } from '../../maths/random.js';
 import { costAt, fitsField, type Layout, within } from './layout.js';
-import type { Pose } from './pose.js';
+import type { Pose, Shape } from './pose.js';
 
 /** A place for one piece and its weighted depth there. */
 export interface Place {
@@ -15,6 +15,8 @@ export interface Place {
 const WIDE = 8;
 const CORNERS = 6;
 const NEAR = 8;
+/** Of the wide ones, drawn at any angle where a piece may turn freely. */
+const ANY_ANGLE = 2;
 /** Places that are refined. */
 const KEPT = 2;
 
@@ -56,7 +58,7 @@ export function bestPlace(layout: Layout, i: number, fields: readonly number[], 
   for (let k = 0; k < WIDE + CORNERS; k++) {
     const field = fields[Math.floor(random() * fields.length)]!;
     const f = layout.fields[field]!;
-    const pose = draw();
+    const pose = shape.turned && k < ANY_ANGLE ? shape.turned(360 * random()) : draw();
     if (!fitsField(f, pose, slack)) continue;
     const on = layout.on[field]!;
     if (k < WIDE || on.length === 0) {
@@ -84,8 +86,70 @@ export function bestPlace(layout: Layout, i: number, fields: readonly number[], 
   best.sort((a, b) => a.cost - b.cost);
   const winner = best[0]!;
   // Down to below what counts as overlap: a coarser end would leave traces that never go.
-  slide(layout, i, winner, 0.01 * size, Math.min(2e-5 * size, layout.tolerance / 2), random);
+  const last = Math.min(2e-5 * size, layout.tolerance / 2);
+  slide(layout, i, winner, 0.01 * size, last, random);
+  if (winner.cost > 0 && shape.turned && random() < TURN_SHARE) {
+    turn(layout, i, winner, shape.turned, size, random);
+    slide(layout, i, winner, 0.01 * size, last, random);
+  }
   return winner;
+}
+
+/** Share of the moves that end with turning, tries of each, largest turn in degrees and how many times it may be halved. */
+const TURN_SHARE = 0.25;
+const TURN_TRIES = 4;
+const [FIRST_TURN, TURN_HALVINGS] = [30, 10] as const;
+
+/**
+ * Turns a piece that may turn freely a little either way about its middle, and keeps what lowers its weighted depth; or lays one of its edges
+ * against an edge of a piece beside it.
+ */
+function turn(
+  layout: Layout,
+  i: number,
+  place: Place,
+  turned: NonNullable<Shape['turned']>,
+  size: number,
+  random: Random,
+): void {
+  const f = layout.fields[place.field]!;
+  let step = FIRST_TURN * 0.5 ** (TURN_HALVINGS * random());
+  for (let k = 0; k < TURN_TRIES && place.cost > 0; k++) {
+    const flush = k === 0 ? flushAngle(layout, i, place, random) : null;
+    const sides = flush === null ? [step, -step] : [flush];
+    let better = false;
+    for (const by of sides) {
+      const pose = turned(place.pose.degrees + by);
+      if (!fitsField(f, pose, layout.tolerance)) continue;
+      const [dx, dy] = centreShift(place.pose, pose);
+      const x = Math.min(Math.max(place.x + dx, f.x0 - pose.box[0]), f.x1 - pose.box[2]);
+      const y = Math.min(Math.max(place.y + dy, f.y0 - pose.box[1]), f.y1 - pose.box[3]);
+      const cost = costAt(layout, i, pose, x, y, place.field, 2 * place.cost);
+      if (cost >= 2 * place.cost) continue;
+      const trial: Place = { pose, x, y, field: place.field, cost };
+      slide(layout, i, trial, 0.04 * size, 0.004 * size, random);
+      if (trial.cost >= place.cost) continue;
+      Object.assign(place, trial);
+      better = true;
+      break;
+    }
+    step *= better ? 1.5 : 0.5;
+  }
+}
+
+/** The turn in degrees, at most half a right angle, that lays an edge of the piece along an edge of one beside it; null: nobody is near. */
+function flushAngle(layout: Layout, i: number, place: Place, random: Random): number | null {
+  const near = within(layout, i, place.pose, place.x, place.y, place.field, 0);
+  if (near.length === 0) return null;
+  const direction = (ring: Pose['ring']): number => {
+    const k = 2 * Math.floor((random() * ring.length) / 2);
+    const n = ring.length;
+    return (Math.atan2(ring[(k + 3) % n]! - ring[k + 1]!, ring[(k + 2) % n]! - ring[k]!) * 180) / Math.PI;
+  };
+  const other = layout.pose[near[Math.floor(random() * near.length)]!]!;
+  const by = direction(other.ring) + 180 - direction(place.pose.ring);
+  const turn = ((((by + 180) % 360) + 360) % 360) - 180;
+  return Math.abs(turn) <= 45 ? turn : null;
 }
 
 /** The move that keeps the middle of the box where it is when a pose replaces another. */

@@ -79,6 +79,22 @@ describe('panels on sheets', () => {
     expect(lanes).toBeGreaterThanOrEqual(2);
   });
 
+  it('turns to any angle: five unit squares into one of 2.71, ten into one of 3.71', async () => {
+    // Least sides 2 + √½ and 3 + √½ (Göbel 1979, from memory): one square at 45°; side by side only four and nine go in.
+    for (const [quantity, side] of [
+      [5, 271],
+      [10, 371],
+    ] as const) {
+      const answer = await checked({
+        panels: [{ mark: 'Q', outline: rectangle(100, 100), quantity }],
+        sheets: [{ name: 'S', width: side, height: side }],
+        spacing: 0,
+        margin: 0,
+      });
+      expect(answer.sheets.length).toBe(1);
+    }
+  });
+
   it('uses offcuts of any outline and respects how many there are', async () => {
     const offcut = {
       name: 'L',
