@@ -11,6 +11,7 @@ import { barAnglesCsv } from '../../documents/nodes/bar-angles.js';
 import { barDirectionsCsv } from '../../documents/nodes/bar-directions.js';
 import { bedSheets } from '../../documents/nodes/bed-sheets.js';
 import { drillingCsv } from '../../documents/nodes/drilling.js';
+import { drillingTemplates } from '../../documents/nodes/drilling-templates.js';
 import { nodeSheets } from '../../documents/nodes/node-sheets.js';
 import { placementJson } from '../../documents/nodes/placement.js';
 import { nestingJson } from '../../documents/panels/nesting-json.js';
@@ -53,6 +54,7 @@ const DOCUMENTS: readonly (readonly [path: string, make: Make])[] = [
   ['nodes/bar-directions.csv', barDirectionsCsv],
   ['nodes/bar-angles.csv', barAnglesCsv],
   ['nodes/drilling.csv', drillingCsv],
+  ['nodes/drilling-templates.pdf', drillingTemplates],
   ['nodes/placement.json', placementJson],
   ['nodes/node-sheets.pdf', nodeSheets],
   ['nodes/bed-sheets.pdf', bedSheets],
