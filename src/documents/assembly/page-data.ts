@@ -1,6 +1,7 @@
 import { sayFinding } from '../../model/findings/index.js';
 import { sectionProperties } from '../../model/section.js';
 import { CAUTION } from '../cautions.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { fixed, unitsOf } from '../kit/units.js';
 import type { PackRecords } from '../records.js';
 import type { PageData } from './page/data.js';
@@ -29,7 +30,7 @@ export function pageData(records: PackRecords, key: string): PageData {
     date: job.date,
     key,
     caution: CAUTION,
-    hold: records.hold,
+    hold: records.hold.map((words) => sayInUnits(words, records.job.output)),
     nodes: truss.nodes.map((n) => {
       const hub = hubs.get(n.mark);
       const thick = Math.max(
@@ -80,6 +81,10 @@ export function pageData(records: PackRecords, key: string): PageData {
         notes: stepNotes(step, units),
       };
     }),
-    findings: records.findings.map((f) => ({ level: f.level, subject: f.subject, message: sayFinding(f) })),
+    findings: records.findings.map((f) => ({
+      level: f.level,
+      subject: f.subject,
+      message: sayInUnits(sayFinding(f), records.job.output),
+    })),
   };
 }

@@ -3,6 +3,7 @@ import type { ForceDiagram } from '../../model/force-diagram.js';
 import type { Area } from '../kit/geometry2.js';
 import { INK, SIZE } from '../kit/ink.js';
 import type { Paper } from '../kit/paper.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { fixed, type Units } from '../kit/units.js';
 import { type Camera, ISOMETRIC } from '../kit/view/camera.js';
 import { planeCamera } from '../kit/view/plane-camera.js';
@@ -46,7 +47,7 @@ export function diagramSheets(
     caption(
       paper,
       second,
-      `Force diagram: ${scale}; the largest force is ${units.force(largest).replace('+', '')} ${units.forceUnit}`,
+      `Force diagram: ${sayInUnits(scale, records.job.output)}; the largest force is ${units.force(largest).replace('+', '')} ${units.forceUnit}`,
     );
   }
 }

@@ -8,6 +8,7 @@ import type { Area, Point } from '../kit/geometry2.js';
 import { INK, LINE, SIZE } from '../kit/ink.js';
 import { Paper, type Written } from '../kit/paper.js';
 import type { Pen } from '../kit/pen.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { type Column, drawTable } from '../kit/table.js';
 import { fixed, type Units, unitsOf } from '../kit/units.js';
 import type { PackRecords } from '../records.js';
@@ -38,9 +39,12 @@ function sheetPage(
   panels: ReadonlyMap<string, PanelPart>,
   units: Units,
 ): void {
+  const { output } = records.job;
+  const us = output.units === 'US';
+  const say = (words: string): string => sayInUnits(words, output);
   const area = paper.addSheet({
-    title: `Sheet ${index + 1}: ${sheet.material} ${fixed(sheet.thickness, 1)} mm`,
-    instruction: `Cut ${sheet.mark}.svg or .dxf from ${sheet.sheet}; measure the 100 mm square first. ${sayKerf(records.job.cutter)}. Tick each panel off as it comes from the machine; the engraved side faces out.`,
+    title: say(`Sheet ${index + 1}: ${sheet.material} ${fixed(sheet.thickness, 1)} mm`),
+    instruction: `Cut ${sheet.mark}.svg or .dxf from ${sheet.sheet}; measure the 100 mm square first. ${say(sayKerf(records.job.cutter))}. Tick each panel off as it comes from the machine; the engraved side faces out.`,
   });
   const room: readonly [number, number] = [area.width, area.height * PICTURE_SHARE];
   // As large as the page takes it: the picture is for finding a panel, the machine files are to scale.
@@ -56,7 +60,7 @@ function sheetPage(
   );
   const foot = area.y + 2 + sheet.height * scale + 5;
   paper.pen.text(
-    `${sheet.sheet}, ${fixed(sheet.width, 0)} x ${fixed(sheet.height, 0)} mm, not drawn to scale. ${sheet.placements.length} panels use ${fixed(sheet.yield * 100, 1)} %.`,
+    `${sheet.sheet}, ${say(`${fixed(sheet.width, 1)} x ${fixed(sheet.height, 1)} mm`)}, not drawn to scale. ${sheet.placements.length} panels use ${fixed(sheet.yield * 100, 1)} %.`,
     area.x,
     foot,
     { size: SIZE.note, colour: INK.grey },
@@ -66,11 +70,13 @@ function sheetPage(
     { head: '', tick: true },
     { head: 'Panel', bold: true, value: (p) => p.mark },
     { head: 'Edges', align: 'right', value: (p) => String(p.edges.length) },
-    { head: 'Area\nm²', align: 'right', value: (p) => fixed(p.area / 1e6, 4) },
+    us
+      ? { head: 'Area\nin²', align: 'right', value: (p) => units.area(p.area) }
+      : { head: 'Area\nm²', align: 'right', value: (p) => fixed(p.area / 1e6, 4) },
     { head: `Mass\n${units.massUnit}`, align: 'right', value: (p) => (p.mass === null ? '' : units.mass(p.mass)) },
     { head: 'Holes', align: 'right', value: (p) => String(p.holes.length) },
     { head: 'Seat', value: (p) => SEATS[p.seating] },
-    { head: 'Held by', wraps: true, value: (p) => p.holding },
+    { head: 'Held by', wraps: true, value: (p) => say(p.holding) },
   ];
   drawTable(paper, foot + 3, columns, rows);
 }

@@ -1,6 +1,7 @@
 import type { Finding } from '../../model/finding.js';
 import { sayFinding } from '../../model/findings/index.js';
 import type { Flow } from '../kit/flow.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import type { PackRecords } from '../records.js';
 
 const WORDS = { stop: 'STOP', warn: 'Warning', note: 'Note' } as const;
@@ -8,6 +9,7 @@ const WORDS = { stop: 'STOP', warn: 'Warning', note: 'Note' } as const;
 /** The verdict in one sentence, then every finding, worst first, then the waived stops with who answers for them. */
 export function findingsSection(flow: Flow, records: PackRecords): void {
   const { findings, waived, status, hold } = records;
+  const say = (words: string): string => sayInUnits(words, records.job.output);
   const count = (level: Finding['level']): number => findings.filter((f) => f.level === level).length;
   const verdict =
     status === 'clear'
@@ -20,7 +22,7 @@ export function findingsSection(flow: Flow, records: PackRecords): void {
     flow.table(
       [
         { head: '', bold: true, value: (r: Run) => WORDS[r.first.level] },
-        { head: 'What was found, and how to mend it', wraps: true, value: sayRun },
+        { head: 'What was found, and how to mend it', wraps: true, value: (run: Run) => say(sayRun(run)) },
       ],
       runsOf(findings),
     );
@@ -32,7 +34,7 @@ export function findingsSection(flow: Flow, records: PackRecords): void {
         {
           head: 'Stop and reason',
           wraps: true,
-          value: (f) => `${sayFinding(f)}. Reason: ${f.about?.['reason'] ?? ''}`,
+          value: (f) => `${say(sayFinding(f))}. Reason: ${f.about?.['reason'] ?? ''}`,
         },
       ],
       waived,

@@ -3,6 +3,7 @@ import { issueOf } from '../issue.js';
 import { Flow } from '../kit/flow.js';
 import type { Fonts } from '../kit/fonts.js';
 import { Paper, type Written } from '../kit/paper.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { unitsOf } from '../kit/units.js';
 import { largestForce } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
@@ -30,7 +31,7 @@ export async function report(records: PackRecords, fonts: Fonts): Promise<Writte
   supportsSection(flow, records, units);
   totalsSection(flow, records, units);
   flow.heading('Cautions', 30);
-  for (const { trade, words } of CAUTIONS) flow.paragraph(`${trade}. ${words}`);
+  for (const { trade, words } of CAUTIONS) flow.paragraph(`${trade}. ${sayInUnits(words, records.job.output)}`);
   picturesSection(paper, flow, records, units);
   comparisonSection(paper, flow, records, units);
   utilisationSection(flow, records, units);

@@ -1,5 +1,6 @@
 import type { Utilisation } from '../../model/solution.js';
 import type { Flow } from '../kit/flow.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { fixed, type Units } from '../kit/units.js';
 import { byMark } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
@@ -22,7 +23,7 @@ export function utilisationSection(flow: Flow, records: PackRecords, units: Unit
       },
       { head: '', value: (u) => (u.kind === 'panel' ? '' : units.sense(u.force)) },
       { head: 'Combination', value: (u) => u.combination },
-      { head: 'Rule', wraps: true, value: (u) => u.rule },
+      { head: 'Rule', wraps: true, value: (u) => sayInUnits(u.rule, records.job.output) },
     ],
     worst,
   );
