@@ -104,24 +104,24 @@ for (const [name, { about, job }] of Object.entries(TEMPLATES)) {
 writeFileSync(new URL('table-model-us/truss.json', import.meta.url), inInches('table-model/truss.json'));
 writeFileSync(new URL('garden-pavilion/truss.json', import.meta.url), pavilion());
 
-/** A value with each key of an object under its explanation; keys that are left out stand there as comments. */
+/** A value with each key of an object under its explanation; what is left out or empty stands there as comments, key by key. */
 function write(value, schema, indent) {
+  const deeper = `${indent}  `;
   if (Array.isArray(value)) {
+    const pattern = value.length === 0 ? patternOf(schema, deeper) : [];
+    if (pattern.length > 0) return `[\n${pattern.join('\n')}\n${indent}]`;
     if (value.every((v) => v === null || typeof v !== 'object')) return `[${value.map((v) => JSON.stringify(v)).join(', ')}]`;
-    const deeper = `${indent}  `;
     return `[\n${value.map((v) => deeper + write(v, schema.items ?? {}, deeper)).join(',\n')}\n${indent}]`;
   }
   if (value === null || typeof value !== 'object') return JSON.stringify(value);
-  const deeper = `${indent}  `;
   const known = schema.properties ?? {};
   const keys = Object.keys(known).length > 0 ? Object.keys(known) : Object.keys(value);
-  const lines = [];
+  const lines = Object.keys(value).length === 0 ? patternOf(schema, deeper) : [];
   const present = keys.filter((key) => value[key] !== undefined);
   for (const key of keys) {
     if (key === '$schema') continue;
-    const words = known[key]?.description;
-    if (words) lines.push(...wrap(words, deeper));
-    if (value[key] === undefined) lines.push(`${deeper}// "${key}": absent here`);
+    if (known[key]) lines.push(...wrap(explained(known[key]), deeper));
+    if (value[key] === undefined) lines.push(`${deeper}// "${key}": absent here`, ...patternOf(known[key], deeper));
     else {
       const inner = known[key] ?? (typeof schema.additionalProperties === 'object' ? schema.additionalProperties : {});
       const comma = key === present.at(-1) ? '' : ',';
@@ -131,6 +131,48 @@ function write(value, schema, indent) {
   return lines.length === 0 ? '{}' : `{\n${lines.join('\n')}\n${indent}}`;
 }
 
+/** What an entry of a list, an entry of a map or an object that is absent here would hold: its keys with their explanations, as comments. */
+function patternOf(schema, indent) {
+  const lines = [];
+  const entry = schema.items ?? (typeof schema.additionalProperties === 'object' ? schema.additionalProperties : null);
+  const tell = (of, depth) => {
+    for (const [key, inner] of propertiesOf(of)) {
+      lines.push(...wrap(`"${key}": ${explained(inner)}`, `${indent}// ${'  '.repeat(depth)}`.replace(/\/\/ $/, '')));
+      tell(inner.items ?? inner, depth + 1);
+    }
+  };
+  tell(entry ?? schema, 1);
+  if (lines.length === 0) return [];
+  const head = schema.items ? 'Each entry:' : entry ? 'Each entry, by its name:' : 'It would hold:';
+  return [`${indent}// ${head}`, ...lines];
+}
+
+/** The keys of an object, or of all objects that may stand in its place. */
+function propertiesOf(schema) {
+  const found = new Map(Object.entries(schema.properties ?? {}));
+  for (const choice of [...(schema.anyOf ?? []), ...(schema.oneOf ?? [])])
+    for (const [key, inner] of propertiesOf(choice)) {
+      const before = found.get(key);
+      // A key that tells the choices apart has each of their names, and says nothing of the first alone.
+      const names = before ? [...new Set([...namesOf(before), ...namesOf(inner)])] : [];
+      const description = names.length > 1 ? 'Which of them.' : before?.description;
+      found.set(key, before ? { ...before, description, enum: names } : inner);
+    }
+  return found;
+}
+
+function namesOf(schema) {
+  return schema.enum ?? (typeof schema.const === 'string' ? [schema.const] : []);
+}
+
+/** The explanation of a key, with the words it may have. */
+function explained(schema) {
+  const names = namesOf(schema).filter((name) => name !== null);
+  const words = schema.description ?? '';
+  return names.length > 1 ? `${words}${words ? ' ' : ''}One of: ${names.join(', ')}.` : words;
+}
+
+/** Comment lines; `indent` may begin the comment itself. */
 function wrap(words, indent) {
   const lines = [];
   let line = '';
@@ -141,7 +183,8 @@ function wrap(words, indent) {
     }
     line += line === '' ? word : ` ${word}`;
   }
-  return [...lines, line].map((text) => `${indent}// ${text}`);
+  const lead = indent.includes('//') ? indent : `${indent}// `;
+  return [...lines, line].map((text) => lead + text);
 }
 
 /** The same truss in inches, to a millionth; a force face of one squared inch is 645.16 of one squared millimetre. */

@@ -1,9 +1,11 @@
-// The whole pack of double-layer grids of growing size: seconds a stage, peak memory, growth exponents between sizes.
+// The whole pack of double-layer grids of growing size: processor seconds a stage, peak memory, growth exponents between sizes.
 // SCALE=1000 or SCALE=10000 (struts) goes farther than the usual 100 and 300; each size runs in a process of its own.
+// SAMPLE=25 shapes every 25th hub alone and counts it for the others, which its neighbour's solid stands in for: each hub is shaped
+// by itself, so their time is theirs times their number, and all other stages see a whole pack.
 import { spawnSync } from 'node:child_process';
 import { fileURLToPath } from 'node:url';
 
-export const title = 'Growth with the number of struts: whole pack, 2 workers';
+export const title = 'Growth with the number of struts: whole pack, 2 workers, processor seconds of all threads';
 
 const SIZES = [100, 300, 1000, 3000, 10_000];
 const SELF = fileURLToPath(import.meta.url);
@@ -12,9 +14,13 @@ export async function run(print) {
   const most = Number(process.env.SCALE ?? 300);
   const results = [];
   for (const size of SIZES.filter((s) => s <= most)) {
-    const child = spawnSync(process.execPath, [SELF, String(size)], { encoding: 'utf8', maxBuffer: 1e8 });
+    const child = spawnSync(process.execPath, [SELF, String(size)], {
+      encoding: 'utf8',
+      maxBuffer: 1e8,
+      stdio: ['ignore', 'pipe', process.env.TRACE ? 'inherit' : 'pipe'],
+    });
     if (child.status !== 0) {
-      print(`${size} struts: ended with status ${child.status}: ${child.stderr.split('\n').at(-2) ?? ''}`);
+      print(`${size} struts: ended with status ${child.status}: ${child.stderr?.split('\n').at(-2) ?? ''}`);
       break;
     }
     results.push(JSON.parse(child.stdout));
@@ -27,6 +33,7 @@ export async function run(print) {
       `${`${stage}, s`.padEnd(22)}${values.map((v) => v.toFixed(2).padStart(10)).join('')}   ${exponent(results, values)}`,
     );
   }
+  print(`${'waited, s'.padEnd(22)}${results.map((r) => r.wall.toFixed(0).padStart(10)).join('')}`);
   const memory = results.map((r) => r.peak_MB);
   print(
     `${'peak memory, MB'.padEnd(22)}${memory.map((v) => v.toFixed(0).padStart(10)).join('')}   ${exponent(results, memory)}`,
@@ -104,25 +111,40 @@ if (process.argv[1] === SELF && process.argv[2]) {
   const truss = gridOf(Number(process.argv[2]));
   const pool = openPool(new URL('../../dist/pipeline/worker.js', import.meta.url), 2);
   const seconds = {};
-  let [stage, since] = ['Checks', performance.now()];
-  const begun = since;
+  const sample = Math.max(1, Number(process.env.SAMPLE ?? 1));
+  const spent = () => {
+    const { user, system } = process.cpuUsage();
+    return (user + system) / 1e6;
+  };
+  let [stage, since] = ['Start', spent()];
+  const begun = performance.now();
   const turn = (next) => {
-    const now = performance.now();
-    seconds[stage] = (seconds[stage] ?? 0) + (now - since) / 1000;
+    const now = spent();
+    seconds[stage] = (seconds[stage] ?? 0) + (now - since) * (stage === 'Hubs' ? sample : 1);
+    if (process.env.TRACE) process.stderr.write(`${truss.members.length} ${stage} ${seconds[stage].toFixed(2)} s\n`);
     [stage, since] = [next, now];
+  };
+  /** Every `sample`th is done, and its output taken for those after it. */
+  const each = async (task, inputs, take) => {
+    const done = inputs.filter((_, i) => i % sample === 0);
+    await pool.each(task, done, async (output, k) => {
+      const few = Math.min(sample, inputs.length - k * sample);
+      for (let i = 0; i < few; i++) await take(i === few - 1 ? output : structuredClone(output), k * sample + i);
+    });
   };
   const job = { ...defaultJob('Grid'), forces: { ...defaultJob('Grid').forces, source: 'analysis' } };
   await makePack(truss, job, {
     write: () => {},
-    each: pool.each,
+    each,
     tell: ({ stage: next }) => {
       if (next !== stage) turn(next);
     },
   });
   turn('end');
-  seconds.whole = (performance.now() - begun) / 1000;
+  seconds.whole = Object.values(seconds).reduce((sum, s) => sum + s, 0);
+  const wall = (performance.now() - begun) / 1000;
   await pool.close();
   process.stdout.write(
-    JSON.stringify({ struts: truss.members.length, seconds, peak_MB: process.resourceUsage().maxRSS / 1024 }),
+    JSON.stringify({ struts: truss.members.length, seconds, wall, peak_MB: process.resourceUsage().maxRSS / 1024 }),
   );
 }

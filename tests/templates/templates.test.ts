@@ -2,6 +2,7 @@ import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { jsonSchemas } from '../../src/model/json-schemas.js';
 import { assess } from '../../src/pipeline/assess.js';
+import { planAssembly } from '../../src/planning/assembly/plan-assembly.js';
 import { readJob } from '../../src/readers/job.js';
 import { readTruss } from '../../src/readers/truss.js';
 
@@ -10,7 +11,31 @@ const names = readdirSync(root, { withFileTypes: true })
   .filter((e) => e.isDirectory())
   .map((e) => e.name);
 const text = (path: string): string => readFileSync(new URL(path, root), 'utf8');
-const keys = Object.keys((jsonSchemas()['job.schema.json'] as { properties: object }).properties);
+interface Schema {
+  readonly description?: string;
+  readonly properties?: Readonly<Record<string, Schema>>;
+  readonly items?: Schema;
+  readonly additionalProperties?: Schema | boolean;
+  readonly anyOf?: readonly Schema[];
+  readonly oneOf?: readonly Schema[];
+}
+const schema = jsonSchemas()['job.schema.json'] as Schema;
+const keys = Object.keys(schema.properties!);
+
+/** Calls `tell` for every key of every object of a schema, at any depth. */
+function walk(of: Schema, path: string, tell: (path: string, key: string, inner: Schema) => void): void {
+  for (const [key, inner] of Object.entries(of.properties ?? {})) {
+    if (key === '$schema') continue;
+    tell(`${path}.${key}`, key, inner);
+    walk(inner, `${path}.${key}`, tell);
+  }
+  const entry = typeof of.additionalProperties === 'object' ? [of.additionalProperties] : [];
+  for (const inner of [...(of.items ? [of.items] : []), ...entry, ...(of.anyOf ?? []), ...(of.oneOf ?? [])])
+    walk(inner, path, tell);
+}
+
+/** The key that tells the kinds of an object apart is explained once for all of them. */
+const chooses = (path: string): boolean => path.endsWith('.kind');
 
 it('there is one for a table, one for a table in inches, one for a garden', () =>
   expect(names).toEqual(expect.arrayContaining(['garden-pavilion', 'table-model', 'table-model-us'])));
@@ -27,8 +52,24 @@ describe.each(names)('template %s', (name) => {
       expect(lines[at - 1], key).toMatch(/^ {2}\/\/ /);
     }
   });
+  it('explains every key of the schema, however deep, also of what is absent or empty', () => {
+    const told = text(`${name}/job.json`)
+      .replace(/^\s*\/\/ ?/gm, '')
+      .replace(/\s+/g, ' ');
+    const missing: string[] = [];
+    walk(schema, '', (path, key, inner) => {
+      const words = inner.description ?? '';
+      if (!told.includes(`"${key}"`) || words === '' || !(told.includes(words.replace(/\s+/g, ' ')) || chooses(path)))
+        missing.push(path);
+    });
+    expect(missing).toEqual([]);
+  });
   it('has no stop but the one that asks for a test of your own', () => {
-    const { findings } = assess(truss.truss!, job.job!);
+    const assessed = assess(truss.truss!, job.job!);
+    const assembly = planAssembly({ ...assessed, bars: [] });
+    const findings = [...assessed.findings, ...assembly.findings];
+    // What a table model is flagged for out of the box, a user would have to mend in a job that is not his own.
+    if (name !== 'garden-pavilion') expect(findings.filter((f) => f.level === 'warn').map((f) => f.code)).toEqual([]);
     const stops = findings.filter((f) => f.level === 'stop').map((f) => f.code);
     expect(stops).toEqual(name === 'garden-pavilion' ? [expect.any(String)] : []);
   });

@@ -7,16 +7,14 @@ import type { Area } from '../kit/geometry2.js';
 import { INK, LINE, SIZE } from '../kit/ink.js';
 import { Paper, type Written } from '../kit/paper.js';
 import { type Units, unitsOf } from '../kit/units.js';
-import { ISOMETRIC } from '../kit/view/camera.js';
-import { drawTrussView, type ViewNode, type ViewStrut } from '../kit/view/truss-view.js';
 import type { PackRecords } from '../records.js';
 import { packingSections } from './packing-sections.js';
+import { drawStepPicture, type Standing, type StepParts } from './step-picture.js';
 import { howItEnters, sayStep, stepNotes } from './step-words.js';
 
 /** Steps on an upright sheet, so that marks stay legible at arm's length. */
 const STEPS_A_SHEET = 3;
 const GAP = 4;
-const NEW_STROKE = 0.9;
 /** Share of a block's width that the words take. */
 const WORDS = 0.42;
 
@@ -32,7 +30,7 @@ export async function assemblyPdf(records: PackRecords, fonts: Fonts): Promise<W
       'One step after the other: strong lines are new in the step, faint ones stand already. A triangle is a prop. Tick a step when it holds.',
   });
   const height = (area.height - (STEPS_A_SHEET - 1) * GAP) / STEPS_A_SHEET;
-  const seen = new Seen(records);
+  const seen = new Seen();
   let slot = 0;
   for (const step of building) {
     const lines = linesOf(paper, records, step, units, area.width * WORDS);
@@ -61,17 +59,19 @@ interface StepLine {
 }
 
 /** What stands and what is propped, as the steps go by. */
-class Seen {
+class Seen implements Standing {
   readonly nodes = new Set<string>();
   readonly struts = new Set<string>();
   readonly propped = new Set<string>();
-  constructor(readonly records: PackRecords) {}
-
-  add(step: AssemblyStep): void {
-    for (const n of step.hubs) this.nodes.add(n);
-    for (const s of step.struts) this.struts.add(s.strut);
+  /** Adds a step; gives what of it did not stand before. */
+  add(step: AssemblyStep): StepParts {
+    const nodes = step.hubs.filter((n) => !this.nodes.has(n));
+    const struts = step.struts.map((s) => s.strut).filter((s) => !this.struts.has(s));
+    for (const n of nodes) this.nodes.add(n);
+    for (const s of struts) this.struts.add(s);
     for (const n of step.release) this.propped.delete(n);
     for (const n of step.props) this.propped.add(n);
+    return { nodes: new Set(nodes), struts: new Set(struts) };
   }
 }
 
@@ -84,8 +84,7 @@ function drawStep(
   lines: readonly StepLine[],
 ): void {
   const { pen } = paper;
-  const before = { nodes: new Set(seen.nodes), struts: new Set(seen.struts) };
-  seen.add(step);
+  const fresh = seen.add(step);
   const words = area.width * WORDS;
   pen.line([area.x, area.y], [area.x + area.width, area.y], { width: LINE.hair, colour: INK.grey });
   pen.rectangle(area.x, area.y + 3, 4.5, 4.5, { width: LINE.normal });
@@ -104,11 +103,11 @@ function drawStep(
   lines.forEach(({ text, bold, indent }, i) => {
     pen.text(text, area.x + indent, area.y + HEAD + i * pitch, { size, bold });
   });
-  drawPicture(
+  drawStepPicture(
     paper,
     { x: area.x + words, y: area.y + 1.5, width: area.width - words, height: area.height - 3 },
-    records,
-    before,
+    records.topology,
+    fresh,
     seen,
   );
 }
@@ -137,39 +136,3 @@ function linesOf(paper: Paper, records: PackRecords, step: AssemblyStep, units: 
 
 /** Height that so many lines of a step take under its number, mm. */
 const wordsHeight = (lines: number): number => HEAD + lines * LINE_PITCH;
-
-function drawPicture(
-  paper: Paper,
-  area: Area,
-  records: PackRecords,
-  before: { readonly nodes: ReadonlySet<string>; readonly struts: ReadonlySet<string> },
-  seen: Seen,
-): void {
-  const { truss } = records.topology;
-  const fresh = (mark: string): boolean => !before.nodes.has(mark) && seen.nodes.has(mark);
-  const newStruts = truss.members.filter((m) => seen.struts.has(m.mark) && !before.struts.has(m.mark));
-  const touched = new Set(newStruts.flatMap((m) => m.ends));
-  const nodes = truss.nodes.map(
-    (n): ViewNode => ({
-      mark: n.mark,
-      at: n.at,
-      show: fresh(n.mark) || touched.has(n.mark) ? 'mark' : 'none',
-      support: seen.propped.has(n.mark),
-    }),
-  );
-  const struts = truss.members.flatMap((m): ViewStrut[] => {
-    if (!seen.struts.has(m.mark)) return [];
-    const isNew = !before.struts.has(m.mark);
-    const [from, to] = m.ends.map((e) => records.topology.nodeIndex.get(e)!) as [number, number];
-    return [
-      {
-        mark: m.mark,
-        from,
-        to,
-        stroke: isNew ? { kind: 'plain', width: NEW_STROKE } : { kind: 'none' },
-        label: isNew ? { bold: m.mark, plain: '' } : null,
-      },
-    ];
-  });
-  drawTrussView(paper.pen, area, { camera: ISOMETRIC, nodes, struts, scale: 'fill', edge: 7 });
-}
