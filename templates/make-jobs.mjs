@@ -81,7 +81,7 @@ const TEMPLATES = {
       struts: { section: 'GL24h-60x60' },
       saw: { step_mm: 1, endFloat_mm: 1, kerf_mm: 3.2, endTrim_mm: 20 },
       stock: { bars: [{ section: 'GL24h-60x60', length_mm: 4000, price: 24 }], leastOffcut_mm: 400, currency: 'EUR' },
-      nodes: { system: 'spigot', systems: FEET(), process: 'powder', material: 'PA12-powder', joint: 'pinned', pin_mm: 12 },
+      nodes: { system: 'spigot', systems: FEET(), process: 'powder', material: 'PA12-powder', joint: 'pinned', pin_mm: 10, depthFactor: 2.8 },
       printers: [{ name: 'powder bed of a print shop', width_mm: 680, depth_mm: 370, height_mm: 560 }],
       panels: { seating: 'over', thickness_mm: 6, holdBy: 'clips', corner: 'round', notFlat: 'flag' },
       sheets: [{ name: 'acrylic 3050 x 2030', width_mm: 3050, height_mm: 2030, price: 240 }],
