@@ -9,7 +9,8 @@ import type { Section } from '../model/section.js';
 import { endChoice } from '../model/strut-end.js';
 import type { Topology } from '../model/topology.js';
 import { nodeSystem } from './systems/index.js';
-import { clearance, isMeasured, measuredSize } from './systems/printing.js';
+import { narrowWebs } from './systems/narrow-webs.js';
+import { clearance, isMeasured, LEAST_WALL, measuredSize } from './systems/printing.js';
 import type { BarEnd, NodeSystem } from './systems/system.js';
 
 export interface DetailedHubs {
@@ -117,6 +118,10 @@ export function detailHubs(
     const sockets = hub.sockets.map(
       (s, i): Socket => ({ ...s, setback: setbacks[i] === null ? null : (rule ?? setbacks[i]!) }),
     );
+    for (const { a, b, web } of narrowWebs(sockets, job))
+      findings.push(
+        finding('bores-meet', hub.mark, { value: web, limit: LEAST_WALL[job.nodes['process']], about: { a, b } }),
+      );
     const makeable = whole && material !== null && system !== null && sockets.every((s) => s.setback !== null);
     return { ...hub, sockets, makeable };
   });

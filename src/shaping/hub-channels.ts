@@ -1,4 +1,5 @@
 import { LEAST_WALL } from '../detailing/systems/printing.js';
+import { floorHoles } from '../detailing/systems/vent.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
@@ -20,11 +21,20 @@ export function channelsOf(hub: HubPart, job: Job, space: HubSpace, findings: Fi
       else findings.push(finding('pin-meets-bore', hub.mark, { value: s.pin, about: { strut: s.strut } }));
     }
     channels.push(...boltHolesOf(space, i));
-    if (job.nodes.vent_mm > 0 && space.sleeves[i]!.hollow && s.detail !== 'drop-in') {
-      const vent = ventOf(space, i, job.nodes.vent_mm, web);
-      if (vent) channels.push(vent);
-      else findings.push(finding('vent-left-out', hub.mark, { about: { strut: s.strut } }));
+    // A cradle is open on its side.
+    if (!space.sleeves[i]!.hollow || s.detail === 'drop-in') return;
+    const wanted = floorHoles(s, job);
+    for (const diameter of wanted) {
+      const hole = ventOf(space, i, diameter, web);
+      if (!hole) continue;
+      channels.push(hole);
+      if (diameter < wanted[0]!)
+        findings.push(
+          finding('drain-narrowed', hub.mark, { value: diameter, limit: wanted[0]!, about: { strut: s.strut } }),
+        );
+      return;
     }
+    if (wanted.length > 0) findings.push(finding('vent-left-out', hub.mark, { about: { strut: s.strut } }));
   });
   return channels;
 }

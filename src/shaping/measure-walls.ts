@@ -23,6 +23,7 @@ const START = 0.06;
  * starts in a hole, a groove or an opening finds no wall and is left out. One entry a hollow sleeve that has a wall anywhere.
  *
  * @param channels vents and pins: their own sleeve's wall runs out to an edge at them, which is no thin wall
+ * @param widened what each bore is drawn wider across because it prints narrower, mm: the wall is what it comes out as
  * @param at the node; the piece's placement says where its mesh lies about it
  */
 export function measureWalls(
@@ -30,6 +31,7 @@ export function measureWalls(
   sleeves: readonly Sleeve[],
   channels: readonly Channel[],
   at: Vec3,
+  widened: readonly number[] = [],
 ): MeasuredWall[] {
   const { positions, triangles, placement: m } = piece;
   // Into the print's axes: the transpose of the placement's rotation.
@@ -39,6 +41,7 @@ export function measureWalls(
     m[2]! * d[0] + m[6]! * d[1] + m[10]! * d[2],
   ];
   const node = turn([at[0] - m[3]!, at[1] - m[7]!, at[2] - m[11]!]);
+  const balls = ballsOf(positions, triangles);
   const found: MeasuredWall[] = [];
   for (const [index, s] of sleeves.entries()) {
     if (!s.hollow) continue;
@@ -46,17 +49,18 @@ export function measureWalls(
       .filter((c) => c.sleeve === index)
       .map((c) => ({ from: add(node, turn(c.from)), direction: turn(c.direction), radius: c.radius }));
     const [d, y, z] = [turn(s.socket.direction), turn(s.socket.y), turn(s.socket.z)];
-    const near = trianglesNear(positions, triangles, node, d, s.stop, s.mouth, 2 * largest(s.outer) + s.socket.wall);
+    const near = trianglesNear(balls, node, d, s.stop, s.mouth, 2 * largest(s.outer) + s.socket.wall);
+    const wider = (widened[index] ?? 0) / 2;
     let best: MeasuredWall | null = null;
     for (const share of SHARES) {
       const along = share * s.socket.depth;
       const crossed = trianglesAcross(positions, triangles, near, d, dot(node, d) + s.stop + along);
       for (let k = 0; k < AZIMUTHS; k++) {
-        const [start, out] = rayFrom(s, k, addScaled(node, d, s.stop + along), y, z);
+        const [start, out] = rayFrom(s, wider, k, addScaled(node, d, s.stop + along), y, z);
         const thickness = firstExit(positions, triangles, crossed, start, out);
         if (thickness === null || own.some((c) => onChannel(c, addScaled(start, out, thickness)))) continue;
-        if (!best || thickness + START < best.thickness)
-          best = { strut: s.socket.strut, thickness: thickness + START, along };
+        const printed = thickness + START + wider;
+        if (!best || printed < best.thickness) best = { strut: s.socket.strut, thickness: printed, along };
       }
     }
     if (best) found.push(best);
@@ -73,24 +77,40 @@ function onChannel(c: Pick<Channel, 'from' | 'direction' | 'radius'>, p: Vec3): 
 const ON_CHANNEL = 0.1;
 
 /** A start on the bore's surface and the direction out of it; of a rectangle, three rays a side. */
-function rayFrom(s: Sleeve, k: number, centre: Vec3, y: Vec3, z: Vec3): readonly [Vec3, Vec3] {
+function rayFrom(s: Sleeve, wider: number, k: number, centre: Vec3, y: Vec3, z: Vec3): readonly [Vec3, Vec3] {
   if (typeof s.inner === 'number') {
     const angle = (2 * Math.PI * (k + 0.37)) / AZIMUTHS;
     const out = add(scale(y, Math.cos(angle)), scale(z, Math.sin(angle)));
-    return [addScaled(centre, out, s.inner + START), out];
+    return [addScaled(centre, out, s.inner + wider + START), out];
   }
   const side = k % 4;
   const share = (Math.floor(k / 4) - 1) * 0.7;
   const [out, across] = side % 2 === 0 ? [y, z] : [z, y];
   const sense = side < 2 ? 1 : -1;
   const [half, other] = side % 2 === 0 ? [s.inner[0], s.inner[1]] : [s.inner[1], s.inner[0]];
-  return [addScaled(addScaled(centre, across, share * other), out, sense * (half + START)), scale(out, sense)];
+  return [addScaled(addScaled(centre, across, share * other), out, sense * (half + wider + START)), scale(out, sense)];
 }
 
-/** Triangles with a corner within `radius` of a stretch of a line, or long enough to reach it. */
+/** Middle and reach of each triangle: x, y, z and the distance of its farthest corner, four numbers each. */
+function ballsOf(p: Float32Array, t: Uint32Array): Float64Array {
+  const balls = new Float64Array((t.length / 3) * 4);
+  for (let i = 0, o = 0; i < t.length; i += 3, o += 4) {
+    const [a, b, c] = [3 * t[i]!, 3 * t[i + 1]!, 3 * t[i + 2]!];
+    let most = 0;
+    for (let k = 0; k < 3; k++) balls[o + k] = (p[a + k]! + p[b + k]! + p[c + k]!) / 3;
+    for (const at of [a, b, c])
+      most = Math.max(
+        most,
+        (p[at]! - balls[o]!) ** 2 + (p[at + 1]! - balls[o + 1]!) ** 2 + (p[at + 2]! - balls[o + 2]!) ** 2,
+      );
+    balls[o + 3] = Math.sqrt(most);
+  }
+  return balls;
+}
+
+/** Triangles that come within `radius` of a stretch of a line. */
 function trianglesNear(
-  p: Float32Array,
-  t: Uint32Array,
+  balls: Float64Array,
   node: Vec3,
   d: Vec3,
   from: number,
@@ -98,16 +118,11 @@ function trianglesNear(
   radius: number,
 ): Uint32Array {
   const near: number[] = [];
-  const middle = addScaled(node, d, (from + to) / 2);
-  for (let i = 0; i < t.length; i += 3) {
-    let least = Number.POSITIVE_INFINITY;
-    let longest = 0;
-    for (let k = 0; k < 3; k++) {
-      const [a, b] = [3 * t[i + k]!, 3 * t[i + ((k + 1) % 3)]!];
-      least = Math.min(least, Math.hypot(p[a]! - middle[0], p[a + 1]! - middle[1], p[a + 2]! - middle[2]));
-      longest = Math.max(longest, Math.hypot(p[a]! - p[b]!, p[a + 1]! - p[b + 1]!, p[a + 2]! - p[b + 2]!));
-    }
-    if (least <= radius + (to - from) / 2 + longest) near.push(i);
+  const [x, y, z] = addScaled(node, d, (from + to) / 2);
+  for (let o = 0; o < balls.length; o += 4) {
+    const reach = radius + (to - from) / 2 + balls[o + 3]!;
+    const square = (balls[o]! - x) ** 2 + (balls[o + 1]! - y) ** 2 + (balls[o + 2]! - z) ** 2;
+    if (square <= reach * reach) near.push((3 * o) / 4);
   }
   return Uint32Array.from(near);
 }

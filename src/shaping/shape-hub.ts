@@ -1,6 +1,7 @@
 import { type ClampParts, PARTING } from '../detailing/systems/clamp-parts.js';
 import { hubShape } from '../detailing/systems/hub-shape.js';
-import { LEAST_WALL } from '../detailing/systems/printing.js';
+import { boreAllowance, LEAST_WALL } from '../detailing/systems/printing.js';
+import { dot } from '../maths/vec3.js';
 import type { Finding } from '../model/finding.js';
 import { finding } from '../model/findings/index.js';
 import type { Job } from '../model/job/index.js';
@@ -18,7 +19,7 @@ import { weakestSection } from './measure-sections.js';
 import { type MeasuredWall, measureWalls } from './measure-walls.js';
 import { openEdges } from './open-edges.js';
 import { chooseLie, type Lie } from './orientation.js';
-import { socketSolid } from './socket-solid.js';
+import { finishedSolid, socketSolid } from './socket-solid.js';
 
 /**
  * Makes the solid of a hub as it is printed. A hub that detailing found not makeable has no pieces and no findings of its own.
@@ -35,19 +36,27 @@ export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number
     const channels = channelsOf(hub, job, space, findings);
     const cradles = cradlesOf(hub, job, space, findings);
     const marks = job.nodes.marks ? marksOf(hub, job, space, channels, cradles, findings) : [];
-    const solid = socketSolid(bench, space, { marks, channels, cradles, chamfer: job.nodes.chamfer_mm });
+    const chamfer = job.nodes.chamfer_mm;
+    const blank = socketSolid(bench, space, { channels, cradles, chamfer });
     const pulls = hub.sockets.map((s, i) => ({ direction: s.direction, tension: tension?.[i] ?? 1 }));
-    if (space.shape.clamp) return shapeHalves(bench, hub, job, solid, space, space.shape.clamp, findings);
+    if (space.shape.clamp) {
+      // A half lies on its parting plane or across it; the bores in that plane are laid open and stand upright in neither.
+      const level = hub.sockets.map(() => boreAllowance(job, 0));
+      const solid = finishedSolid(bench, space, blank, marks, level, chamfer);
+      return shapeHalves(bench, hub, job, solid, space, space.shape.clamp, findings);
+    }
     const lie = space.shape.base
       ? ON_PLATE
-      : chooseLie(solid, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
+      : chooseLie(blank, pulls, job.nodes.orientation, (box) => job.printers.some((p) => holds(p, box)));
+    const widened = hub.sockets.map((s) => boreAllowance(job, dot(s.direction, lie.up)));
+    const solid = finishedSolid(bench, space, blank, marks, widened, chamfer);
     const laid = [layDown(bench, solid, lie, hub.at, '')];
     for (const c of cradles) {
       const cap = capSolid(bench, space, c);
       laid.push(layDown(bench, cap, chooseLie(cap, [], ON_A_FACE), hub.at, `cap-${hub.sockets[c.sleeve]!.strut}`));
     }
     const main = laid[0];
-    if (main) findings.push(...wallFindings(hub, main, space, channels, job));
+    if (main) findings.push(...wallFindings(hub, main, space, channels, widened, job));
     return finish(hub, job, laid, findings, main ? weakestOf(hub, [main], space, findings) : null);
   } catch (error) {
     if (!(error instanceof SolidFailed)) throw error;
@@ -91,7 +100,15 @@ function shapeGuide(bench: Bench, hub: HubPart, job: Job, findings: Finding[]): 
     clamp: null,
   });
   const marks = job.nodes.marks ? marksOf(guide, job, space, [], [], findings) : [];
-  const marked = socketSolid(bench, space, { marks, channels: [], cradles: [], chamfer: 0 });
+  const blank = socketSolid(bench, space, { channels: [], cradles: [], chamfer: 0 });
+  const marked = finishedSolid(
+    bench,
+    space,
+    blank,
+    marks,
+    space.sleeves.map(() => 0),
+    0,
+  );
   const laid = guideHalves(bench, space, hub, marked).map((half, i) =>
     layDown(bench, half, chooseLie(half, [], ON_A_FACE), hub.at, i === 0 ? 'guide-A' : 'guide-B'),
   );
@@ -145,10 +162,11 @@ function wallFindings(
   piece: ShapedPiece,
   space: HubSpace,
   channels: readonly Channel[],
+  widened: readonly number[],
   job: Job,
 ): Finding[] {
   const limit = LEAST_WALL[job.nodes['process']];
-  const walls = measureWalls(piece, space.sleeves, channels, hub.at);
+  const walls = measureWalls(piece, space.sleeves, channels, hub.at, widened);
   const thinnest = walls.reduce<MeasuredWall | null>((a, b) => (a && a.thickness <= b.thickness ? a : b), null);
   if (!thinnest || thinnest.thickness >= limit - WALL_SLACK) return [];
   const where = `the socket of ${thinnest.strut}, ${thinnest.along.toFixed(1)} mm from its stop`;

@@ -10,17 +10,16 @@ import type { MarkPlace } from './mark-places.js';
 import { MeshBuilder } from './mesh-builder.js';
 import { placedAlong, sidesFor, transformed } from './placed.js';
 
-/** What is cut from a socket hub besides its bores. */
+/** What is cut from a socket hub besides its bores and marks. */
 export interface HubCuts {
-  readonly marks: readonly MarkPlace[];
   readonly channels: readonly Channel[];
   readonly cradles: readonly Cradle[];
   readonly chamfer: number;
 }
 
 /**
- * The solid of a socket hub, relative to its node, in the truss's axes: the outsides of the sleeves and the body, united, less the
- * struts' paths, the channels and the marks. Each strut's path is cut from all of the hub, so that no neighbour's cone or body can
+ * The solid of a socket hub but for its marks, relative to its node, in the truss's axes: the outsides of the sleeves and the body,
+ * united, less the struts' paths and the channels. Each strut's path is cut from all of the hub, so that no neighbour's cone or body can
  * stand in it; no cutter shares a face with a piece.
  */
 export function socketSolid(bench: Bench, space: HubSpace, cuts: HubCuts): Manifold {
@@ -36,16 +35,57 @@ export function socketSolid(bench: Bench, space: HubSpace, cuts: HubCuts): Manif
   const last = [
     ...cuts.channels.map((c) => channelSolid(bench, c)),
     ...cuts.cradles.flatMap((c) => cradleCutters(bench, space, c)),
-    ...space.sleeves.flatMap((s, i) => letteringSolid(bench, s, i, cuts.marks) ?? []),
   ];
   const cores = space.sleeves.filter((s) => !s.hollow).map((s) => coreSolid(bench, s, cuts.chamfer));
-  // Spigots stand in their own struts' paths: they are put in after the paths are cut, and marked and bored with the rest.
+  // Spigots stand in their own struts' paths: they are put in after the paths are cut, and bored with the rest.
   const hub =
     cores.length === 0
       ? bench.hold(kernel.Manifold.difference([outside, ...paths, ...last]), 'hub')
       : withCores(bench, outside, paths, cores, last);
   for (const solid of [...pieces, outside, ...paths, ...cores, ...last]) bench.free(solid);
   return hub;
+}
+
+/**
+ * A hub with its marks and its bores widened.
+ *
+ * @param widened what each sleeve's bore is widened by across, mm, in the sleeves' order
+ */
+export function finishedSolid(
+  bench: Bench,
+  space: HubSpace,
+  hub: Manifold,
+  marks: readonly MarkPlace[],
+  widened: readonly number[],
+  chamfer: number,
+): Manifold {
+  const cutters = space.sleeves.flatMap((s, i) => [
+    ...letteringSolid(bench, s, i, marks),
+    ...(s.hollow && widened[i]! > LEAST_WIDER ? [widerBore(bench, s, widened[i]! / 2, chamfer)] : []),
+  ]);
+  if (cutters.length === 0) return hub;
+  const finished = bench.hold(bench.kernel.Manifold.difference([hub, ...cutters]), 'finished hub');
+  for (const solid of cutters) bench.free(solid);
+  return finished;
+}
+
+/** Less than this across is left, mm: no printer steps so finely, and shells so thin are not cut cleanly. */
+const LEAST_WIDER = 0.04;
+/** How far a widened bore's floor lies under the first one's, mm: the two share no face. */
+const UNDER_FLOOR = 0.02;
+
+/** A bore grown by `by` on every side, its mouth's chamfer with it. */
+function widerBore(bench: Bench, s: Sleeve, by: number, chamfer: number): Manifold {
+  const n = sidesFor(largest(s.outer));
+  const ring = (z: number, half: Half) => ({ z, outline: outlineOf(half, n) });
+  const c = chamferOf(s, chamfer);
+  const mesh = new MeshBuilder();
+  mesh.loft([
+    ring(s.stop - UNDER_FLOOR, grow(s.inner, by)),
+    ring(s.mouth - c, grow(s.inner, by)),
+    ring(s.mouth + PAST_MOUTH, grow(s.inner, by + (c > 0 ? c + PAST_MOUTH : 0))),
+  ]);
+  return placedAlong(bench, mesh, s, 'wider bore');
 }
 
 function withCores(
@@ -177,8 +217,8 @@ function frameOf(d: Vec3): [Vec3, Vec3] {
   return [unit, [d[1] * unit[2] - d[2] * unit[1], d[2] * unit[0] - d[0] * unit[2], d[0] * unit[1] - d[1] * unit[0]]];
 }
 
-function letteringSolid(bench: Bench, s: Sleeve, i: number, marks: readonly MarkPlace[]): Manifold | null {
+function letteringSolid(bench: Bench, s: Sleeve, i: number, marks: readonly MarkPlace[]): Manifold[] {
   const mesh = new MeshBuilder();
   for (const m of marks) if (m.sleeve === i) addLettering(mesh, bench.kernel, m.text, m.lettering, m.surface);
-  return mesh.empty ? null : placedAlong(bench, mesh, s, 'marks');
+  return mesh.empty ? [] : [placedAlong(bench, mesh, s, 'marks')];
 }

@@ -133,7 +133,7 @@ it('measures the wall it was given on sound hubs of every section', async () => 
       system: 'socket',
       count: 5,
       least: 30,
-      nodes: { marks: false, vent_mm: 0, joint: 'glued' },
+      nodes: { marks: false, vent_mm: 0, joint: 'glued', allowance: { upright_mm: 0 } },
     });
     const { pieces, findings } = await shapeHub(made.hub, made.job);
     expect(findings.filter((f) => f.code === 'wall-thin')).toEqual([]);

@@ -5,6 +5,7 @@ import { IN_PLANE, PARTING, SCREW } from './clamp-parts.js';
 import { hubShape } from './hub-shape.js';
 import { sleeveStrength } from './sleeve-strength.js';
 import type { SocketStrength } from './system.js';
+import { floorHoles } from './vent.js';
 
 /** Diameter of an M3 screw and of its head, mm (ISO 7045: 5.5, from memory). */
 const [THREAD, HEAD] = [3, 5.5] as const;
@@ -15,7 +16,7 @@ const [THREAD, HEAD] = [3, 5.5] as const;
  */
 export function clampStrength(hub: HubPart, job: Job): SocketStrength[] {
   const clamp = hubShape(hub, job).clamp;
-  return sleeveStrength(hub, job.nodes.vent_mm).map((s, i) => {
+  return sleeveStrength(hub, (s) => floorHoles(s, job)[0] ?? 0).map((s, i) => {
     if (!clamp) return s;
     const socket = hub.sockets[i]!;
     const out = Math.abs(dot(clamp.normal, socket.direction));

@@ -1,4 +1,4 @@
-import type { HubPart } from '../../model/parts.js';
+import type { HubPart, Socket } from '../../model/parts.js';
 import { areaOf, type Half, largest, perimeterOf, type Sleeve, sleevesOf, smallest } from './sleeve.js';
 import type { SocketStiffness, SocketStrength } from './system.js';
 
@@ -71,12 +71,17 @@ function openingArea({ outer, inner }: Sleeve): number {
   return 2 * Math.max(i[0] * (o[1] - i[1]), i[1] * (o[0] - i[0]));
 }
 
-/** Areas through which each socket passes force. */
-export function sleeveStrength(hub: HubPart, vent: number): SocketStrength[] {
+/**
+ * Areas through which each socket passes force.
+ *
+ * @param ventOf diameter of the hole at a socket's floor, mm; 0: none
+ */
+export function sleeveStrength(hub: HubPart, ventOf: (socket: Socket) => number): SocketStrength[] {
   const { ft, ftZ } = hub.material.strength;
   const acrossLayers = ft !== undefined && ftZ !== undefined ? ftZ / ft : ACROSS_LAYERS;
   return sleevesOf(hub.sockets).map((s: Sleeve) => {
     const { pin, wall, strut, detail } = s.socket;
+    const vent = ventOf(s.socket);
     // What holds the strut when it is in its place.
     const depth = s.socket.depth - (s.socket.travel ?? 0);
     const hole = (Math.PI * pin * pin) / 4;

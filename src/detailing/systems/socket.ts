@@ -6,13 +6,14 @@ import { commonSetback, leastSetback } from './half-strip.js';
 import { hardwareCover } from './hardware.js';
 import { hubShape } from './hub-shape.js';
 import { leastSetbacks } from './least-setbacks.js';
-import { clearance, LEAST_WALL, measuredSize, sleeveWall, swelling } from './printing.js';
+import { boreAllowance, clearance, LEAST_WALL, measuredSize, sleeveWall, swelling } from './printing.js';
 import { type BarPrism, commonOf, leastOf, type Separation, separations } from './prism-pair.js';
 import { pathHalf } from './sleeve.js';
 import { outlineInSlab, sleeveCover } from './sleeve-cover.js';
 import { sleeveStiffness, sleeveStrength } from './sleeve-strength.js';
 import { sleeveVolume } from './sleeve-volume.js';
 import type { BarEnd, ClosePair, ConvexPiece, NodeSystem, Setbacks } from './system.js';
+import { floorHoles } from './vent.js';
 
 /** What every hub of sleeves and spigots on a body has in common. */
 export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
@@ -27,7 +28,7 @@ export const SLEEVE_HUB: Omit<NodeSystem, 'name' | 'title' | 'socket'> = {
       ? null
       : sleeveVolume(hubShape(hub, job)) * MM3_TO_M3 * hub.material.density,
   stiffness: (hub) => sleeveStiffness(hub),
-  strength: (hub, job) => sleeveStrength(hub, job.nodes.vent_mm),
+  strength: (hub, job) => sleeveStrength(hub, (s) => floorHoles(s, job)[0] ?? 0),
 };
 
 /** Every panel at a hub asks for its cover. */
@@ -144,7 +145,7 @@ function pairRule(sockets: readonly Socket[], job: Job): Parameters<typeof least
   const n = sockets.length;
   const web = (i: number, j: number, angle: number): number =>
     angle < job.nodes.mergeBelow_deg * DEGREE
-      ? LEAST_WALL[job.nodes['process']] + CHORDS
+      ? LEAST_WALL[job.nodes['process']] + CHORDS + boreAllowance(job)
       : (job.nodes.gap_mm ?? Math.max(sockets[i]!.wall, sockets[j]!.wall));
   const angles = sockets.map((a) => sockets.map((b) => angleBetween(a.direction, b.direction)));
   const prisms = sockets.map((s): BarPrism => ({ d: s.direction, u: s.y, v: s.z, half: pathHalf(s) }));

@@ -28,6 +28,14 @@ export const NODE_FINDINGS = {
     (f) => `wall of ${num(f.value, 2)} mm at ${f.about?.['where']}, least ${num(f.limit, 2)} mm for this process`,
     { withholds: true },
   ),
+  'bores-meet': entry(
+    'stop',
+    'node',
+    'mm',
+    (f) =>
+      `${(f.value ?? 0) > 0 ? `only ${num(f.value, 2)} mm is left` : 'nothing is left'} between the bores of ${f.about?.['a']} and ${f.about?.['b']}, least ${num(f.limit, 2)} mm for this process; raise nodes.gap_mm or leave it out`,
+    { withholds: true },
+  ),
   'section-weak': entry(
     'warn',
     'node',
@@ -67,6 +75,13 @@ export const NODE_FINDINGS = {
     'node',
     '',
     (f) => `the socket of ${f.about?.['strut']} has no vent: every way out meets another bore; use little glue there`,
+  ),
+  'drain-narrowed': entry(
+    'note',
+    'node',
+    'mm',
+    (f) =>
+      `the hole at the floor of the socket of ${f.about?.['strut']} is ${num(f.value, 1)} mm wide, not the ${num(f.limit, 1)} mm that powder runs out by: a wider one would meet another bore; blow that socket out`,
   ),
   'mark-left-out': entry(
     'note',

@@ -22,6 +22,17 @@ export const nodesSchema = z
       .record(z.string(), z.number().nonnegative())
       .default({})
       .describe('Diametral clearance by section, as its own fit gauge gave it; counts as measured.'),
+    allowance: z
+      .strictObject({
+        upright_mm: z
+          .number()
+          .nonnegative()
+          .optional()
+          .describe('Where the bore stands upright; absent: 0.2 of filament, else 0.'),
+        lying_mm: z.number().nonnegative().default(0).describe('Where the bore lies level.'),
+      })
+      .prefault({})
+      .describe('What a bore is drawn wider, since it prints narrower; between the two by the square of the cosine.'),
     clearanceMeasured: z
       .boolean()
       .default(false)
@@ -48,6 +59,13 @@ export const nodesSchema = z
       .nonnegative()
       .default(1.2)
       .describe('Diameter of the vent at the socket floor, for glue and air; 0: none.'),
+    drain_mm: z
+      .number()
+      .nonnegative()
+      .optional()
+      .describe(
+        'With powder: diameter of the hole at a socket floor that loose powder leaves by, in place of a narrower vent; absent: 2, at most half the bore; 0: the vent alone.',
+      ),
     chamfer_mm: z
       .number()
       .nonnegative()
