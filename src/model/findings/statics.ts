@@ -99,7 +99,8 @@ export const STATICS_FINDINGS = {
     'stop',
     'truss',
     '',
-    (f) => `the combination "${f.about?.['combination']}" names the case "${f.about?.['case']}", which does not exist`,
+    (f) =>
+      `the combination "${f.about?.['combination']}" names the case "${f.about?.['case']}", which does not exist; correct the name or add it under loads.cases`,
   ),
   'load-missing': entry(
     'stop',
