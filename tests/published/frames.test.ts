@@ -21,10 +21,12 @@ interface Figure {
   readonly held: (node: number) => readonly number[];
   /** Segments and springs in mm and N; absent: one segment of the bar above. */
   readonly shape?: (length: number) => Pick<FrameMember, 'segments' | 'springs'>;
+  /** The section turned about the bar, rad: loads then have parts along both its axes. */
+  readonly roll?: number;
 }
 
 /** The figure, made in mm and N, in a system of units and turned. */
-function frameOf({ points, bars, held, shape }: Figure, s: UnitSystem, r: Rotation): Frame {
+function frameOf({ points, bars, held, shape, roll = 0 }: Figure, s: UnitSystem, r: Rotation): Frame {
   const fixed = new Uint8Array(6 * points.length);
   points.forEach((_, i) => {
     for (const k of held(i)) fixed[6 * i + k] = 1;
@@ -39,7 +41,10 @@ function frameOf({ points, bars, held, shape }: Figure, s: UnitSystem, r: Rotati
       springs: [],
     };
     const x0 = normalise(d);
-    const [x, y] = [x0, perpendicular(x0)].map((v) => vec(turned(r, v)));
+    const y1 = perpendicular(x0);
+    const z1 = cross(x0, y1);
+    const y0 = [0, 1, 2].map((k) => Math.cos(roll) * y1[k] + Math.sin(roll) * z1[k]);
+    const [x, y] = [x0, y0].map((v) => vec(turned(r, v)));
     return {
       ends: [a, b],
       axes: { x, y, z: cross(x, y) },
@@ -84,7 +89,7 @@ function cantilever(s: UnitSystem, r: Rotation) {
 }
 
 /** A beam of 2 m built in at both ends, in two members, under 0.3 N/mm down. */
-function fixedBeam(s: UnitSystem, r: Rotation) {
+function fixedBeam(s: UnitSystem, r: Rotation, roll = 0.6) {
   const points: Vec3[] = [
     [0, 0, 0],
     [1000, 0, 0],
@@ -94,7 +99,7 @@ function fixedBeam(s: UnitSystem, r: Rotation) {
     [0, 1],
     [1, 2],
   ] as const;
-  const f = frameOf({ points, bars, held: (i) => (i === 1 ? [] : ALL) }, s, r);
+  const f = frameOf({ points, bars, held: (i) => (i === 1 ? [] : ALL), roll }, s, r);
   const down = turned(r, [0, 0, (-0.3 * s.newton) / s.mm]);
   const { x, y, z } = f.members[0].axes;
   const line: [number, number, number] = [along(down, x), along(down, y), along(down, z)];
@@ -140,10 +145,40 @@ function zoned(parts: number): PublishedCheck['value'] {
       ],
       springs: [{ at: 100, stiffness: 5e6 }],
     });
-    const whole = frameOf({ points, bars: [[0, 1]], held: (i) => (i === 0 ? ALL : []), shape }, s, r);
+    const whole = frameOf({ points, bars: [[0, 1]], held: (i) => (i === 0 ? ALL : []), shape, roll: 0.4 }, s, r);
     const { frame } = subdivide(whole, parts);
     const [result] = solveFrame(stiff(frame), [{ nodal: forces(frame.fixed.length, s, r, { 1: [0, 0, -20] }) }]);
     return -turnedBack(r, result.displacements.subarray(6, 9))[2];
+  };
+}
+/** The same bar loaded along its whole length by `line` N/mm in the drawing's axes; what its free end does, in the drawing's axes. */
+function lineLoaded(
+  line: Vec3,
+  spring: boolean,
+  roll: number,
+  s: UnitSystem,
+  r: Rotation,
+): { u: Float64Array; turn: Float64Array } {
+  const points: Vec3[] = [
+    [0, 0, 0],
+    [1000, 0, 0],
+  ];
+  const shape = () => ({
+    segments: [
+      { length: 100, axial: 2 * EA, bendingY: 4 * EI, bendingZ: 4 * EI, torsion: GJ },
+      { length: 900, axial: EA, bendingY: EI, bendingZ: EI, torsion: GJ },
+    ],
+    springs: spring ? [{ at: 100, stiffness: 5e6 }] : [],
+  });
+  const f = frameOf({ points, bars: [[0, 1]], held: (i) => (i === 0 ? ALL : []), shape, roll }, s, r);
+  const w = turned(r, line, s.newton / s.mm);
+  const { x, y, z } = f.members[0].axes;
+  const local: [number, number, number] = [along(w, x), along(w, y), along(w, z)];
+  const members = new Map([[0, { line: local, freeElongation: 0 }]]);
+  const [result] = solveFrame(stiff(f), [{ nodal: new Float64Array(12), members }]);
+  return {
+    u: turnedBack(r, result.displacements.subarray(6, 9)),
+    turn: turnedBack(r, result.displacements.subarray(9, 12)),
   };
 }
 const bend = (from: number, to: number, ei: number): number => (to ** 3 - from ** 3) / (3 * ei);
@@ -228,6 +263,30 @@ holdEverywhere('first-order frames of the handbooks', [
     within: 1e-5,
     turns: 'any',
     value: (s, r) => bendingAt(portal(s, r), 6),
+  },
+  {
+    name: 'a hanging bar of two stiffnesses under 2 N/mm along it: ∫ w s ds / EA, by hand',
+    wanted: (2 * 900 ** 2) / (2 * EA) + (2 * (1000 ** 2 - 900 ** 2)) / (2 * 2 * EA),
+    dimension: 'length',
+    within: 1e-9,
+    turns: 'any',
+    value: (s, r) => lineLoaded([2, 0, 0], true, 0, s, r).u[0],
+  },
+  {
+    name: 'a zoned cantilever with a spring under 0.3 N/mm, section rolled: ∫ w s³/2EI ds + w l³/2k, by hand',
+    wanted: (0.3 * 900 ** 4) / (8 * EI) + (0.3 * (1000 ** 4 - 900 ** 4)) / (8 * 4 * EI) + (0.3 * 900 ** 3) / (2 * 5e6),
+    dimension: 'length',
+    within: 1e-9,
+    turns: 'any',
+    value: (s, r) => -lineLoaded([0, 0, -0.3], true, 0.6, s, r).u[2],
+  },
+  {
+    name: 'and its tip turns by ∫ w s²/2EI ds + w l²/2k',
+    wanted: (0.3 * 900 ** 3) / (6 * EI) + (0.3 * (1000 ** 3 - 900 ** 3)) / (6 * 4 * EI) + (0.3 * 900 ** 2) / (2 * 5e6),
+    dimension: 'number',
+    within: 1e-9,
+    turns: 'any',
+    value: (s, r) => lineLoaded([0, 0, -0.3], true, 0.6, s, r).turn[1],
   },
   ...[1, 4].map(
     (parts): PublishedCheck => ({

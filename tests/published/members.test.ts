@@ -191,4 +191,15 @@ holdEverywhere('allowable stress with a factor of 3, a beech dowel of 8 x 300 mm
     (3 * 300) / ((Math.PI / 4) * 64 * BEECH.strength['ft']!),
     used(ALLOWABLE, round(8), 'beech-dowel', 300, { axial: 300 }),
   ),
+  row(
+    'sheared by 200 N: 3 x 4/3 V / A fv',
+    (3 * (4 / 3) * 200) / ((Math.PI / 4) * 64 * BEECH.strength['fv']!),
+    used(ALLOWABLE, round(8), 'beech-dowel', 300, { shearY: 160, shearZ: 120 }),
+  ),
+  row(
+    'a thin ring of it by 2 V / A, to 1 %',
+    (3 * 2 * 50) / (Math.PI * 39 * 1 * BEECH.strength['fv']!),
+    used(ALLOWABLE, tube(40, 1), 'beech-dowel', 300, { shearZ: 50 }),
+    0.01,
+  ),
 ]);

@@ -85,6 +85,19 @@ describe('NDS 2018 in brief, by hand', () => {
     const cp = half - Math.sqrt(half ** 2 - a / 0.8);
     expect(at(-cp * star * area, {}, 'long', { serviceClass: 3, factor: 3 }).utilisation).toBeCloseTo(1, 10);
   });
+  it.each([
+    [3.5, 1.5],
+    [4.5, 1.4],
+    [5.5, 1.3],
+    [7.25, 1.2],
+    [9.25, 1.1],
+    [11.25, 1],
+    [13.25, 0.9],
+  ])('CF of a depth of %f in is %f in tension (NDS Supplement table 4A, from memory)', (inches, cf) => {
+    const shape = { kind: 'rectangle', width: 1.5 * INCH, height: inches * INCH } as const;
+    const n = Ft * 1.5 * inches * INCH ** 2;
+    expect(NDS.judge({ ...member, shape }, axialOnly('given', n, 'long'), dry).utilisation).toBeCloseTo(1 / cf, 10);
+  });
   it('a round pole buckles as the square of equal area and inertia would (3.7.3): depth sqrt(12) d/4', () => {
     const shape = { kind: 'round', diameter: 100 } as const;
     const slender = (50 * Math.sqrt(12) * 100) / 4;

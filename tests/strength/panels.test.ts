@@ -145,3 +145,52 @@ describe('combinations by EN 1990', () => {
     expect(weak.value).toBeLessThan(total / 4);
   });
 });
+
+describe('pressures and deflection in figures', () => {
+  const at = (angle: number): Truss =>
+    mapped(
+      truss,
+      ([x, y, z]): Vec3 => [x, y * Math.cos(angle) - z * Math.sin(angle), y * Math.sin(angle) + z * Math.cos(angle)],
+    );
+  const one = [combination('c', { snow: 1 })];
+
+  it('snow per plan area on a slope of 60° presses by p cos² of it (EN 1991-1-3 5.2 speaks of plan area)', () => {
+    const job = jobWith({
+      panels: { seating: 'over' },
+      analysis: { selfWeight: false },
+      loads: { cases: [{ name: 'snow', kind: 'snow', pressure_kN_per_m2: 1 }] },
+    });
+    const [level, steep] = [0, Math.PI / 3].map((angle) => Math.abs(run(job, one, at(angle)).utilisations[0]!.force));
+    const { area } = assess(truss, job).parts.panels[0]!;
+    expect(level).toBeCloseTo(1e-3 * area, 6);
+    expect(steep! / level!).toBeCloseTo(0.25, 9);
+  });
+
+  it('its own weight on a slope of 60° presses by half', () => {
+    const job = jobWith({ panels: { seating: 'over' } });
+    const own = [combination('G', { 'self-weight': 1 })];
+    const [level, steep] = [0, Math.PI / 3].map((angle) => Math.abs(run(job, own, at(angle)).utilisations[0]!.force));
+    expect(steep! / level!).toBeCloseTo(0.5, 9);
+  });
+
+  it('a sheet in channels bows by 0.00406 q a⁴/D, twice that where the load stands, against half the bite', () => {
+    // Timoshenko and Woinowsky-Krieger, table 8 (from memory); the coefficient holds for any Poisson's ratio. Creep doubles standing load (from memory).
+    const panels = { holdBy: 'channel', bite_mm: 30, gap_mm: 2, seating: 'between', thickness_mm: 3 };
+    const sagOf = (kind: string) => {
+      const job = jobWith({
+        panels,
+        analysis: { selfWeight: false },
+        loads: { cases: [{ name: 'snow', kind, pressure_kN_per_m2: 0.2, direction: 'normal' }] },
+      });
+      const { material, outline, hold } = assess(truss, job).parts.panels[0]!;
+      const side = Math.max(...outline.map((p) => p[0])) - Math.min(...outline.map((p) => p[0]));
+      const stiff = (material!.modulus * 27) / (12 * (1 - material!.poisson! ** 2));
+      const wanted = (0.00406 * 2e-4 * side ** 4) / stiff / (0.5 * (hold?.bite ?? 30));
+      const u = run(job, one).utilisations[0]!;
+      expect(u.rule).toBe('panel deflection, at most half the bite');
+      return u.utilisation / wanted;
+    };
+    expect(Math.abs(sagOf('snow') - 1)).toBeLessThan(0.01);
+    expect(Math.abs(sagOf('permanent') - 2)).toBeLessThan(0.02);
+  });
+});
