@@ -2,12 +2,12 @@ import type { Ring } from './ring.js';
 
 /** Rings (boundaries anticlockwise, holes clockwise) laid out for depth queries: edges as x0 y0 x1 y1. */
 export interface Region {
-  readonly edges: Float64Array;
+  readonly edges: readonly number[];
   readonly convex: boolean;
   /** Three numbers an edge: its inward unit normal n and c, so that n·p - c is the distance of p on the inner side. */
-  readonly lines: Float64Array;
+  readonly lines: readonly number[];
   /** Left, bottom, right, top. */
-  readonly box: Float64Array;
+  readonly box: readonly number[];
   /** Which edges can be nearest, cell by cell over the box; made once a region that is not convex has been asked often. */
   cells: Cells | null;
   asked: number;
@@ -27,32 +27,35 @@ interface Cells {
 const CELLS = 24;
 const CELLS_PAY = 200;
 
-/** A region of one convex ring, or of any set of rings. */
+/** A region of one convex ring, or of any set of rings. Plain arrays: hundreds of thousands are made, and typed ones are slow to make. */
 export function regionOf(rings: readonly Ring[], convex: boolean): Region {
   const edges: number[] = [];
-  const box = new Float64Array([Infinity, Infinity, -Infinity, -Infinity]);
+  const lines: number[] = [];
+  let left = Infinity;
+  let bottom = Infinity;
+  let right = -Infinity;
+  let top = -Infinity;
   for (const ring of rings) {
     const n = ring.length;
     for (let i = 0; i < n; i += 2) {
-      const j = (i + 2) % n;
-      const [x0, y0, x1, y1] = [ring[i]!, ring[i + 1]!, ring[j]!, ring[j + 1]!];
-      if (x0 === x1 && y0 === y1) continue;
+      const j = i + 2 === n ? 0 : i + 2;
+      const x0 = ring[i]!;
+      const y0 = ring[i + 1]!;
+      const x1 = ring[j]!;
+      const y1 = ring[j + 1]!;
+      const dx = x1 - x0;
+      const dy = y1 - y0;
+      if (dx === 0 && dy === 0) continue;
+      const length = Math.sqrt(dx * dx + dy * dy);
       edges.push(x0, y0, x1, y1);
-      box[0] = Math.min(box[0]!, x0);
-      box[1] = Math.min(box[1]!, y0);
-      box[2] = Math.max(box[2]!, x0);
-      box[3] = Math.max(box[3]!, y0);
+      lines.push(-dy / length, dx / length, (dx * y0 - dy * x0) / length);
+      if (x0 < left) left = x0;
+      if (x0 > right) right = x0;
+      if (y0 < bottom) bottom = y0;
+      if (y0 > top) top = y0;
     }
   }
-  const lines = new Float64Array((edges.length / 4) * 3);
-  for (let i = 0, k = 0; i < edges.length; i += 4, k += 3) {
-    const [dx, dy] = [edges[i + 2]! - edges[i]!, edges[i + 3]! - edges[i + 1]!];
-    const length = Math.sqrt(dx * dx + dy * dy);
-    lines[k] = -dy / length;
-    lines[k + 1] = dx / length;
-    lines[k + 2] = (dx * edges[i + 1]! - dy * edges[i]!) / length;
-  }
-  return { edges: new Float64Array(edges), convex, lines, box, cells: null, asked: 0 };
+  return { edges, convex, lines, box: [left, bottom, right, top], cells: null, asked: 0 };
 }
 
 /**
@@ -130,14 +133,14 @@ function convexDepth(region: Region, x: number, y: number, clear: number): numbe
   return Math.max(0, clear - boundaryDistance(region.edges, x, y));
 }
 
-function generalDepth(e: Float64Array, x: number, y: number, clear: number): number {
+function generalDepth(e: readonly number[], x: number, y: number, clear: number): number {
   if (isInside(e, x, y)) return clear + boundaryDistance(e, x, y);
   if (clear === 0) return 0;
   return Math.max(0, clear - boundaryDistance(e, x, y));
 }
 
 /** By the parity of crossings of the edges with the ray to the right. */
-function isInside(e: Float64Array, x: number, y: number): boolean {
+function isInside(e: readonly number[], x: number, y: number): boolean {
   let inside = false;
   for (let i = 0; i < e.length; i += 4) {
     const y0 = e[i + 1]!;
@@ -148,7 +151,7 @@ function isInside(e: Float64Array, x: number, y: number): boolean {
   return inside;
 }
 
-function boundaryDistance(e: Float64Array, x: number, y: number): number {
+function boundaryDistance(e: readonly number[], x: number, y: number): number {
   let best = Infinity;
   for (let i = 0; i < e.length; i += 4) {
     const d = squaredDistance(e, i, x, y);
@@ -158,7 +161,7 @@ function boundaryDistance(e: Float64Array, x: number, y: number): number {
 }
 
 /** Squared distance of (x, y) from the edge at place i. */
-function squaredDistance(e: Float64Array, i: number, x: number, y: number): number {
+function squaredDistance(e: readonly number[], i: number, x: number, y: number): number {
   const px = x - e[i]!;
   const py = y - e[i + 1]!;
   const dx = e[i + 2]! - e[i]!;

@@ -64,7 +64,7 @@ function lowestFree(
   offer(lowX, highY);
   offer(highX, lowY);
   const edges: number[] = [];
-  const add = (e: Float64Array, dx: number, dy: number, clear: number, sign: number): void => {
+  const add = (e: readonly number[], dx: number, dy: number, clear: number, sign: number): void => {
     for (let k = 0; k < e.length; k += 4) {
       const [ux, uy] = [e[k + 2]! - e[k]!, e[k + 3]! - e[k + 1]!];
       const length = Math.hypot(ux, uy);

@@ -19,6 +19,7 @@ const MOST_NUMBERS = 16e6;
 export function noFitStore(budget: Budget): NoFitStore {
   let table: ((Region | undefined)[] | undefined)[] = [];
   let numbers = 0;
+  let most = 0;
   return {
     region(a, b) {
       // What was made in passing holds its own regions; of two such the later.
@@ -43,8 +44,10 @@ export function noFitStore(budget: Budget): NoFitStore {
         numbers = made.edges.length;
         row = undefined;
       }
+      if (a.id > most || b.id > most) most = Math.max(a.id, b.id) + 64;
       if (!row) {
-        row = [];
+        // As long as it may get: an array that grows by leaps becomes a dictionary, ten times as slow.
+        row = new Array<Region | undefined>(most + 1);
         table[a.id] = row;
       }
       row[b.id] = made;
