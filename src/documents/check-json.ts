@@ -87,7 +87,8 @@ export function checkReport(a: Assessment): CheckReport {
   };
 }
 
-const findingReport = (f: Finding): FindingReport => ({
+/** A finding as data, its sentence with it. */
+export const findingReport = (f: Finding): FindingReport => ({
   level: f.level,
   code: f.code,
   subject: f.subject,

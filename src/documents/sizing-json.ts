@@ -1,6 +1,6 @@
 import type { Finding } from '../model/finding.js';
-import { sayFinding } from '../model/findings/index.js';
 import type { SizeChoice } from '../model/sizing.js';
+import { findingReport } from './check-json.js';
 
 /** A sizing as data for scripts; masses in kg, null where not known. */
 export function sizingReport(sizing: {
@@ -23,14 +23,6 @@ export function sizingReport(sizing: {
       utilisation,
       rule,
     })),
-    findings: sizing.findings.map((f) => ({
-      level: f.level,
-      code: f.code,
-      subject: f.subject,
-      value: f.value,
-      limit: f.limit,
-      message: sayFinding(f),
-      kind: f.kind,
-    })),
+    findings: sizing.findings.map(findingReport),
   };
 }
