@@ -1,19 +1,19 @@
 import type { Job } from '../../model/job/index.js';
+import { FORCE_IN_N, KG_IN_LB, LENGTH_IN_MM } from '../../model/units.js';
 
 /**
- * US customary units for one SI unit. NIST SP 811 (2008), appendix B.8: 1 in = 25.4 mm, 1 ft = 0.3048 m exactly; 1 lb = 0.45359237 kg,
- * 1 lbf = 4.448222 N, 1 psi = 6894.757 Pa.
+ * US customary units for one SI unit; 1 psi = 6894.757 Pa (NIST SP 811 (2008), appendix B.8).
  */
 const CUSTOMARY: ReadonlyMap<string, readonly [unit: string, perUnit: number]> = new Map([
-  ['mm', ['in', 1 / 25.4]],
-  ['m', ['ft', 1 / 0.3048]],
-  ['mm²', ['in²', 1 / 25.4 ** 2]],
-  ['m²', ['ft²', 1 / 0.3048 ** 2]],
-  ['N', ['lbf', 1 / 4.4482216152605]],
-  ['kN', ['kip', 1 / 4.4482216152605]],
-  ['kg', ['lb', 1 / 0.45359237]],
+  ['mm', ['in', 1 / LENGTH_IN_MM.in]],
+  ['m', ['ft', 1000 / LENGTH_IN_MM.ft]],
+  ['mm²', ['in²', 1 / LENGTH_IN_MM.in ** 2]],
+  ['m²', ['ft²', (1000 / LENGTH_IN_MM.ft) ** 2]],
+  ['N', ['lbf', 1 / FORCE_IN_N.lbf]],
+  ['kN', ['kip', 1000 / FORCE_IN_N.kip]],
+  ['kg', ['lb', 1 / KG_IN_LB]],
   ['MPa', ['psi', 1e6 / 6894.757293168]],
-  ['kN/m²', ['lbf/ft²', (1000 / 4.4482216152605) * 0.3048 ** 2]],
+  ['kN/m²', ['lbf/ft²', (1000 / FORCE_IN_N.lbf) * (LENGTH_IN_MM.ft / 1000) ** 2]],
 ]);
 
 /** A number, or two as in 1219 x 610, with its unit. */

@@ -1,4 +1,5 @@
 import type { Job } from '../../model/job/index.js';
+import { FORCE_IN_N, KG_IN_LB, LENGTH_IN_MM } from '../../model/units.js';
 
 /** Numbers for people, in the job's units of output. Unknown is blank. Everything inside stays mm, N, kg, MPa, rad. */
 export interface Units {
@@ -44,10 +45,8 @@ function si(largest: number): Units {
 /** A length to saw to in mm, rounded down to a tenth. */
 export const sawMillimetres = (mm: number | null): string => fixed(down(mm, 0.1), 1);
 
-/** NIST SP 811 (2008), appendix B.8: 1 lbf = 4.448222 N, 1 lb = 0.45359237 kg; 1 in = 25.4 mm exactly. */
-export const NEWTON_PER_LBF = 4.4482216152605;
-const KG_PER_LB = 0.45359237;
-const MM_PER_INCH = 25.4;
+export const NEWTON_PER_LBF = FORCE_IN_N.lbf;
+const MM_PER_INCH = LENGTH_IN_MM.in;
 /** The finest division of a carpenter's rule. */
 const PARTS = 32;
 
@@ -71,7 +70,7 @@ function us(largest: number, fractions: boolean): Units {
     cut: (mm) => length(down(mm, fractions ? MM_PER_INCH / PARTS : MM_PER_INCH / 1000)),
     force: (n) => signed(n === null ? null : n / per, decimals),
     sense: (n) => senseOf(signed(n === null ? null : n / per, decimals)),
-    mass: (kg) => fixed(kg === null ? null : kg / KG_PER_LB, 3),
+    mass: (kg) => fixed(kg === null ? null : kg / KG_IN_LB, 3),
     area: (mm2) => fixed(mm2 === null ? null : mm2 / MM_PER_INCH ** 2, 2),
     angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
   };
