@@ -33,10 +33,14 @@ export function wrapText(pen: Pen, text: string, width: number, style: TextStyle
   const lines: string[] = [];
   for (const paragraph of text.split('\n')) {
     let line = '';
+    let long = 0; // the line's width as far as it is known
     for (const word of paragraph.split(' ')) {
       const joined = line === '' ? word : `${line} ${word}`;
-      if (pen.widthOf(joined, style) <= width) {
+      const guess = line === '' ? pen.widthOf(word, style) : long + addedWidth(pen, line, word, style);
+      const fits = Math.abs(guess - width) > SURE ? guess < width : pen.widthOf(joined, style) <= width;
+      if (fits) {
         line = joined;
+        long = guess;
         continue;
       }
       if (line !== '') lines.push(line);
@@ -46,10 +50,21 @@ export function wrapText(pen: Pen, text: string, width: number, style: TextStyle
         lines.push(head);
         line = line.slice(head.length);
       }
+      long = pen.widthOf(line, style);
     }
     lines.push(line);
   }
   return lines;
+}
+
+/** Nearer than this to the limit a line is laid out as a whole, mm: far above what adding widths up can be off. */
+const SURE = 0.5;
+
+/** By how much a word lengthens a line, mm: a face moves letters towards the spaces beside them, and each such pair is known by its width alone. */
+function addedWidth(pen: Pen, line: string, word: string, style: TextStyle): number {
+  const last = line.slice(-1);
+  const beside = pen.widthOf(`${last} `, style) - pen.widthOf(last, style) - pen.widthOf(' ', style);
+  return pen.widthOf(` ${word}`, style) + beside;
 }
 
 function headThatFits(pen: Pen, word: string, width: number, style: TextStyle): string {

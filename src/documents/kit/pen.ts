@@ -1,4 +1,5 @@
 import PDFDocument from 'pdfkit';
+import { type Face, type Faces, facesOf, MOST_RUNS, type ReadFace } from './faces.js';
 import type { Fonts } from './fonts.js';
 import { type Box, corners, type Point } from './geometry2.js';
 import { INK, LINE, SIZE } from './ink.js';
@@ -43,12 +44,10 @@ export interface PenOptions {
   readonly date: string | null;
 }
 
-type Face = 'regular' | 'bold' | 'fallback' | 'fallbackBold';
-
 /** The parts of pdfkit that its types leave out. */
 interface Inner {
   readonly _font: {
-    readonly font: { hasGlyphForCodePoint(code: number): boolean };
+    readonly font: ReadFace;
     layoutRun(text: string, features?: unknown): unknown;
   };
   info: Record<string, unknown>;
@@ -62,14 +61,14 @@ export class Pen {
   readonly placed: PlacedText[] = [];
   private readonly doc: PDFKit.PDFDocument;
   private readonly chunks: Uint8Array[] = [];
-  private readonly covered = new Map<string, boolean>();
-  private readonly widths = new Map<string, number>();
+  private readonly faces: Faces;
   private readonly taken = new Set<Face>();
   private readonly ended: Promise<void>;
   private count = 0;
   private current = -1;
 
   constructor(options: PenOptions) {
+    this.faces = facesOf(options.fonts);
     const created = new Date(`${options.date ?? '1980-01-01'}T00:00:00Z`);
     this.doc = new PDFDocument({
       autoFirstPage: false,
@@ -91,7 +90,7 @@ export class Pen {
     if (options.date === null)
       Object.defineProperty((this.doc as unknown as Inner).info, 'CreationDate', { enumerable: false });
     for (const face of ['regular', 'bold', 'fallback', 'fallbackBold'] as const)
-      this.doc.registerFont(face, options.fonts[face] as unknown as string);
+      this.doc.registerFont(face, (this.faces.read.get(face) ?? options.fonts[face]) as unknown as string);
     this.doc.on('data', (chunk: Uint8Array) => this.chunks.push(chunk));
     this.ended = new Promise((resolve) => {
       this.doc.on('end', () => resolve());
@@ -131,11 +130,11 @@ export class Pen {
     let sum = 0;
     for (const run of this.runs(text, style.bold ?? false)) {
       const key = `${run.face} ${run.text}`;
-      let width = this.widths.get(key);
+      let width = this.faces.widths.get(key);
       if (width === undefined) {
         this.take(run.face);
         width = this.doc.fontSize(1000).widthOfString(run.text, FEATURES);
-        this.widths.set(key, width);
+        this.faces.widths.set(key, width);
       }
       sum += width;
     }
@@ -156,7 +155,7 @@ export class Pen {
     for (const run of this.runs(text, style.bold ?? false)) {
       this.take(run.face);
       this.doc.text(run.text, at * POINTS, y * POINTS, { ...FEATURES, lineBreak: false, baseline: 'alphabetic' });
-      at += this.widths.get(`${run.face} ${run.text}`)! * (size / 1000 / POINTS);
+      at += this.faces.widths.get(`${run.face} ${run.text}`)! * (size / 1000 / POINTS);
     }
     this.doc.restore();
     return width;
@@ -278,14 +277,15 @@ export class Pen {
     if (this.taken.has(face)) return;
     this.taken.add(face);
     const font = (this.doc as unknown as Inner)._font;
+    const { read, runs } = this.faces;
+    if (!read.has(face)) read.set(face, font.font);
     const layOut = font.layoutRun.bind(font);
-    const known = new Map<string, unknown>();
     font.layoutRun = (text, features) => {
-      const key = features === undefined ? ` ${text}` : text;
-      let run = known.get(key);
+      const key = `${face}${features === undefined ? '\n' : ' '}${text}`;
+      let run = runs.get(key);
       if (run === undefined) {
         run = layOut(text, features);
-        known.set(key, run);
+        if (runs.size < MOST_RUNS) runs.set(key, run);
       }
       return run;
     };
@@ -293,11 +293,11 @@ export class Pen {
 
   private has(face: Face, char: string): boolean {
     const key = face + char;
-    let known = this.covered.get(key);
+    let known = this.faces.covered.get(key);
     if (known === undefined) {
       this.take(face);
       known = (this.doc as unknown as Inner)._font.font.hasGlyphForCodePoint(char.codePointAt(0)!);
-      this.covered.set(key, known);
+      this.faces.covered.set(key, known);
     }
     return known;
   }
