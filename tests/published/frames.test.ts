@@ -377,6 +377,13 @@ function bowed(s: UnitSystem, r: Rotation) {
   expect(result.residual).toBeLessThan(1e-13);
   const middle = heights.findIndex((h) => Math.abs(h / s.mm - l / 2) < 1e-6);
   const more = turnedBack(r, result.displacements.subarray(6 * middle, 6 * middle + 3))[0];
+  // Neighbours hand the same moment on, initial bow and all: within each element Kg acts on the whole bent line.
+  const largest = Math.max(...f.members.map((_, e) => bendingAt(result.endForces, 12 * e + 6)));
+  for (let e = 1; e < parts; e++)
+    for (const k of [4, 5])
+      expect(Math.abs(result.endForces[12 * (e - 1) + 6 + k] + result.endForces[12 * e + k]) / largest).toBeLessThan(
+        1e-6,
+      );
   const moment = Math.max(...f.members.map((_, e) => bendingAt(result.endForces, 12 * e + 6)));
   return { more, moment };
 }

@@ -73,6 +73,17 @@ describe('a pinned tripod', () => {
     expect(Math.hypot(a.momentY, a.momentZ)).toBeCloseTo((1.35 * w * 0.6 * 500 ** 2) / 8, 6);
   });
 
+  it('is pulled by its own weight along the slope: half a leg above and below the middle (w L sin / 2)', () => {
+    const { solution } = run(tripod(), { analysis: { joints: 'pinned' } } as never);
+    const own = solution.cases.find((c) => c.name === 'self-weight')!;
+    const strut = inputOf(tripod(), jobWith({})).parts.struts[0];
+    const fall = (strut.mass! * G * 400) / 500 / 2;
+    const dead = solution.actions[0].find((a) => a.combination === '1.35 G')!;
+    // The foot carries the larger pressure: the middle's and half of the leg's own weight along it.
+    expect(dead.axial).toBeCloseTo(1.35 * (solution.cases[0].forces![0] + solution.cases[1].forces![0] - fall), 6);
+    expect(own.forces![0]).toBeLessThan(0);
+  });
+
   it('is stable: no lower load factor than its legs allow in a plane sway', () => {
     const { solution } = run(tripod(), pinned);
     expect(solution.buckling[0].factors[0]).toBeGreaterThan(10);
@@ -162,6 +173,52 @@ describe('second-order effects', () => {
     const second = analysed.solution.actions[0].find((a) => a.combination === '1.35 given, second order')!;
     expect(Math.hypot(second.momentY, second.momentZ)).toBeGreaterThan(Math.hypot(first.momentY, first.momentZ));
     expect(second.axial / first.axial).toBeCloseTo(1, 1);
+    // The imperfection lies either way.
+    const both = analysed.solution.actions[0].filter((a) => a.combination === '1.35 given, second order');
+    expect(both.length).toBe(2);
+  });
+
+  it('begin at 10 and stop at 3, no sooner and no later (EN 1993-1-1 5.2.1 (3), 5.2.2 (5))', () => {
+    const tenth = loaded(factor / 10, false).solution.buckling[0].design!;
+    const r = (alpha: number) => {
+      const load = (factor / 10) * (tenth / alpha);
+      return loaded(load, false).findings.find((f) => f.code === 'second-order' || f.code === 'buckling-low')?.code;
+    };
+    expect([10.1, 9.9, 3.03, 2.97].map(r)).toEqual([undefined, 'second-order', 'second-order', 'buckling-low']);
+  });
+
+  it('are judged with E0.05 / gammaM and 1 / (1 + kdef) of the permanent share (EN 1995-1-1 2.2.2, tables 2.3, 3.2, EN 338)', () => {
+    const c24 = { struts: { section: 'C24-22x45' }, analysis: { selfWeight: false } };
+    const share = (more: object): number => {
+      const { design, factors } = run(tripod([0, 0, -900]), { ...c24, ...more } as never).solution.buckling[0];
+      return design! / factors[0];
+    };
+    const e05 = 7400 / 11000 / 1.3;
+    expect(share({})).toBeCloseTo(e05 / 1.6, 9);
+    expect(share({ strength: { serviceClass: 2 } })).toBeCloseTo(e05 / 1.8, 9);
+    // Outdoors without a service class the weather's, 3: kdef 2.
+    expect(share({ use: 'outdoor', loads: { indoors: true } })).toBeCloseTo(e05 / 3, 9);
+    const people = { name: 'given', kind: 'imposed', nodes: [], misfit: [], direction: 'vertical' };
+    expect(share({ loads: { cases: [people] } })).toBeCloseTo(e05, 9);
+    // Half of the combination's load permanent: 1.35 x 900 beside 1.5 x 810.
+    const half = {
+      name: 'snow',
+      kind: 'snow',
+      nodes: [{ node: 'N0', force_N: [0, 0, -810] }],
+      misfit: [],
+      direction: 'vertical',
+    };
+    const both = run(tripod([0, 0, -900]), { ...c24, loads: { cases: [half] } } as never).solution.buckling;
+    const sum = both.find((b) => b.combination === '1.35 given + 1.5 snow')!;
+    expect(sum.design! / sum.factors[0]).toBeCloseTo(e05 / 1.3, 9);
+  });
+
+  it('stand beside Euler by strut, node to node with pinned ends', () => {
+    const r = run(tripod([0, 0, -900]), { struts: { section: 'C24-22x45' }, ...pinned } as never);
+    const { euler } = r.solution.buckling[0];
+    // N = 1.35 x 900 x 500 / (3 x 400) = 506.25 N in each leg of 500 mm; I = 45 x 22³ / 12 = 39,930 mm⁴; E = 7400 / 1.3 / 1.6.
+    const load = (Math.PI ** 2 * (7400 / 1.3 / 1.6) * ((45 * 22 ** 3) / 12)) / 500 ** 2;
+    expect(euler!.factor).toBeCloseTo(load / 506.25, 6);
   });
 
   it('remain a stop where the loads exceed what buckles it', () => {
@@ -461,6 +518,48 @@ describe('panels and pressures', () => {
     expect(moment(roof('ties'))).toBeGreaterThan(1000);
     expect(moment(roof('stand-offs'))).toBe(0);
   });
+
+  it.each([0, Math.PI / 2])(
+    'a level square gives each edge a triangle, bent by W L / 6, whichever way its section is rolled (%f rad)',
+    (roll) => {
+      // By hand: p a²/4 on each strut, simple beams between pins; 1.5 of it in the combination.
+      const [a, p] = [600, 0.8e-3];
+      const square = trussOf({
+        nodes: [
+          [0, 0, 0],
+          [a, 0, 0],
+          [a, a, 0],
+          [0, a, 0],
+        ],
+        edges: [
+          [0, 1],
+          [1, 2],
+          [2, 3],
+          [3, 0],
+        ],
+        faces: [[0, 1, 2, 3]],
+        panels: true,
+        supports: [0, 1, 2, 3].map((n) => [n, 'xyz'] as const),
+      });
+      const rolled = { ...square, members: square.members.map((m) => ({ ...m, roll })) };
+      const snow = {
+        name: 'snow',
+        kind: 'snow',
+        pressure_kN_per_m2: 0.8,
+        direction: 'vertical',
+        nodes: [],
+        misfit: [],
+      };
+      const r = run(rolled, { ...pinned, struts: { section: 'C24-22x45' }, loads: { cases: [snow] } } as never);
+      for (const own of r.solution.actions) {
+        const most = own.map((x) => Math.hypot(x.momentY, x.momentZ)).reduce((m, x) => Math.max(m, x), 0);
+        // The spread is summed in 64 strips: their number to the power -2 off at most.
+        expect(Math.abs(most / ((1.5 * ((p * a * a) / 4) * a) / 6) - 1)).toBeLessThan(3e-4);
+        // The other direction stays straight.
+        expect(Math.min(...own.map((x) => Math.min(x.momentY, x.momentZ)))).toBeCloseTo(0, 6);
+      }
+    },
+  );
 });
 
 describe('temperature, lack of fit, self-stress', () => {
