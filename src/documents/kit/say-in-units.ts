@@ -13,12 +13,13 @@ const CUSTOMARY: ReadonlyMap<string, readonly [unit: string, perUnit: number]> =
   ['kN', ['kip', 1000 / FORCE_IN_N.kip]],
   ['kg', ['lb', 1 / KG_IN_LB]],
   ['MPa', ['psi', 1e6 / 6894.757293168]],
+  ['kg/m³', ['lb/ft³', (LENGTH_IN_MM.ft / 1000) ** 3 / KG_IN_LB]],
   ['kN/m²', ['lbf/ft²', (1000 / FORCE_IN_N.lbf) * (LENGTH_IN_MM.ft / 1000) ** 2]],
 ]);
 
 /** A number, or two as in 1219 x 610, with its unit. */
 const QUANTITY =
-  /(?<![\p{L}\d_.])(\d+(?:\.\d+)?)(?:( [x×] )(\d+(?:\.\d+)?))? (kN\/m²|mm²|m²|mm|m|MPa|kN|N|kg)(?![\p{L}\d³/²])/gu;
+  /(?<![\p{L}\d_.])(\d+(?:\.\d+)?)(?:( [x×] )(\d+(?:\.\d+)?))? (kN\/m²|kg\/m³|mm²|m²|mm|m|MPa|kN|N|kg)(?![\p{L}\d³/²])/gu;
 
 /**
  * A sentence in the units of a job's papers: as it is in SI, each quantity converted in US customary units, to as many figures as

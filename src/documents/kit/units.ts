@@ -49,6 +49,8 @@ export const NEWTON_PER_LBF = FORCE_IN_N.lbf;
 const MM_PER_INCH = LENGTH_IN_MM.in;
 /** The finest division of a carpenter's rule. */
 const PARTS = 32;
+/** What is asked for in more digits of a mm than this is no length for a rule: no fraction tells 0.03 mm from nought. */
+const RULE_DIGITS = 1;
 
 /** Share of a step by which a length may miss it and still count as on it: what sums and conversions leave. */
 const ON_STEP = 1e-6;
@@ -60,7 +62,11 @@ function us(largest: number, fractions: boolean): Units {
   const per = NEWTON_PER_LBF * (kip ? 1000 : 1);
   const decimals = decimalsFor(largest / per);
   const length = (mm: number | null, digits = 1): string =>
-    mm === null ? '' : fractions ? inchFraction(mm / MM_PER_INCH) : fixed(mm / MM_PER_INCH, digits + 2);
+    mm === null
+      ? ''
+      : fractions && digits <= RULE_DIGITS
+        ? inchFraction(mm / MM_PER_INCH)
+        : fixed(mm / MM_PER_INCH, digits + 2);
   return {
     lengthUnit: 'in',
     forceUnit: kip ? 'kip' : 'lbf',

@@ -1,5 +1,6 @@
 import type { BucklingResult } from '../../model/solution.js';
 import type { Flow } from '../kit/flow.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { fixed, type Units } from '../kit/units.js';
 import type { PackRecords } from '../records.js';
 import { MECHANISMS_SHOWN } from './pictures/mechanisms.js';
@@ -10,7 +11,7 @@ export function checksSection(flow: Flow, records: PackRecords, units: Units): v
   const { equilibrium, solution, checked, notChecked, forms, job } = records;
   if (equilibrium)
     flow.paragraph(
-      `Equilibrium of the case “${equilibrium.case}”: the largest residual at a node is ${plain(equilibrium.maxResidual)} N, ${plain(equilibrium.maxRelative)} of the largest force there (a warning from ${job.fit.residualWarn}, a stop from ${job.fit.residualStop}).`,
+      `Equilibrium of the case “${equilibrium.case}”: the largest residual at a node is ${sayInUnits(`${plain(equilibrium.maxResidual)} N`, job.output)}, ${plain(equilibrium.maxRelative)} of the largest force there (a warning from ${job.fit.residualWarn}, a stop from ${job.fit.residualStop}).`,
     );
   if (forms.length > 0) {
     const worst = forms.reduce((most, form) => (form.flatness > most.flatness ? form : most));
@@ -53,7 +54,7 @@ function bucklingWords(flow: Flow, { combination, factors, strut, design, euler 
   );
 }
 
-function reciprocalWords(flow: Flow, { reciprocal }: PackRecords): void {
+function reciprocalWords(flow: Flow, { reciprocal, job }: PackRecords): void {
   if (!reciprocal?.counts) return;
   const { dimension, selfStressStates, reached } = reciprocal.counts;
   if (dimension !== null)
@@ -65,7 +66,7 @@ function reciprocalWords(flow: Flow, { reciprocal }: PackRecords): void {
   const { residuals } = reciprocal;
   if (residuals)
     flow.paragraph(
-      `Of the diagram, the largest angle between a strut and its polygon’s normal is ${plain((residuals.maxAngle * 180) / Math.PI)}°, and the worst node’s polyhedron closes to ${plain(residuals.maxClosure)} N.`,
+      `Of the diagram, the largest angle between a strut and its polygon’s normal is ${plain((residuals.maxAngle * 180) / Math.PI)}°, and the worst node’s polyhedron closes to ${sayInUnits(`${plain(residuals.maxClosure)} N`, job.output)}.`,
     );
 }
 

@@ -2,10 +2,11 @@ import type { Material } from '../../model/material.js';
 import type { Parts } from '../../model/parts.js';
 import { materialRow, type ValueRow } from '../catalogue-rows.js';
 import type { Flow } from '../kit/flow.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import type { PackRecords } from '../records.js';
 
 /** What struts, hubs and panels are made of: every value that the checks rest on, with where it comes from. */
-export function materialsSection(flow: Flow, { parts }: PackRecords): void {
+export function materialsSection(flow: Flow, { parts, job }: PackRecords): void {
   const materials = usedMaterials(parts);
   if (materials.length === 0) return;
   flow.heading('Materials, and where their values come from', 40);
@@ -14,7 +15,7 @@ export function materialsSection(flow: Flow, { parts }: PackRecords): void {
   );
   for (const material of materials) {
     flow.paragraph(material.title, { bold: true });
-    for (const line of sourcedValues(material)) flow.paragraph(line);
+    for (const line of sourcedValues(material)) flow.paragraph(sayInUnits(line, job.output));
   }
 }
 

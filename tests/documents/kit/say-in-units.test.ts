@@ -12,6 +12,7 @@ it.each([
   ['carries 4.448 N, or 4.448 kN', 'carries 1 lbf, or 1 kip'],
   ['at most 6.895 MPa', 'at most 1000 psi'],
   ['under 1 kN/m² on 1 m²', 'under 20.9 lbf/ft² on 10.8 ft²'],
+  ['616 kg/m³', '38.5 lb/ft³'],
   ['0.454 kg and 0.305 m', '1 lb and 1 ft'],
 ])('%s', (si, customary) => {
   expect(us(si)).toBe(customary);

@@ -31,6 +31,11 @@ describe('units of output', () => {
     ]);
     for (let k = 0; k < 3200; k++) expect(fractions((k * 25.4) / 32)).toBe(inchFraction(k / 32));
   });
+  it('keeps decimals where a fraction would say nothing', () => {
+    const job = defaultJob();
+    const { length } = unitsOf({ ...job, output: { ...job.output, units: 'US', fractions: true } }, 0);
+    expect([length(25.4), length(0.1, 2), length(0.0254, 3)]).toEqual(['1', '0.0039', '0.00100']);
+  });
   it('leaves unknown numbers blank and never writes minus nought', () => {
     expect(fixed(null, 1)).toBe('');
     expect(fixed(Number.NaN, 1)).toBe('');
