@@ -82,6 +82,15 @@ describe('a paper', () => {
     expect(textOf(written.bytes)).toContain('HOLD');
   });
 
+  it('says a long reason of a hold to its end, over as many lines as it takes', async () => {
+    const reason =
+      'S12: carries 1.34 of what it may under 1.35 G + 1.5 snow by compression with bending: give it a larger';
+    const { written } = await sample({}, [`${reason} section, shorten it, or waive it with a reason and a name`]);
+    expect(overlaps(written.placed)).toEqual([]);
+    expect(textOf(written.bytes).replace(/\s+/g, ' ')).toContain('or waive it with a reason and a name');
+    expect(textOf(written.bytes)).not.toContain('…');
+  });
+
   it('is the same bytes each time, and carries the date of issue alone', async () => {
     const [a, b] = [await sample(), await sample()];
     expect(Buffer.from(a.written.bytes).equals(Buffer.from(b.written.bytes))).toBe(true);
