@@ -4,6 +4,7 @@ import { openPackFolder } from '../machine/pack-folder.js';
 import { join } from '../machine/paths.js';
 import { openPool, type Pool } from '../machine/pool.js';
 import { buildOf } from '../machine/program.js';
+import { openSpool } from '../machine/spool.js';
 import { watchFiles } from '../machine/watch.js';
 import { VERSION } from '../model/version.js';
 import { cachedEach } from '../pipeline/cached-each.js';
@@ -104,8 +105,11 @@ async function writePack(
     await pack.abandon();
     return 'Stopped before the pack was whole; nothing of it was kept.';
   });
+  // Without a place for temporary files everything stays in memory.
+  const spool = await openSpool().catch(() => null);
   try {
     const manifest = await makePack(truss, job, {
+      ...(spool ? { spool } : {}),
       write: async (file, bytes) => void (await pack.write(file, bytes)),
       tell: how.tell,
       each: how.each,
@@ -124,5 +128,6 @@ async function writePack(
     throw error;
   } finally {
     how.stop.before(null);
+    await spool?.close();
   }
 }

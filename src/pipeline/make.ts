@@ -2,6 +2,7 @@ import { assemblyHtml } from '../documents/assembly/assembly-html.js';
 import { packChecks } from '../documents/pack-checks.js';
 import type { PackRecords } from '../documents/records.js';
 import { loadFonts } from '../machine/fonts.js';
+import { MEMORY_SPOOL, type Spool } from '../machine/memory-spool.js';
 import { loadPageCode } from '../machine/page-code.js';
 import { runHere } from '../machine/run-here.js';
 import type { Job } from '../model/job/index.js';
@@ -37,6 +38,8 @@ export interface MakeOptions {
   readonly inputs?: readonly Input[];
   /** The manifest of an earlier pack: only what has changed since is written and planned. */
   readonly since?: Since;
+  /** Where pieces wait for their bed; absent: in memory. */
+  readonly spool?: Spool;
 }
 
 /**
@@ -62,7 +65,7 @@ export async function makePack(truss: Truss, job: Job, options: MakeOptions): Pr
   );
 
   begin('Hubs');
-  const hubs = await makeHubs(assessed, run, writer, lineage);
+  const hubs = await makeHubs(assessed, run, writer, lineage, options.spool ?? MEMORY_SPOOL);
   const fonts = await loadFonts();
   begin('Gauges');
   const gauges = await writeGauges(

@@ -14,7 +14,7 @@ import type { Section } from '../../model/section.js';
 import { shapeGauge } from '../../shaping/gauge.js';
 import type { PackPart, PackWriter } from '../pack-writer.js';
 import { type PrintablePiece, writeBedFiles } from './beds.js';
-import { viewOf } from './piece-view.js';
+import { planOf, viewOf } from './piece-view.js';
 
 /** Where the gauge's files go, each with its last slash or empty. */
 export interface GaugeFolders {
@@ -62,22 +62,18 @@ export async function writeGauges(
     const digest = sha256(bytes);
     parts.push({ mark, kind: 'gauge', digest, form: digest, revision: job.revision, files: [file] });
     made.push({ section, piece, file });
+    const view = viewOf(piece);
+    const icon = pieceIcon(piece.positions, piece.triangles, deflateBlocks);
+    const number = `gauge ${section.name}`;
+    const object = packObject(piece.positions, piece.triangles, i + 1, mark, number, deflateBlocks, icon);
     pieces.push({
       mark,
       piece: '',
       box: piece.box,
       volume: piece.volume,
       mass: piece.volume * MM3_TO_M3 * density,
-      object: packObject(
-        piece.positions,
-        piece.triangles,
-        i + 1,
-        mark,
-        `gauge ${section.name}`,
-        deflateBlocks,
-        pieceIcon(piece.positions, piece.triangles, deflateBlocks),
-      ),
-      view: viewOf(piece),
+      footprint: view.footprint,
+      load: async () => ({ object, plan: planOf(view.plan) }),
     });
   }
   await writeBedFiles(pieces, job, `${folders.beds}gauge-`, writer);

@@ -1,4 +1,5 @@
 import type { Assessment, MadeHub, MadePiece } from '../../documents/records.js';
+import type { Spool } from '../../machine/memory-spool.js';
 import { materialNamed } from '../../model/catalogue/resolve.js';
 import type { Finding } from '../../model/finding.js';
 import { isWithheld, settleFindings } from '../../model/hold.js';
@@ -9,7 +10,7 @@ import type { ShapedHub, ShapedPiece } from '../../model/shaped.js';
 import { digestOf } from '../digests.js';
 import type { PackPart, PackWriter } from '../pack-writer.js';
 import type { Lineage } from '../since.js';
-import type { PrintablePiece } from './beds.js';
+import { type PrintablePiece, putAway } from './beds.js';
 import { type CanonicalHub, canonicalHub, formOf, placeHub } from './canonical-hub.js';
 import { PIECES, type ShapeHubInput, type ShapeHubOutput } from './shape-hub-task.js';
 
@@ -25,7 +26,13 @@ export interface MadeHubs {
 }
 
 /** Shapes every hub, writes the STL of each that is sound, and keeps only what papers and beds need of it. */
-export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, lineage: Lineage): Promise<MadeHubs> {
+export async function makeHubs(
+  a: Assessment,
+  run: Run,
+  writer: PackWriter,
+  lineage: Lineage,
+  spool: Spool,
+): Promise<MadeHubs> {
   const made = new Map<string, MadeHub>();
   const findings: Finding[] = [];
   const parts: PackPart[] = [];
@@ -68,8 +75,8 @@ export async function makeHubs(a: Assessment, run: Run, writer: PackWriter, line
           box: piece.box,
           volume: piece.volume,
           mass: piece.volume * MM3_TO_M3 * density,
-          object: output.objects[i]!,
-          view: output.views[i]!,
+          footprint: output.views[i]!.footprint,
+          load: await putAway(output.objects[i]!, output.views[i]!, spool),
         });
       }
       if (!keep) withheld.push(hub.mark);

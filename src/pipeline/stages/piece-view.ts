@@ -39,7 +39,7 @@ function outermost(positions: Float32Array): [number, number][] {
 
 const DIRECTIONS = 48;
 
-export const planOf = ({ plan: { width, depth, blocks } }: PieceView): PlanImage => ({
+export const planOf = ({ width, depth, blocks }: PieceView['plan']): PlanImage => ({
   width,
   depth,
   shade: inflateBlocks(blocks),
