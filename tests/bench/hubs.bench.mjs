@@ -118,7 +118,7 @@ async function stages(made, print) {
       viewOf(p);
     }
     times.push(clock());
-    if (warm) Object.keys(spent).forEach((key, k) => (spent[key] += times[k + 1] - times[k]));
+    if (warm) for (const [k, key] of Object.keys(spent).entries()) spent[key] += times[k + 1] - times[k];
   }
   const ms = (key) => (spent[key] / made.length).toFixed(1);
   print(

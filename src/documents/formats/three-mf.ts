@@ -1,3 +1,4 @@
+import { AsciiWriter } from './ascii-writer.js';
 import { type DeflateBlocks, type Packed, packText, zip, zipEntry } from './zip.js';
 
 /**
@@ -35,17 +36,40 @@ export function packObject(
   deflate: DeflateBlocks,
   icon: Uint8Array | null = null,
 ): PackedObject {
-  const text: string[] = [
+  // Names may hold any character: the head is joined on as text.
+  const head =
     `<object id="${id}" type="model"${icon ? ` thumbnail="/${iconPath(id)}"` : ''} name="${escapeXml(name)}" ` +
-      `partnumber="${escapeXml(partNumber)}"><mesh><vertices>\n`,
-  ];
+    `partnumber="${escapeXml(partNumber)}"><mesh><vertices>\n`;
+  const body = new AsciiWriter();
   for (let i = 0; i < positions.length; i += 3)
-    text.push(`<vertex x="${say(positions[i]!)}" y="${say(positions[i + 1]!)}" z="${say(positions[i + 2]!)}"/>\n`);
-  text.push('</vertices><triangles>\n');
+    body
+      .text('<vertex x="')
+      .decimal(positions[i]!)
+      .text('" y="')
+      .decimal(positions[i + 1]!)
+      .text('" z="')
+      .decimal(positions[i + 2]!)
+      .text('"/>\n');
+  body.text('</vertices><triangles>\n');
   for (let i = 0; i < triangles.length; i += 3)
-    text.push(`<triangle v1="${triangles[i]}" v2="${triangles[i + 1]}" v3="${triangles[i + 2]}"/>\n`);
-  text.push('</triangles></mesh></object>\n');
-  return { id, name, partNumber, icon, ...packText(text.join(''), deflate) };
+    body
+      .text('<triangle v1="')
+      .whole(triangles[i]!)
+      .text('" v2="')
+      .whole(triangles[i + 1]!)
+      .text('" v3="')
+      .whole(triangles[i + 2]!)
+      .text('"/>\n');
+  body.text('</triangles></mesh></object>\n');
+  return { id, name, partNumber, icon, ...packText(joined(head, body.done()), deflate) };
+}
+
+function joined(head: string, body: Uint8Array): Uint8Array {
+  const start = new TextEncoder().encode(head);
+  const out = new Uint8Array(start.length + body.length);
+  out.set(start);
+  out.set(body, start.length);
+  return out;
 }
 
 const iconPath = (id: number): string => `3D/Thumbnails/object-${id}.png`;
