@@ -264,7 +264,7 @@ function reduceSheets(
 }
 
 /** Tries at one number of sheets. */
-const MOST_TRIES = 40;
+const MOST_TRIES = 400;
 
 /** The layout without one of its sheets, whose pieces lie anywhere on the others; null: they cannot. */
 function without(layout: Layout, drop: number, random: Random, budget: Budget): Layout | null {
