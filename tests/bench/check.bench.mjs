@@ -42,7 +42,8 @@ function jobOf(n) {
 export async function run(print) {
   print('| struts | cases | check | lowest load factor with design stiffness | findings |');
   print('|---|---|---|---|---|');
-  for (const n of [5, 8, 25]) {
+  // 9 bays make 577 struts: five cases and buckling are to take less than 3,000 ms.
+  for (const n of [5, 9, 25]) {
     const { truss, job, struts } = jobOf(n);
     const before = process.cpuUsage();
     const report = await check(truss, job);
