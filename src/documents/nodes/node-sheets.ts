@@ -20,7 +20,7 @@ export async function nodeSheets(records: PackRecords, fonts: Fonts): Promise<Wr
   let area = paper.addSheet({
     title: 'Nodes',
     instruction:
-      'Hold the printed node as in its picture and check each socket’s mark before gluing. Azimuth: anticlockwise from x in plan; elevation: up from level; setback: from the node to the stop; depth: from the stop to the mouth.',
+      'Hold the printed node as in its picture and check each socket’s mark before gluing. Azimuth: anticlockwise from x in plan; elevation: up from level; setback: from the node to the stop; depth: from the stop to the mouth. Least section: of the plastic behind a strut or across the core, as a multiple of the section of its sleeve.',
   });
   const diagram = records.reciprocal?.diagram ?? null;
   const polyhedra = new Map((diagram?.nodes ?? []).map((node) => [node.mark, node]));
