@@ -5,7 +5,7 @@ import type { Spool } from './memory-spool.js';
 
 /** A spool in a file of its own among the system's temporary files; nobody else sees it, and closing it takes it away. */
 export async function openSpool(): Promise<Spool & { close(): Promise<void> }> {
-  const folder = await mkdtemp(join(tmpdir(), 'strutwright-'));
+  const folder = await mkdtemp(join(tmpdir(), 'strutwright-spool-'));
   const path = join(folder, 'spool');
   let file: FileHandle;
   try {

@@ -6,7 +6,7 @@ import { openSpool } from '../../src/machine/spool.js';
 import { seededRandom } from '../../src/maths/random.js';
 
 it('gives back what was put into it, in any order and more than once, and leaves nothing behind', async () => {
-  const before = readdirSync(tmpdir()).filter((n) => n.startsWith('strutwright-'));
+  const before = readdirSync(tmpdir()).filter((n) => n.startsWith('strutwright-spool-'));
   const file = await openSpool();
   for (const spool of [MEMORY_SPOOL, file]) {
     const random = seededRandom(3);
@@ -18,6 +18,6 @@ it('gives back what was put into it, in any order and more than once, and leaves
     for (const i of [39, 0, 7, 20, 20]) expect(Buffer.from(await back[i]!()).equals(Buffer.from(all[i]!))).toBe(true);
   }
   await file.close();
-  const after = readdirSync(tmpdir()).filter((n) => n.startsWith('strutwright-'));
+  const after = readdirSync(tmpdir()).filter((n) => n.startsWith('strutwright-spool-'));
   expect(after.filter((n) => !before.includes(n))).toEqual([]);
 });
