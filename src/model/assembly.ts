@@ -50,10 +50,13 @@ export interface BenchUnit {
   readonly hubs: readonly string[];
   readonly struts: readonly string[];
   readonly mass_kg: number;
+  /** Long and short side over the hubs' outsides. */
   readonly size_mm: readonly [number, number];
   readonly throughDoor: boolean;
   readonly inVan: boolean;
   readonly people: number;
+  /** Whether the people of the job are enough to lift it. */
+  readonly lifted: boolean;
 }
 
 export interface Bag {

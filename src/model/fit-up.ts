@@ -7,10 +7,10 @@ export interface FitUp {
   readonly samples: number;
   /** Share of seeded samples in which every loop closes within the play. */
   readonly chance: number;
-  /** 1 - sum over loops of the chance that it alone does not close, for normal errors; loops that share struts share their play, so the sampled chance can be lower. */
+  /** A share of all cases that closes at least: a bound that holds whatever the loops share, by Boole's inequality over the struts. */
   readonly chanceBound: number;
   readonly wanted: number;
-  /** Tolerance of the cut length with which that sum just reaches the wanted chance, mm; null: not even with perfect cuts. */
+  /** Widest tolerance of the cut length with which the wanted share of seeded samples closes, mm; null: not even with perfect cuts. */
   readonly cutNeeded_mm: number | null;
   /** Node that the errors move most: standard deviation, mm. */
   readonly movedMost: { readonly node: string; readonly deviation_mm: number } | null;
@@ -24,6 +24,8 @@ export interface StrutFit {
   readonly play_mm: number;
   /** Share of the play that two standard deviations of its worst loop ask of it; 0: in no loop. */
   readonly share: number;
+  /** Its budget: play that it needs for the wanted chance, mm, when every strut has that much of its own; 0: in no loop. */
+  readonly needed_mm: number;
   /** Standard deviation of the force that is locked in where nothing gives but the struts, N. */
   readonly locked_N: number;
   /** Standard deviation of the sideways miss at its far end from the sockets' angles, mm, and what it can take. */

@@ -24,8 +24,17 @@ describe('a table of measurements', () => {
     expect(faults[3]!.what).toContain('is no measurement');
   });
 
-  it.each(['0', '-3', 'Infinity', 'NaN', '1e999'])('%s is no length', (value) => {
-    expect(read(`mark,length_mm\nS01,${value}\n`).faults.map((f) => f.line)).toEqual([2]);
+  it.each(['0', '-3', 'Infinity', 'NaN', '1e999', '0x10', '0b11', '0o17', '1_000', '1 2', ''])(
+    '%s is no length',
+    (value) => {
+      expect(read(`mark,length_mm\nS01,${value}\n`).faults.map((f) => f.line)).toEqual([2]);
+    },
+  );
+
+  it('takes a sign, a power of ten and a bare point', () => {
+    expect([...read('mark,length_mm\nS01,+4.005e2\nS02,.5\nS03,12.\n').measured!.lengths.values()]).toEqual([
+      400.5, 0.5, 12,
+    ]);
   });
 
   it('refuses a table without those columns, and one that measures nothing', () => {

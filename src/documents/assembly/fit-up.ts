@@ -6,7 +6,8 @@ import type { PackRecords } from '../records.js';
 export function fitUpCsv(records: PackRecords): Uint8Array {
   const fits = new Map((records.fitUp?.struts ?? []).map((s) => [s.mark, s]));
   const of =
-    (key: 'deviation_mm' | 'play_mm' | 'share' | 'locked_N' | 'sideways_mm' | 'aside_mm') => (s: { mark: string }) =>
+    (key: 'deviation_mm' | 'play_mm' | 'share' | 'locked_N' | 'sideways_mm' | 'aside_mm' | 'needed_mm') =>
+    (s: { mark: string }) =>
       fits.get(s.mark)?.[key] ?? null;
   return writeCsv(
     [
@@ -17,6 +18,7 @@ export function fitUpCsv(records: PackRecords): Uint8Array {
       { name: 'locked_N', decimals: DECIMALS.force, value: of('locked_N') },
       { name: 'sideways_mm', decimals: DECIMALS.length, value: of('sideways_mm') },
       { name: 'aside_mm', decimals: DECIMALS.length, value: of('aside_mm') },
+      { name: 'play_needed_mm', decimals: DECIMALS.length, value: of('needed_mm') },
     ],
     records.parts.struts,
     records.job.output.csv,

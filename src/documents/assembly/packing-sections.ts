@@ -78,7 +78,7 @@ export function packingSections(paper: Paper, records: PackRecords, units: Units
           value: (u) => `${units.length(u.size_mm[0], 0)} × ${units.length(u.size_mm[1], 0)}`,
         },
         { head: `Mass\n${units.massUnit}`, align: 'right', value: (u) => units.mass(u.mass_kg) },
-        { head: 'People', align: 'right', value: (u) => String(u.people) },
+        { head: 'People', align: 'right', value: (u) => (u.lifted ? String(u.people) : `${u.people}: too many`) },
         { head: 'Through the door', value: (u) => (u.throughDoor ? 'yes' : 'no') },
         { head: 'In the van', value: (u) => (u.inVan ? 'yes' : 'no') },
         { head: 'Hubs', wraps: true, value: (u) => u.hubs.join(', ') },

@@ -30,9 +30,12 @@ export function benchUnits(
     for (const n of nodes) taken.add(n);
     const x = perpendicular(form.normal);
     const y = normalise(cross(form.normal, x));
+    const out = nodes.map((n) => setting.roomAt(n)?.reach ?? 0);
     const size = least(
       nodes.map((n) => subtract(topology.truss.nodes[n]!.at, form.origin)).map((p) => [dot(p, x), dot(p, y)] as const),
+      out,
     );
+    const thick = 2 * Math.max(...out);
     const mass = nodes.reduce((sum, n) => sum + setting.hubMass[n]!, 0) + links.reduce((sum, l) => sum + l.mass, 0);
     const [short, long] = size;
     units.push({
@@ -42,16 +45,17 @@ export function benchUnits(
       struts: links.map((l) => topology.truss.members[l.strut]!.mark),
       mass_kg: mass,
       size_mm: [long, short],
-      throughDoor: short <= Math.max(...job.assembly.door_mm),
-      inVan: fits(long, short, job.assembly.van_mm),
+      throughDoor: short <= Math.max(...job.assembly.door_mm) && thick <= Math.min(...job.assembly.door_mm),
+      inVan: fits([long, short, thick], job.assembly.van_mm),
       people: Math.max(1, Math.ceil(mass / job.assembly.lift_kg)),
+      lifted: Math.ceil(mass / job.assembly.lift_kg) <= job.assembly.people,
     });
   }
   return units;
 }
 
-/** [short, long] sides of the least rectangle round points of a plane, by every edge direction of the point pairs. */
-function least(points: readonly (readonly [number, number])[]): readonly [number, number] {
+/** [short, long] sides of the least rectangle round circles in a plane, of those along each line from one middle to the next. */
+function least(points: readonly (readonly [number, number])[], radii: readonly number[]): readonly [number, number] {
   let best: readonly [number, number] = [Number.POSITIVE_INFINITY, Number.POSITIVE_INFINITY];
   for (let i = 0; i < points.length; i++) {
     const [a, b] = [points[i]!, points[(i + 1) % points.length]!];
@@ -59,17 +63,16 @@ function least(points: readonly (readonly [number, number])[]): readonly [number
     const [c, s] = [Math.cos(turn), Math.sin(turn)];
     const us = points.map(([px, py]) => c * px + s * py);
     const vs = points.map(([px, py]) => c * py - s * px);
-    const sides = [Math.max(...us) - Math.min(...us), Math.max(...vs) - Math.min(...vs)].sort((p, q) => p - q) as [
-      number,
-      number,
-    ];
+    const extent = (at: readonly number[]): number =>
+      Math.max(...at.map((p, k) => p + radii[k]!)) - Math.min(...at.map((p, k) => p - radii[k]!));
+    const sides = [extent(us), extent(vs)].sort((p, q) => p - q) as [number, number];
     if (sides[0] * sides[1] < best[0] * best[1]) best = sides;
   }
   return best;
 }
 
-/** Lies flat in the van or stands against its side. */
-function fits(long: number, short: number, van: readonly [number, number, number]): boolean {
-  const [length, width, height] = van;
-  return (long <= length && short <= width) || (long <= length && short <= height);
-}
+/** Goes into the van along its sides, whichever way it lies or stands. */
+const fits = (size: readonly number[], van: readonly [number, number, number]): boolean => {
+  const [room, sides] = [van, size].map((list) => [...list].sort((a, b) => b - a));
+  return sides!.every((side, k) => side <= room![k]!);
+};

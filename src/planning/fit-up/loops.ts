@@ -29,43 +29,58 @@ export function capacity(loop: Loop, play: ArrayLike<number>): number {
   return sum;
 }
 
-/** Rounds of projecting between the loops' conditions and the play's box; past these the sample counts as not closed. */
-const ROUNDS = 12;
+/** Rounds of projecting between the loops' conditions and the play's box; a sample that is still open then counts as not closed. */
+const ROUNDS = 40;
+/** Steps on the conditions go beyond them by this factor (relaxation below 2 still meets: Agmon, Canad. J. Math. 6 (1954) 382-392). */
+const BEYOND = 1.7;
 /** A loop counts as closed when its miss is below this share of what its play makes up. */
 const CLOSED = 1e-3;
 
-/** Tells whether errors e can be taken up: some p with |p_i| <= play_i and S' (e + p) = 0. */
+/**
+ * Tells whether errors e can be taken up: some p with |p_i| <= play_i and S' (e + p) = 0. By projecting in turn on the
+ * conditions and on the box (von Neumann's alternating projections: both are convex, so they meet where the sets do), until all
+ * loops are closed or some combination y of them proves that they cannot be: y' S' e > sum |S y|_i play_i.
+ */
 export function closer(loops: readonly Loop[], play: Float64Array): (e: Float64Array) => boolean {
   const capacities = loops.map((l) => capacity(l, play));
-  const correct = projector(loops, play.length);
+  const correction = corrector(loops, play.length);
   const p = new Float64Array(play.length);
-  const misses = new Float64Array(loops.length);
+  const open = new Float64Array(loops.length);
+  const step = new Float64Array(play.length);
   return (e) => {
     // Sufficient: each strut's play takes up its own error. Settles nearly every sample that closes.
     if (e.every((v, i) => Math.abs(v) <= play[i]!)) return true;
     // Necessary, loop by loop, and for a single loop sufficient: settles nearly every sample that does not close.
-    if (loops.some((l, k) => Math.abs(miss(l, e)) > capacities[k]!)) return false;
+    const own = loops.map((l) => miss(l, e));
+    if (own.some((m, k) => Math.abs(m) > capacities[k]!)) return false;
     if (loops.length <= 1) return true;
-    // Projecting in turn on S' (e + p) = 0 and on the box (von Neumann's alternating projections): both are convex, so they meet where the sets do.
     for (let i = 0; i < p.length; i++) p[i] = Math.min(play[i]!, Math.max(-play[i]!, -e[i]!));
     for (let round = 0; round < ROUNDS; round++) {
-      let open = false;
+      let closed = true;
       loops.forEach((l, k) => {
-        misses[k] = miss(l, e) + miss(l, p);
-        if (Math.abs(misses[k]!) > CLOSED * capacities[k]!) open = true;
+        open[k] = own[k]! + miss(l, p);
+        if (Math.abs(open[k]!) > CLOSED * capacities[k]!) closed = false;
       });
-      if (!open) return true;
-      correct(misses, p);
-      for (let i = 0; i < p.length; i++) p[i] = Math.min(play[i]!, Math.max(-play[i]!, p[i]!));
+      if (closed) return true;
+      const asked = correction(open, own, step);
+      let most = 0;
+      for (let i = 0; i < p.length; i++) {
+        most += Math.abs(step[i]!) * play[i]!;
+        p[i] = Math.min(play[i]!, Math.max(-play[i]!, p[i]! - BEYOND * step[i]!));
+      }
+      if (asked > most * (1 + CLOSED)) return false;
     }
     return false;
   };
 }
 
-/** p -= S (S' S)^-1 misses: the least change of p that meets every loop's condition. */
-function projector(loops: readonly Loop[], struts: number): (misses: Float64Array, p: Float64Array) => void {
+/** y = (S' S)^-1 misses; `step` = S y, the least change of p that meets every loop's condition; returns y' own. */
+function corrector(
+  loops: readonly Loop[],
+  struts: number,
+): (misses: Float64Array, own: readonly number[], step: Float64Array) => number {
   const s = loops.length;
-  if (s <= 1) return () => {};
+  if (s <= 1) return () => 0;
   const dense = loops.map((l) => {
     const v = new Float64Array(struts);
     l.indices.forEach((i, q) => {
@@ -82,11 +97,15 @@ function projector(loops: readonly Loop[], struts: number): (misses: Float64Arra
     }
   });
   const inverse = Float64Array.from(new CholeskyDecomposition(gram).solve(Matrix.eye(s)).to1DArray());
-  return (misses, p) => {
+  return (misses, own, step) => {
+    step.fill(0);
+    let asked = 0;
     loops.forEach((l, k) => {
       let t = 0;
       for (let j = 0; j < s; j++) t += inverse[k * s + j]! * misses[j]!;
-      for (let q = 0; q < l.indices.length; q++) p[l.indices[q]!]! -= l.values[q]! * t;
+      asked += t * own[k]!;
+      for (let q = 0; q < l.indices.length; q++) step[l.indices[q]!]! += l.values[q]! * t;
     });
+    return asked;
   };
 }

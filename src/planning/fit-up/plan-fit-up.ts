@@ -11,11 +11,15 @@ import { assemblySetting } from '../assembly/setting.js';
 import { settleErrors } from './elastic.js';
 import { drawUnit, type StrutErrors, strutErrors } from './errors.js';
 import { capacity, closer, type Loop, loopsOf } from './loops.js';
+import { deviationOf, sureChance } from './sure-chance.js';
+import { singleTailOf, tailOf } from './tails.js';
 
 /** Samples for the spread of movements and locked-in forces: a standard deviation to 5 %. */
 const SHAPES = 200;
-/** Halvings of the search for the saw's tolerance: to a five-thousandth of its widest. */
+/** Halvings of the search for the saw's tolerance, to a hundredth of what is found, each with this many samples. */
 const SEARCH_STEPS = 12;
+const SEARCH_SAMPLES = 1000;
+const FINE = 0.005;
 /** The search goes up to this multiple of the job's tolerance of the cut. */
 const WIDEST = 20;
 
@@ -34,10 +38,18 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
   const deviation = deviationsOf(errors, 1);
   const closes = closer(loops, play);
   const capacities = loops.map((l) => Math.max(capacity(l, play), 1e-12));
-  const ratiosFor = (cutFactor: number): number[] =>
-    loops.map((l, k) => loopDeviation(l, deviationsOf(errors, cutFactor)) / capacities[k]!);
-  const boundFor = (cutFactor: number): number => closingBound(ratiosFor(cutFactor));
-  const ratios = ratiosFor(1);
+  const ratios = loops.map((l, k) => deviationOf(l, deviation) / capacities[k]!);
+  const tails = { single: singleTailOf(job.fit.distribution), sum: tailOf(job.fit.distribution) };
+  const sure = sureChance(loops, play, deviation, tails, job.fit.chance);
+  // The same draws for every tolerance, so that the chance falls with it.
+  const searched = Math.min(job.fit.samples, SEARCH_SAMPLES);
+  const chanceFor = (cutFactor: number): number => {
+    const wider = deviationsOf(errors, cutFactor);
+    const { chance } = sureChance(loops, play, wider, tails, job.fit.chance);
+    // Of one loop and normal errors the bound is the chance itself.
+    if (chance >= job.fit.chance || (loops.length <= 1 && job.fit.distribution === 'normal')) return chance;
+    return sampleChance(wider, searched, closes, job, job.fit.chance);
+  };
   const shares = sharesOf(loops, ratios, struts.length);
   const shape = shapes(figure, parts, topology, deviation, job);
   const angle =
@@ -51,6 +63,7 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
         play_mm: play[i]!,
         share: shares[i]!,
         locked_N: shape.locked[i]!,
+        needed_mm: sure.needed[i]!,
         sideways_mm: angle * topology.axisLength[i]!,
         aside_mm: links[i]!.aside,
       }),
@@ -59,10 +72,10 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
       .map((l, k): LoopFit => ({ struts: [...l.indices].map((i) => struts[i]!.mark), ratio: ratios[k]! }))
       .sort((a, b) => b.ratio - a.ratio),
     samples: job.fit.samples,
-    chance: sampleChance(errors, job.fit.samples, closes, job),
-    chanceBound: closingBound(ratios),
+    chance: sampleChance(deviation, job.fit.samples, closes, job),
+    chanceBound: sure.chance,
     wanted: job.fit.chance,
-    cutNeeded_mm: cutNeeded(job, boundFor),
+    cutNeeded_mm: cutNeeded(job, chanceFor),
     movedMost: shape.movedMost,
   };
 }
@@ -71,42 +84,25 @@ export function planFitUp(topology: Topology, parts: Parts, job: Job): FitUp | n
 const deviationsOf = (errors: StrutErrors, cutFactor: number): Float64Array =>
   Float64Array.from(errors.cut, (c, i) => Math.hypot(cutFactor * c, errors.other[i]!));
 
-/** 1 - sum of P(a loop does not close), from each loop's deviation over what its play makes up (Boole's inequality). */
-const closingBound = (ratios: readonly number[]): number =>
-  Math.max(0, 1 - ratios.reduce((sum, r) => sum + outside(1 / Math.max(r, 1e-12)), 0));
-
-/** Share of seeded samples that close. */
-function sampleChance(errors: StrutErrors, samples: number, closes: (e: Float64Array) => boolean, job: Job): number {
+/** Share of seeded samples that close; 0 as soon as it is sure to stay below `least`. */
+function sampleChance(
+  deviation: Float64Array,
+  samples: number,
+  closes: (e: Float64Array) => boolean,
+  job: Job,
+  least = 0,
+): number {
   const random = seededRandom(job.seed);
-  const unit = new Float64Array(errors.cut.length);
-  const e = new Float64Array(errors.cut.length);
-  const deviation = deviationsOf(errors, 1);
+  const unit = new Float64Array(deviation.length);
+  const e = new Float64Array(deviation.length);
   let closed = 0;
   for (let s = 0; s < samples; s++) {
     drawUnit(unit, random, job.fit.distribution);
     for (let i = 0; i < e.length; i++) e[i] = unit[i]! * deviation[i]!;
     if (closes(e)) closed += 1;
+    else if (closed + samples - s - 1 < least * samples) return 0;
   }
   return closed / samples;
-}
-
-function loopDeviation(loop: Loop, deviation: Float64Array): number {
-  let sum = 0;
-  for (let p = 0; p < loop.indices.length; p++) sum += (loop.values[p]! * deviation[loop.indices[p]!]!) ** 2;
-  return Math.sqrt(sum);
-}
-
-/** P(|normal| > x), by the complementary error function of Numerical Recipes 6.2 (from memory): relative error below 1.2e-7. */
-function outside(x: number): number {
-  const z = x / Math.SQRT2;
-  const t = 1 / (1 + z / 2);
-  const c = [
-    -1.26551223, 1.00002368, 0.37409196, 0.09678418, -0.18628806, 0.27886807, -1.13520398, 1.48851587, -0.82215223,
-    0.17087277,
-  ];
-  let power = 0;
-  for (let i = c.length - 1; i >= 0; i--) power = c[i]! + t * power;
-  return t * Math.exp(-z * z + power);
 }
 
 /** Two standard deviations of a strut's worst loop over that loop's play. */
@@ -124,7 +120,7 @@ function cutNeeded(job: Job, chanceFor: (factor: number) => number): number | nu
   if (chanceFor(0) < job.fit.chance) return null;
   let [good, bad] = [0, WIDEST];
   if (chanceFor(WIDEST) >= job.fit.chance) return WIDEST * job.fit.cut_mm;
-  for (let step = 0; step < SEARCH_STEPS; step++) {
+  for (let step = 0; step < SEARCH_STEPS && bad - good > FINE * good; step++) {
     const middle = (good + bad) / 2;
     if (chanceFor(middle) >= job.fit.chance) good = middle;
     else bad = middle;

@@ -4,6 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { packingListCsv } from '../../../src/documents/assembly/packing-list.js';
 import type { PackRecords } from '../../../src/documents/records.js';
 import type { Vec3 } from '../../../src/maths/vec3.js';
+import { endChoice } from '../../../src/model/strut-end.js';
 import type { Truss } from '../../../src/model/truss.js';
 import { assess } from '../../../src/pipeline/assess.js';
 import { planAssembly } from '../../../src/planning/assembly/plan-assembly.js';
@@ -117,11 +118,10 @@ describe('whether every strut gets in', () => {
     expect(blockedOf(found)).toEqual([]);
     expect(found.plan.closing.length).toBeGreaterThan(0);
     // No bending at all: an end can only rise by its play, not past a sleeve. So all are laid in at both ends.
-    const { ends } = found.assessed.job.struts;
     for (const e of found.plan.closing) {
       expect(e.detail?.kind).toBe('drop-in');
       const member = found.assessed.topology.truss.members.find((m) => m.mark === e.strut)!;
-      for (const node of member.ends) expect(ends[`${e.strut}@${node}`]).toBe('drop-in');
+      for (const node of member.ends) expect(endChoice(found.assessed.job, e.strut, node).detail).toBe('drop-in');
     }
   });
 });
@@ -346,5 +346,39 @@ describe('the same truss elsewhere', () => {
     ['renumbered', { ...base, nodes: [...base.nodes].reverse(), members: [...base.members].reverse() }],
   ])('%s: as many struts blocked', (_, truss) => {
     expect(blockedOf(order(truss, fields))).toHaveLength(count);
+  });
+});
+
+describe('units built on the bench', () => {
+  const faces = octahedron(1200).faces;
+  const unitsWith = (assembly: Record<string, unknown>) => order({ ...octahedron(1200), faces }, { assembly });
+
+  it('are as large as their hubs make them: a triangle of 1200 mm is 1200 by 1039 between its nodes', () => {
+    const { plan, assessed } = unitsWith({});
+    expect(plan.units.length).toBeGreaterThan(0);
+    const [long, short] = plan.units[0]!.size_mm;
+    const mouth = Math.max(...assessed.parts.hubs[0]!.sockets.map((s) => s.setback! + s.depth));
+    // Each hub reaches at least as far as its mouths, and not twice as far.
+    for (const [size, between] of [
+      [long, 1200],
+      [short, 1200 * Math.sin(Math.PI / 3)],
+    ] as const) {
+      expect(size).toBeGreaterThan(between + 2 * mouth);
+      expect(size).toBeLessThan(between + 4 * mouth);
+    }
+  });
+
+  it('go through the door, into the van and are lifted, or not', () => {
+    const [long, short] = unitsWith({}).plan.units[0]!.size_mm;
+    const door = (width: number) => unitsWith({ door_mm: [width, 300] }).plan.units[0]!.throughDoor;
+    expect(door(short + 1)).toBe(true);
+    expect(door(short - 1)).toBe(false);
+    const van = (length: number) => unitsWith({ van_mm: [300, length, short + 1] }).plan.units[0]!.inVan;
+    expect(van(long + 1)).toBe(true);
+    expect(van(long - 1)).toBe(false);
+    const heavy = unitsWith({ lift_kg: 0.001, people: 2 }).plan.units[0]!;
+    expect(heavy.people).toBeGreaterThan(2);
+    expect(heavy.lifted).toBe(false);
+    expect(unitsWith({}).plan.units[0]!.lifted).toBe(true);
   });
 });
