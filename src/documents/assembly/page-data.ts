@@ -57,6 +57,7 @@ export function pageData(records: PackRecords, key: string): PageData {
         force: f,
         forceText: f === null ? '' : `${units.force(f)} ${units.forceUnit} ${units.sense(f)}`.trim(),
         utilisation: used === undefined ? '' : fixed(used, 2),
+        files: s.cutLength === null ? [] : ['struts/cut-list.pdf', 'struts/saw-plan.pdf', 'struts/labels.pdf'],
       };
     }),
     panels: parts.panels.map((p) => ({

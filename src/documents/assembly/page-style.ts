@@ -46,7 +46,7 @@ dl{display:grid;grid-template-columns:auto 1fr;gap:4px 12px;margin:0 0 10px}dt{c
 #all{display:none}
 @media (max-width:800px){
 header{padding:6px 12px;gap:6px 8px}header .name{flex-basis:100%}h1{font-size:17px}header p{font-size:13px}header label{font-size:14px}input[type=search]{width:5.5em}.tools{width:100%;flex-wrap:nowrap;overflow-x:auto}.tools button,form button{padding:6px 10px;font-size:15px;flex:none}
-main{min-height:560px}#no-picture{padding:20px}
+main{min-height:460px}.hold{padding:6px 12px;font-size:14px;line-height:1.3;max-height:5.4em;overflow:auto}#no-picture{padding:20px}
 #card{left:0;right:0;top:auto;bottom:0;width:auto;max-height:54%;border-radius:16px 16px 0 0;padding:12px 16px;gap:8px}
 #say{font-size:20px}#legend{top:4px;bottom:auto}.caution{display:none}
 }

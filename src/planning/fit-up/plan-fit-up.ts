@@ -18,8 +18,8 @@ import { singleTailOf, tailOf } from './tails.js';
 const SHAPES = 200;
 /** Halvings of the search for the saw's tolerance, to a hundredth of what is found, each with this many samples. */
 const SEARCH_STEPS = 12;
-const SEARCH_SAMPLES = 1000;
-const FINE = 0.005;
+const SEARCH_SAMPLES = 200;
+const FINE = 0.01;
 /** The search goes up to this multiple of the job's tolerance of the cut. */
 const WIDEST = 20;
 

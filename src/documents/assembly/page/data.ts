@@ -33,6 +33,8 @@ export interface PageStrut {
   readonly force: number | null;
   readonly forceText: string;
   readonly utilisation: string;
+  /** Papers of the pack that it stands in. */
+  readonly files: readonly string[];
 }
 
 export interface PagePanel {

@@ -1,4 +1,5 @@
 import type { PageData } from './data.js';
+import { details, element, markOf } from './details.js';
 import { drawLabels } from './labels.js';
 import { type Inks, type Look, makeView, type PartRef } from './scene.js';
 import { openStore } from './store.js';
@@ -83,13 +84,6 @@ function goTo(next: number): void {
   show();
 }
 
-const element = (tag: string, text = '', className = ''): HTMLElement => {
-  const e = document.createElement(tag);
-  e.textContent = text;
-  if (className) e.className = className;
-  return e;
-};
-
 function fillCard(): void {
   const s = data.steps[step];
   find('count').textContent = data.steps.length > 0 ? `Step ${step + 1} of ${data.steps.length}` : 'No steps';
@@ -121,7 +115,7 @@ function partRows(): HTMLElement[] {
 }
 
 function partRow(part: PartRef, words: string): HTMLElement {
-  const mark = markOf(part);
+  const mark = markOf(data, part);
   const row = element('li');
   const label = element('label', '', 'tick');
   const box = document.createElement('input');
@@ -139,13 +133,6 @@ function partRow(part: PartRef, words: string): HTMLElement {
   return row;
 }
 
-const markOf = (p: PartRef): string =>
-  p.kind === 'node'
-    ? data.nodes[p.index]!.mark
-    : p.kind === 'strut'
-      ? data.struts[p.index]!.mark
-      : data.panels[p.index]!.mark;
-
 function progress(): void {
   const total = data.nodes.length + data.struts.length + data.panels.length;
   const ticked =
@@ -161,48 +148,9 @@ function pick(part: PartRef | null): void {
   box.hidden = part === null;
   if (part) {
     if (stepOf[part.kind][part.index]! > step) goTo(stepOf[part.kind][part.index]!);
-    box.replaceChildren(...details(part));
+    box.replaceChildren(...details(data, part, stepOf[part.kind][part.index]!, () => pick(null)));
   }
   show();
-}
-
-function details(part: PartRef): HTMLElement[] {
-  const close = element('button', 'Close', 'small');
-  close.addEventListener('click', () => pick(null));
-  const head = element('h2', `${{ node: 'Node', strut: 'Strut', panel: 'Panel' }[part.kind]} ${markOf(part)}`);
-  const rows: [string, string][] = [['Comes in', `step ${stepOf[part.kind][part.index]! + 1}`]];
-  if (part.kind === 'strut') {
-    const s = data.struts[part.index]!;
-    rows.push(
-      ['Cut length', s.cut],
-      ['Section', s.section],
-      ['From, to', s.ends.map((n) => data.nodes[n]!.mark).join(', ')],
-    );
-    if (s.forceText) rows.push(['Force', s.forceText]);
-    if (s.utilisation) rows.push(['Utilisation', s.utilisation]);
-  } else if (part.kind === 'node') {
-    const n = data.nodes[part.index]!;
-    rows.push(
-      ['Sockets', String(n.sockets)],
-      [
-        'Struts',
-        data.struts
-          .filter((s) => s.ends.includes(part.index))
-          .map((s) => s.mark)
-          .join(', '),
-      ],
-    );
-    if (n.files.length > 0) rows.push(['Files', n.files.join(', ')]);
-  } else {
-    const p = data.panels[part.index]!;
-    rows.push(['Panel', p.words]);
-    if (p.files.length > 0) rows.push(['Files', p.files.join(', ')]);
-  }
-  const found = data.findings.filter((f) => f.subject === markOf(part)).map((f) => f.message);
-  if (found.length > 0) rows.push(['Found', found.join(' ')]);
-  const list = element('dl');
-  for (const [term, text] of rows) list.append(element('dt', term), element('dd', text));
-  return [head, list, close];
 }
 
 function search(text: string): void {
