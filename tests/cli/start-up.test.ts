@@ -1,6 +1,8 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { dirname, join, relative } from 'node:path';
 import { expect, it } from 'vitest';
+import { TEMPLATES } from '../../src/cli/commands/new.js';
+import { templateNames } from '../../src/machine/templates.js';
 
 const SRC = join(import.meta.dirname, '..', '..', 'src');
 
@@ -27,4 +29,8 @@ it('loads commands and nothing behind them before it knows what is asked', () =>
 
 it('would notice what a command loads', () => {
   expect(loadedWith(join(SRC, 'cli', 'make-job.ts'))).toContain(join('pipeline', 'make.ts'));
+});
+
+it('names every template in the help', async () => {
+  expect([...(await templateNames())].sort()).toEqual(TEMPLATES);
 });

@@ -5,9 +5,9 @@ export const size: CliCommand = {
   usage: 'size <job>',
   summary: "Choose the lightest of the job's struts.sizes for every strut or group that passes.",
   examples: [
-    'strutwright size my-table/job.json                              what would change, and what it weighs',
-    'strutwright size my-table/job.json -o my-table/truss-sized.json and a truss file with the sections in it',
-    'strutwright size my-table/job.json --json                       the same as data, for a script',
+    'strutwright size my-table/job.json                               what would change, and what it weighs',
+    'strutwright size my-table/job.json -o my-table/truss-sized.json  and a truss file with the sections in it',
+    'strutwright size my-table/job.json --json                        the same as data, for a script',
   ],
   define: (command) =>
     command

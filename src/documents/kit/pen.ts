@@ -3,6 +3,9 @@ import { type Face, type Faces, facesOf, MOST_RUNS, type ReadFace } from './face
 import type { Fonts } from './fonts.js';
 import { type Box, corners, type Point } from './geometry2.js';
 import { INK, LINE, SIZE } from './ink.js';
+import type { LineStyle, PlacedText, TextStyle } from './pen-style.js';
+
+export type { LineStyle, PlacedText, TextStyle } from './pen-style.js';
 
 /** Points of a PDF in one mm. */
 export const POINTS = 72 / 25.4;
@@ -10,30 +13,6 @@ export const POINTS = 72 / 25.4;
 export const CAP = 0.668;
 /** Height from the lowest descender to the capitals' top over type size: what a line of text occupies. */
 const DESCENT = 0.2;
-
-export interface TextStyle {
-  /** Type size in pt; 9 where absent. */
-  readonly size?: number;
-  readonly bold?: boolean;
-  readonly colour?: string;
-  /** Which point of the text lies at x. */
-  readonly align?: 'left' | 'centre' | 'right';
-}
-
-export interface LineStyle {
-  /** mm */
-  readonly width?: number;
-  readonly colour?: string;
-  /** Lengths of strokes and gaps, mm. */
-  readonly dash?: readonly [number, number];
-  readonly cap?: 'butt' | 'round';
-}
-
-/** A text as placed: what tests hold against each other. */
-export interface PlacedText extends Box {
-  readonly sheet: number;
-  readonly text: string;
-}
 
 export interface PenOptions {
   readonly fonts: Fonts;
