@@ -91,6 +91,8 @@ export function placeMark(
   const bolts = s.socket.bolted;
   // A plate is marked between the shoulder and its first bolt.
   const to = bolts ? s.stop + bolts.endDistance - 1.5 * bolts.diameter : Math.min(s.mouth - chamfer, groove) - MARGIN;
+  // The flat sides of a rectangle part their marks by themselves.
+  const gap = typeof s.outer === 'number' ? APART / s.outer : 0.1;
   for (const lettering of letterings)
     for (const turn of crowd ? (['round', 'along'] as const) : (['along', 'round'] as const)) {
       const text = words[turn];
@@ -107,7 +109,7 @@ export function placeMark(
           if (across > room) continue;
           const score = dot(outwardOf(s, side), towards);
           if (score <= bestScore + 1e-9 || score < least) continue;
-          if (taken.some((t) => overlaps(t, side, halfAngle, low, high))) continue;
+          if (taken.some((t) => overlaps(t, side, halfAngle + gap, low, high))) continue;
           const surface = surfaceOf(s, side, radius, middle, turn);
           if (!patchIsFree(space, sleeve, surface, width, height, holes)) continue;
           bestScore = score;
@@ -119,9 +121,12 @@ export function placeMark(
   return null;
 }
 
-/** Whether a mark would come within a stroke of what is taken. */
+/** Between two marks beside each other round a sleeve, mm: more than between their letters, so that they do not read as one. */
+const APART = 1.6;
+
+/** Whether a mark would come within a stroke of what is taken along the strut; `halfAngle` has the gap beside it in it. */
 const overlaps = (t: Taken, side: number, halfAngle: number, from: number, to: number): boolean =>
-  t.from < to + MARGIN && from < t.to + MARGIN && turnBetween(t.side, side) < t.halfAngle + halfAngle + 0.1;
+  t.from < to + MARGIN && from < t.to + MARGIN && turnBetween(t.side, side) < t.halfAngle + halfAngle;
 
 /** Where a line is tried between the root, 0, and the mouth, 1. */
 const FROM_MIDDLE = [0.5, 1, 0, 0.75, 0.25] as const;
