@@ -47,7 +47,27 @@ export function readTable(text: string, log: LineFaults): Table | null {
   const rows = body
     .filter(({ record }) => record.some((cell) => cell !== ''))
     .map(({ record, info }) => ({ cells: record, line: info.lines }));
+  for (const { cells, line } of rows) mustFit(cells, head.record, delimiter, line, log);
   return { columns: head.record, rows, number: (cell) => numberIn(cell) };
+}
+
+/** A row wider than its header has shifted cells: a decimal comma in a comma separated file. Blank ones are a spreadsheet's margin. */
+function mustFit(
+  cells: readonly string[],
+  columns: readonly string[],
+  delimiter: string,
+  line: number,
+  log: LineFaults,
+): void {
+  const filled = cells.findLastIndex((cell) => cell !== '') + 1;
+  if (filled <= columns.length) return;
+  log.tell(
+    line,
+    `has ${filled} cells under ${columns.length} column${columns.length === 1 ? '' : 's'}`,
+    delimiter === ','
+      ? 'write decimal points, or separate cells by semicolons where commas are decimal; quote a text that holds a comma'
+      : 'name every column in the first line, or take out the cells too many',
+  );
 }
 
 /** The delimiter that stands most often in the header line, outside quotation marks. */
