@@ -9,7 +9,10 @@ import type { Point2 } from '../../model/parts.js';
 export function movedEdges(corners: readonly Point2[], insets: readonly number[]): Ring[] {
   const outward = insets.map((d) => Math.min(d, 0));
   const rings = outward.some((d) => d < 0) ? grown(corners, outward) : [toRing(corners)];
-  const strips = insets.flatMap((d, i) => (d > 0 ? [strip(corners, i, d)] : []));
+  const strips = insets.flatMap((d, i) => [
+    ...(d > 0 ? [strip(corners, i, d)] : []),
+    ...[-1, 1].flatMap((end) => ear(corners, insets, i, end) ?? []),
+  ]);
   return outer(strips.length > 0 ? differenceOf(rings, strips) : rings);
 }
 
@@ -33,6 +36,27 @@ function strip(corners: readonly Point2[], i: number, d: number): Ring {
     [b[0] + ux * after + ex, b[1] + uy * after + ey],
     [a[0] - ux * before + ex, a[1] - uy * before + ey],
   ]);
+}
+
+/**
+ * What an edge moved out farther than its neighbour i leaves beyond the neighbour's own line, past the corner that they
+ * share: a box from that line outwards. At the first end of edge i (-1) or its last (1); null: nothing is left there.
+ */
+function ear(corners: readonly Point2[], insets: readonly number[], i: number, end: number): Ring | null {
+  const n = corners.length;
+  const [at, beside] = end < 0 ? [i, (i + n - 1) % n] : [(i + 1) % n, (i + 1) % n];
+  const [d, out] = [insets[i]!, -insets[beside]!];
+  if (out <= Math.max(0, -d) || !bulges(corners, at)) return null;
+  const [a, b] = [corners[i]!, corners[(i + 1) % n]!];
+  const l = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
+  const [ux, uy] = [(b[0] - a[0]) / l, (b[1] - a[1]) / l];
+  const far = 4 * (out + Math.abs(d));
+  const corner = corners[at]!;
+  const place = (s: number, h: number): Point2 => [
+    corner[0] + end * ux * s - uy * h,
+    corner[1] + end * uy * s + ux * h,
+  ];
+  return ccw([place(0, -far), place(far, -far), place(far, d), place(0, d)]);
 }
 
 /** A strip starts this share of its width outside the edge, so that no sliver stays along it. */
