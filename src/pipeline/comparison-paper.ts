@@ -6,19 +6,27 @@ import type { Truss } from '../model/truss.js';
 import { readTruss } from '../readers/truss.js';
 import type { ReadPack } from './read-pack.js';
 
-/** The comparison of two packs as a PDF, with pictures where the newer pack holds its truss. */
+/**
+ * The comparison of two packs as a PDF, with pictures where the newer pack holds its truss; in the units of the newer pack's papers,
+ * and on its paper unless another is asked for.
+ */
 export async function comparisonPaper(
   comparison: Comparison,
   before: ReadPack,
   after: ReadPack,
-  paper: 'A4' | 'A3' | 'Letter',
+  paper?: 'A4' | 'A3' | 'Letter',
 ): Promise<Uint8Array> {
-  const { title, revision, date } = after.manifest;
+  const { title, revision, date, papers } = after.manifest;
   const job = defaultJob(title);
   const written = await comparisonPdf(
     {
       comparison,
-      job: { ...job, revision, date, output: { ...job.output, paper } },
+      job: {
+        ...job,
+        revision,
+        date,
+        output: { ...job.output, paper: paper ?? papers.paper, units: papers.units, fractions: papers.fractions },
+      },
       before: await trussIn(before),
       after: await trussIn(after),
     },

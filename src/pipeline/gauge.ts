@@ -9,6 +9,7 @@ import type { Section } from '../model/section.js';
 import { VERSION } from '../model/version.js';
 import { gaugeClearances, gaugeSize } from '../shaping/gauge-steps.js';
 import { type LoadedJob, loadJob } from './load.js';
+import { papersOf } from './manifest.js';
 import { packWriter, type WriteFile } from './pack-writer.js';
 import { gaugeMarks, sectionsByUse, writeGauges, writeKerfComb } from './stages/gauge.js';
 
@@ -115,6 +116,7 @@ export async function makeGauge(plan: GaugePlan, write: WriteFile): Promise<read
     settings: sha256(JSON.stringify([job, sections])),
     parts,
     files: writer.files(),
+    papers: papersOf(job),
   };
   await write('manifest.json', new TextEncoder().encode(`${JSON.stringify(manifest, null, 2)}\n`));
   return failed;

@@ -1,4 +1,5 @@
 import type { Assessment, MadeHub } from '../documents/records.js';
+import type { Job } from '../model/job/index.js';
 import { VERSION } from '../model/version.js';
 import type { Input } from './load.js';
 import type { PackFile, PackPart } from './pack-writer.js';
@@ -24,6 +25,8 @@ export interface Manifest {
   readonly parts: readonly PackPart[];
   /** All files but manifest.json. */
   readonly files: readonly PackFile[];
+  /** What the papers are on and in; a comparison with a later pack follows it. */
+  readonly papers: Pick<Job['output'], 'paper' | 'units' | 'fractions'>;
 }
 
 export interface Totals {
@@ -68,8 +71,16 @@ export function manifestOf(
     totals: totalsOf(a, hubs),
     parts: made.parts,
     files: made.files,
+    papers: papersOf(a.job),
   };
 }
+
+/** What a job's papers are on and in. */
+export const papersOf = ({ output: { paper, units, fractions } }: Job): Manifest['papers'] => ({
+  paper,
+  units,
+  fractions,
+});
 
 const sum = <T>(items: Iterable<T>, of: (item: T) => number): number => {
   let total = 0;

@@ -22,6 +22,13 @@ const manifestSchema = z.looseObject({
       files: z.array(z.string()).default([]),
     }),
   ),
+  papers: z
+    .looseObject({
+      paper: z.enum(['A4', 'A3', 'Letter']).default('A4'),
+      units: z.enum(['SI', 'US']).default('SI'),
+      fractions: z.boolean().default(false),
+    })
+    .prefault({}),
 });
 
 export type ReadManifest = z.infer<typeof manifestSchema>;

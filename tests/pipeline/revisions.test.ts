@@ -1,13 +1,16 @@
 import { createHash } from 'node:crypto';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { makePack } from '../../dist/pipeline/make.js';
+import { inchFraction } from '../../src/documents/kit/units.js';
 import type { Vec3 } from '../../src/maths/vec3.js';
 import { defaultJob, type Job } from '../../src/model/job/index.js';
 import type { Truss } from '../../src/model/truss.js';
 import { comparePacks } from '../../src/pipeline/compare.js';
-import type { Manifest } from '../../src/pipeline/manifest.js';
+import { comparisonPaper } from '../../src/pipeline/comparison-paper.js';
+import { type Manifest, papersOf } from '../../src/pipeline/manifest.js';
 import type { ReadPack } from '../../src/pipeline/read-pack.js';
 import { readTruss } from '../../src/readers/truss.js';
+import { onFile, textOf } from '../documents/pdf.js';
 
 // An invented double tripod: D above, E below the triangle A B C.
 const text = (d: string, extra = ''): string => `{ "format": "strutwright-truss/1", "units": "mm",
@@ -51,6 +54,28 @@ beforeAll(async () => {
   first = await make(trussOf(text('[150, 90, 240]')), job('A'));
   second = await make(trussOf(text('[150, 90, 250]')), job('B'), first.manifest);
 }, 120_000);
+
+it('is compared on the paper and in the units of its own papers, unless another paper is asked for', async () => {
+  const us = job('B');
+  const asked = { ...us.output, paper: 'Letter' as const, units: 'US' as const, fractions: true };
+  expect(papersOf({ ...us, output: asked })).toEqual({ paper: 'Letter', units: 'US', fractions: true });
+  const after = { ...second!.pack, manifest: { ...second!.pack.manifest, papers: papersOf({ ...us, output: asked }) } };
+  const c = await comparePacks(first!.pack, after);
+  const s4 = c.changed.find((p) => p.mark === 'S4')!.what.find((d) => d.name === 'cut_length_mm')!;
+  // Down to the thirty-second below, as a saw is set; 1 in = 25.4 mm (NIST SP 811 (2008), appendix B.8).
+  const saws = [s4.from, s4.to].map((v) => inchFraction(Math.floor((Number(v) / 25.4) * 32) / 32));
+  const [letter, a4] = [
+    await comparisonPaper(c, first!.pack, after),
+    await comparisonPaper(c, first!.pack, after, 'A4'),
+  ];
+  expect(textOf(letter).replaceAll(/\s+/g, ' ')).toContain(`cut length ${saws.join(' to ')}`);
+  expect(onFile(letter, 'pdfinfo', ['%'])).toContain('(letter)');
+  expect(onFile(a4, 'pdfinfo', ['%'])).toContain('(A4)');
+  const old = { ...after, manifest: { ...after.manifest, papers: papersOf(us) } };
+  expect(textOf(await comparisonPaper(c, first!.pack, old)).replaceAll(/\s+/g, ' ')).toContain(
+    `cut length ${s4.from} to ${s4.to}`,
+  );
+});
 
 describe('a pack since an earlier one, after the top node was raised by 10 mm', () => {
   it('compares part by part: what meets at D and every node of it changed, the rest is unchanged', async () => {
@@ -120,6 +145,7 @@ const packOf = (...parts: string[]): ReadPack => ({
     title: 'T',
     revision: 'A',
     date: null,
+    papers: papersOf(job('A')),
     parts: parts.map((text) => {
       const [kind, mark, digest, form] = text.split(' ');
       return {

@@ -17,7 +17,13 @@ export const compare: CliCommand = {
     command
       .option('--json', 'print the comparison as JSON on stdout')
       .option('--pdf <file>', 'write it as a PDF too, with clouds round what changed')
-      .addOption(new Option('--paper <size>', 'paper of the PDF').choices(['A4', 'A3', 'Letter']).default('A4')),
+      .addOption(
+        new Option('--paper <size>', 'paper of the PDF; without it, that of the newer pack').choices([
+          'A4',
+          'A3',
+          'Letter',
+        ]),
+      ),
   async run({ arguments: [before, after], options, terminal }) {
     const [{ comparePacks }, { readPack }, { sayComparison }] = await Promise.all([
       import('../../pipeline/compare.js'),
@@ -56,7 +62,12 @@ async function writePaper(
   ]);
   const out = String(options['pdf']);
   try {
-    const bytes = await comparisonPaper(comparison, before, after, options['paper'] as 'A4' | 'A3' | 'Letter');
+    const bytes = await comparisonPaper(
+      comparison,
+      before,
+      after,
+      options['paper'] as 'A4' | 'A3' | 'Letter' | undefined,
+    );
     // An earlier PDF is replaced, nothing else is.
     await writeOne(out, bytes, await isPdf(out));
   } catch (error) {

@@ -6,6 +6,8 @@ export interface Units {
   readonly lengthUnit: 'mm' | 'in';
   readonly forceUnit: 'N' | 'kN' | 'lbf' | 'kip';
   readonly massUnit: 'kg' | 'lb';
+  readonly areaUnit: 'mm²' | 'in²';
+  readonly volumeUnit: 'cm³' | 'in³';
   /** For the strip along the foot. */
   readonly words: string;
   length(mm: number | null, decimals?: number): string;
@@ -16,6 +18,8 @@ export interface Units {
   sense(newton: number | null): '' | 'T' | 'C';
   mass(kg: number | null): string;
   area(mm2: number | null): string;
+  /** `decimals` of a cm³; an in³ gets one more, being sixteen times as much. */
+  volume(mm3: number | null, decimals?: number): string;
   angle(rad: number | null): string;
 }
 
@@ -31,6 +35,8 @@ function si(largest: number): Units {
     lengthUnit: 'mm',
     forceUnit: kilo ? 'kN' : 'N',
     massUnit: 'kg',
+    areaUnit: 'mm²',
+    volumeUnit: 'cm³',
     words: `mm, ${kilo ? 'kN' : 'N'}, kg, °`,
     length: (mm, digits = 1) => fixed(mm, digits),
     cut: sawMillimetres,
@@ -38,6 +44,7 @@ function si(largest: number): Units {
     sense: (n) => senseOf(signed(n === null ? null : kilo ? n / 1000 : n, decimals)),
     mass: (kg) => fixed(kg, kg !== null && kg < 1 ? 3 : 2),
     area: (mm2) => fixed(mm2, 0),
+    volume: (mm3, digits = 1) => fixed(mm3 === null ? null : mm3 / MM3_PER_CM3, digits),
     angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
   };
 }
@@ -47,6 +54,7 @@ export const sawMillimetres = (mm: number | null): string => fixed(down(mm, 0.1)
 
 export const NEWTON_PER_LBF = FORCE_IN_N.lbf;
 const MM_PER_INCH = LENGTH_IN_MM.in;
+const MM3_PER_CM3 = 1000;
 /** The finest division of a carpenter's rule. */
 const PARTS = 32;
 /** What is asked for in more digits of a mm than this is no length for a rule: no fraction tells 0.03 mm from nought. */
@@ -71,6 +79,8 @@ function us(largest: number, fractions: boolean): Units {
     lengthUnit: 'in',
     forceUnit: kip ? 'kip' : 'lbf',
     massUnit: 'lb',
+    areaUnit: 'in²',
+    volumeUnit: 'in³',
     words: `in, ${kip ? 'kip' : 'lbf'}, lb, °`,
     length,
     cut: (mm) => length(down(mm, fractions ? MM_PER_INCH / PARTS : MM_PER_INCH / 1000)),
@@ -78,6 +88,7 @@ function us(largest: number, fractions: boolean): Units {
     sense: (n) => senseOf(signed(n === null ? null : n / per, decimals)),
     mass: (kg) => fixed(kg === null ? null : kg / KG_IN_LB, 3),
     area: (mm2) => fixed(mm2 === null ? null : mm2 / MM_PER_INCH ** 2, 2),
+    volume: (mm3, digits = 1) => fixed(mm3 === null ? null : mm3 / MM_PER_INCH ** 3, digits + 1),
     angle: (rad) => fixed(rad === null ? null : (rad * 180) / Math.PI, 1),
   };
 }

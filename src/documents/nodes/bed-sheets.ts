@@ -17,7 +17,6 @@ import { sayDuration } from './duration.js';
 const [PICTURE_SHARE, WORDS] = [0.5, 16] as const;
 /** Marks are written no smaller than this inside a piece, pt. */
 const LEAST_MARK = 5;
-const MM3_PER_CM3 = 1000;
 
 /** bed-sheets.pdf: what is printed on which machine, how long it takes and from what that is reckoned, then a sheet a bed. null: nothing is printed. */
 export async function bedSheets(records: PackRecords, fonts: Fonts): Promise<Written | null> {
@@ -36,6 +35,8 @@ function overview(paper: Paper, records: PackRecords, beds: readonly PlannedBed[
     title: 'Print beds',
     instruction: `Print the fit gauge first. Each bed is one 3MF file with a named object a piece, as it lies: nothing to turn or arrange. Material: ${materialNamed(job, job.nodes.material)?.title ?? job.nodes.material}.`,
   });
+  // What goes back into the job stands in the unit of the job's key, whatever the papers are in.
+  const inJobUnits = job.output.units === 'SI' ? '' : ', in mm as there';
   const pieces = beds.reduce((sum, bed) => sum + bed.items.length, 0);
   const total = (of: (bed: PlannedBed) => number): number => beds.reduce((sum, bed) => sum + of(bed), 0);
   const columns: Column<PlannedBed>[] = [
@@ -43,7 +44,7 @@ function overview(paper: Paper, records: PackRecords, beds: readonly PlannedBed[
     { head: 'Bed', bold: true, value: (b) => b.mark },
     { head: 'Printer', value: (b) => b.printer },
     { head: 'Pieces', align: 'right', value: (b) => String(b.items.length) },
-    { head: 'Volume\ncm³', align: 'right', value: (b) => fixed(b.volume / MM3_PER_CM3, 1) },
+    { head: `Volume\n${units.volumeUnit}`, align: 'right', value: (b) => units.volume(b.volume, 1) },
     { head: `Mass\n${units.massUnit}`, align: 'right', value: (b) => units.mass(b.mass) },
     { head: 'Layers', align: 'right', value: (b) => String(b.layers) },
     { head: 'Time\nabout', align: 'right', bold: true, value: (b) => sayDuration(b.time) },
@@ -53,12 +54,15 @@ function overview(paper: Paper, records: PackRecords, beds: readonly PlannedBed[
   ];
   const y = drawTable(paper, area.y, columns, beds);
   const end = paper.paragraph(
-    `${pieces} pieces on ${beds.length} beds: ${fixed(total((b) => b.volume) / MM3_PER_CM3, 0)} cm³, ${units.mass(total((b) => b.mass))} ${units.massUnit}, ${sayDuration(total((b) => b.time))} of printing.`,
+    `${pieces} pieces on ${beds.length} beds: ${units.volume(
+      total((b) => b.volume),
+      0,
+    )} ${units.volumeUnit}, ${units.mass(total((b) => b.mass))} ${units.massUnit}, ${sayDuration(total((b) => b.time))} of printing.`,
     y + 2,
     { bold: true },
   );
   const after = paper.paragraph(
-    'Time = volume / flow + layers × change of layer: within about 30 %, since supports, infill, heating and travel are not known here. Flow, layer and change are the printer’s in the job; enter what your machine took on a first bed and the rest follows.',
+    `Time = volume / flow + layers × change of layer: within about 30 %, since supports, infill, heating and travel are not known here. Flow, layer and change are the printer’s in the job${inJobUnits}; enter what your machine took on a first bed and the rest follows.`,
     end + 1,
   );
   const left = records.beds?.unplaced ?? [];
@@ -77,7 +81,7 @@ function bedPage(paper: Paper, bed: PlannedBed, units: Units): void {
   drawBed(pen, { x: area.x, y: area.y + 1, width: bed.width * factor, height }, bed, factor);
   const foot = area.y + height + 5;
   pen.text(
-    `Bed ${fixed(bed.width, 0)} × ${fixed(bed.depth, 0)} mm, not drawn to scale. ${fixed(bed.volume / MM3_PER_CM3, 1)} cm³, ${units.mass(bed.mass)} ${units.massUnit}.`,
+    `Bed ${units.length(bed.width, 0)} × ${units.length(bed.depth, 0)} ${units.lengthUnit}, not drawn to scale. ${units.volume(bed.volume, 1)} ${units.volumeUnit}, ${units.mass(bed.mass)} ${units.massUnit}.`,
     area.x,
     foot,
     { size: SIZE.note, colour: INK.grey },
@@ -93,7 +97,7 @@ function bedPage(paper: Paper, bed: PlannedBed, units: Units): void {
     { head: 'No.', align: 'right', grey: true, value: (i) => String(bed.items.indexOf(i) + 1) },
     { head: 'Piece', bold: true, value: nameOf },
     { head: `Size as it lies\n${units.lengthUnit}`, align: 'right', value: (i) => sizeOf(i, units) },
-    { head: 'Volume\ncm³', align: 'right', value: (i) => fixed(i.volume / MM3_PER_CM3, 2) },
+    { head: `Volume\n${units.volumeUnit}`, align: 'right', value: (i) => units.volume(i.volume, 2) },
     { head: `Mass\n${units.massUnit}`, align: 'right', value: (i) => units.mass(i.mass) },
     { head: `From left\n${units.lengthUnit}`, align: 'right', grey: true, value: (i) => units.length(i.x) },
     { head: `From front\n${units.lengthUnit}`, align: 'right', grey: true, value: (i) => units.length(i.y) },

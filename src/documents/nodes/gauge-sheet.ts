@@ -14,8 +14,9 @@ import { INK, LINE, SIZE } from '../kit/ink.js';
 import { meshLines, type SeenLine } from '../kit/mesh/mesh-lines.js';
 import { type Issue, Paper, type Written } from '../kit/paper.js';
 import type { Pen } from '../kit/pen.js';
+import { sayInUnits } from '../kit/say-in-units.js';
 import { type Column, drawSmallTable, smallTableHeight } from '../kit/table.js';
-import { fixed } from '../kit/units.js';
+import { fixed, type Units, unitsOf } from '../kit/units.js';
 import { PLAN } from '../kit/view/camera.js';
 
 /** A gauge that was made, and where it is written. */
@@ -39,7 +40,12 @@ const [PICTURE, TALLEST, BESIDE] = [92, 110, 8] as const;
 /** gauge.pdf: how to print and read the fit gauge of each section and the kerf comb, with places to tick, and the keys that take the values. */
 export async function gaugeSheet({ issue, gauges, comb }: GaugeSource, fonts: Fonts): Promise<Written> {
   const { job } = issue;
-  const paper = new Paper({ job, fonts, hold: [], notMade: [] }, 'Fit gauge', CAUTION, 'mm');
+  const paper = new Paper(
+    { job, fonts, hold: [], notMade: [] },
+    'Fit gauge',
+    CAUTION,
+    job.output.units === 'SI' ? 'mm' : 'in; mm into the job',
+  );
   paper.addSheet({
     title: 'Fit gauge',
     instruction:
@@ -56,10 +62,15 @@ function printed(flow: Flow, pen: Pen, { section, piece, file }: MadeGauge, job:
   const lines = meshLines(piece.positions, piece.triangles, PLAN);
   const scale = drawingScale([piece.box[0], piece.box[1]], [PICTURE, TALLEST], 1);
   const height = piece.box[1] * scale.factor;
-  const rows = gaugeClearances(section, job).map((c) => ({ c, made: sizeAt(section, job, c) }));
+  const units = unitsOf(job, 0);
+  const customary = units.lengthUnit === 'in';
+  const rows = gaugeClearances(section, job).map((c) => ({ c, made: sizeAt(section, job, c, units) }));
   const columns: Column<(typeof rows)[number]>[] = [
-    { head: 'Clearance\nmm', align: 'right', bold: true, value: ({ c }) => fixed(c, 2) },
-    { head: spigot ? 'Spigot\nmm' : 'Bore\nmm', align: 'right', value: ({ made }) => made },
+    { head: customary ? 'To enter\nmm' : 'Clearance\nmm', align: 'right', bold: true, value: ({ c }) => fixed(c, 2) },
+    ...(customary
+      ? [{ head: 'Clearance\nin', align: 'right' as const, value: ({ c }: { c: number }) => units.length(c, 2) }]
+      : []),
+    { head: `${spigot ? 'Spigot' : 'Bore'}\n${units.lengthUnit}`, align: 'right', value: ({ made }) => made },
     { head: 'Lying', tick: true },
     { head: 'Upright', tick: true },
     { head: 'At 45°', tick: true },
@@ -89,14 +100,14 @@ function printed(flow: Flow, pen: Pen, { section, piece, file }: MadeGauge, job:
     drawSmallTable(pen, x, area.y + 5, area.x + area.width - x, columns, rows);
   });
   const swells = swelling(job, materialNamed(job, section.material), gaugeSize(section, job));
-  const measured = `Measure the thickest of the batch across both ways and enter it as sections."${section.name}".measured_mm where it is not the nominal size.`;
+  const measured = `Measure the thickest of the batch across both ways and enter it as sections."${section.name}".measured_mm${customary ? ', in mm (inches × 25.4),' : ''} where it is not the nominal size.`;
   flow.paragraph(
-    `Print it as it lies, ${job.nodes.process === 'filament' ? 'with the hubs’ own filament, layer height and speed' : 'in the hubs’ own material and settings'}, and let it cool. ${spigot ? '' : measured} Take the least clearance that was ticked in all three rows: nodes of a truss hold ${spigot ? 'spigots' : 'sockets'} at every angle. Enter it as`,
+    `Print it as it lies, ${job.nodes.process === 'filament' ? 'with the hubs’ own filament, layer height and speed' : 'in the hubs’ own material and settings'}, and let it cool. ${spigot ? '' : measured} Take the least clearance that was ticked in all three rows: nodes of a truss hold ${spigot ? 'spigots' : 'sockets'} at every angle. Enter it${customary ? ' in mm, as the first column and the gauge itself have it:' : ' as'}`,
   );
   flow.paragraph(`"nodes": { "clearances": { "${section.name}": 0.00 } }`, { bold: true });
   if (swells > 0)
     flow.paragraph(
-      `Try it with dry timber. Outdoors ${fixed(swells, 2)} mm come on top of it in every socket, for ${fixed(job.fit.moistureChange, 0)} % more moisture: they are not in this gauge and not in the value.`,
+      `Try it with dry timber. Outdoors ${sayInUnits(`${fixed(swells, 2)} mm`, job.output)} come on top of it in every socket, for ${fixed(job.fit.moistureChange, 0)} % more moisture: they are not in this gauge and not in the value.`,
     );
   const least = gaugeWalls(job)[2]!;
   const letters = letteringsFor(job, 2, least).map((l) => fixed(l.capHeight, 1));
@@ -109,14 +120,14 @@ function printed(flow: Flow, pen: Pen, { section, piece, file }: MadeGauge, job:
   );
 }
 
-/** Size of a rung's bore or spigot in words, mm. */
-function sizeAt(section: Section, job: Job, c: number): string {
+/** Size of a rung's bore or spigot in words, to 0.01 mm or 0.0001 in. */
+function sizeAt(section: Section, job: Job, c: number, units: Units): string {
   const { shape } = section;
   const size = gaugeSize(section, job);
-  if (gaugeKind(section, job) === 'spigot') return fixed(size - c, 2);
+  if (gaugeKind(section, job) === 'spigot') return units.length(size - c, 2);
   return shape.kind === 'rectangle'
-    ? `${fixed(shape.width + c, 2)} × ${fixed(shape.height + c, 2)}`
-    : fixed(size + c, 2);
+    ? `${units.length(shape.width + c, 2)} × ${units.length(shape.height + c, 2)}`
+    : units.length(size + c, 2);
 }
 
 function drawMesh(pen: Pen, { x, y }: Area, lines: readonly SeenLine[], height: number, factor: number): void {
@@ -129,10 +140,10 @@ function drawMesh(pen: Pen, { x, y }: Area, lines: readonly SeenLine[], height: 
 function kerf(flow: Flow, file: string, job: Job): void {
   flow.heading(`Kerf comb: ${file}`, 30);
   flow.paragraph(
-    `Cut it once from the job’s own sheet with nothing offset, at the power and speed of the panels. Push the ten pieces together and measure their width over all: kerf = (100 mm − width) / 10. Enter it as`,
+    `Cut it once from the job’s own sheet with nothing offset, at the power and speed of the panels. Push the ten pieces together and measure their width over all: kerf = (100 mm − width) / 10${job.output.units === 'SI' ? '. Enter it as' : ', or from a width in inches, kerf = (3.937 in − width) × 2.54: both in mm. Enter it in mm:'}`,
   );
   flow.paragraph('"cutter": { "kerf_mm": 0.00, "kerfMeasured": true }', { bold: true });
   flow.paragraph(
-    `Width measured: ______________ mm        Sheet: ______________        Until then ${fixed(job.cutter.kerf_mm, 2)} mm stand${job.cutter.kerfMeasured ? ', measured' : ', not measured'}.`,
+    `Width measured: ______________ ${job.output.units === 'SI' ? 'mm' : 'in or mm'}        Sheet: ______________        Until then ${fixed(job.cutter.kerf_mm, 2)} mm stand${job.cutter.kerfMeasured ? ', measured' : ', not measured'}.`,
   );
 }

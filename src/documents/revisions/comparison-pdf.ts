@@ -2,6 +2,7 @@ import type { ComparedPart, Comparison, Difference } from '../../model/compariso
 import type { Job } from '../../model/job/index.js';
 import { PART_KINDS, type PartKind } from '../../model/part-kind.js';
 import type { Truss } from '../../model/truss.js';
+import { LENGTH_IN_MM } from '../../model/units.js';
 import { CAUTION } from '../cautions.js';
 import { writeFitted } from '../kit/fit-text.js';
 import { Flow } from '../kit/flow.js';
@@ -9,6 +10,7 @@ import type { Fonts } from '../kit/fonts.js';
 import { INK, SIZE } from '../kit/ink.js';
 import { Paper, type Written } from '../kit/paper.js';
 import { type Clouded, drawRevisionClouds } from '../kit/revision-cloud.js';
+import { fixed, type Units, unitsOf } from '../kit/units.js';
 import { type Camera, FRONT, ISOMETRIC, PLAN } from '../kit/view/camera.js';
 import { drawTrussView, fillFactor, type ViewStrut } from '../kit/view/truss-view.js';
 import { byMark } from '../member-rows.js';
@@ -35,14 +37,16 @@ const CLEAR = { strut: 2.6, node: 4.6, panel: 2.6 } as const;
 /** comparison.pdf: counts, the truss with clouds round what must be made, and every part that is not unchanged. */
 export async function comparisonPdf(source: ComparisonSource, fonts: Fonts): Promise<Written> {
   const { comparison: c, job } = source;
-  const paper = new Paper({ job, fonts, hold: [], notMade: [] }, 'Revision', CAUTION, 'mm, mm², °');
+  const units = unitsOf(job, 0);
+  const words = `${units.lengthUnit}, ${units.areaUnit}, °`;
+  const paper = new Paper({ job, fonts, hold: [], notMade: [] }, 'Revision', CAUTION, words);
   paper.addSheet({
     title: `Revision ${c.from.revision} to ${c.to.revision}`,
     instruction: `${c.from.title}, revision ${c.from.revision}, against ${c.to.title}, revision ${c.to.revision}. Make again what is changed or new; take away what is withdrawn.`,
   });
   const flow = new Flow(paper);
   counts(flow, c);
-  lists(flow, c);
+  lists(flow, c, job);
   if (source.after) for (const camera of [ISOMETRIC, PLAN, FRONT]) picture(paper, camera, source.after, source);
   return paper.finish();
 }
@@ -68,12 +72,12 @@ interface Row extends ComparedPart {
   readonly what: string;
 }
 
-function lists(flow: Flow, c: Comparison): void {
+function lists(flow: Flow, c: Comparison, job: Job): void {
   const plain =
     (state: string) =>
     (p: ComparedPart): Row => ({ ...p, state, what: '' });
   const rows: Row[] = [
-    ...c.changed.map((p): Row => ({ ...p, state: 'Changed', what: sayDifferences(p.what) })),
+    ...c.changed.map((p): Row => ({ ...p, state: 'Changed', what: sayDifferences(p.what, job) })),
     ...c.new.map(plain('New')),
     ...c.relabelled.map(
       (p): Row => ({ ...p, state: 'Relabelled only', what: p.was === p.mark ? 'other marks on it' : `was ${p.was}` }),
@@ -106,16 +110,47 @@ function lists(flow: Flow, c: Comparison): void {
 /** Differences that a row names; the rest are counted. */
 const NAMED = 5;
 
-function sayDifferences(what: readonly Difference[]): string {
+function sayDifferences(what: readonly Difference[], job: Job): string {
   if (what.length === 0) return 'material, process or marks';
-  const side = (v: Difference['from']): string =>
-    v === null ? 'none' : typeof v === 'number' ? String(Math.round(v * 1000) / 1000) : v;
-  const told = what.slice(0, NAMED).map((d) => `${nameOf(d.name)} ${side(d.from)} to ${side(d.to)}`);
+  const told = what.slice(0, NAMED).map((d) => {
+    const [from, to] = sides(d, job);
+    return `${nameOf(d.name)} ${from} to ${to}`;
+  });
   return `${told.join('; ')}${what.length > NAMED ? `; and ${what.length - NAMED} more` : ''}`;
 }
 
-/** A measure's name in words: its unit stands in the title block. */
-const nameOf = (name: string): string => name.replace(/_(mm2|mm|deg)\b/, '').replaceAll('_', ' ');
+/** Both values of a measure in the papers' units; where they would read the same, with the decimals that tell them apart. */
+function sides({ name, from, to }: Difference, job: Job): readonly [string, string] {
+  const both = (number: (v: number) => string): readonly [string, string] => {
+    const say = (v: Difference['from']): string => (v === null ? 'none' : typeof v === 'number' ? number(v) : v);
+    return [say(from), say(to)];
+  };
+  const exact = (v: number): string => String(Math.round(v * 1000) / 1000);
+  if (job.output.units === 'SI') return both(exact);
+  const units = unitsOf(job, 0);
+  const said = both((v) => measure(name, v, units) ?? exact(v));
+  return said[0] === said[1] ? both((v) => fineMeasure(name, v) ?? exact(v)) : said;
+}
+
+const [LENGTH, AREA] = [/_mm\b/, /_mm2\b/] as const;
+/** What a rule or a saw's stop is set to. */
+const RULED = /^(cut_length|edge)_mm\b/;
+
+function measure(name: string, v: number, units: Units): string | null {
+  if (AREA.test(name)) return units.area(v);
+  if (!LENGTH.test(name)) return null;
+  return name.startsWith('cut_length') ? units.cut(v) : units.length(v, RULED.test(name) ? 1 : 2);
+}
+
+/** A length to 0.00001 in, an area to 0.0001 in²: a comparison tells what differs by 0.0015 mm. */
+function fineMeasure(name: string, v: number): string | null {
+  if (AREA.test(name)) return fixed(v / LENGTH_IN_MM.in ** 2, 4);
+  return LENGTH.test(name) ? fixed(v / LENGTH_IN_MM.in, 5) : null;
+}
+
+/** A measure's name in words, parted from its value where it ends in a mark or number: its unit stands in the title block. */
+const nameOf = (name: string): string =>
+  `${name.replace(/_(mm2|mm|deg)\b/, '').replaceAll('_', ' ')}${name.includes(' ') ? ':' : ''}`;
 
 function picture(paper: Paper, camera: Camera, after: Truss, { comparison: c, before }: ComparisonSource): void {
   const index = new Map(after.nodes.map((n, i) => [n.mark, i]));

@@ -54,3 +54,25 @@ it('says times as a workshop does', () => {
   expect(sayDuration(59 * 60)).toBe('59 min');
   expect(sayDuration(7500)).toBe('2 h 05 min');
 });
+
+it('tells sizes, volumes and masses in US customary units where the papers are in them, the printer’s figures in its mm', async () => {
+  const box = [50.8, 25.4, 38.1] as const;
+  const piece = { mark: 'N001', piece: '', box, volume: 16387.064, mass: 0.45359237 };
+  const printers = printersSchema.parse([
+    { name: 'inch machine', width_mm: 254, depth_mm: 203.2, flow_mm3_per_s: 10, layerChange_s: 3, layer_mm: 0.25 },
+  ]);
+  const records = packRecords();
+  const output = { ...records.job.output, paper: 'Letter' as const, units: 'US' as const, fractions: true };
+  const beds = planBeds([piece], printers);
+  const sheet = (await bedSheets({ ...records, job: { ...records.job, output }, beds }, fonts))!;
+  expect(overlaps(sheet.placed)).toEqual([]);
+  expect(outside(sheet.bytes)).toEqual([]);
+  const text = textOf(sheet.bytes).replaceAll(/\s+/g, ' ');
+  // 1 in³ = 16 387.064 mm³, 1 lb = 0.453 592 37 kg (NIST SP 811 (2008), appendix B.8).
+  expect(text).toContain('Bed 10 × 8 in, not drawn to scale. 1.00 in³, 1.000 lb.');
+  expect(text).toMatch(/(2 × 1|1 × 2) × 1 1\/2 1\.000 1\.000/);
+  expect(text).toContain('1 pieces on 1 beds: 1.0 in³, 1.000 lb');
+  expect(text).toContain('in the job, in mm as there');
+  expect(text).toContain('= 16387 mm³ / 10.0 mm³/s');
+  expect(text).not.toContain('cm³');
+});

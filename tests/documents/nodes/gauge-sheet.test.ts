@@ -41,3 +41,19 @@ it('says what swelling adds outdoors: 0.4 % of beech for each per cent of moistu
   const drier = { ...job, fit: { ...job.fit, moistureChange: 4 } };
   expect(textOf((await sheetOf(drier)).bytes)).toContain('Outdoors 0.13 mm come on top');
 });
+
+it('tells bores in inches where the papers are in them, and what goes into the job in its mm', async () => {
+  const plain = defaultJob('Table');
+  const sheet = await sheetOf({ ...plain, output: { ...plain.output, paper: 'Letter', units: 'US', fractions: true } });
+  expect(overlaps(sheet.placed)).toEqual([]);
+  expect(outside(sheet.bytes)).toEqual([]);
+  const text = textOf(sheet.bytes).replaceAll(/\s+/g, ' ');
+  // 8.20 mm / 25.4 = 0.32283 in; 0.20 mm = 0.00787 in (NIST SP 811 (2008), appendix B.8).
+  expect(text).toMatch(/0\.20 0\.0079 0\.3228/);
+  expect(text).toMatch(/0\.60 0\.0236 0\.3386/);
+  expect(text).not.toContain('8.20');
+  expect(text).toContain('Enter it in mm, as the first column and the gauge itself have it:');
+  // A comb of 98.0 mm has a kerf of 0.20 mm: (3.937 - 98 / 25.4) x 2.54 = 0.200.
+  expect((3.937 - 98 / 25.4) * 2.54).toBeCloseTo((100 - 98) / 10, 3);
+  expect(text).toContain('kerf = (3.937 in − width) × 2.54: both in mm');
+});
