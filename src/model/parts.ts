@@ -169,8 +169,9 @@ export interface PanelHold {
   readonly fixings: number;
   /** How far a channel or clip still reaches over the panel once it has moved, mm. */
   readonly bite: number | null;
-  /** Towards the struts' inside. */
+  /** Evenly spread load that it bears towards the struts' inside, N; Infinity: the struts carry it; null: not stated. */
   readonly pressure: number | null;
+  /** The same away from it. */
   readonly suction: number | null;
 }
 

@@ -15,6 +15,8 @@ import { givenForces } from '../statics/given-forces.js';
 import { besideAnalysis, forceSource, reciprocalOf } from '../statics/reciprocal/reciprocal.js';
 import { depthFindings, requiredDepths } from '../strength/depths.js';
 import { judge } from '../strength/judge.js';
+import { statedHolds } from '../strength/panel-holds.js';
+import { rulesOf } from '../strength/rules.js';
 import { giveClosingDetails } from './closing.js';
 import { type Fixings, fix, layOut, shallowHubs, withPanels } from './detail.js';
 import { settle } from './settle.js';
@@ -67,7 +69,7 @@ export function assess(file: Truss, asked: Job): Assessment {
     job,
     topology,
     forms: layout.forms,
-    parts: made.parts,
+    parts: { ...made.parts, panels: statedHolds(truss, made.parts.panels, job, rulesOf(job)) },
     forces: shownForces(source, claimed, solution, truss.members.length),
     equilibrium,
     solution,

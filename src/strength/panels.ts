@@ -1,10 +1,10 @@
-import { dot, subtract } from '../maths/vec3.js';
 import type { Finding } from '../model/finding.js';
 import type { Job } from '../model/job/index.js';
-import type { PanelPart, Parts, Point2 } from '../model/parts.js';
+import type { Parts } from '../model/parts.js';
 import type { Utilisation } from '../model/solution.js';
 import type { Truss } from '../model/truss.js';
 import type { Judged } from './members.js';
+import { panelCorners } from './panel/corners.js';
 import { judgePanel } from './panel/judge-panel.js';
 import type { PanelCombination } from './panel/load.js';
 import type { Rules } from './standard.js';
@@ -17,12 +17,7 @@ export function judgePanels(
   job: Job,
   rules: Rules,
 ): Judged {
-  const at = new Map(truss.nodes.map((n) => [n.mark, n.at]));
-  const cornersOf = ({ frame, edges }: PanelPart): readonly Point2[] =>
-    edges.map((edge) => {
-      const d = subtract(at.get(edge.from)!, frame.origin);
-      return [dot(d, frame.x), dot(d, frame.y)];
-    });
+  const cornersOf = panelCorners(truss);
   const utilisations: Utilisation[] = [];
   const findings: Finding[] = [];
   for (const part of parts.panels) {

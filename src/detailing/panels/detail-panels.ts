@@ -9,7 +9,7 @@ import { type PanelChoice, panelChoice } from './choice.js';
 import { engrave } from './engraving.js';
 import { type FaceLoop, faceLoop } from './face-loop.js';
 import { flatFigure, foldedFigure } from './fold.js';
-import { panelHold, sayHold } from './holding.js';
+import { panelHold, sayHold, whyNotHeld } from './holding.js';
 import { EDGE_OVER_DIAMETER, holesAlong, ON_LINE, spanOnLine } from './holes.js';
 import { isOutdoors, movementStrain } from './movement.js';
 import { type Patch, patchesOf } from './patches.js';
@@ -71,21 +71,13 @@ function detailPanel(setting: PanelSetting, face: Face, patch: Patch, report: (f
     report(finding('panel-hole-near-edge', mark, { value: row.nearest, limit: leastEdge }));
 
   const edgeLoss = Math.max(0, ...seats.movements.map((m) => job.panels.gap_mm + 2 * m));
-  const clips = seats.edges.reduce((sum, e) => sum + Math.max(1, Math.floor(e.length / job.panels.holes.pitch_mm)), 0);
-  const hold = panelHold(job, choice.seating, job.panels.holdBy === 'clips' ? clips : row.centres.length, edgeLoss);
-  if (
-    hold.by === 'none' ||
-    (hold.by === 'channel' && hold.bite! <= 0) ||
-    (hold.by !== 'channel' && hold.fixings === 0)
-  ) {
-    const why =
-      hold.by === 'none'
-        ? ''
-        : hold.by === 'channel'
-          ? 'the channel does not reach over it once it has moved'
-          : `there is no room for a fixing with a hole of ${row.diameter.toFixed(1)} mm`;
-    report(finding('panel-not-held', mark, { about: { why } }));
-  }
+  const clips = seats.edges.reduce(
+    (sum, e) => (e.strut === null ? sum : sum + Math.max(1, Math.floor(e.length / job.panels.holes.pitch_mm))),
+    0,
+  );
+  const hold = panelHold(job, job.panels.holdBy === 'clips' ? clips : row.centres.length, edgeLoss);
+  const why = whyNotHeld(hold, row.diameter);
+  if (why !== null) report(finding('panel-not-held', mark, { about: { why } }));
 
   const engraved = job.panels.mark
     ? engrave(outline, row.holes.map(toRing), wordsOf(mark, loop, seats), job.panels.markHeight_mm)

@@ -7,18 +7,13 @@ import type { Material } from '../../model/material.js';
 import type { PanelPart, Point2 } from '../../model/parts.js';
 import type { Utilisation } from '../../model/solution.js';
 import { governing, type Rules, type Verdict } from '../standard.js';
+import { PANEL_LIMITS } from './limits.js';
 import { combinedPressure, type PanelCombination, panelPressures, standingCases } from './load.js';
 import { type Plate, type PlateResponse, plateOf } from './plate.js';
 import { panelSupports, type Sense } from './supports.js';
 
 /** Growth of a sheet's deflection under standing load: the modulus of acrylic and its like halves over years (from memory). */
 const CREEP_OF_PLASTIC = 1;
-/** A panel stays in its channel or under its clips while it bows by no more than this share of their bite. */
-const SHARE_OF_BITE = 0.5;
-/** Poisson's ratio where the material gives none. */
-const POISSON = 0.3;
-/** Arcs round hubs do not matter to the bending of a sheet: corners nearer to a side than this share of the panel's size are left out. */
-const COARSE = 0.005;
 /** Pressures below this are round-off, MPa: a thousandth of the weight of a sheet of paper. */
 const NO_PRESSURE = 1e-9;
 
@@ -49,7 +44,7 @@ export function judgePanel(
 ): PanelJudgement {
   const { material } = given;
   if (material === null || given.outline.length < 3) return { utilisation: null, findings: [] };
-  const part = { ...given, outline: coarsePolygon(given.outline, COARSE * Math.sqrt(given.area)) };
+  const part = { ...given, outline: coarsePolygon(given.outline, PANEL_LIMITS.coarse * Math.sqrt(given.area)) };
   const pressures = panelPressures(part, job);
   const standing = standingCases(job).reduce((sum, name) => sum + (pressures.get(name) ?? 0), 0);
   const findings: Finding[] = [];
@@ -57,7 +52,7 @@ export function judgePanel(
   let shape: Plate | null = null;
   for (const load of worstPressures(combinations, pressures)) {
     const supports = panelSupports(part, corners, job, load.sense);
-    shape ??= plateOf(part.outline, material.poisson ?? POISSON);
+    shape ??= plateOf(part.outline, material.poisson ?? PANEL_LIMITS.poisson);
     const plate = supports && shape?.bend(supports);
     if (!plate) {
       // On a table the missing hold is said already; there is no load to speak of.
@@ -159,11 +154,11 @@ function sagCheck(
   if (holdBy !== 'channel' && holdBy !== 'clips') return [];
   const bite = part.hold?.bite ?? job.panels.bite_mm;
   if (bite <= 0) return [];
-  const nu = material.poisson ?? POISSON;
+  const nu = material.poisson ?? PANEL_LIMITS.poisson;
   const bending = (material.modulus * part.thickness ** 3) / (12 * (1 - nu * nu));
   const creep = material.family === 'board' ? kDef('board', rules.serviceClass) : CREEP_OF_PLASTIC;
   const sag = ((load.q + creep * stands) * plate.deflection) / bending;
-  const limit = SHARE_OF_BITE * bite;
+  const limit = PANEL_LIMITS.shareOfBite * bite;
   if (sag > limit)
     findings.push(
       finding('panel-sags', part.mark, { value: sag, limit, about: { combination: load.combination, holdBy } }),
