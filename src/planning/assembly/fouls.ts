@@ -40,12 +40,42 @@ export function strutFouls(
   const outward = (node: number): Vec3 => directionFrom(setting, link, node);
   const back = dot(move, outward(far));
   const aside = addScaled(move, outward(far), -back);
-  for (const [node, sign] of [
-    [far, 1],
-    [hub, -1],
-  ] as const)
-    if (tiltFouls(setting, node, link, scale(aside, sign))) return setting.topology.truss.nodes[node]!.mark;
-  return passesBy(setting, hub, far, link, move, scale(outward(far), back), stands);
+  const memory = remembered(setting, move, `${hub} ${link.strut}`);
+  if (memory.tilts === undefined) {
+    const node = [far, hub].find((n) => tiltFouls(setting, n, link, scale(aside, n === far ? 1 : -1)));
+    memory.tilts = node === undefined ? null : setting.topology.truss.nodes[node]!.mark;
+  }
+  return memory.tilts ?? passesBy(setting, hub, far, link, move, scale(outward(far), back), stands, memory.hits);
+}
+
+/** What one way in was found to do: of a strut, what its tilting runs into; of a strut or a hub, what it hits of each strut that may stand. */
+interface WayIn {
+  tilts?: string | null;
+  readonly hits: Map<number, string | null>;
+}
+
+/** Orders are tried one after another, and a hub is looked at anew with each neighbour: by setting, movement, and who moves. */
+const waysIn = new WeakMap<AssemblySetting, WeakMap<Vec3, Map<string, WayIn>>>();
+
+/** Trusses of more struts are ordered once, so what is kept for them would only take room. */
+const MOST_REMEMBERED = 4800;
+
+function remembered(setting: AssemblySetting, move: Vec3, who: string): WayIn {
+  if (setting.links.length > MOST_REMEMBERED) return { hits: new Map() };
+  let here = waysIn.get(setting);
+  if (!here) waysIn.set(setting, (here = new WeakMap()));
+  let moves = here.get(move);
+  if (!moves) here.set(move, (moves = new Map()));
+  let way = moves.get(who);
+  if (!way) moves.set(who, (way = { hits: new Map() }));
+  return way;
+}
+
+/** The answer kept for a strut that stands, found when it is first asked for. */
+function hitOf(hits: Map<number, string | null>, strut: number, find: () => string | null): string | null {
+  let hit = hits.get(strut);
+  if (hit === undefined) hits.set(strut, (hit = find()));
+  return hit;
 }
 
 /** Whether a strut that tilts about the mouth of its socket, by `aside` at its other end, runs into the rest of the hub. */
@@ -76,6 +106,7 @@ function passesBy(
   move: Vec3,
   back: Vec3,
   stands: (strut: number) => boolean,
+  hits: Map<number, string | null>,
 ): string | null {
   const { nodes, members } = setting.topology.truss;
   const [atHub, atFar] = [nodes[hub]!.at, nodes[far]!.at];
@@ -85,17 +116,21 @@ function passesBy(
   const start = addScaled(atFar, inward, setbackAt(link, far));
   for (const s of setting.near(middle, link.length / 2 + length(move))) {
     if (s === link.strut || !stands(s)) continue;
-    const other = setting.links[s]!;
-    // What is held by the loose hub goes with it.
-    if (other.ends.includes(hub)) continue;
-    const [c, d] = clearAxis(setting, other);
-    const near = radius + linkRadius(other) - TOUCH;
-    if (segmentDistance(start, atHub, c, d).distance < near) continue;
-    for (let k = 1; k <= PLACES; k++) {
-      const t = k / PLACES;
-      const found = segmentDistance(addScaled(start, back, t), addScaled(atHub, move, t), c, d);
-      if (found.distance < near) return members[s]!.mark;
-    }
+    const hit = hitOf(hits, s, () => {
+      const other = setting.links[s]!;
+      // What is held by the loose hub goes with it.
+      if (other.ends.includes(hub)) return null;
+      const [c, d] = clearAxis(setting, other);
+      const near = radius + linkRadius(other) - TOUCH;
+      if (segmentDistance(start, atHub, c, d).distance < near) return null;
+      for (let k = 1; k <= PLACES; k++) {
+        const t = k / PLACES;
+        const found = segmentDistance(addScaled(start, back, t), addScaled(atHub, move, t), c, d);
+        if (found.distance < near) return members[s]!.mark;
+      }
+      return null;
+    });
+    if (hit !== null) return hit;
   }
   return null;
 }
@@ -111,24 +146,28 @@ export function hubFouls(
   if (!room || length(move) < TOUCH) return null;
   const { nodes, members } = setting.topology.truss;
   const reach = room.reach + length(move);
-  let pieces: ReturnType<typeof room.piecesBut> | null = null;
+  const { hits } = remembered(setting, move, `${hub}`);
   for (const s of setting.near(room.at, reach + setting.thickest)) {
     const link = setting.links[s]!;
     if (!stands(s) || link.ends.includes(hub)) continue;
-    const [a, b] = clearAxis(setting, link);
-    const radius = linkRadius(link);
-    if (radius === 0 || segmentDistance(room.at, room.at, a, b).distance > reach + radius) continue;
-    pieces ??= room.piecesBut(null);
-    const bar = cylinderOf(a, b, radius - TOUCH);
-    if (pieces.some((p) => convexDistance(p, bar) > 0 && convexDistance(sweptBy(p, move), bar) === 0))
-      return members[s]!.mark;
-    for (const n of link.ends) {
-      const other = setting.roomAt(n);
-      if (!other || distance(other.at, room.at) > reach + other.reach) continue;
-      for (const q of other.piecesBut(null))
-        if (pieces.some((p) => convexDistance(p, q) > TOUCH && convexDistance(sweptBy(p, move), q) === 0))
-          return nodes[n]!.mark;
-    }
+    const hit = hitOf(hits, s, () => {
+      const [a, b] = clearAxis(setting, link);
+      const radius = linkRadius(link);
+      if (radius === 0 || segmentDistance(room.at, room.at, a, b).distance > reach + radius) return null;
+      const pieces = room.piecesBut(null);
+      const bar = cylinderOf(a, b, radius - TOUCH);
+      if (pieces.some((p) => convexDistance(p, bar) > 0 && convexDistance(sweptBy(p, move), bar) === 0))
+        return members[s]!.mark;
+      for (const n of link.ends) {
+        const other = setting.roomAt(n);
+        if (!other || distance(other.at, room.at) > reach + other.reach) continue;
+        for (const q of other.piecesBut(null))
+          if (pieces.some((p) => convexDistance(p, q) > TOUCH && convexDistance(sweptBy(p, move), q) === 0))
+            return nodes[n]!.mark;
+      }
+      return null;
+    });
+    if (hit !== null) return hit;
   }
   return null;
 }
