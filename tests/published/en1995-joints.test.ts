@@ -34,6 +34,14 @@ it('embedding across the grain of softwood with a bolt of 12 mm is lower by 1.35
   expect(embeddingAtAngle(fh, 12, 0)).toBe(fh);
 });
 
+it('embedding at 30°, 45° and 60° to the grain falls by 1.1325, 1.265 and 1.3975 with a bolt of 12 mm', () => {
+  // EN 1995-1-1 (8.31), from memory, by hand: k90 sin² + cos² with k90 = 1.53; 1.59 with a bolt of 16 mm.
+  const at = (d: number, degrees: number) => 20 / embeddingAtAngle(20, d, (degrees * Math.PI) / 180);
+  expect([30, 45, 60].map((a) => at(12, a).toFixed(4))).toEqual(['1.1325', '1.2650', '1.3975']);
+  expect(at(16, 45).toFixed(4)).toBe('1.2950');
+  expect(at(12, 150)).toBeCloseTo(at(12, 30), 12);
+});
+
 it('rows: three bolts at 5 d count as 2.12; one counts as one', () => {
   // 3^0.9 (5/13)^0.25 = 2.6879 x 0.7875 = 2.1167, by hand from (8.34), from memory.
   expect(effectiveNumber(3, 60, 12)).toBeCloseTo(2.1167, 3);
