@@ -136,12 +136,15 @@ it.each([1, 0.4])(
     const springs = [0, L].map((at) => ({ at, stiffness: k }));
     const sub = bar(4, [ALL, ALL], springs);
     const straight = new Float64Array(sub.frame.fixed.length);
-    const { actions } = act(sub, { line: [0, 0, -0.3] }, softer, straight);
+    const { actions } = act(sub, { line: [0, 0.2, -0.3] }, softer, straight);
     // Larger than the middle's moment, which is what is left of w L² / 8, with this spring.
     const wanted = (0.3 * L ** 2) / 12 / (1 + (2 * EIY) / (k * L));
     expect(wanted).toBeGreaterThan((0.3 * L ** 2) / 16);
+    const across = (0.2 * L ** 2) / 12 / (1 + (2 * EIZ) / (k * L));
+    expect(across).toBeGreaterThan((0.2 * L ** 2) / 16);
     // Each element's own part of w l² / 8 is added to its larger end.
     expect(actions[0][0].momentY).toBeCloseTo(wanted + (0.3 * (L / 4) ** 2) / 8, 4);
+    expect(actions[0][0].momentZ).toBeCloseTo(across + (0.2 * (L / 4) ** 2) / 8, 4);
   },
 );
 
