@@ -13,8 +13,8 @@ export interface Faces {
   readonly read: Map<Face, ReadFace>;
   /** Widths in thousandths of the type size, by face and text. */
   readonly widths: Map<string, number>;
-  /** Whether a face has a character, by face and character. */
-  readonly covered: Map<string, boolean>;
+  /** Whether a face has a character, by its code point. */
+  readonly covered: Readonly<Record<Face, Map<number, boolean>>>;
   /** Laid-out text, by face and text. */
   readonly runs: Map<string, unknown>;
 }
@@ -24,7 +24,10 @@ const known = new WeakMap<Fonts, Faces>();
 /** The faces of these bytes; the same for every paper that is handed the same object, so that nothing outlives a pack. */
 export function facesOf(fonts: Fonts): Faces {
   let faces = known.get(fonts);
-  if (!faces) known.set(fonts, (faces = { read: new Map(), widths: new Map(), covered: new Map(), runs: new Map() }));
+  if (!faces) {
+    const covered = { regular: new Map(), bold: new Map(), fallback: new Map(), fallbackBold: new Map() };
+    known.set(fonts, (faces = { read: new Map(), widths: new Map(), covered, runs: new Map() }));
+  }
   return faces;
 }
 

@@ -34,17 +34,23 @@ export function corners(box: Box): Point[] {
 
 /** Whether two boxes overlap by more than `slack` mm: separating axes (Gottschalk, Lin, Manocha 1996) in the plane. */
 export function overlap(a: Box, b: Box, slack = 0): boolean {
-  const [ra, rb] = [Math.hypot(a.width, a.height) / 2, Math.hypot(b.width, b.height) / 2];
-  const [dx, dy] = [b.x - a.x, b.y - a.y];
+  const dx = b.x - a.x;
+  const dy = b.y - a.y;
+  const upright = a.angle === 0 && b.angle === 0;
+  // The cheaper test first: labels are tried in their thousands.
+  if (upright && !(Math.abs(dx) < (a.width + b.width) / 2 - slack && Math.abs(dy) < (a.height + b.height) / 2 - slack))
+    return false;
+  const ra = Math.hypot(a.width, a.height) / 2;
+  const rb = Math.hypot(b.width, b.height) / 2;
   if (dx * dx + dy * dy >= (ra + rb - slack) ** 2) return false;
-  if (a.angle === 0 && b.angle === 0)
-    return Math.abs(dx) < (a.width + b.width) / 2 - slack && Math.abs(dy) < (a.height + b.height) / 2 - slack;
+  if (upright) return true;
   return !parted(a, b, dx, dy, slack) && !parted(b, a, dx, dy, slack);
 }
 
 /** Whether one of the axes of `a` parts the two boxes. */
 function parted(a: Box, b: Box, dx: number, dy: number, slack: number): boolean {
-  const [c, s] = [Math.cos(a.angle), Math.sin(a.angle)];
+  const c = Math.cos(a.angle);
+  const s = Math.sin(a.angle);
   return (
     Math.abs(dx * c + dy * s) - a.width / 2 - reach(b, c, s) > -slack ||
     Math.abs(dy * c - dx * s) - a.height / 2 - reach(b, -s, c) > -slack
@@ -53,7 +59,9 @@ function parted(a: Box, b: Box, dx: number, dy: number, slack: number): boolean 
 
 /** Half the box's extent along the unit vector (ux, uy). */
 export function reach(box: Box, ux: number, uy: number): number {
-  const [c, s] = [Math.cos(box.angle), Math.sin(box.angle)];
+  if (box.angle === 0) return (Math.abs(ux) * box.width + Math.abs(uy) * box.height) / 2;
+  const c = Math.cos(box.angle);
+  const s = Math.sin(box.angle);
   return (Math.abs(ux * c + uy * s) * box.width + Math.abs(uy * c - ux * s) * box.height) / 2;
 }
 
@@ -63,23 +71,30 @@ export function lengthInside(box: Box, p: Point, q: Point): number {
   const radius = (box.width + box.height) / 2;
   if (Math.min(p[0], q[0]) > box.x + radius || Math.max(p[0], q[0]) < box.x - radius) return 0;
   if (Math.min(p[1], q[1]) > box.y + radius || Math.max(p[1], q[1]) < box.y - radius) return 0;
-  const [c, s] = [Math.cos(box.angle), Math.sin(box.angle)];
-  const local = ([x, y]: Point): Point => [(x - box.x) * c + (y - box.y) * s, (y - box.y) * c - (x - box.x) * s];
-  const [a, b] = [local(p), local(q)];
-  let [low, high] = [0, 1];
-  const half = [box.width / 2, box.height / 2];
-  for (const axis of [0, 1] as const) {
-    const d = b[axis] - a[axis];
+  // Numbers and no arrays: millions of pairs are measured for one paper.
+  const c = Math.cos(box.angle);
+  const s = Math.sin(box.angle);
+  const au = (p[0] - box.x) * c + (p[1] - box.y) * s;
+  const du = (q[0] - box.x) * c + (q[1] - box.y) * s - au;
+  const av = (p[1] - box.y) * c - (p[0] - box.x) * s;
+  const dv = (q[1] - box.y) * c - (q[0] - box.x) * s - av;
+  let low = 0;
+  let high = 1;
+  for (let axis = 0; axis < 2; axis++) {
+    const half = (axis === 0 ? box.width : box.height) / 2;
+    const a = axis === 0 ? au : av;
+    const d = axis === 0 ? du : dv;
     if (Math.abs(d) < 1e-12) {
-      if (Math.abs(a[axis]) >= half[axis]!) return 0;
+      if (Math.abs(a) >= half) return 0;
       continue;
     }
-    const [t0, t1] = [(-half[axis]! - a[axis]) / d, (half[axis]! - a[axis]) / d];
+    const t0 = (-half - a) / d;
+    const t1 = (half - a) / d;
     low = Math.max(low, Math.min(t0, t1));
     high = Math.min(high, Math.max(t0, t1));
     if (low >= high) return 0;
   }
-  return (high - low) * Math.hypot(b[0] - a[0], b[1] - a[1]);
+  return (high - low) * Math.hypot(du, dv);
 }
 
 /** The area less `by` mm on every side. */

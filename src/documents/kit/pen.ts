@@ -1,6 +1,7 @@
 import PDFDocument from 'pdfkit';
 import { type Face, type Faces, facesOf, MOST_RUNS, type ReadFace } from './faces.js';
 import type { Fonts } from './fonts.js';
+import { type ContentStream, gatherContent } from './gathered-content.js';
 import { type Box, corners, type Point } from './geometry2.js';
 import { INK, LINE, SIZE } from './ink.js';
 import type { LineStyle, PlacedText, TextStyle } from './pen-style.js';
@@ -29,6 +30,7 @@ interface Inner {
     readonly font: ReadFace;
     layoutRun(text: string, features?: unknown): unknown;
   };
+  readonly page: { readonly content: ContentStream };
   info: Record<string, unknown>;
 }
 
@@ -83,6 +85,7 @@ export class Pen {
   /** Adds a sheet of the size in mm and draws on it from now on. */
   addSheet(width: number, height: number): void {
     this.doc.addPage({ size: [width * POINTS, height * POINTS], margin: 0 });
+    gatherContent((this.doc as unknown as Inner).page.content);
     this.current = this.count++;
   }
 
@@ -236,9 +239,10 @@ export class Pen {
   }
 
   private runs(text: string, bold: boolean): { readonly face: Face; readonly text: string }[] {
+    const own: Face = bold ? 'bold' : 'regular';
+    if (this.hasAll(own, text)) return [{ face: own, text }];
     const runs: { face: Face; text: string }[] = [];
     for (const char of text) {
-      const own: Face = bold ? 'bold' : 'regular';
       const behind: Face = bold ? 'fallbackBold' : 'fallback';
       const covered = this.has(own, char);
       const face = covered ? own : behind;
@@ -271,12 +275,26 @@ export class Pen {
   }
 
   private has(face: Face, char: string): boolean {
-    const key = face + char;
-    let known = this.faces.covered.get(key);
+    return this.hasCode(face, char.codePointAt(0)!);
+  }
+
+  /** Whether a face has every character of a text that is not empty: nearly every text, and the test makes no strings. */
+  private hasAll(face: Face, text: string): boolean {
+    for (let i = 0; i < text.length; i++) {
+      const code = text.codePointAt(i)!;
+      if (!this.hasCode(face, code)) return false;
+      if (code > 0xffff) i++;
+    }
+    return text !== '';
+  }
+
+  private hasCode(face: Face, code: number): boolean {
+    const covered = this.faces.covered[face];
+    let known = covered.get(code);
     if (known === undefined) {
       this.take(face);
-      known = (this.doc as unknown as Inner)._font.font.hasGlyphForCodePoint(char.codePointAt(0)!);
-      this.faces.covered.set(key, known);
+      known = (this.doc as unknown as Inner)._font.font.hasGlyphForCodePoint(code);
+      covered.set(code, known);
     }
     return known;
   }

@@ -30,13 +30,20 @@ export class CellGrid<T> {
   /** Calls `visit` once for each thing near the rectangle until it answers true; returns whether it did. */
   some(x0: number, y0: number, x1: number, y1: number, visit: (item: T) => boolean): boolean {
     const stamp = ++this.query;
-    for (let i = Math.floor(x0 / CELL); i <= Math.floor(x1 / CELL); i++)
-      for (let j = Math.floor(y0 / CELL); j <= Math.floor(y1 / CELL); j++)
-        for (const { item, id } of this.cells.get(key(i, j)) ?? []) {
-          if (this.seen[id] === stamp) continue;
-          this.seen[id] = stamp;
+    const seen = this.seen;
+    const lastRow = Math.floor(y1 / CELL);
+    const lastColumn = Math.floor(x1 / CELL);
+    for (let i = Math.floor(x0 / CELL); i <= lastColumn; i++)
+      for (let j = Math.floor(y0 / CELL); j <= lastRow; j++) {
+        const cell = this.cells.get(key(i, j));
+        if (cell === undefined) continue;
+        for (let k = 0; k < cell.length; k++) {
+          const { item, id } = cell[k]!;
+          if (seen[id] === stamp) continue;
+          seen[id] = stamp;
           if (visit(item)) return true;
         }
+      }
     return false;
   }
 

@@ -70,8 +70,12 @@ export function placeLabels(
   const costOf = (place: Place, owner: string, bound: number, hidden: boolean): number => {
     const { box, leader } = place;
     if (place.cost >= bound) return Number.POSITIVE_INFINITY;
-    const [w, h] = [reach(box, 1, 0), reach(box, 0, 1)];
-    const [x0, y0, x1, y1] = [box.x - w, box.y - h, box.x + w, box.y + h];
+    const w = reach(box, 1, 0);
+    const h = reach(box, 0, 1);
+    const x0 = box.x - w;
+    const y0 = box.y - h;
+    const x1 = box.x + w;
+    const y1 = box.y + h;
     if (x0 < area.x || y0 < area.y || x1 > area.x + area.width || y1 > area.y + area.height)
       return Number.POSITIVE_INFINITY;
     if (boxes.some(x0 - CLEAR, y0 - CLEAR, x1 + CLEAR, y1 + CLEAR, (other) => overlap(box, other, -CLEAR)))
@@ -80,12 +84,10 @@ export function placeLabels(
     let cost = place.cost;
     if (leader) {
       const from: Point = [box.x, box.y];
-      const [l0, m0, l1, m1] = [
-        Math.min(box.x, leader[0]),
-        Math.min(box.y, leader[1]),
-        Math.max(box.x, leader[0]),
-        Math.max(box.y, leader[1]),
-      ];
+      const l0 = Math.min(box.x, leader[0]);
+      const m0 = Math.min(box.y, leader[1]);
+      const l1 = Math.max(box.x, leader[0]);
+      const m1 = Math.max(box.y, leader[1]);
       if (
         boxes.some(
           l0,
