@@ -15,7 +15,8 @@ export const holdsMoment = (joint: Joint): boolean => joint === 'glued' || joint
 
 /**
  * The truss as a space frame: printed end zones as long as the setbacks, a spring at each stop where the job gives the sockets'
- * stiffness or a socket holds no moment. Supports hold displacements, not rotations.
+ * stiffness, and a strut whose socket holds no moment turns about the node, as in a truss of pins (a pin at the stop would leave a
+ * hub that nothing else holds a link between two pins). Supports hold displacements, not rotations.
  */
 export function frameOf(
   topology: Topology,
@@ -40,7 +41,7 @@ export function frameOf(
     [from, to].forEach((at, end) => {
       const socket = hubs.get(member.ends[end]!)?.sockets.find((s) => s.strut === member.mark);
       const soft = (NO_MOMENT * 4 * Math.min(strut.bendingY, strut.bendingZ)) / length;
-      if (socket && !holdsMoment(socket.joint)) springs.push({ at, stiffness: soft });
+      if (socket && !holdsMoment(socket.joint)) springs.push({ at: end * length, stiffness: soft });
       else if (given !== undefined) springs.push({ at, stiffness: given });
     });
     return {

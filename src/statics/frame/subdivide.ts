@@ -59,5 +59,4 @@ export function subdivide(frame: Frame, parts: number): Subdivided {
   };
 }
 
-const owns = (s: Spring, x1: number, x2: number, last: boolean): boolean =>
-  s.at >= x1 && (s.at < x2 || (last && s.at <= x2));
+const owns = (s: Spring, x1: number, x2: number, last: boolean): boolean => s.at >= x1 && (last || s.at < x2);
