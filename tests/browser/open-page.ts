@@ -1,7 +1,22 @@
 import { mkdtempSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { type BrowserContext, chromium, type Page } from 'playwright-core';
+import { type Browser, type BrowserContext, chromium, type Page } from 'playwright-core';
+
+const ARGUMENTS = [
+  '--no-sandbox',
+  '--disable-quic',
+  '--no-first-run',
+  '--disable-background-networking',
+  '--disable-component-update',
+  '--disable-sync',
+  '--use-angle=swiftshader',
+  '--enable-unsafe-swiftshader',
+];
+
+/** One browser for pages of several sizes and themes. */
+export const launchBrowser = (): Promise<Browser> =>
+  chromium.launch({ executablePath: '/usr/bin/chromium', headless: true, args: ARGUMENTS });
 
 /** Debian's Chromium without a display, a graphics card or anything it does by itself on the network. */
 export function openBrowser(viewport: { width: number; height: number }, touch = false): Promise<BrowserContext> {
@@ -10,16 +25,7 @@ export function openBrowser(viewport: { width: number; height: number }, touch =
     headless: true,
     viewport,
     hasTouch: touch,
-    args: [
-      '--no-sandbox',
-      '--disable-quic',
-      '--no-first-run',
-      '--disable-background-networking',
-      '--disable-component-update',
-      '--disable-sync',
-      '--use-angle=swiftshader',
-      '--enable-unsafe-swiftshader',
-    ],
+    args: ARGUMENTS,
   });
 }
 

@@ -11,7 +11,7 @@ export function assemblyHtml(records: PackRecords, script: string, key: string):
   const steps = data.steps
     .map(
       (s, i) =>
-        `<li value="${i + 1}"><b>${text(s.say)}</b> ${text(s.struts.map((e) => `${data.struts[e.index]!.mark}${e.how ? ` (${e.how})` : ''}`).join(', '))} ${text(s.notes.join(' '))}</li>`,
+        `<li value="${i + 1}"><b>${text(s.say)}</b> ${text([...strutWords(s.struts.map((e) => ({ mark: data.struts[e.index]!.mark, how: e.how }))), ...s.notes].join(' '))}</li>`,
     )
     .join('\n');
   const found = data.findings
@@ -38,7 +38,7 @@ ${data.hold.length > 0 ? `<p class="hold" role="alert"><b>On hold.</b> ${text(da
 <main>
 <section id="stage" aria-label="The truss">
 <canvas id="truss" tabindex="0" role="img" aria-label="The truss as it stands after this step; the parts of the step are listed beside it. Keys a, d, w, s turn it."></canvas>
-<canvas id="marks" aria-hidden="true"></canvas>
+<canvas id="marks" aria-hidden="true"></canvas><canvas id="printed" aria-hidden="true"></canvas>
 <p id="no-picture">This browser draws no 3D picture. The steps and lists work without it; assembly.pdf has the pictures.</p>
 <p id="legend" hidden><span class="pull"></span> T pulls <span class="push"></span> C pushes: the wider, the more</p>
 </section>
@@ -64,6 +64,15 @@ ${steps}
 </html>
 `;
   return new TextEncoder().encode(html);
+}
+
+/** Struts of a step with how they get in, said once where it is the same for all. */
+function strutWords(struts: readonly { readonly mark: string; readonly how: string }[]): string[] {
+  if (struts.length === 0) return [];
+  const how = struts[0]!.how;
+  const same = struts.length > 1 && struts.every((s) => s.how === how);
+  const list = struts.map((s) => (s.how && !same ? `${s.mark} (${s.how})` : s.mark)).join(', ');
+  return [`${list}.`, ...(same && how ? [`All of them: ${how}.`] : [])];
 }
 
 const LEVEL: Readonly<Record<string, string>> = { stop: 'Stop.', warn: 'Warning.', note: 'Note.' };

@@ -30,7 +30,13 @@ export function sayStep(step: AssemblyStep): string {
 
 /** What else to mind in a step: props, holds, reach, deflection. */
 export function stepNotes(step: AssemblyStep, units: Units): string[] {
+  const details = new Set(step.struts.map((s) => s.detail?.kind));
   return [
+    ...(details.has('drop-in') ? ['Drop-in: lay the strut in from the open side, then put on the cap.'] : []),
+    ...(details.has('slide')
+      ? ['Slide: push the strut in past its place, draw it back into its far socket, and pin it.']
+      : []),
+    ...(details.has('clamp') ? ['Clamped: lay the strut into the half hub, then screw the other half on.'] : []),
     ...(step.props.length > 0 ? [`Prop ${step.props.join(', ')}.`] : []),
     ...(step.release.length > 0 ? [`Props under ${step.release.join(', ')} may go once this step holds.`] : []),
     ...(step.hold_min > 0 ? [`Hold still ${step.hold_min} minutes until the glue holds.`] : []),

@@ -1,6 +1,7 @@
 import type { PageData } from './data.js';
 import { details, element, markOf } from './details.js';
 import { drawLabels } from './labels.js';
+import { copyPicture } from './printed.js';
 import { type Inks, type Look, makeView, type PartRef } from './scene.js';
 import { openStore } from './store.js';
 
@@ -15,6 +16,7 @@ let labels = true;
 let forces = false;
 let playing = 0;
 let waiting = false;
+let room = { right: 0, bottom: 0 };
 
 const view = makeView(data, find<HTMLCanvasElement>('truss'), redraw);
 document.body.classList.toggle('flat', view === null);
@@ -48,7 +50,7 @@ function inks(): Inks {
     earlier: v('earlier'),
     fresh: v('ink'),
     picked: v('picked'),
-    tension: '#b35806',
+    tension: v('tension'),
     compression: v('compression'),
     idle: v('earlier'),
     panel: v('panel'),
@@ -62,14 +64,18 @@ function redraw(): void {
   waiting = true;
   requestAnimationFrame(() => {
     waiting = false;
-    view.draw();
-    const ink = inks();
-    const canvas = find<HTMLCanvasElement>('marks');
-    const all = looks();
-    const style = { ink: ink.fresh, faint: ink.prop, ground: ink.ground, all: labels, forces };
-    if (labels || picked) drawLabels(canvas, view, data, all, style);
-    else canvas.getContext('2d')?.clearRect(0, 0, canvas.width, canvas.height);
+    paint();
   });
+}
+
+function paint(): void {
+  if (!view) return;
+  view.draw();
+  const ink = inks();
+  const canvas = find<HTMLCanvasElement>('marks');
+  const style = { ink: ink.fresh, faint: ink.prop, ground: ink.ground, all: labels, forces };
+  if (labels || picked) drawLabels(canvas, view, data, looks(), style);
+  else canvas.getContext('2d')?.clearRect(0, 0, canvas.width, canvas.height);
 }
 
 function show(): void {
@@ -81,6 +87,8 @@ function goTo(next: number): void {
   step = Math.min(Math.max(0, next), lastStep);
   store.keepStep(step);
   fillCard();
+  // The step's sentence first; but the slider stays under the finger that moves it.
+  if (document.activeElement !== find('slider')) find('card').scrollTop = 0;
   show();
 }
 
@@ -149,6 +157,7 @@ function pick(part: PartRef | null): void {
   if (part) {
     if (stepOf[part.kind][part.index]! > step) goTo(stepOf[part.kind][part.index]!);
     box.replaceChildren(...details(data, part, stepOf[part.kind][part.index]!, () => pick(null)));
+    box.scrollIntoView({ block: 'nearest' });
   }
   show();
 }
@@ -200,15 +209,28 @@ function toggle(id: string, on: () => boolean, set: (on: boolean) => void): void
 }
 
 function resize(): void {
-  if (!view) return;
+  // What a print lays out anew is laid out as before when it is done.
+  if (!view || document.documentElement.classList.contains('paper')) return;
   const stage = find('stage').getBoundingClientRect();
   const card = find('card').getBoundingClientRect();
   const beside = card.left > stage.left + stage.width * 0.3;
-  view.resize(stage.width, stage.height, {
+  room = {
     right: beside ? stage.right - card.left : 0,
     bottom: beside ? 0 : Math.max(0, stage.bottom - card.top),
-  });
+  };
+  view.resize(stage.width, stage.height, room);
   redraw();
+}
+
+/** Puts the picture on paper in the inks of paper, or goes back to the screen. */
+function onPaper(on: boolean): void {
+  document.documentElement.classList.toggle('paper', on);
+  if (!view) return;
+  view.setInks(inks());
+  if (on) {
+    paint();
+    copyPicture([view.canvas, find<HTMLCanvasElement>('marks')], room, find<HTMLCanvasElement>('printed'));
+  } else resize();
 }
 
 find('back').addEventListener('click', () => goTo(step - 1));
@@ -277,7 +299,8 @@ matchMedia('(prefers-color-scheme: dark)').addEventListener('change', () => {
   view?.setInks(inks());
   redraw();
 });
-window.addEventListener('beforeprint', () => view?.draw());
+window.addEventListener('beforeprint', () => onPaper(true));
+window.addEventListener('afterprint', () => onPaper(false));
 
 view?.setInks(inks());
 fillCard();

@@ -70,6 +70,9 @@ export interface View {
 const UP = new Vector3(0, 1, 0);
 /** Widest line of a force, mm on the largest force, as a share of the truss's size. */
 const WIDEST = 0.016;
+/** Where the eye stands at first, relative to the truss's middle and size; and the sine of its height. */
+const EYE = [3, -5, 2.6] as const;
+const SINE = EYE[2] / Math.hypot(...EYE);
 /** Room round the truss, so that marks at its edge stay on the picture. */
 const FRAMES = 1.1;
 
@@ -116,7 +119,13 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
   const plates = data.panels.map((panel) => {
     const mesh = new Mesh(
       plateGeometry(panel.corners),
-      new MeshBasicMaterial({ transparent: true, opacity: 0.3, side: DoubleSide, depthWrite: false }),
+      new MeshBasicMaterial({
+        transparent: true,
+        opacity: 0.3,
+        side: DoubleSide,
+        forceSinglePass: true,
+        depthWrite: false,
+      }),
     );
     scene.add(mesh);
     return mesh;
@@ -132,7 +141,6 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
     setInks(next) {
       inks = next;
       scene.background = new Color(next.ground);
-      coreInk.color.set(next.ground);
       if (last) view.show(...last);
     },
     show(looks, forces) {
@@ -181,8 +189,9 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
       renderer.setSize(width, height, false);
       // The truss stands in the middle of what the card leaves free.
       const [free, tall] = [Math.max(80, width - room.right), Math.max(80, height - room.bottom)];
-      const half = (bounds.size / 2) * FRAMES;
-      const scale = Math.max(half / free, half / tall) * 2;
+      // Whichever way it is turned about its upright axis, seen from the height that it is first seen from.
+      const upright = bounds.wide * SINE + bounds.high * Math.sqrt(1 - SINE * SINE);
+      const scale = Math.max(bounds.wide / free, upright / tall) * 2 * FRAMES;
       camera.left = (-free / 2) * scale;
       camera.right = (width - free / 2) * scale;
       camera.top = (tall / 2) * scale;
@@ -207,9 +216,9 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
     look() {
       controls.target.set(...bounds.middle);
       camera.position.set(
-        bounds.middle[0] + bounds.size * 3,
-        bounds.middle[1] - bounds.size * 5,
-        bounds.middle[2] + bounds.size * 2.6,
+        bounds.middle[0] + bounds.size * EYE[0],
+        bounds.middle[1] + bounds.size * EYE[1],
+        bounds.middle[2] + bounds.size * EYE[2],
       );
       camera.zoom = 1;
       camera.updateProjectionMatrix();
@@ -235,6 +244,9 @@ interface Bounds {
   readonly middle: readonly [number, number, number];
   /** Diameter of the sphere about the middle that holds every node, mm. */
   readonly size: number;
+  /** Farthest node from the upright axis through the middle, and half the height, mm. */
+  readonly wide: number;
+  readonly high: number;
 }
 
 function boundsOf(data: PageData): Bounds {
@@ -245,10 +257,11 @@ function boundsOf(data: PageData): Bounds {
       low[k] = Math.min(low[k], n.at[k]);
       high[k] = Math.max(high[k], n.at[k]);
     }
-  if (data.nodes.length === 0) return { low: [0, 0, 0], middle: [0, 0, 0], size: 1 };
+  if (data.nodes.length === 0) return { low: [0, 0, 0], middle: [0, 0, 0], size: 1, wide: 1, high: 1 };
   const middle = [0, 1, 2].map((k) => (low[k]! + high[k]!) / 2) as [number, number, number];
   const reach = data.nodes.reduce((m, n) => Math.max(m, Math.hypot(...n.at.map((v, k) => v - middle[k]!))), 0.5);
-  return { low, middle, size: 2 * reach };
+  const wide = data.nodes.reduce((m, n) => Math.max(m, Math.hypot(n.at[0] - middle[0], n.at[1] - middle[1])), 0.5);
+  return { low, middle, size: 2 * reach, wide, high: (high[2] - low[2]) / 2 };
 }
 
 interface RodFrame {
