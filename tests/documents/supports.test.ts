@@ -34,3 +34,22 @@ it('the report says what each support must hold, and how the whole buckles besid
   expect(text).toMatch(/nearest to its Euler\s+load/);
   expect(text).toContain('with design stiffness');
 });
+
+it.each([
+  [1, true, /loads are\s+compatible\s+with\s+the\s+mechanisms:\s+they\s+do\s+no\s+work\s+on\s+them/],
+  [1, false, /loads are\s+not\s+compatible\s+with\s+the\s+mechanisms:\s+they\s+drive\s+them/],
+  [1, null, null],
+  [0, true, null],
+] as const)(
+  'of %i mechanisms and a load that is compatible: %s, the report says so, or nothing',
+  async (mechanisms, loadCompatible, words) => {
+    const records = exampleRecords('canopy');
+    const solution = records.solution!;
+    const counts = { ...solution.counts!, mechanisms, loadCompatible };
+    const { bytes } = await report({ ...records, solution: { ...solution, counts } }, await loadFonts());
+    const text = textOf(bytes);
+    if (words) expect(text).toMatch(words);
+    else expect(text).not.toMatch(/compatible\s+with/);
+    expect(text).toMatch(mechanisms === 1 ? /1\s+mechanism\s/ : /no\s+mechanisms?\s/);
+  },
+);

@@ -19,6 +19,15 @@ describe('a steel dowel of 8 mm, fu 360, in C24, 30 mm of timber each side of a 
     expect(joint.h).toBeCloseTo(5186.0482421, 5);
     expect((2 * joint.perPlane * 0.8) / 1.3).toBeCloseTo(4548.3338984, 5);
   });
+  it('the modes in inches, psi and pounds-force: of fh and My given, (8.11) holds in any consistent units', () => {
+    // Embedding and yield moment themselves are fitted to mm and MPa: whole jobs drawn in inches stand in any-units.test.ts.
+    const [inch, pound] = [25.4, 0.45359237 * 9.80665];
+    const psi = pound / inch ** 2;
+    const joint = plateInTheMiddle(fh / psi, 8 / inch, 30 / inch, my / (pound * inch));
+    expect((joint.f * pound) / 6336.96).toBeCloseTo(1, 9);
+    expect((joint.g * pound) / 3695.5212925).toBeCloseTo(1, 9);
+    expect((joint.h * pound) / 5186.0482421).toBeCloseTo(1, 9);
+  });
 });
 
 it('a bolt M12 of grade 4.6 has a tensile capacity of 33.7 kN and a yield moment of 76.7 N m', () => {

@@ -76,48 +76,51 @@ describe.each(systems(304.8, POUND))('Hibbeler, Statics 14e, problem 6-57, $syst
 });
 
 describe('tripods in closed form', () => {
-  it.each([0, 1, 2, 3])('t = -P L / 3h and u = P L / (3 EA (h/L)²), turned by rotation %i', (seed) => {
+  /** Metres and kN as files in mm and N, in inches and pounds-force, and the numbers as they stand. */
+  const WAYS = [
+    { system: 'mm and N', length: 1000, force: 1000 },
+    { system: 'inches and pounds-force', length: 1000 / 25.4, force: 1000 / POUND },
+    { system: 'its own units', length: 1, force: 1 },
+  ].flatMap((w) => [0, 1, 2, 3].map((seed) => ({ ...w, seed })));
+
+  it.each(WAYS)('t = -P L / 3h and u = P L / (3 EA (h/L)²), in $system, rotation $seed', ({ length, force, seed }) => {
     const c = read('statics_05_tripod_closed_form');
     const r = seed === 0 ? QUARTER_TURNS[0] : anyRotation(seed);
-    const built = build(
-      c,
-      c.A.map((a: number) => a * c.E),
-      c.loads,
-      1000,
-      1000,
-      r,
-    );
+    const ea = c.A.map((a: number) => a * c.E);
+    const built = build(c, ea, c.loads, length, force, r);
     // All three feet are held in every direction, so any rotation leaves them held.
     built.truss.fixed.fill(1, 3);
     const { axial, displacements } = solved(built);
     const [p, l, h] = [3, Math.sqrt(10), 3];
-    for (const t of axial) expect(t / 1000).toBeCloseTo((-p * l) / (3 * h), 10);
+    for (const t of axial) expect(t / force).toBeCloseTo((-p * l) / (3 * h), 10);
     const u = turnedBack(r, displacements);
-    expect(u[2] / 1000).toBeCloseTo((-p * l) / (3 * 2.1e8 * 1e-4 * (h / l) ** 2), 12);
+    expect(u[2] / length).toBeCloseTo((-p * l) / (3 * 2.1e8 * 1e-4 * (h / l) ** 2), 12);
   });
 
-  it('r = 3, h = 4, W = 90, EA = 1e6: N = -37.5 each, apex -2.34375e-4 (by hand: L = 5, N = -W L / 3h, u = N L / (EA h/L))', () => {
-    const nodes = [
-      0,
-      0,
-      4,
-      ...[0, 1, 2].flatMap((k) => [3 * Math.cos((2 * Math.PI * k) / 3), 3 * Math.sin((2 * Math.PI * k) / 3), 0]),
-    ];
-    const fixed = new Uint8Array(12).fill(1, 3);
-    const s = solvePinTruss(
-      {
-        nodes: Float64Array.from(nodes),
-        ends: Int32Array.of(0, 1, 0, 2, 0, 3),
-        fixed,
-        axialStiffness: new Float64Array(3).fill(1e6),
-      },
-      [{ forces: Float64Array.from([0, 0, -90, 0, 0, 0, 0, 0, 0, 0, 0, 0]) }],
-    );
-    if (s.state !== 'solved') throw new Error(s.state);
-    for (const t of s.cases[0].axial) expect(t).toBeCloseTo(-37.5, 10);
-    expect(s.cases[0].displacements[2]).toBeCloseTo(-2.34375e-4, 14);
-    expect(s.cases[0].reactions[5]).toBeCloseTo(30, 10);
-  });
+  it.each(WAYS)(
+    'r = 3, h = 4, W = 90, EA = 1e6 (by hand: L = 5, N = -W L / 3h = -37.5, u = N L / (EA h/L) = -2.34375e-4), in $system, rotation $seed',
+    ({ length, force, seed }) => {
+      const r = seed === 0 ? QUARTER_TURNS[0] : anyRotation(seed);
+      const feet = [0, 1, 2].flatMap((k) => [
+        3 * Math.cos((2 * Math.PI * k) / 3),
+        3 * Math.sin((2 * Math.PI * k) / 3),
+        0,
+      ]);
+      const s = solvePinTruss(
+        {
+          nodes: turned(r, [0, 0, 4, ...feet], length),
+          ends: Int32Array.of(0, 1, 0, 2, 0, 3),
+          fixed: new Uint8Array(12).fill(1, 3),
+          axialStiffness: new Float64Array(3).fill(1e6 * force),
+        },
+        [{ forces: turned(r, [0, 0, -90, 0, 0, 0, 0, 0, 0, 0, 0, 0], force) }],
+      );
+      if (s.state !== 'solved') throw new Error(s.state);
+      for (const t of s.cases[0].axial) expect(t / force).toBeCloseTo(-37.5, 10);
+      expect(turnedBack(r, s.cases[0].displacements)[2] / length).toBeCloseTo(-2.34375e-4, 14);
+      expect(turnedBack(r, s.cases[0].reactions)[5] / force).toBeCloseTo(30, 10);
+    },
+  );
 });
 
 describe.each(systems(INCH, KIP))('the ten-bar truss, $system', ({ mm, newton }) => {
@@ -153,16 +156,20 @@ describe.each(systems(INCH, KIP))('the ten-bar truss, $system', ({ mm, newton })
     }
   });
 
-  it('with 10 in² everywhere (computed independently with numpy; the figures of the field are 195.4, 40.1, ... kip)', () => {
-    const built = build(c, new Array(10).fill(10 * MODULUS), c.loads, mm, newton, QUARTER_TURNS[0]);
-    const { axial, displacements } = solved(built);
-    const published = [195.36, 40.12, -204.64, -59.88, 35.49, 40.12, 147.98, -134.87, 84.68, -56.74];
-    published.forEach((t, e) => {
-      expect(Math.abs(axial[e] / newton - t)).toBeLessThan(0.006);
-    });
-    expect(displacements[1] / mm).toBeCloseTo(-3.795, 3);
-    expect(displacements[4] / mm).toBeCloseTo(-3.94, 3);
-  });
+  it.each(QUARTER_TURNS.map((r, i) => [i, r] as const))(
+    'with 10 in² everywhere (computed independently with numpy; the figures of the field are 195.4, 40.1, ... kip), in turn %i',
+    (_, r) => {
+      const built = build(c, new Array(10).fill(10 * MODULUS), c.loads, mm, newton, r);
+      const { axial, displacements } = solved(built);
+      const published = [195.36, 40.12, -204.64, -59.88, 35.49, 40.12, 147.98, -134.87, 84.68, -56.74];
+      published.forEach((t, e) => {
+        expect(Math.abs(axial[e] / newton - t)).toBeLessThan(0.006);
+      });
+      const u = turnedBack(r, displacements);
+      expect(u[1] / mm).toBeCloseTo(-3.795, 3);
+      expect(u[4] / mm).toBeCloseTo(-3.94, 3);
+    },
+  );
 });
 
 function lengthsOf(c: Case, mm: number) {
