@@ -40,7 +40,9 @@ export async function writeSheetFiles(records: PackRecords, writer: PackWriter):
     await writer.put(paths[1]!, drawingToDxf(drawing));
     for (const p of sheet.placements) if (!withheld.has(p.mark)) files.set(p.mark, paths);
   }
-  if (parts.panels.length > 0) await writeKerfComb(job, writer, 'panels/');
+  // The comb is cut from the panels' own sheet: of a material that must not be cut so there is none.
+  const hazards = new Set(findings.flatMap((f) => (f.code === 'panel-hazard' ? [f.subject] : [])));
+  if (parts.panels.some((p) => !hazards.has(p.mark))) await writeKerfComb(job, writer, 'panels/');
   for (const p of parts.panels) if (!files.has(p.mark)) withheld.add(p.mark);
   return { withheld: [...withheld], filesOf: (mark) => files.get(mark) ?? [] };
 }
