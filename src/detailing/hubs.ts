@@ -90,6 +90,12 @@ export function detailHubs(
       findings.push(
         finding('ball-too-small', node.mark, { value: job.nodes.ball.diameter_mm ?? null, limit: found.ballNeeds }),
       );
+    if (found?.cubeNeeds !== undefined)
+      findings.push(
+        finding('cube-too-small', node.mark, { value: job.nodes.cube.edge_mm ?? null, limit: found.cubeNeeds }),
+      );
+    for (const { strut, edge, most } of found?.offFace ?? [])
+      findings.push(finding('rim-over-edge', node.mark, { value: edge, limit: most, about: { strut } }));
     drafts.push({
       system,
       material: materialOf(system),
@@ -146,7 +152,7 @@ function clearanceFindings(sections: readonly (Section | null)[], job: Job): Fin
   return [finding('clearance-not-measured', 'truss', { value: clearance(job, first, measuredSize(first)), about })];
 }
 
-/** The socket that a strut's end asks for, else its node's; a ball has bores alone. */
+/** The socket that a strut's end asks for, else its node's; a ball or cube has bores alone. */
 function socketOf(system: NodeSystem, end: BarEnd, job: Job): Socket {
   const own = end.hold && !system.ownSetbacks ? nodeSystem(end.hold) : null;
   return (own ?? system).socket(end, job);

@@ -83,6 +83,8 @@ export interface Socket {
   readonly form?: 'sleeve' | 'spigot' | 'plate';
   /** How far the strut can slide in beyond its place, mm, where the detail is a slide; absent: 0. */
   readonly travel?: number;
+  /** Depth that a tilted face takes from the mouth's shallow side, in `depth` and holding nothing, mm; absent: 0. */
+  readonly shallow?: number;
 }
 
 /** A node connector as numbers. Its solid is made from these alone. */

@@ -1,5 +1,6 @@
 import { type ClampParts, PARTING } from '../detailing/systems/clamp-parts.js';
 import { hubShape } from '../detailing/systems/hub-shape.js';
+import { nodeSystem } from '../detailing/systems/index.js';
 import { boreAllowance, LEAST_WALL } from '../detailing/systems/printing.js';
 import { dot } from '../maths/vec3.js';
 import type { Finding } from '../model/finding.js';
@@ -22,12 +23,12 @@ import { chooseLie, type Lie } from './orientation.js';
 import { finishedSolid, socketSolid } from './socket-solid.js';
 
 /**
- * Makes the solid of a hub as it is printed. A hub that detailing found not makeable has no pieces and no findings of its own.
+ * Makes the solid of a hub as it is printed. A hub that detailing found not makeable, or that is not printed, has no pieces and no findings of its own.
  *
  * @param tension largest tension of each socket's strut in N, in the sockets' order; absent: all alike
  */
 export async function shapeHub(hub: HubPart, job: Job, tension?: readonly number[]): Promise<ShapedHub> {
-  if (!hub.makeable) return { mark: hub.mark, pieces: [], findings: [] };
+  if (!hub.makeable || nodeSystem(hub.system)?.notPrinted) return { mark: hub.mark, pieces: [], findings: [] };
   const bench = new Bench(await loadKernel());
   const findings: Finding[] = [];
   try {

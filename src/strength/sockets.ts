@@ -52,11 +52,11 @@ function passesOf(hub: HubPart, job: Job): readonly SocketPasses[] {
   if (hub.sockets.some((s) => s.setback === null)) return [];
   const strengths = nodeSystem(hub.system)?.strength(hub, job) ?? [];
   return strengths.map((s, k) => {
-    const { depth, travel, pin, wall, form } = hub.sockets[k]!;
+    const { depth, travel, shallow, pin, wall, form } = hub.sockets[k]!;
     return {
       // Gross: the paths take the pin's hole off themselves.
       wallArea: s.wallArea + (s.solid ? 0 : 2 * pin * wall),
-      bondPerDepth: s.bondArea / (depth - (travel ?? 0)),
+      bondPerDepth: s.bondArea / (depth - (travel ?? 0) - (shallow ?? 0)),
       stopArea: s.stopArea,
       hollow: !s.solid && (form === undefined || form === 'sleeve'),
       ...(s.screws ? { screws: s.screws } : {}),

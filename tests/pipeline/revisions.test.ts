@@ -214,3 +214,25 @@ it('lists caps and guides of unchanged hubs as unchanged, without files', async 
   const c = await comparePacks(one.pack, two.pack);
   expect([c.changed, c.new, c.withdrawn].flat()).toEqual([]);
 }, 120_000);
+
+it('prints nothing of a drilled cube, withholds nothing of it, and knows it again', async () => {
+  const own: Job = { ...job('A'), nodes: { ...job('A').nodes, systems: { E: 'drilled-cube' } } };
+  const source = trussOf(text('[150, 90, 240]'));
+  const one = await make(source, own);
+  const part = (m: Made) => m.manifest.parts.filter((p) => p.mark === 'E' || p.mark.startsWith('E.'));
+  expect(part(one)).toMatchObject([{ mark: 'E', kind: 'node', files: [], revision: 'A' }]);
+  expect(part(one)[0]!.digest).toMatch(/./);
+  expect(one.manifest.withheld).not.toContain('E');
+  expect(stl(one).filter((p) => /\/E\./.test(p))).toEqual([]);
+  const table = new TextDecoder().decode(one.files.get('nodes/drilling.csv'));
+  expect(
+    table
+      .trim()
+      .split('\n')
+      .slice(1)
+      .map((line) => line.split(',').slice(0, 2).join()),
+  ).toEqual(['E,S7', 'E,S8', 'E,S9']);
+  expect(one.files.has('nodes/drilling-templates.pdf')).toBe(true);
+  const two = await make(source, { ...own, revision: 'B' }, one.manifest);
+  expect(part(two)).toMatchObject([{ mark: 'E', revision: 'A', digest: part(one)[0]!.digest }]);
+}, 120_000);

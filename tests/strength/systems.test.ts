@@ -67,7 +67,7 @@ describe('a dowel glued into a drilled ball', () => {
     // Rolling shear 2 ft,90,k = 0.8 MPa (EN 338:2016), kmod of permanent load 0.6, gamma M 1.3; pi 12 x 20 mm² engaged.
     const limit = (0.6 * 0.8) / 1.3;
     const wanted = 150 / (Math.PI * 12 * 20) / limit;
-    expect(first!.rule).toBe('EN 1995-1-1 6.1.7, rolling shear of the ball at the socket bond');
+    expect(first!.rule).toBe('EN 1995-1-1 6.1.7, rolling shear of the drilled body at the socket bond');
     // The saw's step leaves up to half a millimetre more float at both ends together.
     expect(first!.utilisation / wanted).toBeGreaterThan(0.999);
     expect(first!.utilisation / wanted).toBeLessThan(1.02);

@@ -2,7 +2,7 @@ import { convexHull3 } from '../../maths/convex-hull3.js';
 import type { Vec3 } from '../../maths/vec3.js';
 import type { Job } from '../../model/job/index.js';
 import type { HubPart, Socket } from '../../model/parts.js';
-import { ballStrength } from './ball-strength.js';
+import { boredStrength } from './bored-strength.js';
 import { measuredSize, ownClearance } from './printing.js';
 import { areaOf, boreHalf, largest } from './sleeve.js';
 import { outlineInSlab } from './sleeve-cover.js';
@@ -48,7 +48,7 @@ export const DRILLED_BALL_SYSTEM: NodeSystem = {
       ...(radius < needed - 1e-9 ? { ballNeeds: 2 * needed } : {}),
     };
   },
-  strength: (hub) => ballStrength(hub, ballRadius(hub)),
+  strength: (hub) => boredStrength(hub, Math.PI * ballRadius(hub) ** 2),
   cover: (hub) => ballCover(ballRadius(hub)),
   outline: (hub, slab) => outlineInSlab(ballCover(ballRadius(hub)), hub.at, slab),
   mass: (hub) =>

@@ -37,6 +37,10 @@ export interface Setbacks {
   readonly notRound?: readonly string[];
   /** Diameter that a drilled ball needs where the job's is too small, mm. */
   readonly ballNeeds?: number;
+  /** Edge that a drilled cube needs where the job's is too small, mm. */
+  readonly cubeNeeds?: number;
+  /** Bores whose rim no cube up to `most` mm takes on one face; `edge` is what they need, null where no size does. */
+  readonly offFace?: readonly { readonly strut: string; readonly edge: number | null; readonly most: number }[];
 }
 
 /** Material between two parallel planes: points origin + x X + y Y + z (X cross Y) with from <= z <= to, mm. */
@@ -108,6 +112,8 @@ export interface NodeSystem {
   material?(job: Job): string;
   /** Setbacks follow from the shape itself and cannot be made equal to others: bores that end on one ball. */
   readonly ownSetbacks?: true;
+  /** Made by hand from the drilling papers: nothing of it is printed. */
+  readonly notPrinted?: true;
   /** Deeper sockets, mm by strut; absent: the depth alone grows, from the stop out. */
   deepen?(hub: HubPart, depths: ReadonlyMap<string, number>, job: Job): HubPart;
   /** Bore, wall, depth and pin of one strut's socket; its setback is still null. */

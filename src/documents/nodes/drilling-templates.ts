@@ -5,33 +5,25 @@ import type { HubPart } from '../../model/parts.js';
 import { CAUTION } from '../cautions.js';
 import { issueOf } from '../issue.js';
 import { drawCheckBars } from '../kit/check-bars.js';
-import { writeFitted } from '../kit/fit-text.js';
 import type { Fonts } from '../kit/fonts.js';
 import type { Area, Point } from '../kit/geometry2.js';
 import { INK, LINE, SIZE } from '../kit/ink.js';
 import { Paper, type Written } from '../kit/paper.js';
-import { capHeight, type Pen } from '../kit/pen.js';
+import { capHeight } from '../kit/pen.js';
 import { fixed, unitsOf } from '../kit/units.js';
 import { byMark } from '../member-rows.js';
 import type { PackRecords } from '../records.js';
+import { cubeTemplate } from './cube-template.js';
 import { starRays } from './star-rays.js';
+import { boxRound, drawCentre, note, ROUND, sizeOf, type Template, title, WORDS } from './template.js';
 
-/** One template at full size: its box, mm, with the point that it is drawn from in the box's axes. */
-interface Template {
-  readonly width: number;
-  readonly height: number;
-  draw(pen: Pen, x: number, y: number): void;
-}
-
-/** Width of a paper strip, and what stays white round a template, mm. */
-const [STRIP, ROUND] = [9, 5] as const;
-/** Room for the title over a template and the line under it, mm. */
-const WORDS = { over: 7, under: 9 } as const;
+/** Width of a paper strip, mm. */
+const STRIP = 9;
 /** Left and below for the 100 mm bars, mm. */
 const BARS = 8;
 
 /**
- * drilling-templates.pdf: at full size, a star of paper strips for each drilled ball and the anchors of each foot. Those that are larger
+ * drilling-templates.pdf: at full size, a star of paper strips for each drilled ball, the unfolded faces of each drilled cube and the anchors of each foot. Those that are larger
  * than the sheet are left out. null: nothing is drilled, or nothing fits.
  */
 export async function drillingTemplates(records: PackRecords, fonts: Fonts): Promise<Written | null> {
@@ -40,11 +32,13 @@ export async function drillingTemplates(records: PackRecords, fonts: Fonts): Pro
   const templates = hubs.flatMap((hub) => templateOf(hub, job) ?? []);
   if (templates.length === 0) return null;
   const paper = new Paper(issueOf(records, fonts), 'Drilling templates', CAUTION, unitsOf(job, 0).words);
+  const words = Object.entries(WORDS_FOR).flatMap(([system, said]) =>
+    hubs.some((h) => h.system === system) ? said : [],
+  );
   const sheet = (): Area => {
     const area = paper.addSheet({
       title: 'Drilling templates',
-      instruction:
-        'Full size: print at 100 % and measure both bars first. Ball: cut out the star, pin its middle where the first bore goes, lay the strips over the ball; each cross is the middle of a bore. Foot: lay it on the ground or board, its arrow along the truss’s x, and prick the anchors through.',
+      instruction: `Full size: print at 100 % and measure both bars first. ${words.join(' ')}`,
     });
     drawCheckBars(paper.pen, area.x, area.y + area.height);
     return { x: area.x + BARS, y: area.y, width: area.width - BARS, height: area.height - BARS };
@@ -52,12 +46,16 @@ export async function drillingTemplates(records: PackRecords, fonts: Fonts): Pro
   let area: Area | null = null;
   let [x, y, row] = [0, 0, 0];
   let drawn = 0;
-  for (const t of templates) {
+  const queue = [...templates];
+  for (let t = queue.shift(); t; t = queue.shift()) {
     if (!area) {
       area = sheet();
       [x, y, row] = [area.x, area.y, 0];
     }
-    if (t.width > area.width || t.height > area.height) continue;
+    if (t.width > area.width || t.height > area.height) {
+      queue.unshift(...(t.parts ?? []));
+      continue;
+    }
     if (x + t.width > area.x + area.width) [x, y, row] = [area.x, y + row, 0];
     if (y + t.height > area.y + area.height) {
       area = sheet();
@@ -71,8 +69,18 @@ export async function drillingTemplates(records: PackRecords, fonts: Fonts): Pro
   return drawn > 0 ? paper.finish() : null;
 }
 
+/** What to do with the template of each system. */
+const WORDS_FOR = {
+  'drilled-ball':
+    'Ball: cut out the star, pin its middle where the first bore goes, lay the strips over the ball; each cross is the middle of a bore.',
+  'drilled-cube':
+    'Cube: cut out, lay each face on the side that it names, z up; each cross is the middle of a bore, the drill leans along its arrow.',
+  foot: 'Foot: lay it on the ground or board, its arrow along the truss’s x, and prick the anchors through.',
+} as const;
+
 function templateOf(hub: HubPart, job: Job): Template | null {
   if (hub.system === 'drilled-ball') return starOf(hub);
+  if (hub.system === 'drilled-cube') return cubeTemplate(hub);
   return hub.system === 'foot' ? anchorsOf(hub, job) : null;
 }
 
@@ -156,46 +164,4 @@ function anchorsOf(hub: HubPart, job: Job): Template | null {
       note(pen, `${count} anchors Ø ${fixed(diameter, 1)} on a circle Ø ${fixed(2 * circle, 1)}${level}`, x, y, box);
     },
   };
-}
-
-interface Bounds {
-  readonly left: number;
-  readonly top: number;
-  readonly width: number;
-  readonly height: number;
-}
-
-/** The least box round points with a margin, no narrower than its words. */
-function boxRound(points: readonly Point[], margin: number): Bounds {
-  const [xs, ys] = [points.map((p) => p[0]), points.map((p) => p[1])];
-  const [left, top] = [Math.min(...xs) - margin, Math.min(...ys) - margin];
-  return {
-    left,
-    top,
-    width: Math.max(NARROWEST, Math.max(...xs) + margin - left),
-    height: Math.max(...ys) + margin - top,
-  };
-}
-
-const NARROWEST = 56;
-const sizeOf = ({ width, height }: Bounds): { width: number; height: number } => ({
-  width: width + 4,
-  height: height + WORDS.over + WORDS.under,
-});
-
-function title(pen: Pen, mark: string, words: string, x: number, y: number, { width }: Bounds): void {
-  const wide = pen.text(mark, x, y + 5.5, { size: SIZE.head, bold: true });
-  writeFitted(pen, words, x + wide + 2.5, y + 5.5, width - wide - 3, { size: SIZE.note, colour: INK.grey }, 5);
-}
-
-function note(pen: Pen, words: string, x: number, y: number, { width, height }: Bounds): void {
-  writeFitted(pen, words, x, y + WORDS.over + height + 3, width, { size: SIZE.note }, 5);
-}
-
-/** A hole with the cross of its middle. */
-function drawCentre(pen: Pen, x: number, y: number, radius: number): void {
-  const arm = Math.max(radius + 1.5, 2.5);
-  if (radius > 0) pen.circle(x, y, radius, { width: LINE.thin });
-  pen.line([x - arm, y], [x + arm, y], { width: LINE.hair });
-  pen.line([x, y - arm], [x, y + arm], { width: LINE.hair });
 }

@@ -2,18 +2,22 @@ import { addScaled, angleBetween, cross, dot, normalise, perpendicular, type Vec
 import type { HubPart, Socket } from '../../model/parts.js';
 import { DECIMALS, writeCsv } from '../formats/csv.js';
 import type { PackRecords } from '../records.js';
+import { cubeSetting } from './cube-setting.js';
 
 const DEGREES = 180 / Math.PI;
 
 /**
- * drilling.csv: every bore of the drilled balls, or null where there is none. Azimuth from the truss's x towards y, elevation from
+ * drilling.csv: every bore of the drilled balls and cubes, or null where there is none. Azimuth from the truss's x towards y, elevation from
  * level; for a jig with a turning and a tilting axis, the first bore upright: `tilt` from the first bore, `turn` about it from the
  * second, anticlockwise seen from its mouth.
+ * A cube lies on the table of the drill: `face` upwards, its middle moved by `entry_right_mm` and `entry_up_mm` (as the face is looked at,
+ * z up on the sides, x to the right on top and bottom), the drill `face_tilt_deg` from upright and leaning towards `face_turn_deg`,
+ * anticlockwise from the right; `depth_mm` is along the axis, from the face to the stop.
  */
 export function drillingCsv(records: PackRecords): Uint8Array | null {
   const rows = records.parts.hubs
-    .filter((hub) => hub.system === 'drilled-ball' && hub.makeable)
-    .flatMap((hub) => hub.sockets.map((socket) => ({ hub, socket, jig: jigSetting(hub, socket) })));
+    .filter((hub) => hub.makeable && (hub.system === 'drilled-ball' || hub.system === 'drilled-cube'))
+    .flatMap((hub) => hub.sockets.map((socket) => rowOf(hub, socket)));
   if (rows.length === 0) return null;
   return writeCsv(
     [
@@ -23,13 +27,25 @@ export function drillingCsv(records: PackRecords): Uint8Array | null {
       { name: 'depth_mm', decimals: DECIMALS.length, value: (r) => r.socket.depth },
       { name: 'azimuth_deg', decimals: DECIMALS.angle, value: (r) => azimuth(r.socket.direction) },
       { name: 'elevation_deg', decimals: DECIMALS.angle, value: (r) => elevation(r.socket.direction) },
-      { name: 'jig_tilt_deg', decimals: DECIMALS.angle, value: (r) => r.jig.tilt },
-      { name: 'jig_turn_deg', decimals: DECIMALS.angle, value: (r) => r.jig.turn },
+      { name: 'jig_tilt_deg', decimals: DECIMALS.angle, value: (r) => r.jig?.tilt ?? null },
+      { name: 'jig_turn_deg', decimals: DECIMALS.angle, value: (r) => r.jig?.turn ?? null },
+      { name: 'face', value: (r) => r.cube?.face.name ?? null },
+      { name: 'edge_mm', decimals: DECIMALS.length, value: (r) => r.cube?.edge ?? null },
+      { name: 'entry_right_mm', decimals: DECIMALS.length, value: (r) => r.cube?.right ?? null },
+      { name: 'entry_up_mm', decimals: DECIMALS.length, value: (r) => r.cube?.up ?? null },
+      { name: 'face_tilt_deg', decimals: DECIMALS.angle, value: (r) => r.cube?.tilt ?? null },
+      { name: 'face_turn_deg', decimals: DECIMALS.angle, value: (r) => r.cube?.turn ?? null },
     ],
     rows,
     records.job.output.csv,
   );
 }
+
+/** A ball is held by its first bore, a cube on the face that is drilled. */
+const rowOf = (hub: HubPart, socket: Socket) =>
+  hub.system === 'drilled-cube'
+    ? { hub, socket, jig: null, cube: cubeSetting(hub, socket) }
+    : { hub, socket, jig: jigSetting(hub, socket), cube: null };
 
 const azimuth = (d: Vec3): number => (Math.atan2(d[1], d[0]) * DEGREES + 360) % 360;
 const elevation = (d: Vec3): number => Math.atan2(d[2], Math.hypot(d[0], d[1])) * DEGREES;

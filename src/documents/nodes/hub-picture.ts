@@ -1,3 +1,5 @@
+import { cubeEntry } from '../../detailing/systems/cube-rim.js';
+import { cubeHalf } from '../../detailing/systems/drilled-cube.js';
 import { convexHull2 } from '../../maths/convex-hull2.js';
 import { addScaled, dot, scale, type Vec3 } from '../../maths/vec3.js';
 import type { HubPart, Socket } from '../../model/parts.js';
@@ -7,6 +9,7 @@ import { INK, LINE, SIZE } from '../kit/ink.js';
 import { capHeight, type Pen } from '../kit/pen.js';
 import { type Camera, project } from '../kit/view/camera.js';
 import { type Label, type Place, placeLabels } from '../kit/view/place-labels.js';
+import { cubePicture } from './cube-picture.js';
 
 /** Points of a round end. */
 const ROUND = 28;
@@ -19,10 +22,12 @@ const OPEN = 0.08;
 /** A hub in one view, measured before it is drawn: mm at full size, from the node. */
 export interface HubPicture {
   readonly arms: readonly Arm[];
-  /** Radius of the round middle; of a drilled ball: the ball. */
+  /** Radius of the round middle; of a drilled ball: the ball; of a drilled cube: what it reaches on the sheet. */
   readonly body: number;
   /** The arms are bores in the body, not sleeves round it. */
   readonly bored: boolean;
+  /** Faces of a drilled cube that are seen; empty: the body is round. */
+  readonly faces: readonly (readonly Point[])[];
   readonly low: Point;
   readonly high: Point;
 }
@@ -47,11 +52,16 @@ interface Arm {
 
 /** The picture of a hub as its sleeves, spigots or bores in an orthographic view. */
 export function hubPicture(hub: HubPart, camera: Camera): HubPicture {
-  const bored = hub.system === 'drilled-ball';
-  const arms = hub.sockets.map((socket) => armOf(socket, camera));
-  const body = bored
-    ? Math.max(1, ...hub.sockets.map((s) => Math.hypot((s.setback ?? 0) + s.depth, Math.max(...boreHalf(s)))))
-    : Math.max(1, ...arms.map((s) => s.radius)) * 1.15;
+  const cube = hub.system === 'drilled-cube' ? cubeHalf(hub) : 0;
+  const bored = hub.system === 'drilled-ball' || cube > 0;
+  const arms = hub.sockets.map((socket) => (cube > 0 ? boreOf(socket, cube, camera) : armOf(socket, camera)));
+  const faces = cube > 0 ? cubePicture(cube, camera) : [];
+  const body =
+    cube > 0
+      ? Math.max(...faces.flat(2).map(Math.abs))
+      : bored
+        ? Math.max(1, ...hub.sockets.map((s) => Math.hypot((s.setback ?? 0) + s.depth, Math.max(...boreHalf(s)))))
+        : Math.max(1, ...arms.map((s) => s.radius)) * 1.15;
   const low: [number, number] = [-body, -body];
   const high: [number, number] = [body, body];
   for (const arm of arms)
@@ -60,7 +70,7 @@ export function hubPicture(hub: HubPart, camera: Camera): HubPicture {
         low[axis] = Math.min(low[axis], p[axis]);
         high[axis] = Math.max(high[axis], p[axis]);
       }
-  return { arms, body, bored, low, high };
+  return { arms, body, bored, faces, low, high };
 }
 
 /** The scale of ISO 5455, 1:1 at most, at which the picture and its marks fit into a box. */
@@ -82,13 +92,16 @@ export const hubPictureHeight = (picture: HubPicture, factor: number): number =>
  * the viewer; each strut's mark beside its mouth.
  */
 export function drawHubPicture(pen: Pen, area: Area, picture: HubPicture, factor: number): void {
-  const { arms, body, bored, low, high } = picture;
+  const { arms, body, bored, faces, low, high } = picture;
   const middle: Point = [(low[0] + high[0]) / 2, (low[1] + high[1]) / 2];
   const centre: Point = [area.x + area.width / 2, area.y + area.height / 2];
   const at = ([x, y]: Point): Point => [centre[0] + factor * (x - middle[0]), centre[1] - factor * (y - middle[1])];
   const order = arms.map((arm, i) => ({ arm, i })).sort((a, b) => a.arm.depth - b.arm.depth || a.i - b.i);
   const [nx, ny] = at([0, 0]);
-  const drawBody = (): void => pen.circle(nx, ny, body * factor, { fill: INK.white, width: LINE.normal });
+  const drawBody = (): void => {
+    if (faces.length === 0) pen.circle(nx, ny, body * factor, { fill: INK.white, width: LINE.normal });
+    for (const face of faces) pen.polygon(face.map(at), INK.white, { width: LINE.normal });
+  };
   let bodyDrawn = false;
   for (const { arm } of order) {
     if (arm.depth > 0 && !bodyDrawn) {
@@ -137,6 +150,18 @@ function armOf(socket: Socket, camera: Camera): Arm {
     open: w,
     depth: w * length,
   };
+}
+
+/** A bore of a cube: its rim lies on the face, and is seen where the face is. */
+function boreOf(socket: Socket, half: number, camera: Camera): Arm {
+  const { face, cosine } = cubeEntry(socket);
+  const arm = armOf(socket, camera);
+  const open = dot(face.normal, camera.toward);
+  const bore = rim(socket, boreHalf(socket), (socket.setback ?? 0) + socket.depth).map((p): Point => {
+    const [x, y] = project(camera, addScaled(p, socket.direction, (half - dot(p, face.normal)) / cosine));
+    return [x, y];
+  });
+  return { ...arm, bore, open, depth: open };
 }
 
 /** Points of a socket's outline, half as large as `half` along its y and z, at a distance along it from the node. */

@@ -9,6 +9,7 @@ import { type Column, drawSmallTable, smallTableHeight } from '../kit/table.js';
 import { fixed, NEWTON_PER_LBF, type Units } from '../kit/units.js';
 import { PLAN } from '../kit/view/camera.js';
 import { angleTableHeight, drawAngleTable, TEXT } from './angle-table.js';
+import { cubeSetting } from './cube-setting.js';
 import { jigSetting } from './drilling.js';
 import {
   drawHubPicture,
@@ -27,6 +28,8 @@ const PICTURE = 52;
 const TABLES = { two: 84, three: 77 } as const;
 /** What the jig's settings of a drilled ball take besides, mm. */
 const JIG = 21;
+/** What the face, its tilt and its turn take besides, mm. */
+const CUBE = 28;
 /** Head of a block: the node's mark, read across a bench. */
 const HEAD = 10;
 /** A mark wider than this does not fit into the tables beside the pictures, mm. */
@@ -60,7 +63,7 @@ export function blockOf(
   room: number,
   weakest: WeakestSection | null = null,
 ): Block {
-  const jig = hub.system === 'drilled-ball' ? JIG : 0;
+  const jig = hub.system === 'drilled-ball' ? JIG : hub.system === 'drilled-cube' ? CUBE : 0;
   const pictureWidth = Math.min(
     PICTURE,
     polyhedron ? (width - TABLES.three - jig) / 3 : (width - TABLES.two - jig) / 2,
@@ -171,6 +174,13 @@ function socketColumns(hub: HubPart, cuts: ReadonlyMap<string, number | null>, u
       ? [
           { head: 'Jig tilt\n°', align: 'right' as const, value: (s: Socket) => fixed(jigSetting(hub, s).tilt, 1) },
           { head: 'Jig turn\n°', align: 'right' as const, value: (s: Socket) => fixed(jigSetting(hub, s).turn, 1) },
+        ]
+      : []),
+    ...(hub.system === 'drilled-cube' && hub.makeable
+      ? [
+          { head: 'Face', value: (s: Socket) => cubeSetting(hub, s).face.name },
+          { head: 'Tilt\n°', align: 'right' as const, value: (s: Socket) => fixed(cubeSetting(hub, s).tilt, 1) },
+          { head: 'Turn\n°', align: 'right' as const, value: (s: Socket) => fixed(cubeSetting(hub, s).turn, 1) },
         ]
       : []),
     { head: `Setback\n${units.lengthUnit}`, align: 'right', value: (s) => units.length(s.setback) },

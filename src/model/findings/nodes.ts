@@ -129,6 +129,19 @@ export const NODE_FINDINGS = {
     'mm',
     (f) => `a ball of ${num(f.value, 1)} mm does not hold its bores; it needs ${num(f.limit, 1)} mm`,
   ),
+  'cube-too-small': entry(
+    'stop',
+    'node',
+    'mm',
+    (f) => `a cube of ${num(f.value, 1)} mm does not hold its bores; it needs ${num(f.limit, 1)} mm`,
+  ),
+  'rim-over-edge': entry(
+    'stop',
+    'node',
+    'mm',
+    (f) =>
+      `the bore of ${f.about?.['strut']} leaves too near to an edge of the cube: ${f.value === null ? 'no size takes' : `only an edge of ${num(f.value, 1)} mm would take`} its rim on one face, and ${num(f.limit, 1)} mm is the most; give this node the system drilled-ball or socket`,
+  ),
   'clamp-not-screwed': entry(
     'stop',
     'node',

@@ -4,11 +4,11 @@ import { z } from 'zod';
 export const nodesSchema = z
   .strictObject({
     system: z
-      .enum(['socket', 'spigot', 'drilled-ball'])
+      .enum(['socket', 'spigot', 'drilled-ball', 'drilled-cube'])
       .default('socket')
       .describe('The node system of every node that names none.'),
     systems: z
-      .record(z.string(), z.enum(['socket', 'spigot', 'drilled-ball', 'foot', 'clamp']))
+      .record(z.string(), z.enum(['socket', 'spigot', 'drilled-ball', 'drilled-cube', 'foot', 'clamp']))
       .default({})
       .describe('Node system by node mark.'),
     process: z.enum(['filament', 'powder', 'resin']).default('filament').describe('How hubs are printed.'),
@@ -106,6 +106,13 @@ export const nodesSchema = z
       })
       .prefault({})
       .describe('The ball of the system `drilled-ball`.'),
+    cube: z
+      .strictObject({
+        edge_mm: z.number().positive().optional().describe('Absent: the least that takes every bore on one face.'),
+        material: z.string().default('beech-dowel').describe('What cubes are sawn from.'),
+      })
+      .prefault({})
+      .describe('The cube of the system `drilled-cube`, its faces square to the axes of the truss.'),
     orientation: z
       .strictObject({
         overhang: z.number().nonnegative().default(1).describe('Weight of overhangs.'),

@@ -31,7 +31,7 @@ export const strutsSchema = z
               .enum(['socket', 'spigot'])
               .optional()
               .describe(
-                'A sleeve round the strut, or a spigot or plate in it; absent: as the node. Not in a drilled ball.',
+                'A sleeve round the strut, or a spigot or plate in it; absent: as the node. Not in a drilled ball or cube.',
               ),
           }),
         ]),

@@ -31,7 +31,7 @@ export interface CanonicalHub {
  * this is what a part's digest and the memory of earlier runs are taken over.
  */
 export function canonicalHub(hub: HubPart, job: Job, tension: readonly number[]): CanonicalHub {
-  const [x, y, z] = hub.system === 'foot' ? uprightFrameOf(hub.sockets) : frameOf(hub.sockets);
+  const [x, y, z] = frameFor(hub);
   const turned = (v: Vec3): Vec3 => [dot(v, x), dot(v, y), dot(v, z)];
   const canonical: HubPart = {
     ...hub,
@@ -78,12 +78,20 @@ function shapingOf(nodes: Job['nodes']): Job['nodes'] {
     system: usual.system,
     systems: usual.systems,
     material: usual.material,
+    ball: usual.ball,
+    cube: usual.cube,
     clearances: usual.clearances,
     clearanceMeasured: usual.clearanceMeasured,
     setbacks: usual.setbacks,
     depthFactor: usual.depthFactor,
     joint: usual.joint,
   };
+}
+
+function frameFor({ system, sockets }: HubPart): readonly [Vec3, Vec3, Vec3] {
+  // The faces of a cube are square to the truss's axes.
+  if (system === 'drilled-cube') return [X, Y, Z];
+  return system === 'foot' ? uprightFrameOf(sockets) : frameOf(sockets);
 }
 
 function frameOf(sockets: readonly Socket[]): readonly [Vec3, Vec3, Vec3] {

@@ -1,3 +1,4 @@
+import { nodeSystem } from '../../detailing/systems/index.js';
 import type { Assessment, MadeHub, MadePiece } from '../../documents/records.js';
 import type { Spool } from '../../machine/memory-spool.js';
 import { materialNamed } from '../../model/catalogue/resolve.js';
@@ -60,7 +61,8 @@ export async function makeHubs(
       const shaped = placeHub(output.shaped, toTruss);
       findings.push(...shaped.findings);
       const own = settleFindings([...a.findings.filter((f) => f.subject === hub.mark), ...shaped.findings], a.job, []);
-      const keep = shaped.pieces.length > 0 && !isWithheld('node', hub.mark, own.findings);
+      const whole = shaped.pieces.length > 0 || (hub.makeable && nodeSystem(hub.system)?.notPrinted === true);
+      const keep = whole && !isWithheld('node', hub.mark, own.findings);
       const files: string[] = [];
       for (const [i, piece] of shaped.pieces.entries()) {
         if (!keep) continue;

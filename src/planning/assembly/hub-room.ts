@@ -1,4 +1,5 @@
 import { ballRadius } from '../../detailing/systems/drilled-ball.js';
+import { cubeCover, cubeHalf } from '../../detailing/systems/drilled-cube.js';
 import { hubShape } from '../../detailing/systems/hub-shape.js';
 import { type Half, largest, pathHalf, ringPoints, type Sleeve } from '../../detailing/systems/sleeve.js';
 import { bodyHull, COVER_SIDES } from '../../detailing/systems/sleeve-cover.js';
@@ -25,7 +26,8 @@ export interface HubRoom {
 /** null where none of the hub's setbacks is known: nothing is made there. */
 export function hubRoom(hub: HubPart, job: Job): HubRoom | null {
   if (!hub.sockets.some((s) => s.setback !== null)) return null;
-  return hub.system === 'drilled-ball' ? ballRoom(hub) : sleeveRoom(hub, job);
+  if (hub.system === 'drilled-ball') return boredRoom(hub, ballBody(hub));
+  return hub.system === 'drilled-cube' ? boredRoom(hub, cubeBody(hub)) : sleeveRoom(hub, job);
 }
 
 function sleeveRoom(hub: HubPart, job: Job): HubRoom {
@@ -91,21 +93,44 @@ function sleevePieces(s: Sleeve, at: Vec3): Convex[] {
   ];
 }
 
-function ballRoom(hub: HubPart): HubRoom {
+/** A convex body, where it stands, that bores are drilled into; `holds` tells whether a point from the node is in it. */
+interface Body {
+  readonly convex: Convex;
+  readonly reach: number;
+  readonly holds: (p: Vec3) => boolean;
+}
+
+function ballBody(hub: HubPart): Body {
   const radius = ballRadius(hub);
-  const ball: Convex = { support: (d) => addScaled(hub.at, d, radius / length(d)) };
+  return {
+    convex: { support: (d) => addScaled(hub.at, d, radius / length(d)) },
+    reach: radius,
+    holds: (p) => length(p) < radius,
+  };
+}
+
+function cubeBody(hub: HubPart): Body {
+  const half = cubeHalf(hub);
+  return {
+    convex: hullOf(cubeCover(half).flatMap((piece) => piece.points.map((p) => add(hub.at, p)))),
+    reach: half * Math.sqrt(3),
+    holds: (p) => Math.max(...p.map(Math.abs)) < half,
+  };
+}
+
+function boredRoom(hub: HubPart, { convex, reach, holds }: Body): HubRoom {
   const known = hub.sockets.filter((s) => s.setback !== null);
   const socketOf = new Map(known.map((s) => [s.strut, s]));
   return {
     at: hub.at,
-    reach: radius,
+    reach,
     solidAt: (p) =>
-      length(p) < radius &&
+      holds(p) &&
       !known.some((s) => {
         const along = dot(p, s.direction);
         return along > s.setback! && length(addScaled(p, s.direction, -along)) < largest(pathHalf(s));
       }),
-    piecesBut: () => [ball],
+    piecesBut: () => [convex],
     sleeveOf: (strut) => {
       const s = socketOf.get(strut);
       return s ? { mouth: s.setback! + s.depth, half: largest(pathHalf(s)) } : null;

@@ -66,7 +66,9 @@ export function assemblySetting(topology: Topology, parts: Parts, job: Job): Ass
     ];
     const ends = member.ends.map((node) => topology.nodeIndex.get(node)!) as [number, number];
     const length = topology.axisLength[strut]!;
-    const depth = Math.min(own[0]?.depth ?? 0, own[1]?.depth ?? 0);
+    // Over the deep side of a tilted mouth.
+    const over = (s: Socket | null): number => (s ? s.depth + (s.shallow ?? 0) : 0);
+    const depth = Math.min(over(own[0]), over(own[1]));
     const play = (part.ends[0].float ?? 0) + (part.ends[1].float ?? 0);
     const aside = asideOf(own, length, job.assembly.springStrain);
     const closing = ([0, 1] as const).map(

@@ -1,9 +1,9 @@
 import { sectionProperties } from '../../model/section.js';
 import type { SocketCase } from './case.js';
 
-/** Length of the strut inside its socket once it is in its place, mm: depth less float and less the way that it slid back, never negative. */
+/** Length of the strut inside its socket once it is in its place, mm: depth less float, less the way that it slid back and less what a tilted face takes at the mouth, never negative. */
 export const engaged = ({ socket, float }: SocketCase): number =>
-  Math.max(0, socket.depth - (socket.travel ?? 0) - float);
+  Math.max(0, socket.depth - (socket.travel ?? 0) - (socket.shallow ?? 0) - float);
 
 /** Surface of the bond, mm²: of strut or socket, whichever is less, over the engaged length. */
 export function bondSurface(c: SocketCase): number {

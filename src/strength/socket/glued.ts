@@ -20,12 +20,12 @@ export const glued: SocketPath = (c) => {
     if (wood !== null)
       checks.push({ utilisation: force / surface / wood, rule: 'shear of the wood at the socket bond' });
   }
-  // A ball's wood round the bore: its grain runs anyhow, so it is sheared across.
-  const ball = isWood(hub) ? hubLimit(hub, 'fv', actions.duration, rules) : null;
-  if (ball !== null && surface > 0)
+  // The wood of a drilled body round the bore: its grain runs anyhow, so it is sheared across.
+  const body = isWood(hub) ? hubLimit(hub, 'fv', actions.duration, rules) : null;
+  if (body !== null && surface > 0)
     checks.push({
-      utilisation: force / surface / ball,
-      rule: 'EN 1995-1-1 6.1.7, rolling shear of the ball at the socket bond',
+      utilisation: force / surface / body,
+      rule: 'EN 1995-1-1 6.1.7, rolling shear of the drilled body at the socket bond',
     });
   const rod = gluedRod(c);
   if (rod !== null) checks.push({ utilisation: force / rod, rule: 'glued-in rod (Feligioni et al.), pull-out' });

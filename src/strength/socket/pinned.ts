@@ -61,7 +61,11 @@ export const pinned: SocketPath = (c) => {
       if (force > 0) push(least.edge / (t / 2), 'EN 1995-1-1 8.6, table 8.5, edge of the pin');
     }
     const plastic = hubLimit(hub, 'fv', duration, rules);
-    if (plastic !== null) push(force / (4 * (socket.depth / 2) * wall * plastic), 'plug shear of the socket walls');
+    if (plastic !== null)
+      push(
+        force / (4 * ((socket.depth - (socket.shallow ?? 0)) / 2) * wall * plastic),
+        'plug shear of the socket walls',
+      );
   }
   return [...checks, ...sleeveChecks(c, sleeve(c).area - 2 * d * wall)];
 };

@@ -18,7 +18,7 @@ export function sleeveChecks(c: SocketCase, area = sleeve(c).area): Verdict[] {
     checks.push({
       utilisation: Math.abs(actions.axial) / area / along + moment / sleeve(c).modulus / bent,
       rule: isWood(hub)
-        ? `EN 1995-1-1 6.1.3, net section of the ball, ${actions.axial >= 0 ? 'tension' : 'compression'} across the grain${moment > 0 ? ' with bending' : ''}`
+        ? `EN 1995-1-1 6.1.3, net section of the drilled body, ${actions.axial >= 0 ? 'tension' : 'compression'} across the grain${moment > 0 ? ' with bending' : ''}`
         : `socket wall ${actions.axial >= 0 ? 'tension across layers' : 'compression'}${moment > 0 ? ' with bending' : ''}`,
     });
   if (moment > 0) {

@@ -54,3 +54,26 @@ it('has strips that end where the bores are once they lie on the ball', () => {
   }
   expect(checked).toBeGreaterThan(50);
 });
+
+it('draws every cube as a net or face by face, each bore with its mark and its line, nothing over anything', async () => {
+  for (const edge_mm of [undefined, 120]) {
+    const records = packRecords({
+      nodes: { ...base.nodes, system: 'drilled-cube', cube: { ...base.nodes.cube, ...(edge_mm ? { edge_mm } : {}) } },
+    });
+    const written = (await drillingTemplates(records, fonts))!;
+    checkPdf(written.bytes);
+    expect(overlaps(written.placed)).toEqual([]);
+    expect(outside(written.bytes)).toEqual([]);
+    const text = textOf(written.bytes);
+    const made = records.parts.hubs.filter((h) => h.makeable);
+    expect(made.length).toBeGreaterThan(5);
+    for (const hub of made) {
+      expect(text).toContain(hub.mark);
+      for (const s of hub.sockets) expect(text).toMatch(new RegExp(`\\b${s.strut} on [xyz][+-]: `));
+    }
+    // Once on its face and once in its line, at both of its nodes.
+    const bores = made.flatMap((h) => h.sockets.map((s) => s.strut));
+    for (const strut of new Set(bores))
+      expect(written.placed.filter((p) => p.text === strut)).toHaveLength(bores.filter((b) => b === strut).length);
+  }
+});
