@@ -100,7 +100,8 @@ function pathThroughBody(s: Sleeve, planes: Float64Array, from: number): number 
     const cutting = planesCutting(planes, centre, reachOf(s.inner));
     for (let g = 0; cutting && g < grid.length; g += 2) {
       pointAcross(p, centre, s, sizeA * grid[g]!, sizeB * grid[g + 1]!);
-      if (insideAll(cutting, p)) hits++;
+      // A spigot stands in its own strut's path and fills it again.
+      if (insideAll(cutting, p) && !insideSleeve(s, p)) hits++;
     }
     if (hits === 0) return volume;
     volume += (areaOf(s.inner) * STEP * hits) / (ROUND * ACROSS);

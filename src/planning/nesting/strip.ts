@@ -16,7 +16,7 @@ const FIRST_STEP = 0.001;
 const LAST_STEP = 1e-5;
 const BOLD_PATIENCE = { rounds: 60, strikes: 2 } as const;
 const SQUEEZE_PATIENCE = { rounds: 40, strikes: 1 } as const;
-/** A length this share above the area bound is the bound. */
+/** A length this share above a bound is the bound: round-off of sums. */
 const CLOSED = 1e-9;
 
 /** How far a shortening goes. */
@@ -47,14 +47,16 @@ export function shorten(layout: Layout, f: number, random: Random, how: Shorteni
   const area = layout.on[f]!.reduce((sum, i) => sum + layout.shapes[i]!.area, 0);
   const least = area / (field.y1 - field.y0);
   const widest = Math.max(0, ...layout.on[f]!.map((i) => width(narrowest(layout, i, field))));
-  const done = (): boolean => length <= least * (1 + CLOSED) || length <= widest;
+  const done = (): boolean => length <= Math.max(least, widest) * (1 + CLOSED);
   const aim = (share: number): number => Math.max(length * (1 - share), widest, least);
 
+  // Every try is counted by its pieces: on a sheet where none has a neighbour, no pair is ever looked at.
   // Boldly: to a shorter length at once, and where that fails with pieces exchanged in one of the near misses.
   let share = how.step ?? FIRST_SHARE;
   let misses = 0;
   let pool: { shot: Snapshot; total: number }[] = [];
   while (!isSpent(layout.budget, boldLimit) && !done()) {
+    layout.budget.spent += layout.on[f]!.length;
     field.x1 = field.x0 + aim(share);
     if (pool.length === 0) pullIn(layout, f);
     else {
@@ -86,6 +88,7 @@ export function shorten(layout: Layout, f: number, random: Random, how: Shorteni
   // Then in small steps from the best alone, smaller as the budget runs out.
   const squeezeStart = goneOf(layout.budget);
   while (how.last && !isSpent(layout.budget, limit) && !done()) {
+    layout.budget.spent += layout.on[f]!.length;
     const gone = (goneOf(layout.budget) - squeezeStart) / Math.max(1, limit - squeezeStart);
     const target = aim(FIRST_STEP * (LAST_STEP / FIRST_STEP) ** gone);
     field.x1 = field.x0 + target;

@@ -66,6 +66,28 @@ describe('panels on sheets', () => {
     for (const seed of [2, 3]) await checked({ ...request, seed });
   });
 
+  it('comes to an end with panels that no neighbour holds up: each alone on a sheet, shortened to its own width', async () => {
+    for (let k = 1; k <= 8; k++) {
+      const outline = [
+        [0, 0],
+        [200.1 + k * 1.37, 3.3],
+        [150.7, 170.3 + k * 0.77],
+        [11.1 * (k / 40), 140.9],
+      ] as const;
+      const answer = await checked({
+        panels: [
+          { mark: 'A', outline, quantity: 1 },
+          { mark: 'B', outline: outline.map(([x, y]) => [0.9 * x, 1.01 * y] as const), quantity: 1 },
+        ],
+        sheets: [{ name: 'S', width: 300 + k, height: 200 + k }],
+        spacing: 2.3,
+        margin: 4.7,
+        seed: k,
+      });
+      expect(answer.sheets.length).toBe(2);
+    }
+  }, 60_000);
+
   it('gives the same plan whoever searches: this thread, or workers that only get and give plain records', async () => {
     const request = { panels: inventedPanels(14, 3), sheets: [sheet], spacing: 2, margin: 5, effort: 0.7 };
     let lanes = 0;

@@ -75,6 +75,8 @@ const EYE = [3, -5, 2.6] as const;
 const SINE = EYE[2] / Math.hypot(...EYE);
 /** Room round the truss, so that marks at its edge stay on the picture. */
 const FRAMES = 1.1;
+/** Struts beyond which parts are drawn with fewer sides. */
+const MANY = 500;
 
 /** The truss in three dimensions, z up; nothing but what the parts are. Null where the browser has no WebGL. */
 export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () => void): View | null {
@@ -85,6 +87,8 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
     return null;
   }
   const scene = new Scene();
+  // A part of a large truss is a few pixels wide: fewer sides are enough, and slow machines turn it all the same.
+  const many = data.struts.length > MANY;
   const bounds = boundsOf(data);
   const camera = new OrthographicCamera(-1, 1, 1, -1, 0.1, bounds.size * 20);
   camera.up.set(0, 0, 1);
@@ -99,7 +103,11 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
   scene.add(sun);
 
   const solid = (): MeshLambertMaterial => new MeshLambertMaterial({ color: 0xffffff });
-  const rods = new InstancedMesh(new CylinderGeometry(1, 1, 1, 14, 1), solid(), Math.max(1, data.struts.length));
+  const rods = new InstancedMesh(
+    new CylinderGeometry(1, 1, 1, many ? 8 : 14, 1, many),
+    solid(),
+    Math.max(1, data.struts.length),
+  );
   // The white core of a tension line is drawn over its own rod: moved towards the eye, not in the way of other parts.
   const coreInk = new MeshBasicMaterial({ color: 0xffffff });
   coreInk.onBeforeCompile = (shader) => {
@@ -108,8 +116,16 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
       '#include <project_vertex>\n gl_Position.z -= 0.004 * gl_Position.w;',
     );
   };
-  const cores = new InstancedMesh(new CylinderGeometry(1, 1, 1, 10, 1), coreInk, Math.max(1, data.struts.length));
-  const balls = new InstancedMesh(new SphereGeometry(1, 18, 12), solid(), Math.max(1, data.nodes.length));
+  const cores = new InstancedMesh(
+    new CylinderGeometry(1, 1, 1, many ? 6 : 10, 1, many),
+    coreInk,
+    Math.max(1, data.struts.length),
+  );
+  const balls = new InstancedMesh(
+    many ? new SphereGeometry(1, 10, 7) : new SphereGeometry(1, 18, 12),
+    solid(),
+    Math.max(1, data.nodes.length),
+  );
   const props = new InstancedMesh(new CylinderGeometry(0.35, 1, 1, 10, 1), solid(), Math.max(1, data.nodes.length));
   for (const mesh of [rods, cores, balls, props]) {
     mesh.instanceMatrix.setUsage(DynamicDrawUsage);
@@ -177,6 +193,8 @@ export function makeView(data: PageData, canvas: HTMLCanvasElement, redraw: () =
         if (mesh.instanceColor) mesh.instanceColor.needsUpdate = true;
         mesh.computeBoundingSphere();
       }
+      cores.visible = forces;
+      props.visible = looks.propped.length > 0;
       plates.forEach((mesh, i) => {
         const look = looks.panels[i]!;
         mesh.visible = look !== 'absent';
