@@ -14,7 +14,7 @@ import type { LoadCase } from '../loads/load-case.js';
 import { climbed, missingLoads } from '../loads/required.js';
 import { elasticForces } from '../pin-truss.js';
 import { prestressTest, splitForces } from '../prestress.js';
-import { climberActions } from './climber.js';
+import { climberActions, type PressingClimber } from './climber.js';
 import { equilibriumOfCase } from './equilibrium-of-case.js';
 import { strutStiffness } from './member-stiffness.js';
 import { jointsHold, type Model, modelOf, respond } from './model.js';
@@ -112,8 +112,9 @@ export function analyseTruss(input: AnalysisInput): Analysed {
   const supports = combined.flatMap((r, c) => supportDemands(topology, combinations[c]!.name, r.reactions));
   const climber_N = climbed(job) ? job.analysis.climber_N : 0;
   const overturning = overturningOf(topology, job, cases, combinations, climber_N);
+  const permanent = cases.map((c, i) => [i, c] as const).filter(([, c]) => c.duration === 'permanent');
+  let pressing: readonly PressingClimber[] = [];
   if (climbed(job)) {
-    const permanent = cases.map((c, i) => [i, c] as const).filter(([, c]) => c.duration === 'permanent');
     const dead =
       permanent.length > 0
         ? combine(
@@ -125,12 +126,32 @@ export function analyseTruss(input: AnalysisInput): Analysed {
     for (const [e, own] of climber.actions.entries()) actions[e]!.push(...own);
     worstResidual = Math.max(worstResidual, climber.residual);
     supports.push(...climber.supports);
+    pressing = climber.pressing;
   }
   if (given) findings.push(...besideGiven(topology, given, pin, cases, responses, actions, job));
 
   const stability =
     (input.buckling ?? job.analysis.buckling)
-      ? stabilityOf(topology, job, parts, model, cases, combinations, combined)
+      ? stabilityOf(
+          topology,
+          job,
+          parts,
+          model,
+          [...cases, ...pressing.map((p) => p.loads)],
+          [
+            ...combinations,
+            ...pressing.map(({ name }, k) => ({
+              name,
+              factors: [
+                ...permanent.map(([i]) => [i, job.loads.gammaG] as const),
+                [cases.length + k, job.loads.gammaQ] as const,
+              ],
+              duration: 'short' as const,
+              favourable: false,
+            })),
+          ],
+          [...combined, ...pressing.map((p) => p.response)],
+        )
       : null;
   if (stability) findings.push(...stability.findings);
   for (const [e, own] of (stability?.secondOrder?.actions ?? []).entries()) actions[e]!.push(...own);

@@ -4,6 +4,7 @@ import type { MemberActions, SupportDemand } from '../../model/solution.js';
 import type { Topology } from '../../model/topology.js';
 import { CaseBuilder, type LoadCase } from '../loads/load-case.js';
 import { type Model, respond } from './model.js';
+import { nearnessToEuler } from './nearness-to-euler.js';
 import { actionsOf, combine, type Response } from './response.js';
 import { mostLifted, supportDemands } from './support-demands.js';
 
@@ -15,8 +16,22 @@ export interface Climbed {
   readonly actions: readonly (readonly MemberActions[])[];
   /** What lifts each support most, the permanent loads at their favourable factor; supports that no climber lifts are left out. */
   readonly supports: readonly SupportDemand[];
+  /** The nodes where a climber presses struts nearest to Euler's load, worst first: buckling of the whole is sought under these. */
+  readonly pressing: readonly PressingClimber[];
   readonly residual: number;
 }
+
+/** A climber beside the permanent loads. */
+export interface PressingClimber {
+  readonly name: string;
+  /** The climber alone, without factor. */
+  readonly loads: LoadCase;
+  /** Both, with their factors. */
+  readonly response: Response;
+}
+
+/** Climbers that are kept for buckling. */
+const PRESSING = 4;
 
 /**
  * Actions under a person at each node in turn beside the permanent loads: per member those of the largest and least axial
@@ -35,6 +50,8 @@ export function climberActions(
   const members = truss.members.length;
   const kept: MemberActions[][] = truss.members.map(() => []);
   let lifted: SupportDemand[] = [];
+  const nearness = nearnessToEuler(topology, parts);
+  let pressing: (PressingClimber & { readonly rank: number })[] = [];
   let residual = 0;
   const nodes = truss.nodes.map((_, i) => i).filter((i) => topology.barsAt[i]!.length > 0);
   for (let from = 0; from < nodes.length; from += CHUNK) {
@@ -58,12 +75,17 @@ export function climberActions(
         : combine([r], [[0, gammaQ]]);
       const name = `${permanent ? `${gammaG} G + ` : ''}${gammaQ} climber at ${cases[k]!.name}`;
       for (let e = 0; e < members; e++) keepExtremes(kept[e]!, actionsOf(both, e, ...spans[e]!, name, 'short'));
+      pressing.push({ name, loads: cases[k]!, response: both, rank: nearness(both) });
       const held = r.reactions.map((v, i) => gammaQ * v + gammaGfavourable * (permanent?.reactions[i] ?? 0));
       const light = `${permanent ? `${gammaGfavourable} G + ` : ''}${gammaQ} climber at ${cases[k]!.name}`;
       lifted = mostLifted([...lifted, ...supportDemands(topology, light, held)]);
     });
+    pressing = pressing
+      .filter((p) => p.rank > 0)
+      .sort((a, b) => b.rank - a.rank)
+      .slice(0, PRESSING);
   }
-  return { actions: kept, supports: lifted, residual };
+  return { actions: kept, supports: lifted, pressing, residual };
 }
 
 /** Keeps at most three: the largest axial force, the least, the largest moment. */

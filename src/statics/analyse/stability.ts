@@ -13,6 +13,7 @@ import type { LoadCase } from '../loads/load-case.js';
 import { pinBucklesBelow, pinBuckling } from '../pin-buckling.js';
 import { designShare, designStiffness } from './design-stiffness.js';
 import type { Model } from './model.js';
+import { nearnessToEuler } from './nearness-to-euler.js';
 import { axialForces, PER_MEMBER, type Response } from './response.js';
 import { type SecondOrderActions, secondOrderActions } from './second-order-actions.js';
 
@@ -163,21 +164,11 @@ function nearestToEuler(
 
 /** Combinations by the largest compression over Euler's load of any strut, worst first; those without compression are left out. */
 function mostCompressed(topology: Topology, parts: Parts, responses: readonly Response[]): number[] {
-  const euler = parts.struts.map((s, e) => {
-    const e0 = s.material?.modulus ?? 1;
-    const d = s.section ? slenderness(s.section.shape) : 1;
-    return (e0 * d) / topology.axisLength[e]! ** 2;
-  });
-  const worst = responses.map((r) => axialForces(r).reduce((most, n, e) => Math.max(most, -n / euler[e]!), 0));
+  const worst = responses.map(nearnessToEuler(topology, parts));
   return worst
     .map((_, i) => i)
     .filter((i) => worst[i]! > 0)
     .sort((a, b) => worst[b]! - worst[a]! || a - b);
-}
-
-/** Fourth power of the section's least side: enough to rank sections by their second moment. */
-function slenderness(shape: NonNullable<Parts['struts'][number]['section']>['shape']): number {
-  return shape.kind === 'rectangle' ? Math.min(shape.width, shape.height) ** 4 : shape.diameter ** 4;
 }
 
 /** Axial force at the middle of each element, N. */

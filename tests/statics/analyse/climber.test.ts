@@ -82,3 +82,26 @@ it('each strut of a bracket is kept with the nodes that pull it most and press i
   // Moments about N1: W 2a = T a for the tip.
   expect(most(0)).toBeCloseTo(2 * W, 6);
 });
+
+it('the whole is searched for buckling under the climber: on a tripod between the loads of legs with hinged and with fixed ends', () => {
+  const truss = legs(400, true);
+  const under = (climber_N: number) => {
+    const job = jobWith({
+      use: 'outdoor',
+      analysis: { joints: 'rigid', selfWeight: false, buckling: true, climber_N },
+      loads: { indoors: true },
+    } as unknown as Partial<Job>);
+    const input = inputOf(truss, job);
+    return { found: analyseTruss(input).solution.buckling, strut: input.parts.struts[0]! };
+  };
+  const { found, strut } = under(1000);
+  const lowest = found.find((b) => b.combination.includes('climber at'))!;
+  expect(lowest).toBeDefined();
+  // Euler's load of a leg from node to node, pi² E I / L² (Timoshenko and Gere 1961, 2.1); four times that with fixed ends.
+  const shape = strut.section!.shape as { diameter: number };
+  const euler = (Math.PI ** 2 * strut.material!.modulus * ((Math.PI * shape.diameter ** 4) / 64)) / 500 ** 2;
+  expect(lowest.factors[0]!).toBeGreaterThan(0.9 * (euler / LEG));
+  // Printed ends are shorter than the axis: a little above four is possible.
+  expect(lowest.factors[0]!).toBeLessThan(5 * (euler / LEG));
+  expect(under(2000).found[0]!.factors[0]!).toBeCloseTo(lowest.factors[0]! / 2, 6);
+});
