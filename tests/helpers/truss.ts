@@ -41,6 +41,26 @@ export function trussOf(parts: {
   };
 }
 
+/** Invented: one level rectangular panel, its first node at the origin, between four struts that carry 1 N each; mm. */
+export const levelPanel = (width: number, height: number): Truss =>
+  trussOf({
+    nodes: [
+      [0, 0, 0],
+      [width, 0, 0],
+      [width, height, 0],
+      [0, height, 0],
+    ],
+    edges: [
+      [0, 1],
+      [1, 2],
+      [2, 3],
+      [3, 0],
+    ],
+    faces: [[0, 1, 2, 3]],
+    panels: true,
+    forces: [1, 1, 1, 1],
+  });
+
 /** The same truss with every node moved by a map of space. */
 export const mapped = (truss: Truss, move: (p: Vec3) => Vec3): Truss => ({
   ...truss,

@@ -2,27 +2,11 @@ import { describe, expect, it } from 'vitest';
 import { jobSchema } from '../../src/model/job/index.js';
 import type { PanelPart } from '../../src/model/parts.js';
 import { assess } from '../../src/pipeline/assess.js';
-import { trussOf } from '../helpers/truss.js';
+import { levelPanel } from '../helpers/truss.js';
 
 const SIDE = 500;
 /** Invented: one square panel of 500 mm, level, between four struts. */
-const SQUARE = trussOf({
-  nodes: [
-    [0, 0, 0],
-    [SIDE, 0, 0],
-    [SIDE, SIDE, 0],
-    [0, SIDE, 0],
-  ],
-  edges: [
-    [0, 1],
-    [1, 2],
-    [2, 3],
-    [3, 0],
-  ],
-  faces: [[0, 1, 2, 3]],
-  panels: true,
-  forces: [1, 1, 1, 1],
-});
+const SQUARE = levelPanel(SIDE, SIDE);
 /** Acrylic that moves by nothing and keeps 1 mm of gap, so that the bite left is what is given less 1 mm. */
 const STILL = { movement_K: 0, humidity: 0, gap_mm: 1, mark: false };
 function made(panels: object, more: object = {}): { panel: PanelPart; codes: string[] } {

@@ -7,29 +7,13 @@ import { panelCombinations } from '../../src/strength/panel/combinations.js';
 import type { PanelCombination } from '../../src/strength/panel/load.js';
 import { judgePanels } from '../../src/strength/panels.js';
 import { rulesOf } from '../../src/strength/rules.js';
-import { mapped, trussOf } from '../helpers/truss.js';
+import { levelPanel, mapped } from '../helpers/truss.js';
 
 const jobWith = (more: object): Job =>
   jobSchema.parse({ format: 'strutwright-job/1', title: 'T', truss: 't.json', ...more });
 const SIDE = 500;
 /** Invented: one square panel of 500 mm, level, over four struts. */
-const truss = trussOf({
-  nodes: [
-    [0, 0, 0],
-    [SIDE, 0, 0],
-    [SIDE, SIDE, 0],
-    [0, SIDE, 0],
-  ],
-  edges: [
-    [0, 1],
-    [1, 2],
-    [2, 3],
-    [3, 0],
-  ],
-  faces: [[0, 1, 2, 3]],
-  panels: true,
-  forces: [1, 1, 1, 1],
-});
+const truss = levelPanel(SIDE, SIDE);
 const combination = (name: string, factors: Record<string, number>): PanelCombination => ({
   name,
   duration: 'short',

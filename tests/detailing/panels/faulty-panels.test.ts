@@ -3,27 +3,8 @@ import { jobSchema } from '../../../src/model/job/index.js';
 import type { Point2 } from '../../../src/model/parts.js';
 import { assess } from '../../../src/pipeline/assess.js';
 import { plainPanels } from '../../helpers/plain-panels.js';
-import { trussOf } from '../../helpers/truss.js';
+import { levelPanel, trussOf } from '../../helpers/truss.js';
 
-/** Invented: one level rectangle between four struts of 10 mm. */
-const rectangle = (width: number, height: number) =>
-  trussOf({
-    nodes: [
-      [0, 0, 0],
-      [width, 0, 0],
-      [width, height, 0],
-      [0, height, 0],
-    ],
-    edges: [
-      [0, 1],
-      [1, 2],
-      [2, 3],
-      [3, 0],
-    ],
-    faces: [[0, 1, 2, 3]],
-    panels: true,
-    forces: [1, 1, 1, 1],
-  });
 const STRUTS = { section: 'beech-10' };
 const STILL = { movement_K: 0, humidity: 0, mark: false, gap_mm: 1 };
 
@@ -77,7 +58,7 @@ describe('a neck', () => {
 
 describe('holes near an edge', () => {
   const made = (holes: object) =>
-    plainPanels(rectangle(500, 300), { struts: STRUTS, panels: { ...STILL, holdBy: 'ties', holes } });
+    plainPanels(levelPanel(500, 300), { struts: STRUTS, panels: { ...STILL, holdBy: 'ties', holes } });
   /** From a point to the nearest of the outline's sides. */
   const nearest = (outline: readonly Point2[], [x, y]: Point2): number =>
     Math.min(
@@ -112,7 +93,7 @@ describe('holes near an edge', () => {
   });
 
   it('holes outdoors are larger by what the farthest corner moves, and stand farther in for it', () => {
-    const { panels, findings } = plainPanels(rectangle(500, 300), {
+    const { panels, findings } = plainPanels(levelPanel(500, 300), {
       use: 'outdoor',
       struts: STRUTS,
       panels: { gap_mm: 1, mark: false, holdBy: 'ties', holes: { diameter_mm: 8, edge_mm: 12 } },
@@ -131,7 +112,7 @@ describe('holes near an edge', () => {
 describe('a panel over 20 kg', () => {
   it('is for two people, with its mass by hand', () => {
     const made = (width: number) =>
-      plainPanels(rectangle(width, 1012), {
+      plainPanels(levelPanel(width, 1012), {
         struts: STRUTS,
         panels: { ...STILL, holdBy: 'channel', thickness_mm: 10 },
       });
@@ -149,7 +130,7 @@ describe('a panel over 20 kg', () => {
 describe('hazards under a laser', () => {
   const settled = (material: string, kind: string, more: object = {}) =>
     assess(
-      rectangle(400, 300),
+      levelPanel(400, 300),
       jobSchema.parse({
         format: 'strutwright-job/1',
         title: 'T',
